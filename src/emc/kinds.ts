@@ -1,0 +1,56 @@
+/** The vocabulary of an emission measurement: what a reading can be, and what a judgement can say. */
+
+export const DETECTORS = [
+  'peak',
+  'quasi-peak',
+  'average',
+  'rms-average',
+  'log-average',
+  'sample',
+  'negative-peak',
+  'unknown',
+] as const;
+/** `average` is the linear (CISPR) average; log and video averages are `log-average`. */
+export type Detector = (typeof DETECTORS)[number];
+
+/** Detectors a limit line can be written for. */
+export const LINE_DETECTORS = ['quasi-peak', 'average', 'peak'] as const;
+export type LineDetector = (typeof LINE_DETECTORS)[number];
+
+export const LEVEL_UNITS = [
+  'dBuV',
+  'dBm',
+  'dBuV/m',
+  'dBuA',
+  'dBuA/m',
+  'dBpW',
+  'V',
+  'mV',
+  'uV',
+  'W',
+  'mW',
+  'dB',
+] as const;
+/** Units a file can state for its levels; `dB` alone is relative and can never be judged. */
+export type LevelUnit = (typeof LEVEL_UNITS)[number];
+
+export const LINE_UNITS = ['dBuV/m', 'dBuV', 'dBuA', 'dBuA/m', 'dBpW'] as const;
+export type LineUnit = (typeof LINE_UNITS)[number];
+
+export const VERDICTS = ['over', 'needs-final', 'inconclusive', 'not-covered', 'under'] as const;
+export type Verdict = (typeof VERDICTS)[number];
+
+export const PURPOSES = ['prescan', 'final', 'ambient'] as const;
+export type Purpose = (typeof PURPOSES)[number];
+
+export const PORTS = ['enclosure', 'ac-mains', 'wired-network'] as const;
+export type Port = (typeof PORTS)[number];
+
+export const MAINS_LINES = ['L', 'N', 'L1', 'L2', 'L3'] as const;
+export type MainsLine = (typeof MAINS_LINES)[number];
+
+export const POLARISATIONS = ['horizontal', 'vertical'] as const;
+export type Polarisation = (typeof POLARISATIONS)[number];
+
+export const FACTOR_QUANTITIES = ['antenna-factor', 'loss', 'gain'] as const;
+export type FactorQuantity = (typeof FACTOR_QUANTITIES)[number];

@@ -1,0 +1,158 @@
+import type { Detector, FactorQuantity, LevelUnit, LineDetector, LineUnit, Port, Purpose, Verdict } from './kinds';
+
+/** One revision of one table of corrections. Rows ascend in frequency; interpolation is linear in dB over log f. */
+export interface FactorTable {
+  id: string;
+  /** e.g. `ANT-02 vertical, table 4` */
+  name: string;
+  quantity: FactorQuantity;
+  frequencyHz: readonly number[];
+  /** dB/m for an antenna factor, dB (positive) for a loss or a gain. */
+  valueDb: readonly number[];
+}
+
+/** A table in the signal path. `applied: false` means that the reading already holds it, and why. */
+export interface PathTerm {
+  id: string;
+  /** e.g. `antenna factor`, `cable loss`, `preamplifier gain` */
+  name: string;
+  table: FactorTable;
+  applied: boolean;
+  notAppliedBecause?: string;
+}
+
+export interface LimitSegment {
+  startHz: number;
+  stopHz: number;
+  startLimit: number;
+  stopLimit: number;
+  /** How the limit runs between its ends; a flat segment is either. */
+  over: 'log-frequency' | 'linear-frequency';
+}
+
+export interface LimitLine {
+  id: string;
+  /** e.g. `CISPR 32:2015 class B, enclosure, 3 m, quasi-peak` */
+  name: string;
+  detector: LineDetector;
+  bandwidthHz: number;
+  unit: LineUnit;
+  /** null for conducted lines */
+  distanceM: number | null;
+  segments: readonly LimitSegment[];
+}
+
+/** Expanded uncertainty as steps over frequency; outside every step it is unknown (null), never extrapolated. */
+export interface UncertaintyStep {
+  startHz: number;
+  stopHz: number;
+  expandedDb: number;
+}
+
+export interface Trace {
+  /** Position in the run; candidates and windows refer to it. */
+  index: number;
+  name: string;
+  detector: Detector;
+  rbwHz: number | null;
+  unit: LevelUnit;
+  frequencyHz: Float64Array;
+  /** As read, rounded once to Float32. */
+  reading: Float32Array;
+}
+
+export interface EvaluationInput {
+  traces: readonly Trace[];
+  terms: readonly PathTerm[];
+  lines: readonly LimitLine[];
+  uncertainty: { prescan: readonly UncertaintyStep[]; final: readonly UncertaintyStep[] };
+  purpose: Purpose;
+  port: Port;
+  rule: 'guarded-by-u';
+}
+
+export interface Candidate {
+  /** 1 is the worst. */
+  rank: number;
+  kind: 'peak' | 'floor';
+  traceIndex: number;
+  lineId: string;
+  frequencyHz: number;
+  /** For `floor` the stretch it stands for; for `peak` both equal frequencyHz. */
+  fromHz: number;
+  toHz: number;
+  reading: number;
+  level: number;
+  limit: number;
+  marginDb: number;
+  uncertaintyDb: number;
+  verdict: Verdict;
+  /** Why the reading cannot decide, when it cannot. */
+  because: string | null;
+}
+
+export interface CoverageGap {
+  lineId: string;
+  fromHz: number;
+  toHz: number;
+  because: 'no-trace' | 'no-factor' | 'no-uncertainty' | 'detector' | 'gap';
+}
+
+/** One trace judged against one line. */
+export interface JudgedPair {
+  traceIndex: number;
+  lineId: string;
+  points: number;
+  worstMarginDb: number | null;
+  worstFrequencyHz: number | null;
+}
+
+/** Extremes of one trace per log-frequency column, computed from points. Only columns that hold a point appear. */
+export interface Columns {
+  frequencyHz: Float64Array;
+  levelMin: Float32Array;
+  levelMax: Float32Array;
+  /** Margin to the line this trace hangs from; NaN is not used: columns without a limit have `hasMargin` 0. */
+  marginMin: Float32Array;
+  marginMax: Float32Array;
+  hasMargin: Uint8Array;
+}
+
+export interface Evaluation {
+  engine: string;
+  /** Worst first by verdict, then by margin. */
+  verdict: Verdict;
+  counts: Record<Verdict, number>;
+  pairs: JudgedPair[];
+  candidates: Candidate[];
+  gaps: CoverageGap[];
+  /** Whole-range layer per trace, at LAYER_COLUMNS columns. */
+  layers: Columns[];
+}
+
+export interface WorkingTerm {
+  sign: '' | '+' | '−';
+  figure: number;
+  unit: string;
+  name: string;
+  /** Source lines are added by the service, which knows equipment and calibrations. */
+  termId: string | null;
+  applied: boolean;
+  notAppliedBecause: string | null;
+  /** The rows between which a factor was interpolated; equal when a row was hit. */
+  rows: { lowerHz: number; lowerDb: number; upperHz: number; upperDb: number } | null;
+}
+
+export interface Working {
+  traceIndex: number;
+  lineId: string | null;
+  frequencyHz: number;
+  terms: WorkingTerm[];
+  level: number | null;
+  levelUnit: LineUnit | null;
+  limit: number | null;
+  marginDb: number | null;
+  uncertaintyDb: number | null;
+  verdict: Verdict;
+  because: string | null;
+}

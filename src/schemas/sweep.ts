@@ -1,0 +1,259 @@
+import { z } from 'zod';
+import {
+  detector,
+  instant,
+  day,
+  levelUnit,
+  lineDetector,
+  lineUnit,
+  mainsLine,
+  organisationRef,
+  person,
+  polarisation,
+  port,
+  publicId,
+  purpose,
+  verdict,
+  version,
+} from './common';
+
+/** What a technician says of a file when keeping it as a run. */
+export const keepSweep = z.strictObject({
+  fileId: publicId,
+  stateId: publicId,
+  purpose,
+  port,
+  operatingMode: z.string().trim().min(1).max(120),
+  line: mainsLine.nullable().default(null),
+  polarisation: polarisation.nullable().default(null),
+  heightM: z.number().min(0).max(10).nullable().default(null),
+  azimuthDeg: z.number().min(0).max(360).nullable().default(null),
+  distanceM: z.number().positive().max(100).nullable().default(null),
+  /** null when the values are field strength already. */
+  pathId: publicId.nullable(),
+  limitSetId: publicId,
+  valuesHold: z.enum(['receiver-input', 'field']),
+  /** Path terms that the reading already holds, by term id. */
+  alreadyCorrected: z.array(z.string().max(80)).max(20).default([]),
+  frequencyUnit: z.enum(['Hz', 'kHz', 'MHz', 'GHz']),
+  centreHz: z.number().nullable().default(null),
+  sweepIndex: z.int().min(0).default(0),
+  traces: z
+    .array(
+      z.strictObject({
+        index: z.int().min(0),
+        name: z.string().trim().min(1).max(80),
+        unit: levelUnit,
+        detector,
+        rbwHz: z.number().positive().nullable(),
+      }),
+    )
+    .min(1)
+    .max(6),
+  measuredAt: instant.nullable().default(null),
+});
+
+export const limitSegment = z.strictObject({
+  startHz: z.number(),
+  stopHz: z.number(),
+  startLimit: z.number(),
+  stopLimit: z.number(),
+  over: z.enum(['log-frequency', 'linear-frequency']),
+});
+export const limitLineView = z.strictObject({
+  id: publicId,
+  name: z.string(),
+  document: z.string(),
+  source: z.string(),
+  basis: z.string(),
+  revision: z.int(),
+  detector: lineDetector,
+  bandwidthHz: z.number(),
+  unit: lineUnit,
+  distanceM: z.number().nullable(),
+  segments: z.array(limitSegment),
+});
+
+export const dueState = z.enum(['in-date', 'due-soon', 'lapsed', 'not-calibrated']);
+export const pathItemView = z.strictObject({
+  role: z.string(),
+  identifier: z.string(),
+  description: z.string(),
+  calibratedOn: day.nullable(),
+  dueOn: day.nullable(),
+  due: dueState,
+});
+
+export const candidateView = z.strictObject({
+  rank: z.int(),
+  kind: z.enum(['peak', 'floor']),
+  traceIndex: z.int(),
+  lineId: publicId,
+  detector,
+  frequencyHz: z.number(),
+  fromHz: z.number(),
+  toHz: z.number(),
+  reading: z.number(),
+  level: z.number(),
+  limit: z.number(),
+  marginDb: z.number(),
+  uncertaintyDb: z.number(),
+  verdict,
+  because: z.string().nullable(),
+});
+
+export const traceView = z.strictObject({
+  index: z.int(),
+  name: z.string(),
+  detector,
+  unit: levelUnit,
+  rbwHz: z.number().nullable(),
+  /** The line this trace hangs from at its own zero; null when no line takes it. */
+  lineId: publicId.nullable(),
+});
+
+export const gapView = z.strictObject({
+  lineId: publicId,
+  fromHz: z.number(),
+  toHz: z.number(),
+  because: z.enum(['no-trace', 'no-factor', 'no-uncertainty', 'detector', 'gap']),
+});
+
+export const evaluationView = z.strictObject({
+  id: publicId,
+  engine: z.string(),
+  at: instant,
+  verdict,
+  counts: z.record(verdict, z.int()),
+  worst: candidateView.nullable(),
+  gaps: z.array(gapView),
+  /** Expanded uncertainty of this run as steps over frequency. */
+  uncertainty: z.array(z.strictObject({ startHz: z.number(), stopHz: z.number(), expandedDb: z.number() })),
+  decisionRule: z.string(),
+});
+
+export const sweepView = z.strictObject({
+  id: publicId,
+  version,
+  number: z.string(),
+  purpose,
+  port,
+  line: mainsLine.nullable(),
+  polarisation: polarisation.nullable(),
+  heightM: z.number().nullable(),
+  azimuthDeg: z.number().nullable(),
+  distanceM: z.number().nullable(),
+  operatingMode: z.string(),
+  keptAt: instant,
+  measuredAt: instant.nullable(),
+  by: person,
+  organisation: organisationRef,
+  job: z.strictObject({ id: publicId, number: z.string(), title: z.string() }),
+  sample: z.strictObject({ id: publicId, product: z.string(), code: z.string(), serial: z.string() }),
+  state: z.strictObject({ id: publicId, label: z.string(), description: z.string() }),
+  path: z
+    .strictObject({ id: publicId, code: z.string(), name: z.string(), revision: z.int(), items: z.array(pathItemView) })
+    .nullable(),
+  limitSet: z.strictObject({ id: publicId, name: z.string(), lines: z.array(limitLineView) }),
+  file: z.strictObject({ id: publicId, name: z.string(), bytes: z.int(), sha256: z.string() }),
+  valuesHold: z.enum(['receiver-input', 'field']),
+  points: z.int(),
+  firstHz: z.number(),
+  lastHz: z.number(),
+  stepHz: z.number().nullable(),
+  remarks: z.array(z.string()),
+  traces: z.array(traceView),
+  evaluation: evaluationView,
+  /** The port's verdict over every run of this sample state, and what is missing for it. */
+  portVerdict: z.strictObject({
+    verdict,
+    missing: z.array(z.string()),
+    runs: z.array(z.strictObject({ id: publicId, number: z.string() })),
+  }),
+});
+export type SweepView = z.infer<typeof sweepView>;
+export type CandidateView = z.infer<typeof candidateView>;
+export type LimitLineView = z.infer<typeof limitLineView>;
+
+export const windowQuery = z.strictObject({
+  fromHz: z.coerce.number().positive(),
+  toHz: z.coerce.number().positive(),
+  columns: z.coerce.number().int().min(16).max(4096).default(1024),
+});
+/** Extremes per log-frequency column; a column without a point is left out. Margins are null where there is no limit. */
+export const windowView = z.strictObject({
+  fromHz: z.number(),
+  toHz: z.number(),
+  columns: z.int(),
+  traces: z.array(
+    z.strictObject({
+      index: z.int(),
+      frequencyHz: z.array(z.number()),
+      levelMin: z.array(z.number().nullable()),
+      levelMax: z.array(z.number().nullable()),
+      marginMin: z.array(z.number().nullable()),
+      marginMax: z.array(z.number().nullable()),
+    }),
+  ),
+});
+export type WindowView = z.infer<typeof windowView>;
+
+export const workingQuery = z.strictObject({
+  frequencyHz: z.coerce.number().positive(),
+  trace: z.coerce.number().int().min(0),
+  line: publicId.optional(),
+});
+export const workingView = z.strictObject({
+  traceIndex: z.int(),
+  lineId: publicId.nullable(),
+  frequencyHz: z.number(),
+  terms: z.array(
+    z.strictObject({
+      sign: z.enum(['', '+', '−']),
+      figure: z.number(),
+      unit: z.string(),
+      name: z.string(),
+      /** Where it comes from: file and column, table, calibration date, limit revision. */
+      source: z.string(),
+      warning: z.string().nullable(),
+      applied: z.boolean(),
+      notAppliedBecause: z.string().nullable(),
+      table: z
+        .strictObject({
+          name: z.string(),
+          lowerHz: z.number(),
+          lowerDb: z.number(),
+          upperHz: z.number(),
+          upperDb: z.number(),
+        })
+        .nullable(),
+    }),
+  ),
+  level: z.number().nullable(),
+  levelUnit: lineUnit.nullable(),
+  limit: z.number().nullable(),
+  limitSource: z.string().nullable(),
+  marginDb: z.number().nullable(),
+  uncertaintyDb: z.number().nullable(),
+  verdict,
+  because: z.string().nullable(),
+});
+export type WorkingView = z.infer<typeof workingView>;
+
+export const sweepListItem = z.strictObject({
+  id: publicId,
+  number: z.string(),
+  jobNumber: z.string(),
+  product: z.string(),
+  state: z.string(),
+  port,
+  purpose,
+  line: mainsLine.nullable(),
+  polarisation: polarisation.nullable(),
+  keptAt: instant,
+  by: z.string(),
+  organisation: organisationRef,
+  verdict,
+  worst: z.strictObject({ frequencyHz: z.number(), marginDb: z.number() }).nullable(),
+  points: z.int(),
+});
