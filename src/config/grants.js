@@ -1,0 +1,92 @@
+'use strict';
+
+/*
+ * The rights of the restricted account (DATABASE_URL), table by table. Applied after every migrate by the account that
+ * owns the schema (DATABASE_MIGRATE_URL). There is no schema-wide grant: a table that is not named here cannot be
+ * reached at all, and applying fails until somebody decides what the application may do with it.
+ *
+ * Rows that are facts (audit entries, evaluations, blobs, revisions) get SELECT and INSERT only.
+ */
+
+const ALLOWED = ['SELECT', 'INSERT', 'UPDATE', 'DELETE'];
+
+/** Table privileges that are taken away when a table's row above does not name them. */
+const TABLE_PRIVILEGES = [
+  ...ALLOWED,
+  'CREATE',
+  'DROP',
+  'REFERENCES',
+  'INDEX',
+  'ALTER',
+  'CREATE VIEW',
+  'SHOW VIEW',
+  'TRIGGER',
+  'DELETE HISTORY',
+  'GRANT OPTION',
+];
+
+/** @type {Record<string, ReadonlyArray<'SELECT' | 'INSERT' | 'UPDATE' | 'DELETE'>>} */
+const RIGHTS = {
+  // read by /api/ready: is every migration this build knows applied?
+  SequelizeMeta: ['SELECT'],
+};
+
+const NO_SUCH_GRANT = [1141, 1147];
+
+/** Runs a REVOKE; that there was nothing to revoke is fine. */
+async function revoke(connection, sql) {
+  try {
+    await connection.query(sql);
+  } catch (error) {
+    if (!NO_SUCH_GRANT.includes(error.errno)) throw error;
+  }
+}
+
+/** `'user'@'host'` with both parts quoted. */
+function accountName(user, host) {
+  const quote = (text) => `'${text.replace(/[\\']/g, (c) => `\\${c}`)}'`;
+  return `${quote(user)}@${quote(host)}`;
+}
+
+/**
+ * Gives the restricted account exactly the rights of `rights`, on tables that exist. Grants first and revokes the rest
+ * afterwards, so that a running application never loses a right it keeps.
+ *
+ * @param {{ query(sql: string, values?: unknown[]): Promise<any> }} connection open, as the owner of the schema
+ * @param {string} user name of the restricted account
+ * @param {string[]} hosts host parts of that account, e.g. ['127.0.0.1', 'localhost']
+ * @param {string} database name of the schema
+ * @param {Record<string, readonly string[]>} [rights] the map above unless a test passes its own
+ * @returns {Promise<number>} how many tables were granted
+ * @throws {Error} when a table of the schema is not named in `rights`, or a right is not one of the four allowed
+ */
+async function applyGrants(connection, user, hosts, database, rights = RIGHTS) {
+  for (const [table, list] of Object.entries(rights)) {
+    const odd = list.filter((right) => !ALLOWED.includes(right));
+    if (odd.length) throw new Error(`grants: ${odd.join(', ')} on ${table} is not one of ${ALLOWED.join(', ')}`);
+  }
+  const rows = await connection.query('SELECT table_name AS name FROM information_schema.tables WHERE table_schema = ?', [
+    database,
+  ]);
+  const tables = rows.map((row) => row.name).sort();
+  const unnamed = tables.filter((table) => !Object.prototype.hasOwnProperty.call(rights, table));
+  if (unnamed.length) {
+    throw new Error(
+      `grants: ${unnamed.join(', ')} not named in src/config/grants.js; add a row with the rights the application needs`,
+    );
+  }
+  for (const host of hosts) {
+    const account = accountName(user, host);
+    for (const table of tables) {
+      const granted = rights[table];
+      const target = `\`${database}\`.\`${table}\``;
+      if (granted.length) await connection.query(`GRANT ${granted.join(', ')} ON ${target} TO ${account}`);
+      const rest = TABLE_PRIVILEGES.filter((right) => !granted.includes(right));
+      await revoke(connection, `REVOKE ${rest.join(', ')} ON ${target} FROM ${account}`);
+    }
+    await revoke(connection, `REVOKE ALL PRIVILEGES, GRANT OPTION ON \`${database}\`.* FROM ${account}`);
+  }
+  return tables.length;
+}
+
+module.exports = { RIGHTS, applyGrants };
