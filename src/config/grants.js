@@ -29,6 +29,44 @@ const TABLE_PRIVILEGES = [
 const RIGHTS = {
   // read by /api/ready: is every migration this build knows applied?
   SequelizeMeta: ['SELECT'],
+
+  // state that changes
+  organisations: ['SELECT', 'INSERT', 'UPDATE'],
+  users: ['SELECT', 'INSERT', 'UPDATE'],
+  authenticators: ['SELECT', 'INSERT', 'UPDATE', 'DELETE'],
+  sessions: ['SELECT', 'INSERT', 'UPDATE', 'DELETE'],
+  throttles: ['SELECT', 'INSERT', 'UPDATE', 'DELETE'],
+  api_tokens: ['SELECT', 'INSERT', 'UPDATE'],
+  idempotency_keys: ['SELECT', 'INSERT', 'DELETE'],
+  audit_chains: ['SELECT', 'INSERT', 'UPDATE'],
+  outbox: ['SELECT', 'INSERT', 'UPDATE', 'DELETE'],
+  counters: ['SELECT', 'INSERT', 'UPDATE'],
+  settings: ['SELECT', 'INSERT', 'UPDATE'],
+  products: ['SELECT', 'INSERT', 'UPDATE'],
+  jobs: ['SELECT', 'INSERT', 'UPDATE'],
+  samples: ['SELECT', 'INSERT', 'UPDATE'],
+  modification_states: ['SELECT', 'INSERT', 'UPDATE'],
+  equipment: ['SELECT', 'INSERT', 'UPDATE'],
+  signal_paths: ['SELECT', 'INSERT', 'UPDATE'],
+  limit_sets: ['SELECT', 'INSERT', 'UPDATE'],
+  sweeps: ['SELECT', 'INSERT', 'UPDATE'],
+  // files that nobody has kept yet; housekeeping removes them
+  uploads: ['SELECT', 'INSERT', 'DELETE'],
+  upload_parts: ['SELECT', 'INSERT', 'DELETE'],
+
+  // facts: written once
+  audit_entries: ['SELECT', 'INSERT'],
+  calibrations: ['SELECT', 'INSERT'],
+  factor_table_revisions: ['SELECT', 'INSERT'],
+  signal_path_revisions: ['SELECT', 'INSERT'],
+  limit_line_revisions: ['SELECT', 'INSERT'],
+  sweep_files: ['SELECT', 'INSERT'],
+  sweep_file_parts: ['SELECT', 'INSERT'],
+  sweep_segments: ['SELECT', 'INSERT'],
+  trace_segments: ['SELECT', 'INSERT'],
+  evaluations: ['SELECT', 'INSERT'],
+  evaluation_candidates: ['SELECT', 'INSERT'],
+  evaluation_layers: ['SELECT', 'INSERT'],
 };
 
 const NO_SUCH_GRANT = [1141, 1147];
@@ -84,7 +122,8 @@ async function applyGrants(connection, user, hosts, database, rights = RIGHTS) {
       const rest = TABLE_PRIVILEGES.filter((right) => !granted.includes(right));
       await revoke(connection, `REVOKE ${rest.join(', ')} ON ${target} FROM ${account}`);
     }
-    await revoke(connection, `REVOKE ALL PRIVILEGES, GRANT OPTION ON \`${database}\`.* FROM ${account}`);
+    await revoke(connection, `REVOKE ALL PRIVILEGES ON \`${database}\`.* FROM ${account}`);
+    await revoke(connection, `REVOKE GRANT OPTION ON \`${database}\`.* FROM ${account}`);
   }
   return tables.length;
 }
