@@ -1,0 +1,15 @@
+'use strict';
+
+module.exports = {
+  async up(queryInterface) {
+    await queryInterface.sequelize.query(`CREATE TABLE \`audit_chains\` (
+      \`scope\` VARCHAR(40) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
+      \`length\` BIGINT UNSIGNED NOT NULL,
+      \`head\` CHAR(64) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
+      PRIMARY KEY (\`scope\`)
+    ) ENGINE=InnoDB DEFAULT CHARSET=utf8mb4 COLLATE=utf8mb4_unicode_ci`);
+  },
+  async down(queryInterface) {
+    await queryInterface.dropTable('audit_chains');
+  },
+};

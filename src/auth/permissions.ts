@@ -1,0 +1,48 @@
+export type Role = 'manager' | 'technician' | 'designer';
+export type TokenScope = 'read' | 'upload';
+
+interface Rule {
+  roles: readonly Role[];
+  /** The token scope that may do this for its owner; null: only a person at a browser. */
+  token: TokenScope | null;
+}
+
+const everyone = ['manager', 'technician', 'designer'] as const;
+const lab = ['manager', 'technician'] as const;
+const manager = ['manager'] as const;
+
+/** The one table of who may do what. Which records they may do it to is decided by organisation in each service. */
+export const PERMISSIONS = {
+  'session.end': { roles: everyone, token: null },
+  'session.list': { roles: everyone, token: null },
+  'organisation.list': { roles: lab, token: 'read' },
+  'product.list': { roles: everyone, token: 'read' },
+  'product.read': { roles: everyone, token: 'read' },
+  'product.create': { roles: lab, token: null },
+  'product.change': { roles: lab, token: null },
+  'job.list': { roles: everyone, token: 'read' },
+  'job.read': { roles: everyone, token: 'read' },
+  'job.create': { roles: lab, token: null },
+  'job.change': { roles: manager, token: null },
+  'sample.list': { roles: everyone, token: 'read' },
+  'sample.read': { roles: everyone, token: 'read' },
+  'sample.create': { roles: lab, token: null },
+  'sample.change': { roles: lab, token: null },
+  'state.create': { roles: lab, token: null },
+  'state.change': { roles: lab, token: null },
+  'path.list': { roles: lab, token: 'read' },
+  'limit-set.list': { roles: everyone, token: 'read' },
+  'equipment.list': { roles: lab, token: 'read' },
+  'sweep-file.create': { roles: lab, token: 'upload' },
+  'sweep-file.read': { roles: lab, token: 'upload' },
+  'sweep.keep': { roles: lab, token: 'upload' },
+  'sweep.list': { roles: everyone, token: 'read' },
+  'sweep.read': { roles: everyone, token: 'read' },
+  'audit.read': { roles: lab, token: 'read' },
+} as const satisfies Record<string, Rule>;
+
+export type Permission = keyof typeof PERMISSIONS;
+
+export function mayRole(role: Role, permission: Permission): boolean {
+  return (PERMISSIONS[permission].roles as readonly Role[]).includes(role);
+}

@@ -1,0 +1,50 @@
+import { ApiToken } from './apiToken';
+import { AuditEntry } from './auditEntry';
+import { Calibration } from './calibration';
+import { Equipment } from './equipment';
+import { Evaluation } from './evaluation';
+import { FactorTableRevision } from './factorTableRevision';
+import { Job } from './job';
+import { LimitSet } from './limitSet';
+import { ModificationState } from './modificationState';
+import { Organisation } from './organisation';
+import { Product } from './product';
+import { Sample } from './sample';
+import { Session } from './session';
+import { SignalPath } from './signalPath';
+import { SignalPathRevision } from './signalPathRevision';
+import { Sweep } from './sweep';
+import { SweepFile } from './sweepFile';
+import { User } from './user';
+
+/** Wires the models to one another; they never import each other. */
+export function associate(): void {
+  User.belongsTo(Organisation, { as: 'organisation', foreignKey: 'organisationId' });
+  Session.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  ApiToken.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  AuditEntry.belongsTo(User, { as: 'actor', foreignKey: 'actorId' });
+
+  Product.belongsTo(Organisation, { as: 'organisation', foreignKey: 'organisationId' });
+  Job.belongsTo(Organisation, { as: 'organisation', foreignKey: 'organisationId' });
+  Job.belongsTo(Product, { as: 'product', foreignKey: 'productId' });
+  Job.hasMany(Sample, { as: 'samples', foreignKey: 'jobId' });
+  Sample.belongsTo(Job, { as: 'job', foreignKey: 'jobId' });
+  Sample.hasMany(ModificationState, { as: 'states', foreignKey: 'sampleId' });
+  ModificationState.belongsTo(Sample, { as: 'sample', foreignKey: 'sampleId' });
+
+  Equipment.hasMany(Calibration, { as: 'calibrations', foreignKey: 'equipmentId' });
+  Equipment.hasMany(FactorTableRevision, { as: 'tables', foreignKey: 'equipmentId' });
+  FactorTableRevision.belongsTo(Equipment, { as: 'equipment', foreignKey: 'equipmentId' });
+  FactorTableRevision.belongsTo(Calibration, { as: 'calibration', foreignKey: 'calibrationId' });
+  SignalPath.hasMany(SignalPathRevision, { as: 'revisions', foreignKey: 'signalPathId' });
+  SignalPathRevision.belongsTo(SignalPath, { as: 'path', foreignKey: 'signalPathId' });
+
+  Sweep.belongsTo(ModificationState, { as: 'state', foreignKey: 'stateId' });
+  ModificationState.hasMany(Sweep, { as: 'sweeps', foreignKey: 'stateId' });
+  Sweep.belongsTo(SweepFile, { as: 'file', foreignKey: 'sweepFileId' });
+  Sweep.belongsTo(SignalPathRevision, { as: 'pathRevision', foreignKey: 'pathRevisionId' });
+  Sweep.belongsTo(LimitSet, { as: 'limitSet', foreignKey: 'limitSetId' });
+  Sweep.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  Sweep.belongsTo(Evaluation, { as: 'evaluation', foreignKey: 'evaluationId', constraints: false });
+  Evaluation.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
+}

@@ -1,0 +1,50 @@
+import { AsyncLocalStorage } from 'node:async_hooks';
+import { Sequelize } from 'sequelize';
+import { connectionOptions } from '@/config/database';
+import { env } from '@/config/env';
+import { associate } from './associations';
+import { defineModels } from './define';
+
+/** What one unit of work carries along: its transaction (for Sequelize) and what is written just before it commits. */
+const scope = new AsyncLocalStorage<Map<string, unknown>>();
+
+/** Lets every query inside a unit of work find its transaction without passing it by hand. */
+const namespace = {
+  get: (key: string) => scope.getStore()?.get(key),
+  set: (key: string, value: unknown) => scope.getStore()?.set(key, value),
+  run: (work: () => unknown) => scope.run(new Map(), work),
+  bind: <F>(work: F): F => work,
+};
+
+const holder = globalThis as typeof globalThis & { stillfieldDatabase?: Sequelize };
+let defined = false;
+
+/** The one pool of this process; the models of this bundle are ready to use once it has been called. */
+export function database(): Sequelize {
+  if (!holder.stillfieldDatabase) {
+    Sequelize.useCLS(namespace);
+    const sequelize = new Sequelize(connectionOptions(env().DATABASE_URL));
+    sequelize.addHook('beforeQuery', () => {
+      if (!scope.getStore()?.get('transaction')) throw new Error('A query ran outside a unit of work');
+    });
+    holder.stillfieldDatabase = sequelize;
+  }
+  if (!defined) {
+    defineModels(holder.stillfieldDatabase);
+    associate();
+    defined = true;
+  }
+  return holder.stillfieldDatabase;
+}
+
+export function unitScope(): Map<string, unknown> | undefined {
+  return scope.getStore();
+}
+
+/** Ends the pool; tests and short-lived commands call it last. */
+export async function closeDatabase(): Promise<void> {
+  const open = holder.stillfieldDatabase;
+  holder.stillfieldDatabase = undefined;
+  defined = false;
+  if (open) await open.close();
+}

@@ -1,0 +1,38 @@
+import type { FactorQuantity, LevelUnit, Detector } from '@/emc/kinds';
+import type { UncertaintyStep } from '@/emc/types';
+
+/** Shapes of the JSON columns. They are written once and never migrated, so fields are only ever added. */
+
+export type TokenScope = 'read' | 'upload';
+
+/** One item along a signal path, from the sample to the receiver. Tables may differ by polarisation. */
+export interface StoredPathItem {
+  equipmentId: string;
+  role: string;
+  /** Names the term in an addition, e.g. `antenna factor`; null for an item that adds nothing, such as the receiver. */
+  term: string | null;
+  quantity: FactorQuantity | null;
+  tables: { horizontal: string | null; vertical: string | null; any: string | null };
+}
+
+export interface StoredUncertainty {
+  prescan: UncertaintyStep[];
+  final: UncertaintyStep[];
+}
+
+/** How the file was read when it was kept: enough to read it again to the same numbers. */
+export interface StoredReading {
+  frequencyUnit: 'Hz' | 'kHz' | 'MHz' | 'GHz';
+  centreHz: number | null;
+  alreadyCorrected: string[];
+  traces: { index: number; name: string; unit: LevelUnit; detector: Detector; rbwHz: number | null }[];
+  remarks: string[];
+}
+
+/** The revisions an evaluation used, by public id. */
+export interface StoredInputs {
+  pathRevision: string | null;
+  factorTables: { term: string; table: string; applied: boolean }[];
+  limitLines: string[];
+  uncertaintyOf: string | null;
+}
