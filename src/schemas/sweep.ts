@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { operation } from './operation';
 import {
   detector,
   instant,
@@ -8,6 +9,8 @@ import {
   lineUnit,
   mainsLine,
   organisationRef,
+  pageOf,
+  pageQuery,
   person,
   polarisation,
   port,
@@ -256,4 +259,82 @@ export const sweepListItem = z.strictObject({
   verdict,
   worst: z.strictObject({ frequencyHz: z.number(), marginDb: z.number() }).nullable(),
   points: z.int(),
+});
+
+/* Operations. */
+
+const sweepParams = z.strictObject({ id: publicId });
+export const keepSweepOperation = operation({
+  id: 'keepSweep',
+  method: 'POST',
+  path: '/api/sweeps',
+  summary: 'Keep an uploaded file as a run of a sample state and evaluate it',
+  permission: 'sweep.keep',
+  status: 201,
+  body: keepSweep,
+  reply: sweepView,
+  idempotent: true,
+});
+export const listSweeps = operation({
+  id: 'listSweeps',
+  method: 'GET',
+  path: '/api/sweeps',
+  summary: 'Runs, newest first',
+  permission: 'sweep.list',
+  status: 200,
+  query: z.strictObject({ ...pageQuery.shape, sampleId: publicId.optional(), stateId: publicId.optional() }),
+  reply: pageOf(sweepListItem),
+});
+export const readSweep = operation({
+  id: 'readSweep',
+  method: 'GET',
+  path: '/api/sweeps/{id}',
+  summary: 'One run with its evaluation',
+  permission: 'sweep.read',
+  status: 200,
+  params: sweepParams,
+  reply: sweepView,
+});
+export const readWindow = operation({
+  id: 'readWindow',
+  method: 'GET',
+  path: '/api/sweeps/{id}/window',
+  summary: 'Extremes of level and margin per log-frequency column of a range',
+  permission: 'sweep.read',
+  status: 200,
+  params: sweepParams,
+  query: windowQuery,
+  reply: windowView,
+});
+export const listCandidates = operation({
+  id: 'listCandidates',
+  method: 'GET',
+  path: '/api/sweeps/{id}/candidates',
+  summary: 'Candidates of a run, worst first',
+  permission: 'sweep.read',
+  status: 200,
+  params: sweepParams,
+  query: pageQuery,
+  reply: z.strictObject({ total: z.int(), items: z.array(candidateView), next: z.string().nullable() }),
+});
+export const readWorking = operation({
+  id: 'readWorking',
+  method: 'GET',
+  path: '/api/sweeps/{id}/working',
+  summary: 'How the level and margin at the nearest measured point came about',
+  permission: 'sweep.read',
+  status: 200,
+  params: sweepParams,
+  query: workingQuery,
+  reply: workingView,
+});
+export const downloadSweepFile = operation({
+  id: 'downloadSweepFile',
+  method: 'GET',
+  path: '/api/sweeps/{id}/file',
+  summary: 'The original file, byte for byte',
+  permission: 'sweep.read',
+  status: 200,
+  params: sweepParams,
+  download: true,
 });

@@ -106,7 +106,12 @@ export interface HistoryEntry {
 }
 
 /** What happened to one record, newest first. The caller has shown that it may see the record. */
-export async function historyOf(actor: Actor, subjectType: string, subjectId: string, limit = 50): Promise<HistoryEntry[]> {
+export async function historyOf(
+  actor: Actor,
+  subjectType: string,
+  subjectId: string,
+  limit = 50,
+): Promise<HistoryEntry[]> {
   authorise(actor, 'audit.read');
   return unitOfWork(async () => {
     const entries = await AuditEntry.findAll({

@@ -1,0 +1,177 @@
+import type { z } from 'zod';
+import type { Actor } from '@/auth/actor';
+import { mayRole } from '@/auth/permissions';
+import { env } from '@/config/env';
+import { DomainError, Forbidden, Invalid, Unauthenticated, type Issue } from '@/errors';
+import type { Operation } from '@/schemas/operation';
+import { once } from '@/services/idempotency';
+import { actorOf } from '@/services/sessions';
+import { issuesOf, problemOf, problemResponse } from './problem';
+import { securityLog } from './securityLog';
+
+export interface Context<P, Q, B> {
+  actor: Actor | null;
+  params: P;
+  query: Q;
+  body: B;
+  /** The version named in If-Match; set whenever the operation asks for it. */
+  version: number;
+  request: Request;
+  address: string;
+  agent: string;
+  /** Headers to add to the reply, e.g. a cookie. */
+  headers: Headers;
+}
+
+type Out<T> = T extends z.ZodType ? z.output<T> : undefined;
+type Extra = { params?: Promise<Record<string, string | string[] | undefined>> };
+export type RouteHandler = ((request: Request, extra?: Extra) => Promise<Response>) & { operation: Operation };
+
+const MAX_JSON_BYTES = 1024 * 1024;
+
+/** Turns a declared operation and the use-case it calls into a Next.js route handler. */
+export function handle<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType, R extends z.ZodType>(
+  op: Operation<P, Q, B, R>,
+  run: (context: Context<Out<P>, Out<Q>, Out<B>>) => Promise<unknown>,
+): RouteHandler {
+  const route = async (request: Request, extra?: Extra): Promise<Response> => {
+    const address = request.headers.get('x-forwarded-for')?.split(',')[0]?.trim() || '127.0.0.1';
+    let actor: Actor | null = null;
+    try {
+      actor = await actorOf(request.headers, address);
+      checkOrigin(request, op, actor);
+      if (op.permission !== null) {
+        // The service authorises too; this keeps a stranger from learning how a body is judged.
+        if (!actor) throw new Unauthenticated();
+        if (!mayRole(actor.role, op.permission)) throw new Forbidden();
+      }
+      const context: Context<Out<P>, Out<Q>, Out<B>> = {
+        actor,
+        ...(await readInput(op, request, extra)),
+        request,
+        address,
+        agent: (request.headers.get('user-agent') ?? '').slice(0, 200),
+        headers: new Headers({ 'cache-control': 'no-store' }),
+      };
+      const key = op.idempotent ? readKey(request) : null;
+      let reply: unknown;
+      if (key && actor) {
+        const done = await once(actor, key, op.id, [context.params, context.body], op.status, () => run(context));
+        if (done.repeated) context.headers.set('idempotency-replayed', 'true');
+        reply = done.reply;
+      } else {
+        reply = await run(context);
+      }
+      return respond(op, reply, context.headers);
+    } catch (error) {
+      return refuse(error, op, actor, address);
+    }
+  };
+  return Object.assign(route, { operation: op as unknown as Operation });
+}
+
+function respond(op: Operation, reply: unknown, headers: Headers): Response {
+  if (reply instanceof Response) return reply;
+  if (op.status === 204) return new Response(null, { status: 204, headers });
+  const checked = op.reply ? op.reply.parse(reply) : reply;
+  headers.set('content-type', 'application/json');
+  const version = (checked as { version?: unknown })?.version;
+  if (typeof version === 'number') headers.set('etag', `"${version}"`);
+  return new Response(JSON.stringify(checked), { status: op.status, headers });
+}
+
+/** A write that a cookie authorises must come from our own pages; a bearer token needs no such proof. */
+function checkOrigin(request: Request, op: Operation, actor: Actor | null): void {
+  if (op.method === 'GET' || actor?.via.kind === 'token') return;
+  const origin = request.headers.get('origin');
+  if (origin === env().APP_ORIGIN) return;
+  if (!actor && origin === null) return;
+  throw new Forbidden('This request did not come from a Stillfield page.');
+}
+
+async function readInput<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType>(
+  op: Operation<P, Q, B>,
+  request: Request,
+  extra?: Extra,
+): Promise<{ params: Out<P>; query: Out<Q>; body: Out<B>; version: number }> {
+  const issues: Issue[] = [];
+  const check = <T extends z.ZodType>(schema: T | undefined, value: unknown, at: string): Out<T> => {
+    if (!schema) return undefined as Out<T>;
+    const result = schema.safeParse(value);
+    if (result.success) return result.data as Out<T>;
+    issues.push(...issuesOf(result.error).map((issue) => ({ ...issue, pointer: at + issue.pointer })));
+    return undefined as Out<T>;
+  };
+  const params = check(op.params, (await extra?.params) ?? {}, '/path');
+  const query = check(op.query, Object.fromEntries(new URL(request.url).searchParams), '/query');
+  const body = op.body ? check(op.body, await readJson(request), '') : (undefined as Out<B>);
+  if (issues.length) throw new Invalid(issues);
+  return { params, query, body, version: op.ifMatch ? readVersion(request) : 0 };
+}
+
+class HttpRefusal extends DomainError {
+  constructor(
+    readonly kind: string,
+    message: string,
+  ) {
+    super(message);
+  }
+}
+
+async function readJson(request: Request): Promise<unknown> {
+  const type = request.headers.get('content-type') ?? '';
+  if (!/^application\/json\b/i.test(type)) throw new HttpRefusal('media-type', 'Send the body as application/json.');
+  if (Number(request.headers.get('content-length') ?? 0) > MAX_JSON_BYTES) {
+    throw new HttpRefusal('too-large', 'A JSON body takes at most 1 MB.');
+  }
+  const text = await request.text();
+  if (text.length > MAX_JSON_BYTES) throw new HttpRefusal('too-large', 'A JSON body takes at most 1 MB.');
+  try {
+    return JSON.parse(text);
+  } catch {
+    throw new Invalid([{ pointer: '', message: 'is not JSON' }]);
+  }
+}
+
+function readVersion(request: Request): number {
+  const match = /^"?(\d{1,9})"?$/.exec(request.headers.get('if-match') ?? '');
+  if (!match) {
+    throw new HttpRefusal('version-needed', 'Name the version you changed in If-Match, as the ETag of your last read.');
+  }
+  return Number(match[1]);
+}
+
+function readKey(request: Request): string | null {
+  const key = request.headers.get('idempotency-key');
+  if (key === null) return null;
+  if (!/^[\x21-\x7e]{8,80}$/.test(key)) {
+    throw new Invalid([{ pointer: '/header/idempotency-key', message: 'takes 8 to 80 visible ASCII characters' }]);
+  }
+  return key;
+}
+
+const DATABASE_GONE = /^SequelizeConnection|^SequelizeHostNot|^SequelizeAccessDenied/;
+
+function refuse(error: unknown, op: Operation, actor: Actor | null, address: string): Response {
+  if (error instanceof DomainError) {
+    if (error.kind === 'unauthenticated' || error.kind === 'forbidden' || error.kind === 'throttled') {
+      const event = error.kind === 'throttled' ? 'throttled' : 'denied';
+      securityLog({ event, userId: actor?.publicId ?? null, operation: op.id, address, detail: error.kind });
+    }
+    return problemOf(error);
+  }
+  const name = (error as Error)?.name ?? '';
+  if (DATABASE_GONE.test(name)) {
+    securityLog({ event: 'error', operation: op.id, address, status: 503, detail: name });
+    return problemResponse(
+      'unavailable',
+      'Nothing was changed. Try again in a few seconds.',
+      {},
+      { 'retry-after': '5' },
+    );
+  }
+  const detail = error instanceof Error ? `${error.name}: ${error.message}`.slice(0, 400) : 'unknown';
+  securityLog({ event: 'error', userId: actor?.publicId ?? null, operation: op.id, address, status: 500, detail });
+  if (process.env.STILLFIELD_TRACE) console.error(error);
+  return problemResponse('internal', 'Nothing was changed. The lab’s log holds the cause.');
+}

@@ -1,0 +1,180 @@
+import { z } from 'zod';
+import { detector, levelUnit, mainsLine, polarisation, publicId, purpose } from './common';
+import { operation } from './operation';
+
+/* What was recognised in a file, as src/ingest answers it; the upload sheet shows all of it. */
+
+const frequencyUnit = z.enum(['Hz', 'kHz', 'MHz', 'GHz']);
+const line = z.int().nullable();
+const text = z.string().nullable();
+const number = z.number().nullable();
+
+export const recognitionView = z.strictObject({
+  kind: z.enum(['sweep', 'factor-table', 'refused']),
+  refusal: z.strictObject({ line, found: z.string(), expected: z.string(), message: z.string() }).nullable(),
+  encoding: z.string(),
+  lineEnds: z.string(),
+  delimiter: z.string(),
+  decimalMark: z.enum(['.', ',']),
+  thousandsMark: text,
+  layout: z.enum(['pairs', 'hop-rows', 'time-rows']),
+  preambleLines: z.int(),
+  headerLine: line,
+  firstDataLine: z.int(),
+  lastDataLine: z.int(),
+  columns: z.array(
+    z.strictObject({
+      index: z.int(),
+      heading: text,
+      role: z.enum(['frequency', 'level', 'blank', 'time', 'phase', 'other']),
+      evidence: z.string(),
+    }),
+  ),
+  frequency: z.strictObject({
+    column: z.int().nullable(),
+    unit: frequencyUnit.nullable(),
+    unitEvidence: text,
+    proposedUnit: frequencyUnit,
+    offset: z.boolean(),
+    firstHz: z.number(),
+    lastHz: z.number(),
+    points: z.int(),
+    ascending: z.boolean(),
+    duplicates: z.int(),
+    stepHz: z.number(),
+    evenStep: z.boolean(),
+  }),
+  traces: z.array(
+    z.strictObject({
+      index: z.int(),
+      column: z.int(),
+      name: z.string(),
+      unit: levelUnit.nullable(),
+      unitEvidence: text,
+      detector: detector.nullable(),
+      detectorAsWritten: text,
+      mode: text,
+      blank: z.boolean(),
+      linear: z.boolean(),
+      first: z.number(),
+      last: z.number(),
+      min: z.number(),
+      minAtHz: z.number(),
+      max: z.number(),
+      maxAtHz: z.number(),
+    }),
+  ),
+  sweeps: z.array(z.strictObject({ name: z.string(), startedAt: text })),
+  settings: z.strictObject({
+    rbwHz: number,
+    rbwShape: z.enum(['6 dB', '3 dB']).nullable(),
+    vbwHz: number,
+    vbwEnabled: z.boolean().nullable(),
+    sweepTimeS: number,
+    dwellTimeS: number,
+    attenuationDb: number,
+    referenceLevel: number,
+    preamplifier: z.enum(['on', 'off']).nullable(),
+    startHz: number,
+    stopHz: number,
+    declaredPoints: number,
+  }),
+  correctedFor: z.array(z.strictObject({ what: z.string(), evidence: z.string(), line: z.int() })),
+  questions: z.array(
+    z.strictObject({
+      key: z.enum([
+        'frequencyUnit',
+        'levelUnit',
+        'centreHz',
+        'detector',
+        'rbwHz',
+        'alreadyCorrected',
+        'sweepIndex',
+        'lossOrGain',
+      ]),
+      text: z.string(),
+      proposal: text,
+      traceIndex: z.int().nullable(),
+    }),
+  ),
+  remarks: z.array(z.strictObject({ text: z.string(), line })),
+  preview: z.array(
+    z.strictObject({
+      line: z.int(),
+      text: z.string(),
+      role: z.enum(['preamble', 'heading', 'row']),
+      cells: z.array(z.string()).nullable(),
+    }),
+  ),
+});
+export type RecognitionView = z.infer<typeof recognitionView>;
+
+export const sweepFileView = z.strictObject({
+  id: publicId,
+  name: z.string(),
+  bytes: z.int(),
+  sha256: z.string(),
+  recognition: recognitionView,
+  /** Runs that were already kept from the same bytes. */
+  repeats: z.array(z.strictObject({ sweepId: publicId, number: z.string() })),
+  /** What the file's name suggests; proposals only. */
+  proposals: z.strictObject({
+    polarisation: polarisation.nullable(),
+    line: mainsLine.nullable(),
+    heightM: number,
+    state: text,
+    purpose: purpose.nullable(),
+  }),
+});
+export type SweepFileView = z.infer<typeof sweepFileView>;
+
+export const previewQuery = z.strictObject({
+  columns: z.coerce.number().int().min(16).max(2048).default(512),
+  frequencyUnit: frequencyUnit.optional(),
+  centreHz: z.coerce.number().optional(),
+  sweepIndex: z.coerce.number().int().min(0).default(0),
+});
+/** The file as read, before any correction: extremes per log-frequency column. */
+export const previewView = z.strictObject({
+  traces: z.array(
+    z.strictObject({
+      index: z.int(),
+      frequencyHz: z.array(z.number()),
+      levelMin: z.array(z.number()),
+      levelMax: z.array(z.number()),
+    }),
+  ),
+});
+
+export const createSweepFile = operation({
+  id: 'createSweepFile',
+  method: 'POST',
+  path: '/api/sweep-files',
+  summary: 'Upload a sweep file (at most 100 MB); answers what was recognised in it. It is held for a day',
+  permission: 'sweep-file.create',
+  status: 201,
+  reply: sweepFileView,
+  upload: true,
+});
+const fileParams = z.strictObject({ id: publicId });
+export const readSweepFile = operation({
+  id: 'readSweepFile',
+  method: 'GET',
+  path: '/api/sweep-files/{id}',
+  summary: 'What was recognised in an uploaded file',
+  permission: 'sweep-file.read',
+  status: 200,
+  params: fileParams,
+  reply: sweepFileView,
+});
+export const previewSweepFile = operation({
+  id: 'previewSweepFile',
+  method: 'GET',
+  path: '/api/sweep-files/{id}/preview',
+  summary: 'The uploaded file as it will be drawn',
+  permission: 'sweep-file.read',
+  status: 200,
+  params: fileParams,
+  query: previewQuery,
+  reply: previewView,
+});

@@ -1,0 +1,57 @@
+import { createHash } from 'node:crypto';
+import type { Actor } from '@/auth/actor';
+import { Conflict } from '@/errors';
+import { IdempotencyKey } from '@/models/idempotencyKey';
+import { unitOfWork } from '@/models/unitOfWork';
+
+const KEPT_MS = 24 * 3600 * 1000;
+
+/**
+ * Does `work` once for a key of this user and stores its reply in the same transaction. A repeat answers the stored
+ * reply; the same key with another request is a Conflict. Two at once: one works, the other answers what it stored.
+ */
+export async function once<T>(
+  actor: Actor,
+  key: string,
+  operationId: string,
+  request: unknown,
+  status: number,
+  work: () => Promise<T>,
+): Promise<{ reply: T; repeated: boolean }> {
+  const requestHash = createHash('sha256')
+    .update(operationId)
+    .update('\n')
+    .update(JSON.stringify(request ?? null))
+    .digest('hex');
+  const stored = () => recall<T>(actor, key, requestHash);
+  const earlier = await stored();
+  if (earlier) return earlier;
+  try {
+    return await unitOfWork(async () => {
+      const reply = await work();
+      await IdempotencyKey.create({
+        userId: actor.userId,
+        key,
+        operation: operationId,
+        requestHash,
+        status,
+        reply: JSON.stringify(reply ?? null),
+        expiresAt: new Date(Date.now() + KEPT_MS),
+      });
+      return { reply, repeated: false };
+    });
+  } catch (error) {
+    const winner = await stored();
+    if (winner) return winner;
+    throw error;
+  }
+}
+
+async function recall<T>(actor: Actor, key: string, requestHash: string): Promise<{ reply: T; repeated: true } | null> {
+  const row = await unitOfWork(() => IdempotencyKey.findOne({ where: { userId: actor.userId, key } }));
+  if (!row) return null;
+  if (row.requestHash !== requestHash) {
+    throw new Conflict('This Idempotency-Key was used for another request. Send a new key with a new request.');
+  }
+  return { reply: JSON.parse(row.reply) as T, repeated: true };
+}
