@@ -103,9 +103,10 @@ async function applyGrants(connection, user, hosts, database, rights = RIGHTS) {
     const odd = list.filter((right) => !ALLOWED.includes(right));
     if (odd.length) throw new Error(`grants: ${odd.join(', ')} on ${table} is not one of ${ALLOWED.join(', ')}`);
   }
-  const rows = await connection.query('SELECT table_name AS name FROM information_schema.tables WHERE table_schema = ?', [
-    database,
-  ]);
+  const rows = await connection.query(
+    'SELECT table_name AS name FROM information_schema.tables WHERE table_schema = ?',
+    [database],
+  );
   const tables = rows.map((row) => row.name).sort();
   const unnamed = tables.filter((table) => !Object.prototype.hasOwnProperty.call(rights, table));
   if (unnamed.length) {

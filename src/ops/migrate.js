@@ -7,6 +7,7 @@
  */
 
 const { spawnSync } = require('node:child_process');
+const fs = require('node:fs');
 const path = require('node:path');
 const { Refusal, run, say } = require('./say');
 
@@ -15,7 +16,11 @@ const ROOT = path.resolve(__dirname, '../..');
 /** What a failed connection means, in one line that says how to mend it. Null when the error is something else. */
 function connectionRefusal(error, name) {
   const code = error?.code ?? error?.cause?.code ?? '';
-  if (['ECONNREFUSED', 'ENOTFOUND', 'EHOSTUNREACH', 'ENETUNREACH', 'ETIMEDOUT', 'ER_GET_CONNECTION_TIMEOUT'].includes(code)) {
+  if (
+    ['ECONNREFUSED', 'ENOTFOUND', 'EHOSTUNREACH', 'ENETUNREACH', 'ETIMEDOUT', 'ER_GET_CONNECTION_TIMEOUT'].includes(
+      code,
+    )
+  ) {
     return new Refusal(`The database server of ${name} is not reachable (${code}): start it, or correct ${name}.`);
   }
   if (/^ER_CONNECTION_TIMEOUT|^ER_SOCKET/.test(code)) {
@@ -25,7 +30,9 @@ function connectionRefusal(error, name) {
     return new Refusal(`The database server refuses the account of ${name}: correct its user or password.`);
   }
   if (code === 'ER_BAD_DB_ERROR') {
-    return new Refusal(`The schema of ${name} does not exist: create it once with CREATE DATABASE … CHARACTER SET utf8mb4.`);
+    return new Refusal(
+      `The schema of ${name} does not exist: create it once with CREATE DATABASE … CHARACTER SET utf8mb4.`,
+    );
   }
   return null;
 }
@@ -55,6 +62,16 @@ function sequelizeCli(migrateUrl, ...args) {
   return result.stdout;
 }
 
+/** Names of the migrations of this build that the schema has not seen. */
+async function pending(connection) {
+  const known = fs.readdirSync(path.join(ROOT, 'migrations')).filter((name) => name.endsWith('.js'));
+  const applied = await connection.query('SELECT name FROM SequelizeMeta').catch((error) => {
+    if (error.code === 'ER_NO_SUCH_TABLE') return [];
+    throw error;
+  });
+  return known.filter((name) => !applied.some((row) => row.name === name));
+}
+
 /**
  * Migrates and applies the rights.
  *
@@ -68,9 +85,11 @@ async function migrate({ migrateUrl, databaseUrl, tell = say, hosts }) {
   const { applyGrants } = require('../config/grants');
   const owner = await open(migrateUrl, 'DATABASE_MIGRATE_URL');
   try {
-    const printed = sequelizeCli(migrateUrl, 'db:migrate');
-    const migrated = (printed.match(/^== .*: migrated/gm) ?? []).length;
-    if (migrated) tell(`${migrated} migration${migrated === 1 ? '' : 's'} applied`);
+    const migrated = (await pending(owner)).length;
+    if (migrated) {
+      sequelizeCli(migrateUrl, 'db:migrate');
+      tell(`${migrated} migration${migrated === 1 ? '' : 's'} applied`);
+    }
     const { user, database } = parseDatabaseUrl(databaseUrl);
     const tables = await applyGrants(owner, user, hosts ?? [await hostOf(databaseUrl)], database);
     return { migrated, tables };

@@ -38,7 +38,11 @@ function programs(tell) {
     client: findProgram('mariadb', 'mysql'),
   });
   if (Object.values(find()).includes(null)) {
-    installPackages(['mariadb-server'], 'set DATABASE_URL and DATABASE_MIGRATE_URL to a MariaDB you already have', tell);
+    installPackages(
+      ['mariadb-server'],
+      'set DATABASE_URL and DATABASE_MIGRATE_URL to a MariaDB you already have',
+      tell,
+    );
   }
   const found = find();
   if (Object.values(found).includes(null)) {
@@ -152,7 +156,10 @@ function initialStatements(kept, database, pattern) {
 /** The last error line of the server's log, for a refusal. */
 function lastError(log) {
   if (!fs.existsSync(log)) return 'it left no log';
-  const errors = fs.readFileSync(log, 'utf8').split('\n').filter((line) => line.includes('[ERROR]'));
+  const errors = fs
+    .readFileSync(log, 'utf8')
+    .split('\n')
+    .filter((line) => line.includes('[ERROR]'));
   return errors.at(-1)?.replace(/^.*\[ERROR\]\s*/, '') ?? `see ${log}`;
 }
 
@@ -288,7 +295,17 @@ async function stopDatabase(state) {
   fs.rmSync(note, { force: true });
 }
 
-module.exports = { APPLICATION, HOSTS, OWNER, findProgram, portIsFree, secrets, startDatabase, stopDatabase };
+module.exports = {
+  APPLICATION,
+  HOSTS,
+  OWNER,
+  findProgram,
+  makeState,
+  portIsFree,
+  secrets,
+  startDatabase,
+  stopDatabase,
+};
 
 if (require.main === module) {
   run(async () => {

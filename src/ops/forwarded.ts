@@ -1,0 +1,71 @@
+import type { IncomingHttpHeaders } from 'node:http';
+import { type BlockList, isIP } from 'node:net';
+import { containsAddress, plainAddress } from '@/config/addresses';
+
+/** What the rest of the product may believe about where a request came from. */
+export interface Forwarded {
+  /** one address: the client's, as far as trusted machines vouch for it */
+  address: string;
+  proto: 'http' | 'https';
+  host: string;
+}
+
+const HEADERS = [
+  'forwarded',
+  'x-forwarded-for',
+  'x-forwarded-host',
+  'x-forwarded-port',
+  'x-forwarded-proto',
+  'x-real-ip',
+];
+
+const last = (value: string | string[] | undefined): string =>
+  String(value ?? '')
+    .split(',')
+    .at(-1)
+    ?.trim() ?? '';
+
+/**
+ * The client of a request. A peer that is no trusted proxy is itself the client and its forwarding headers count for
+ * nothing. Behind trusted proxies it is the right-most address of X-Forwarded-For that is not a trusted proxy: every
+ * entry to its left was written by somebody nobody vouches for. An entry that is no address ends the walk.
+ *
+ * @param peer address of the socket
+ * @param headers as received
+ * @param trusted ranges of TRUSTED_PROXIES
+ */
+export function forwarded(
+  peer: string,
+  headers: IncomingHttpHeaders,
+  trusted: BlockList,
+  encrypted = false,
+): Forwarded {
+  const address = plainAddress(peer);
+  const own: Forwarded = { address, proto: encrypted ? 'https' : 'http', host: headers.host ?? '' };
+  if (!containsAddress(trusted, address)) return own;
+
+  const hops = String(headers['x-forwarded-for'] ?? '')
+    .split(',')
+    .map(plainAddress)
+    .reverse();
+  let client = address;
+  for (const hop of hops) {
+    if (isIP(hop) === 0) break;
+    client = hop;
+    if (!containsAddress(trusted, hop)) break;
+  }
+  const proto = last(headers['x-forwarded-proto']).toLowerCase();
+  return {
+    address: client,
+    proto: proto === 'https' || proto === 'http' ? proto : own.proto,
+    host: last(headers['x-forwarded-host']) || own.host,
+  };
+}
+
+/** Replaces every forwarding header of a request by what `forwarded` believes, so that nothing behind it can be told. */
+export function overwriteForwarded(headers: IncomingHttpHeaders, believed: Forwarded): void {
+  for (const name of HEADERS) delete headers[name];
+  headers['x-forwarded-for'] = believed.address;
+  headers['x-forwarded-proto'] = believed.proto;
+  if (believed.host) headers['x-forwarded-host'] = believed.host;
+}

@@ -1,0 +1,42 @@
+import { QueryTypes } from 'sequelize';
+import { database } from '@/models/database';
+import { unitOfWork } from '@/models/unitOfWork';
+
+/** Tables whose rows are worthless once `expires_at` has passed. */
+const EXPIRING = ['sessions', 'uploads', 'idempotency_keys'] as const;
+const ROWS_AT_ONCE = 200;
+
+/**
+ * Deletes expired rows in small transactions, so that no request waits for a long one.
+ * @returns rows deleted per table
+ */
+export async function purgeExpired(): Promise<Record<(typeof EXPIRING)[number], number>> {
+  const purged = { sessions: 0, uploads: 0, idempotency_keys: 0 };
+  for (const table of EXPIRING) {
+    for (let gone = ROWS_AT_ONCE; gone === ROWS_AT_ONCE; purged[table] += gone) {
+      gone = await unitOfWork(() =>
+        database().query(`DELETE FROM ${table} WHERE expires_at < UTC_TIMESTAMP(3) LIMIT ${ROWS_AT_ONCE}`, {
+          type: QueryTypes.BULKDELETE,
+        }),
+      );
+    }
+  }
+  return purged;
+}
+
+/**
+ * Keeps one housekeeping message in the queue, due at the next full hour. Its message id is that hour; the row is
+ * written only when no row of that hour exists, and running twice would delete nothing twice.
+ */
+export async function scheduleHousekeeping(): Promise<void> {
+  await unitOfWork(() =>
+    database().query(
+      `INSERT INTO outbox (kind, payload, state, available_at, attempts, message_id, created_at)
+        SELECT 'housekeeping', '{}', 'queued', due.at, 0, due.name, UTC_TIMESTAMP(3)
+        FROM (SELECT hour.at, CONCAT('housekeeping-', DATE_FORMAT(hour.at, '%Y%m%d%H')) AS name
+          FROM (SELECT DATE_FORMAT(UTC_TIMESTAMP() + INTERVAL 1 HOUR, '%Y-%m-%d %H:00:00') AS at) AS hour) AS due
+        WHERE NOT EXISTS (SELECT 1 FROM outbox WHERE kind = 'housekeeping' AND state IN ('queued', 'sending'))`,
+      { type: QueryTypes.RAW },
+    ),
+  );
+}
