@@ -69,14 +69,15 @@ const RIGHTS = {
   evaluation_layers: ['SELECT', 'INSERT'],
 };
 
-const NO_SUCH_GRANT = [1141, 1147];
+/** No such grant (1141, 1147); or the owner may not revoke on the whole schema (1044), which `tooWide` then finds. */
+const NOTHING_TO_REVOKE = [1141, 1147, 1044];
 
 /** Runs a REVOKE; that there was nothing to revoke is fine. */
 async function revoke(connection, sql) {
   try {
     await connection.query(sql);
   } catch (error) {
-    if (!NO_SUCH_GRANT.includes(error.errno)) throw error;
+    if (!NOTHING_TO_REVOKE.includes(error.errno)) throw error;
   }
 }
 
@@ -129,4 +130,16 @@ async function applyGrants(connection, user, hosts, database, rights = RIGHTS) {
   return tables.length;
 }
 
-module.exports = { RIGHTS, applyGrants };
+/**
+ * Rights of the account of this connection that reach beyond single tables, which would make the map above worthless.
+ * @param {{ query(sql: string): Promise<any> }} connection open, as the restricted account
+ * @returns {Promise<string[]>} the GRANT statements without passwords; empty when all is well
+ */
+async function tooWide(connection) {
+  const rows = await connection.query('SHOW GRANTS');
+  return rows
+    .map((row) => String(Object.values(row)[0]).replace(/ IDENTIFIED .*$/, ''))
+    .filter((grant) => / ON (\*|`[^`]*`)\.\* TO /.test(grant) && !grant.startsWith('GRANT USAGE ON'));
+}
+
+module.exports = { RIGHTS, applyGrants, tooWide };

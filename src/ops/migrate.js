@@ -91,22 +91,37 @@ async function migrate({ migrateUrl, databaseUrl, tell = say, hosts }) {
       tell(`${migrated} migration${migrated === 1 ? '' : 's'} applied`);
     }
     const { user, database } = parseDatabaseUrl(databaseUrl);
-    const tables = await applyGrants(owner, user, hosts ?? [await hostOf(databaseUrl)], database);
+    if (user === parseDatabaseUrl(migrateUrl).user) {
+      throw new Refusal(
+        'DATABASE_URL and DATABASE_MIGRATE_URL use one account: create a second, restricted one (README).',
+      );
+    }
+    const restricted = await inspect(databaseUrl);
+    const tables = await applyGrants(owner, user, hosts ?? [restricted.host], database);
+    const wide = (await inspect(databaseUrl)).wide;
+    if (wide.length) {
+      throw new Refusal(
+        `The account of DATABASE_URL may do more than the application needs; revoke: ${wide.join('; ')}`,
+      );
+    }
     return { migrated, tables };
   } finally {
     await owner.end();
   }
 }
 
-/** The host part of the account the server matches for this URL. */
-async function hostOf(databaseUrl) {
+/** What the server says of the account of DATABASE_URL: the host part it matched, and rights that are too wide. */
+async function inspect(databaseUrl) {
   const { parseDatabaseUrl, openConnection } = require('../config/database');
+  const { tooWide } = require('../config/grants');
+  // without a schema: before the first grant the account cannot enter it
   const restricted = await openConnection(databaseUrl, { database: undefined }).catch((error) => {
     throw connectionRefusal(error, 'DATABASE_URL') ?? error;
   });
   try {
     const [row] = await restricted.query('SELECT CURRENT_USER() AS account');
-    return row.account.slice(parseDatabaseUrl(databaseUrl).user.length + 1);
+    const host = row.account.slice(parseDatabaseUrl(databaseUrl).user.length + 1);
+    return { host, wide: await tooWide(restricted) };
   } finally {
     await restricted.end();
   }
