@@ -22,7 +22,7 @@ function schemaName(): string {
   return `${PREFIX}_p${process.pid}_${count}_${Math.random().toString(36).slice(2, 6)}`;
 }
 
-function useSchema(urls: SchemaUrls): void {
+function pointAt(urls: SchemaUrls): void {
   Object.assign(process.env, {
     DATABASE_URL: urls.databaseUrl,
     SESSION_SECRET: 'a session secret that only the tests use',
@@ -36,7 +36,7 @@ function useSchema(urls: SchemaUrls): void {
  */
 export async function freshDatabase(): Promise<TestDatabase> {
   const made = await freshSchema(serverUrls(), schemaName());
-  useSchema(made);
+  pointAt(made);
   return {
     databaseUrl: made.databaseUrl,
     migrateUrl: made.migrateUrl,
