@@ -131,6 +131,24 @@ test('housekeeping is in the queue once', async () => {
   expect(rows[0]!.waits).toBeLessThanOrEqual(3600);
 });
 
-test('housekeeping with nothing expired deletes nothing', async () => {
+test('housekeeping deletes what has expired and nothing else', async () => {
+  const ages = ['- INTERVAL 1 SECOND', '- INTERVAL 1 YEAR', '+ INTERVAL 1 MINUTE'];
+  await unitOfWork(async () => {
+    const write = (sql: string) => database().query(sql, { type: QueryTypes.RAW });
+    // rows without their user: only their expiry matters here
+    await write('SET foreign_key_checks = 0');
+    for (const [index, age] of ages.entries()) {
+      const [now, at] = ['UTC_TIMESTAMP(3)', `UTC_TIMESTAMP(3) ${age}`];
+      const hash = `LPAD(${index}, 64, '0')`;
+      await write(`INSERT INTO sessions (public_id, token_hash, user_id, authenticated_at, last_seen_at, expires_at,
+        address, agent, created_at) VALUES ('session-${index}', ${hash}, 1, ${now}, ${now}, ${at}, '', '', ${now})`);
+      await write(`INSERT INTO uploads (public_id, sha256, name, bytes, recognition, user_id, expires_at, created_at)
+        VALUES ('upload-${index}', ${hash}, '', 0, '{}', 1, ${at}, ${now})`);
+      await write(`INSERT INTO idempotency_keys (user_id, \`key\`, operation, request_hash, status, reply, expires_at,
+        created_at) VALUES (1, 'key-${index}', '', ${hash}, 200, '', ${at}, ${now})`);
+    }
+    await write('SET foreign_key_checks = 1');
+  });
+  expect(await purgeExpired()).toEqual({ sessions: 2, uploads: 2, idempotency_keys: 2 });
   expect(await purgeExpired()).toEqual({ sessions: 0, uploads: 0, idempotency_keys: 0 });
 });
