@@ -20,19 +20,14 @@ import {
   version,
 } from './common';
 
-/** What a technician says of a file when keeping it as a run. */
-export const keepSweep = z.strictObject({
-  fileId: publicId,
-  stateId: publicId,
+/** How a file is to be read and judged: all that decides its figures. */
+export const sweepChoice = z.strictObject({
   purpose,
   port,
-  operatingMode: z.string().trim().min(1).max(120),
   line: mainsLine.nullable().default(null),
   polarisation: polarisation.nullable().default(null),
-  heightM: z.number().min(0).max(10).nullable().default(null),
-  azimuthDeg: z.number().min(0).max(360).nullable().default(null),
   distanceM: z.number().positive().max(100).nullable().default(null),
-  /** null when the values are field strength already. */
+  /** null when no path is known: then nothing is added, the uncertainty is unknown and nothing is concluded. */
   pathId: publicId.nullable(),
   limitSetId: publicId,
   valuesHold: z.enum(['receiver-input', 'field']),
@@ -53,6 +48,17 @@ export const keepSweep = z.strictObject({
     )
     .min(1)
     .max(6),
+});
+export type SweepChoice = z.infer<typeof sweepChoice>;
+
+/** What a technician says of a file when keeping it as a run. */
+export const keepSweep = z.strictObject({
+  ...sweepChoice.shape,
+  fileId: publicId,
+  stateId: publicId,
+  operatingMode: z.string().trim().min(1, 'is needed').max(120),
+  heightM: z.number().min(0).max(10).nullable().default(null),
+  azimuthDeg: z.number().min(0).max(360).nullable().default(null),
   measuredAt: instant.nullable().default(null),
 });
 
@@ -201,6 +207,19 @@ export const windowView = z.strictObject({
 });
 export type WindowView = z.infer<typeof windowView>;
 
+/** A file judged as it would be kept, without keeping it. */
+export const previewView = z.strictObject({
+  window: windowView,
+  traces: z.array(traceView),
+  lines: z.array(limitLineView),
+  uncertainty: evaluationView.shape.uncertainty,
+  verdict,
+  counts: evaluationView.shape.counts,
+  worst: candidateView.nullable(),
+  gaps: z.array(gapView),
+});
+export type PreviewView = z.infer<typeof previewView>;
+
 export const workingQuery = z.strictObject({
   frequencyHz: z.coerce.number().positive(),
   trace: z.coerce.number().int().min(0),
@@ -274,6 +293,17 @@ export const keepSweepOperation = operation({
   body: keepSweep,
   reply: sweepView,
   idempotent: true,
+});
+export const previewSweepFile = operation({
+  id: 'previewSweepFile',
+  method: 'POST',
+  path: '/api/sweep-files/{id}/preview',
+  summary: 'The uploaded file judged as it would be kept; nothing is stored',
+  permission: 'sweep-file.read',
+  status: 200,
+  params: sweepParams,
+  body: sweepChoice,
+  reply: previewView,
 });
 export const listSweeps = operation({
   id: 'listSweeps',

@@ -128,24 +128,6 @@ export const sweepFileView = z.strictObject({
 });
 export type SweepFileView = z.infer<typeof sweepFileView>;
 
-export const previewQuery = z.strictObject({
-  columns: z.coerce.number().int().min(16).max(2048).default(512),
-  frequencyUnit: frequencyUnit.optional(),
-  centreHz: z.coerce.number().optional(),
-  sweepIndex: z.coerce.number().int().min(0).default(0),
-});
-/** The file as read, before any correction: extremes per log-frequency column. */
-export const previewView = z.strictObject({
-  traces: z.array(
-    z.strictObject({
-      index: z.int(),
-      frequencyHz: z.array(z.number()),
-      levelMin: z.array(z.number()),
-      levelMax: z.array(z.number()),
-    }),
-  ),
-});
-
 export const createSweepFile = operation({
   id: 'createSweepFile',
   method: 'POST',
@@ -166,15 +148,4 @@ export const readSweepFile = operation({
   status: 200,
   params: fileParams,
   reply: sweepFileView,
-});
-export const previewSweepFile = operation({
-  id: 'previewSweepFile',
-  method: 'GET',
-  path: '/api/sweep-files/{id}/preview',
-  summary: 'The uploaded file as it will be drawn',
-  permission: 'sweep-file.read',
-  status: 200,
-  params: fileParams,
-  query: previewQuery,
-  reply: previewView,
 });

@@ -13,6 +13,8 @@ export interface Change {
   subjectId: string;
   before: Record<string, unknown> | null;
   after: Record<string, unknown> | null;
+  /** When it happened; now unless a record is entered later than it was made. */
+  at?: Date;
 }
 
 const GENESIS = '0'.repeat(64);
@@ -39,7 +41,7 @@ export function recordChange(actor: Actor | null, change: Change): void {
 }
 
 async function append(actor: Actor | null, change: Change): Promise<void> {
-  const at = new Date();
+  const at = change.at ?? new Date();
   await AuditChain.bulkCreate([{ scope: change.scope, length: 0, head: GENESIS }], { ignoreDuplicates: true });
   const chain = await AuditChain.findOne({
     where: { scope: change.scope },

@@ -11,6 +11,7 @@ import { unitOfWork } from '@/models/unitOfWork';
 import type { changeJobBody, createJobBody, JobView } from '@/schemas/job';
 import { recordChange } from './audit';
 import { nextNumber } from './counters';
+import { labSettings } from './lab';
 import { olderThan, pageFrom, type PageRequest } from './paging';
 import { changeVersioned } from './versions';
 
@@ -82,17 +83,17 @@ export async function createJob(
   actor: Actor | null,
   body: z.infer<typeof createJobBody>,
   at = new Date(),
-  prefix = 'HL',
 ): Promise<JobView> {
   authorise(actor, 'job.create');
   return unitOfWork(async () => {
     const product = await Product.findOne({ where: { publicId: body.productId }, include: ['organisation'] });
     if (!product) throw new Invalid([{ pointer: '/productId', message: 'is not a product of this lab' }]);
+    const { jobPrefix } = await labSettings();
     const year = at.getUTCFullYear() % 100;
     const count = await nextNumber(`job-${at.getUTCFullYear()}`);
     const row = await Job.create({
       publicId: newPublicId(),
-      number: `${prefix}-${year}${String(count).padStart(2, '0')}`,
+      number: `${jobPrefix}-${year}${String(count).padStart(2, '0')}`,
       organisationId: product.organisationId,
       productId: product.id,
       title: body.title,

@@ -1,0 +1,6 @@
+import { handle } from '@/http/handle';
+import { receiveFile } from '@/http/multipart';
+import { createSweepFile as operation } from '@/schemas/sweepFile';
+import { createSweepFile } from '@/services/sweepFiles';
+
+export const POST = handle(operation, async ({ actor, request }) => createSweepFile(actor, await receiveFile(request)));

@@ -1,0 +1,158 @@
+import { Op } from 'sequelize';
+import { authorise, type Actor } from '@/auth/actor';
+import { evaluate } from '@/emc/evaluate';
+import type { Evaluation, EvaluationInput, Trace } from '@/emc/types';
+import { Conflict, Invalid, type Issue } from '@/errors';
+import type { Recognition } from '@/ingest/types';
+import { readUpload } from '@/models/blobs';
+import { LimitSet } from '@/models/limitSet';
+import { SignalPath } from '@/models/signalPath';
+import { SignalPathRevision } from '@/models/signalPathRevision';
+import { unitOfWork } from '@/models/unitOfWork';
+import type { LimitLineView, PreviewView, SweepChoice } from '@/schemas/sweep';
+import { inTurns } from './inTurns';
+import { dayIn, labSettings } from './lab';
+import { linesOf, toCoreLine } from './limitSets';
+import { loadPaths, termsOf, type LoadedPath, type LoadedTerm } from './signalPaths';
+import { findUpload, readAsAnswered, recognitionOf } from './sweepFiles';
+import { candidateOf, columnsView, traceViews } from './sweepViews';
+
+export interface Judged {
+  path: LoadedPath | null;
+  terms: LoadedTerm[];
+  limitSet: LimitSet;
+  lines: LimitLineView[];
+  input: EvaluationInput;
+  evaluation: Evaluation;
+}
+
+/** Why a term is not added, by term id. */
+export function notAppliedBecause(
+  choice: Pick<SweepChoice, 'valuesHold' | 'alreadyCorrected'>,
+  path: LoadedPath | null,
+) {
+  if (choice.valuesHold === 'field') {
+    const ids = path?.items.map((item) => item.equipment.identifier) ?? [];
+    return new Map(ids.map((id) => [id, 'the file holds field strength already']));
+  }
+  return new Map(choice.alreadyCorrected.map((id) => [id, 'the reading holds it already, as stated when it was kept']));
+}
+
+function check(choice: SweepChoice, limitSet: LimitSet | null, path: LoadedPath | null): asserts limitSet is LimitSet {
+  const issues: Issue[] = [];
+  const say = (pointer: string, message: string) => issues.push({ pointer, message });
+  if (!limitSet) throw new Invalid([{ pointer: '/limitSetId', message: 'is not a limit set of this lab' }]);
+  if (limitSet.port !== choice.port) say('/limitSetId', `is for another port (${limitSet.port})`);
+  if (path && path.path.port !== choice.port) say('/pathId', `is for another port (${path.path.port})`);
+  if (choice.port === 'enclosure') {
+    if (!choice.polarisation) say('/polarisation', 'is needed for a radiated run');
+    if (!choice.distanceM) say('/distanceM', 'is needed for a radiated run');
+    else if (limitSet.distanceM !== null && limitSet.distanceM !== choice.distanceM) {
+      say('/distanceM', `differs from the limit set, which is for ${limitSet.distanceM} m`);
+    }
+  }
+  if (choice.port === 'ac-mains' && !choice.line) say('/line', 'is needed: which conductor was measured');
+  const field = choice.valuesHold === 'field';
+  choice.traces.forEach((trace, i) => {
+    const isField = trace.unit === 'dBuV/m' || trace.unit === 'dBuA/m';
+    if (trace.unit === 'dB') say(`/traces/${i}/unit`, 'is relative; a level needs an absolute unit to be judged');
+    else if (field && !isField) say(`/traces/${i}/unit`, 'is not field strength, but the values are said to be');
+    else if (!field && isField) say(`/traces/${i}/unit`, 'is field strength; say that the values are field strength');
+  });
+  const known = new Set(path?.items.map((item) => item.equipment.identifier));
+  choice.alreadyCorrected.forEach((id, i) => {
+    if (!known.has(id)) say(`/alreadyCorrected/${i}`, 'is not an item of this signal path');
+  });
+  if (new Set(choice.traces.map((trace) => trace.index)).size !== choice.traces.length) {
+    say('/traces', 'names a trace twice');
+  }
+  if (issues.length) throw new Invalid(issues);
+}
+
+/** The revision of a path that was in force at a moment. */
+async function pathAt(publicId: string | null, at: Date): Promise<LoadedPath | null> {
+  if (publicId === null) return null;
+  const path = await SignalPath.findOne({ where: { publicId } });
+  const revision =
+    path &&
+    (await SignalPathRevision.findOne({
+      where: { signalPathId: path.id, createdAt: { [Op.lte]: at } },
+      order: [['revision', 'DESC']],
+    }));
+  if (!revision) throw new Invalid([{ pointer: '/pathId', message: 'is not a signal path of this lab' }]);
+  const [loaded] = await loadPaths([revision], dayIn((await labSettings()).zone, at));
+  const held = loaded!.items.find((item) => item.equipment.state !== 'in-use');
+  if (held) {
+    throw new Conflict(`${held.equipment.identifier} on this path is ${held.equipment.state}. Choose another path.`);
+  }
+  return loaded!;
+}
+
+/**
+ * Reads a file as chosen, rounds its levels to Float32 once and evaluates them against the limit set. `at` decides
+ * which revision of the path applies. Throws Invalid with a pointer per entry, Unreadable with the line of the file.
+ */
+export async function judgeFile(
+  bytes: Uint8Array,
+  recognition: Recognition,
+  choice: SweepChoice,
+  at: Date,
+): Promise<Judged> {
+  const limitSet = await LimitSet.findOne({ where: { publicId: choice.limitSetId, withdrawnAt: null } });
+  const path = await pathAt(choice.pathId, at);
+  check(choice, limitSet, path);
+  const lines = (await linesOf([limitSet])).get(limitSet.id)!;
+  const terms = path ? termsOf(path, choice.polarisation, notAppliedBecause(choice, path)) : [];
+  const { frequencyUnit, centreHz, sweepIndex } = choice;
+  const read = await readAsAnswered(bytes, recognition, {
+    frequencyUnit,
+    sweepIndex,
+    ...(centreHz !== null && { centreHz }),
+    traces: recognition.traces.map(({ index }) => {
+      const chosen = choice.traces.find((trace) => trace.index === index);
+      return chosen ? { index, use: true, unit: chosen.unit, detector: chosen.detector } : { index, use: false };
+    }),
+  });
+  const input: EvaluationInput = {
+    traces: choice.traces.map((chosen, i): Trace => {
+      const values = read.traces.find((trace) => trace.index === chosen.index)?.values;
+      if (!values) throw new Invalid([{ pointer: `/traces/${i}/index`, message: 'is not a trace of this file' }]);
+      const reading = Float32Array.from(values);
+      return { ...chosen, frequencyHz: read.frequencyHz, reading };
+    }),
+    terms: terms.map(({ term }) => term),
+    lines: lines.map(toCoreLine),
+    uncertainty: path?.revision.uncertainty ?? { prescan: [], final: [] },
+    purpose: choice.purpose,
+    port: choice.port,
+    rule: 'guarded-by-u',
+  };
+  return { path, terms, limitSet, lines, input, evaluation: await inTurns(evaluate(input)) };
+}
+
+/** A held file judged as it would be kept now; nothing is stored. */
+export async function previewSweepFile(actor: Actor | null, fileId: string, choice: SweepChoice): Promise<PreviewView> {
+  authorise(actor, 'sweep-file.read');
+  return unitOfWork(async () => {
+    const upload = await findUpload(fileId);
+    const judged = await judgeFile(await readUpload(upload.id), recognitionOf(upload), choice, new Date());
+    const { evaluation, input, lines } = judged;
+    const axis = input.traces[0]!.frequencyHz;
+    const worst = evaluation.candidates[0];
+    return {
+      window: {
+        fromHz: axis.reduce((low, f) => Math.min(low, f), Infinity),
+        toHz: axis.reduce((high, f) => Math.max(high, f), 0),
+        columns: evaluation.layers[0]?.frequencyHz.length ?? 0,
+        traces: input.traces.map((trace, i) => columnsView(trace.index, evaluation.layers[i]!)),
+      },
+      traces: traceViews(input),
+      lines,
+      uncertainty: [...input.uncertainty[input.purpose === 'final' ? 'final' : 'prescan']],
+      verdict: evaluation.verdict,
+      counts: evaluation.counts,
+      worst: worst ? candidateOf(worst, input.traces) : null,
+      gaps: evaluation.gaps,
+    };
+  });
+}

@@ -1,0 +1,93 @@
+import type { IncludeOptions } from 'sequelize';
+import { visibleOrganisation, type Actor } from '@/auth/actor';
+import type { EvaluationInput } from '@/emc/types';
+import type { TraceHead } from '@/emc/segment';
+import { NotFound } from '@/errors';
+import type { Evaluation } from '@/models/evaluation';
+import type { Job } from '@/models/job';
+import type { LimitSet } from '@/models/limitSet';
+import type { ModificationState } from '@/models/modificationState';
+import type { Organisation } from '@/models/organisation';
+import type { Product } from '@/models/product';
+import type { Sample } from '@/models/sample';
+import { SignalPathRevision } from '@/models/signalPathRevision';
+import { Sweep } from '@/models/sweep';
+import type { SweepFile } from '@/models/sweepFile';
+import type { User } from '@/models/user';
+import type { LimitLineView } from '@/schemas/sweep';
+import { notAppliedBecause } from './judgeFile';
+import { dayIn, labSettings } from './lab';
+import { linesOf, toCoreLine } from './limitSets';
+import { loadPaths, termsOf, type LoadedPath, type LoadedTerm } from './signalPaths';
+
+export type WholeState = ModificationState & {
+  sample: Sample & { job: Job & { organisation: Organisation; product: Product } };
+};
+export type Run = Sweep & {
+  state: WholeState;
+  user: User;
+  evaluation: Evaluation;
+  limitSet: LimitSet;
+  file: SweepFile;
+};
+
+/** Joins a run to what names it; never to a table of blobs. `own` limits to one organisation. */
+export function runInclude(own: number | null): IncludeOptions[] {
+  const job = {
+    association: 'job',
+    required: true,
+    include: ['organisation', 'product'],
+    ...(own !== null && { where: { organisationId: own } }),
+  };
+  const sample = { association: 'sample', required: true, include: [job] };
+  return [
+    { association: 'state', required: true, include: [sample] },
+    { association: 'user' },
+    { association: 'evaluation' },
+  ];
+}
+
+/** A run the actor may see, or NotFound. */
+export async function findRun(actor: Actor, publicId: string): Promise<Run> {
+  const include = [...runInclude(visibleOrganisation(actor)), { association: 'limitSet' }, { association: 'file' }];
+  const row = await Sweep.findOne({ where: { publicId }, include });
+  if (!row) throw new NotFound('run');
+  return row as Run;
+}
+
+export interface RunContext {
+  path: LoadedPath | null;
+  /** The day in the lab's zone on which the run was measured, or kept when that is not known. */
+  day: string;
+  terms: LoadedTerm[];
+  lines: LimitLineView[];
+  heads: TraceHead[];
+  /** All the core needs apart from the points. */
+  judged: Omit<EvaluationInput, 'traces'>;
+}
+
+/** What a run was judged with: the revisions pinned when it was kept. */
+export async function contextOf(run: Run): Promise<RunContext> {
+  const day = dayIn((await labSettings()).zone, run.measuredAt ?? run.createdAt);
+  const revision = run.pathRevisionId === null ? null : await SignalPathRevision.findByPk(run.pathRevisionId);
+  const path = revision ? (await loadPaths([revision], day))[0]! : null;
+  const lines = (await linesOf([run.limitSet])).get(run.limitSet.id)!;
+  const { valuesHold, purpose, port, polarisation, reading } = run;
+  const { alreadyCorrected, traces } = reading;
+  const terms = path ? termsOf(path, polarisation, notAppliedBecause({ valuesHold, alreadyCorrected }, path)) : [];
+  return {
+    path,
+    day,
+    terms,
+    lines,
+    heads: traces,
+    judged: {
+      terms: terms.map(({ term }) => term),
+      lines: lines.map(toCoreLine),
+      uncertainty: revision?.uncertainty ?? { prescan: [], final: [] },
+      purpose,
+      port,
+      rule: 'guarded-by-u',
+    },
+  };
+}

@@ -1,0 +1,98 @@
+import { createHash } from 'node:crypto';
+import { authorise, type Actor } from '@/auth/actor';
+import { NotFound, Unreadable } from '@/errors';
+import { IngestError } from '@/ingest/ingestError';
+import { proposeFromName } from '@/ingest/proposals';
+import { readSweepSteps } from '@/ingest/read';
+import { recognise } from '@/ingest/recognise';
+import type { Answers, ReadSweep, Recognition } from '@/ingest/types';
+import { writeUpload } from '@/models/blobs';
+import { newPublicId } from '@/models/publicId';
+import { Sweep } from '@/models/sweep';
+import { SweepFile } from '@/models/sweepFile';
+import { unitOfWork } from '@/models/unitOfWork';
+import { Upload } from '@/models/upload';
+import type { RecognitionView, SweepFileView } from '@/schemas/sweepFile';
+import { inTurns } from './inTurns';
+
+const HELD_MS = 24 * 3600 * 1000;
+
+/** Keeps an uploaded file for a day and answers what was recognised in it; a refused file is held too, to be shown. */
+export async function createSweepFile(
+  actor: Actor | null,
+  file: { name: string; bytes: Uint8Array },
+): Promise<SweepFileView> {
+  authorise(actor, 'sweep-file.create');
+  const recognition = recognise(file.bytes, file.name);
+  const sha256 = createHash('sha256').update(file.bytes).digest('hex');
+  return unitOfWork(async () => {
+    const upload = await Upload.create({
+      publicId: newPublicId(),
+      sha256,
+      name: file.name,
+      bytes: file.bytes.length,
+      recognition: recognition as unknown as Record<string, unknown>,
+      userId: actor.userId,
+      expiresAt: new Date(Date.now() + HELD_MS),
+    });
+    await writeUpload(upload.id, file.bytes);
+    return view(upload);
+  });
+}
+
+export async function readSweepFile(actor: Actor | null, publicId: string): Promise<SweepFileView> {
+  authorise(actor, 'sweep-file.read');
+  return unitOfWork(async () => view(await findUpload(publicId)));
+}
+
+/** An upload that is still held, or NotFound. Uploads belong to the lab; only its people reach this. */
+export async function findUpload(publicId: string): Promise<Upload> {
+  const row = await Upload.findOne({ where: { publicId } });
+  if (!row || row.expiresAt.getTime() < Date.now()) throw new NotFound('uploaded file (it is held for a day)');
+  return row;
+}
+
+export const recognitionOf = (row: Upload | SweepFile): Recognition => row.recognition as unknown as Recognition;
+
+/** Reads the whole file in turns; what the reader refuses becomes an Unreadable with its line. */
+export async function readAsAnswered(
+  bytes: Uint8Array,
+  recognition: Recognition,
+  answers: Answers,
+): Promise<ReadSweep> {
+  if (recognition.refusal) {
+    const { message, line, found, expected } = recognition.refusal;
+    throw new Unreadable(message, line, found, expected);
+  }
+  try {
+    return await inTurns(readSweepSteps(bytes, recognition, answers));
+  } catch (error) {
+    if (error instanceof IngestError) throw new Unreadable(error.message, error.line, error.found, error.expected);
+    throw error;
+  }
+}
+
+async function view(upload: Upload): Promise<SweepFileView> {
+  const files = await SweepFile.findAll({ where: { sha256: upload.sha256 }, attributes: ['id'], limit: 20 });
+  const runs = files.length
+    ? await Sweep.findAll({ where: { sweepFileId: files.map((file) => file.id) }, order: [['id', 'DESC']], limit: 20 })
+    : [];
+  const proposed = proposeFromName(upload.name);
+  // Recognition and its zod schema are the same shape; the compiler checks it here.
+  const recognition: RecognitionView = recognitionOf(upload);
+  return {
+    id: upload.publicId,
+    name: upload.name,
+    bytes: upload.bytes,
+    sha256: upload.sha256,
+    recognition,
+    repeats: runs.map((run) => ({ sweepId: run.publicId, number: run.number })),
+    proposals: {
+      polarisation: proposed.polarisation ?? null,
+      line: proposed.line ?? null,
+      heightM: proposed.heightM ?? null,
+      state: proposed.state ?? null,
+      purpose: proposed.purpose ?? null,
+    },
+  };
+}
