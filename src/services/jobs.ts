@@ -98,6 +98,7 @@ export async function createJob(
       productId: product.id,
       title: body.title,
       decisionRule: body.decisionRule,
+      createdAt: at,
     });
     recordChange(actor, {
       scope: `job-${row.publicId}`,
@@ -106,6 +107,7 @@ export async function createJob(
       subjectId: row.publicId,
       before: null,
       after: { number: row.number, product: product.publicId, title: row.title, decisionRule: row.decisionRule },
+      at,
     });
     return whole(actor, row.publicId);
   });
@@ -116,6 +118,7 @@ export async function changeJob(
   publicId: string,
   version: number,
   body: z.infer<typeof changeJobBody>,
+  at = new Date(),
 ): Promise<JobView> {
   authorise(actor, 'job.change');
   return unitOfWork(async () => {
@@ -133,6 +136,7 @@ export async function changeJob(
       subjectId: publicId,
       before,
       after,
+      at,
     });
     return whole(actor, publicId);
   });

@@ -12,6 +12,7 @@ import { Sweep } from '@/models/sweep';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import type { changeSampleBody, changeStateBody, createSampleBody, createStateBody, SampleView } from '@/schemas/job';
 import { recordChange } from './audit';
+import { nextNumber } from './counters';
 import { findJob } from './jobs';
 import { olderThan, pageFrom, type PageRequest } from './paging';
 import { changeVersioned } from './versions';
@@ -99,21 +100,30 @@ export async function createSample(
   actor: Actor | null,
   jobId: string,
   body: z.infer<typeof createSampleBody>,
+  at = new Date(),
 ): Promise<SampleView> {
   authorise(actor, 'sample.create');
   return unitOfWork(async () => {
     const job = await findJob(actor, jobId);
     if (job.state !== 'open') throw new Conflict(`Job ${job.number} is ${job.state}. Reopen it to take in a sample.`);
-    await job.reload({ lock: currentTransaction().LOCK.UPDATE });
-    const code = `S${(await Sample.count({ where: { jobId: job.id } })) + 1}`;
+    const code = `S-${String(await nextNumber('sample')).padStart(3, '0')}`;
     const { serial, firmware, description } = body;
-    const row = await Sample.create({ publicId: newPublicId(), jobId: job.id, code, serial, firmware, description });
+    const row = await Sample.create({
+      publicId: newPublicId(),
+      jobId: job.id,
+      code,
+      serial,
+      firmware,
+      description,
+      createdAt: at,
+    });
     await ModificationState.create({
       publicId: newPublicId(),
       sampleId: row.id,
       position: 0,
       description: 'as received',
       planned: false,
+      createdAt: at,
     });
     recordChange(actor, {
       scope: `job-${job.publicId}`,
@@ -122,6 +132,7 @@ export async function createSample(
       subjectId: row.publicId,
       before: null,
       after: { code, ...body },
+      at,
     });
     return whole(actor, row.publicId);
   });
@@ -154,6 +165,7 @@ export async function createState(
   actor: Actor | null,
   sampleId: string,
   body: z.infer<typeof createStateBody>,
+  at = new Date(),
 ): Promise<SampleView> {
   authorise(actor, 'state.create');
   return unitOfWork(async () => {
@@ -166,6 +178,7 @@ export async function createState(
       position,
       description: body.description,
       planned: body.planned,
+      createdAt: at,
     });
     recordChange(actor, {
       scope: `job-${sample.job.publicId}`,
@@ -174,6 +187,7 @@ export async function createState(
       subjectId: row.publicId,
       before: null,
       after: { sample: sampleId, position, ...body },
+      at,
     });
     return whole(actor, sampleId);
   });

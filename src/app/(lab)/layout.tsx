@@ -1,0 +1,51 @@
+import type { ReactNode } from 'react';
+import Link from 'next/link';
+import { cookies } from 'next/headers';
+import { requireActor } from '@/app/currentActor';
+import { SignOutButton } from './SignOutButton';
+import { ROOM_COOKIE, roomOf } from '@/components/shell/room';
+import type { Section } from '@/components/shell/SectionNav';
+import { TopLine } from '@/components/shell/TopLine';
+import { listProducts } from '@/services/products';
+import type { Actor } from '@/auth/actor';
+
+const LAB_SECTIONS: Section[] = [
+  { href: '/jobs', name: 'Jobs', also: ['/samples', '/products'] },
+  { href: '/sweeps', name: 'Sweeps', onPhone: true },
+  { href: '/equipment', name: 'Equipment' },
+];
+
+/** A designer's sections are their own products; beyond five the rest stand on the products sheet. */
+async function sectionsOf(actor: Actor): Promise<Section[]> {
+  if (actor.role !== 'designer') return LAB_SECTIONS;
+  const { items, next } = await listProducts(actor, { limit: 5 });
+  const products = items.map(({ id, code }) => ({ href: `/products/${id}`, name: code }));
+  return [
+    ...products,
+    ...(next ? [{ href: '/products', name: 'All products' }] : []),
+    { href: '/sweeps', name: 'Runs', onPhone: true },
+  ];
+}
+
+/** Everything behind the sign-in: the top line and, under it, one sheet. */
+export default async function LabLayout({ children }: { children: ReactNode }) {
+  const actor = await requireActor();
+  const room = roomOf((await cookies()).get(ROOM_COOKIE)?.value);
+  const part = actor.role === 'designer' ? actor.organisationName : actor.role;
+  return (
+    <>
+      <TopLine
+        sections={await sectionsOf(actor)}
+        person={{ name: actor.name, part }}
+        room={room}
+        menu={
+          <>
+            <Link href="/account">Where you are signed in</Link>
+            <SignOutButton />
+          </>
+        }
+      />
+      {children}
+    </>
+  );
+}

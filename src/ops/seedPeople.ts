@@ -1,0 +1,57 @@
+import type { DemoOrganisation, DemoUser } from '@fixtures/demo/types';
+import type { Actor } from '@/auth/actor';
+import { Organisation } from '@/models/organisation';
+import { newPublicId } from '@/models/publicId';
+import { Setting } from '@/models/setting';
+import { User } from '@/models/user';
+import { createUser } from '@/services/users';
+
+export interface SeededPeople {
+  organisation(key: string): Organisation;
+  actor(key: string): Actor;
+}
+
+/** Organisations, the lab's settings and everybody with a demo passphrase. */
+export async function seedPeople(
+  demoOrganisations: DemoOrganisation[],
+  demoUsers: DemoUser[],
+  at: Date,
+): Promise<SeededPeople> {
+  const organisations = new Map<string, Organisation>();
+  for (const { key, kind, name } of demoOrganisations) {
+    const shortName = name.split(' ').slice(0, 2).join(' ');
+    organisations.set(
+      key,
+      await Organisation.create({ publicId: newPublicId(), kind, name, shortName, createdAt: at }),
+    );
+  }
+  const lab = demoOrganisations.find(({ kind }) => kind === 'lab')!;
+  await Setting.create({ name: 'lab', value: { name: lab.name, zone: lab.timeZone, jobPrefix: 'HL' } });
+  const actors = new Map<string, Actor>();
+  for (const user of demoUsers) {
+    const organisation = organisations.get(user.organisation)!;
+    const { role, name, email, passphrase: password } = user;
+    const { publicId } = await createUser(
+      null,
+      { organisationId: organisation.publicId, role, name, email, password },
+      at,
+    );
+    const row = await User.findOne({ where: { publicId }, rejectOnEmpty: true });
+    actors.set(user.key, {
+      userId: row.id,
+      publicId,
+      name,
+      email,
+      role,
+      organisationId: organisation.id,
+      organisationName: organisation.name,
+      via: { kind: 'session', sessionId: 0, assuranceLevel: 1 },
+    });
+  }
+  const found = <T>(map: Map<string, T>, key: string): T => {
+    const value = map.get(key);
+    if (!value) throw new RangeError(`${key} is not in the demo lab`);
+    return value;
+  };
+  return { organisation: (key) => found(organisations, key), actor: (key) => found(actors, key) };
+}
