@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import Link from 'next/link';
 import { cookies } from 'next/headers';
-import { requireActor } from '@/app/currentActor';
+import { requireActor } from '@/app/requireActor';
 import { SignOutButton } from './SignOutButton';
 import { ROOM_COOKIE, roomOf } from '@/components/shell/room';
 import type { Section } from '@/components/shell/SectionNav';

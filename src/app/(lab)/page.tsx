@@ -1,5 +1,5 @@
 import { redirect } from 'next/navigation';
-import { requireActor } from '@/app/currentActor';
+import { requireActor } from '@/app/requireActor';
 import { listProducts } from '@/services/products';
 
 /** Where a person's work is: a designer's newest product, the lab's runs. */
