@@ -7,6 +7,7 @@ import type { Operation } from '@/schemas/operation';
 import { once } from '@/services/idempotency';
 import { actorOf } from '@/services/sessions';
 import { issuesOf, problemOf, problemResponse } from './problem';
+import { withApiHeaders } from './securityHeaders';
 import { securityLog } from './securityLog';
 
 export interface Context<P, Q, B> {
@@ -62,9 +63,9 @@ export function handle<P extends z.ZodType, Q extends z.ZodType, B extends z.Zod
       } else {
         reply = await run(context);
       }
-      return respond(op, reply, context.headers);
+      return withApiHeaders(respond(op, reply, context.headers));
     } catch (error) {
-      return refuse(error, op, actor, address);
+      return withApiHeaders(refuse(error, op, actor, address));
     }
   };
   return Object.assign(route, { operation: op as unknown as Operation });

@@ -1,0 +1,150 @@
+import { literal, UniqueConstraintError, type WhereOptions } from 'sequelize';
+import type { Actor } from '@/auth/actor';
+import { hashPassword, passwordIssues } from '@/auth/password';
+import type { Role } from '@/auth/permissions';
+import { Conflict, Forbidden, Invalid, type Issue, NotFound } from '@/errors';
+import { Organisation } from '@/models/organisation';
+import { newPublicId } from '@/models/publicId';
+import { Session } from '@/models/session';
+import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
+import { User } from '@/models/user';
+import { recordChange } from './audit';
+import { forgetFailures } from './signInAttempts';
+
+export interface NewUser {
+  /** Public id. */
+  organisationId: string;
+  role: Role;
+  name: string;
+  email: string;
+  /** Null: the person cannot sign in before a password is set. */
+  password: string | null;
+}
+
+/**
+ * Managers only, at a browser. Null is whoever runs commands on the lab's server or fills the demo lab; no operation
+ * passes null on, since `handle` turns a stranger away first.
+ */
+function mayManagePeople(actor: Actor | null): void {
+  if (actor && (actor.role !== 'manager' || actor.via.kind !== 'session')) throw new Forbidden();
+}
+
+/** A person by public id or e-mail; call inside a unit of work. @throws {NotFound} */
+export async function findUser(publicIdOrEmail: string): Promise<User> {
+  const ref = publicIdOrEmail.trim().toLowerCase();
+  const where: WhereOptions = ref.includes('@') ? { email: ref } : { publicId: ref };
+  const user = await User.findOne({ where });
+  if (!user || (ref.includes('@') && user.email !== ref)) throw new NotFound('person');
+  return user;
+}
+
+function entryIssues(entry: NewUser, organisation: Organisation | null): Issue[] {
+  const issues: Issue[] = [];
+  const add = (pointer: string, message: string) => issues.push({ pointer, message });
+  if (entry.name.length < 1 || entry.name.length > 120) add('/name', 'takes 1 to 120 characters');
+  if (!/^[^\s@]+@[^\s@]+\.[^\s@]+$/.test(entry.email) || entry.email.length > 254) {
+    add('/email', 'is not an e-mail address');
+  }
+  if (!organisation) add('/organisationId', 'is not an organisation of this lab');
+  else if ((entry.role === 'designer') !== (organisation.kind === 'client')) {
+    // The lab's roles see every organisation's records.
+    add('/role', organisation.kind === 'client' ? 'of a client is designer' : 'of the lab is manager or technician');
+  }
+  if (entry.password !== null) issues.push(...passwordIssues(entry.password, entry.email));
+  return issues;
+}
+
+/**
+ * Enters a person. E-mail addresses are kept in lower case and belong to one person only.
+ * @param at when it happened, for records that are entered later
+ */
+export async function createUser(actor: Actor | null, entry: NewUser, at = new Date()): Promise<{ publicId: string }> {
+  mayManagePeople(actor);
+  const user = { ...entry, name: entry.name.trim(), email: entry.email.trim().toLowerCase() };
+  const find = () => Organisation.findOne({ where: { publicId: user.organisationId } });
+  const issues = entryIssues(user, await unitOfWork(find));
+  if (issues.length) throw new Invalid(issues);
+  // Hashing takes a third of a second: never inside a transaction.
+  const passwordHash = user.password === null ? null : await hashPassword(user.password);
+  return unitOfWork(async () => {
+    const organisation = (await find())!;
+    const row = await User.create({
+      publicId: newPublicId(),
+      organisationId: organisation.id,
+      role: user.role,
+      name: user.name,
+      email: user.email,
+      passwordHash,
+      createdAt: at,
+    }).catch((error: unknown) => {
+      if (!(error instanceof UniqueConstraintError)) throw error;
+      throw new Invalid([{ pointer: '/email', message: 'belongs to somebody already' }]);
+    });
+    recordChange(actor, {
+      scope: 'lab',
+      action: 'person entered',
+      subjectType: 'user',
+      subjectId: row.publicId,
+      before: null,
+      after: { role: row.role, organisation: organisation.publicId },
+      at,
+    });
+    return { publicId: row.publicId };
+  });
+}
+
+/** Gives a person a new password and ends all their sessions; what strangers failed at their account is forgotten. */
+export async function setPassword(actor: Actor | null, publicIdOrEmail: string, password: string): Promise<void> {
+  mayManagePeople(actor);
+  const { id, email, publicId } = await unitOfWork(() => findUser(publicIdOrEmail));
+  const issues = passwordIssues(password, email);
+  if (issues.length) throw new Invalid(issues);
+  const passwordHash = await hashPassword(password);
+  await unitOfWork(async () => {
+    await User.update({ passwordHash, version: literal('version + 1') }, { where: { id } });
+    const ended = await endAllSessions(id);
+    await forgetFailures(email);
+    recordChange(actor, {
+      scope: 'lab',
+      action: 'password set',
+      subjectType: 'user',
+      subjectId: publicId,
+      before: null,
+      after: { sessionsEnded: ended },
+    });
+  });
+}
+
+/** Shuts a person out at once: their sessions end and their tokens open nothing. The last manager cannot be. */
+export async function disableUser(actor: Actor | null, publicIdOrEmail: string): Promise<void> {
+  mayManagePeople(actor);
+  await unitOfWork(async () => {
+    const user = await findUser(publicIdOrEmail);
+    // Locked in one order, so that two managers cannot disable each other at the same moment.
+    const managers = await User.findAll({
+      where: { role: 'manager', disabledAt: null },
+      order: [['id', 'ASC']],
+      lock: currentTransaction().LOCK.UPDATE,
+    });
+    if (managers.length === 1 && managers[0]!.id === user.id) {
+      throw new Conflict('This is the lab’s only manager. Enter another one first.');
+    }
+    const change = { disabledAt: new Date(), version: literal('version + 1') };
+    const [disabled] = await User.update(change, { where: { id: user.id, disabledAt: null } });
+    if (disabled === 0) return;
+    const ended = await endAllSessions(user.id);
+    recordChange(actor, {
+      scope: 'lab',
+      action: 'person disabled',
+      subjectType: 'user',
+      subjectId: user.publicId,
+      before: { disabled: false },
+      after: { disabled: true, sessionsEnded: ended },
+    });
+  });
+}
+
+async function endAllSessions(userId: number): Promise<number> {
+  const [ended] = await Session.update({ endedAt: new Date() }, { where: { userId, endedAt: null } });
+  return ended;
+}
