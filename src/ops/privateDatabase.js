@@ -135,7 +135,11 @@ function alive(pid) {
 const pause = (milliseconds) => new Promise((resolve) => setTimeout(resolve, milliseconds));
 
 /** The first lines a fresh server runs: passwords, no other account, the schema. Written so that repeating is harmless. */
-function initialStatements(kept, database, pattern) {
+function initialStatements(kept, database, manySchemas) {
+  const escaped = database.replaceAll('_', '\\_');
+  const pattern = manySchemas ? `${escaped}%` : escaped;
+  // schemas come and go in the tests, and rights outlive a dropped schema: there the account begins anew
+  const create = manySchemas ? 'CREATE OR REPLACE USER' : 'CREATE USER IF NOT EXISTS';
   const lines = [
     "DELETE FROM mysql.global_priv WHERE (User = 'root' AND Host <> 'localhost') OR User = ''",
     'FLUSH PRIVILEGES',
@@ -146,7 +150,7 @@ function initialStatements(kept, database, pattern) {
     lines.push(
       `CREATE OR REPLACE USER '${OWNER}'@'${host}' IDENTIFIED BY '${kept.ownerPassword}'`,
       `GRANT ALL PRIVILEGES ON \`${pattern}\`.* TO '${OWNER}'@'${host}' WITH GRANT OPTION`,
-      `CREATE USER IF NOT EXISTS '${APPLICATION}'@'${host}' IDENTIFIED BY '${kept.applicationPassword}'`,
+      `${create} '${APPLICATION}'@'${host}' IDENTIFIED BY '${kept.applicationPassword}'`,
       `ALTER USER '${APPLICATION}'@'${host}' IDENTIFIED BY '${kept.applicationPassword}'`,
     );
   }
@@ -233,8 +237,7 @@ async function startDatabase(options) {
 
   const port = await choosePort(options.port, before?.port ?? wantedPort);
   const initial = path.join(dataDirectory, 'stillfield-init.sql');
-  const pattern = manySchemas ? `${database.replaceAll('_', '\\_')}%` : database.replaceAll('_', '\\_');
-  fs.writeFileSync(initial, initialStatements(kept, database, pattern), { mode: 0o600 });
+  fs.writeFileSync(initial, initialStatements(kept, database, manySchemas), { mode: 0o600 });
   if (user) fs.chownSync(initial, user.uid, user.gid);
   if (fs.existsSync(log) && fs.statSync(log).size > 1_000_000) fs.rmSync(log);
   fs.closeSync(fs.openSync(log, 'a', 0o600));
@@ -316,7 +319,7 @@ if (require.main === module) {
     }
     if (verb === 'down') return stopDatabase(state);
     const port = Number(process.env.STILLFIELD_DB_PORT) || undefined;
-    const running = await startDatabase({ state, port, keepRunning: true, manySchemas: true, tell: console.error });
+    const running = await startDatabase({ state, port, keepRunning: true, tell: console.error });
     console.log(`DATABASE_URL=${running.databaseUrl}\nDATABASE_MIGRATE_URL=${running.migrateUrl}`);
   });
 }

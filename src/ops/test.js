@@ -97,7 +97,7 @@ async function runProject(project, paths, extra) {
 }
 
 /** Builds the pages for the tests when their sources have changed. */
-function build(typesChecked) {
+function build() {
   const stamp = path.join(STATE, 'build.sha256');
   if (buildIsFresh(ROOT, DIST, stamp)) {
     say('the build is the one of these sources');
@@ -105,17 +105,16 @@ function build(typesChecked) {
   }
   fs.rmSync(stamp, { force: true });
   const hash = hashInputs(ROOT);
-  const extra = { NODE_ENV: 'production', ...(typesChecked ? { STILLFIELD_TYPES_CHECKED: '1' } : {}) };
-  if (check('build', [tool('next/dist/bin/next'), 'build'], extra)) noteBuild(stamp, hash);
+  if (check('build', [tool('next/dist/bin/next'), 'build'], { NODE_ENV: 'production' })) noteBuild(stamp, hash);
 }
 
-/** Lint, format and types; true when the types are right. */
+/** Lint, format and types. */
 function checkSources() {
   check('lint', [tool('eslint/bin/eslint.js'), '--max-warnings', '0', '.']);
   check('format', [tool('prettier/bin/prettier.cjs'), '--check', '--log-level', 'warn', '.']);
   // a clean clone has no next-env.d.ts and no route types yet
   check('route types', [tool('next/dist/bin/next'), 'typegen']);
-  return check('types', [tool('typescript/bin/tsc'), '--noEmit']);
+  check('types', [tool('typescript/bin/tsc'), '--noEmit']);
 }
 
 /** True when tests/browser holds a test. */
@@ -143,7 +142,7 @@ run(async () => {
   };
   for (const signal of ['SIGINT', 'SIGTERM']) process.once(signal, () => void stop(1));
 
-  const typesChecked = first ? false : checkSources();
+  if (!first) checkSources();
   if (wanted.includes('core')) await runProject('core', paths, {});
   if (wanted.some((name) => name !== 'core')) {
     database = await startTestDatabase({ tell: say });
@@ -151,7 +150,7 @@ run(async () => {
       STILLFIELD_TEST_DATABASE_URL: database.databaseUrl,
       STILLFIELD_TEST_MIGRATE_URL: database.migrateUrl,
     };
-    build(typesChecked);
+    build();
     for (const project of wanted.filter((name) => name !== 'core')) await runProject(project, paths, extra);
   }
   if (!first && !hasBrowserTests()) say('there is no browser test yet');
