@@ -36,3 +36,8 @@ export function containsAddress(ranges: BlockList, address: string): boolean {
   const family = isIP(plain);
   return family !== 0 && ranges.check(plain, family === 6 ? 'ipv6' : 'ipv4');
 }
+
+/** `127.0.0.0/8`, `localhost` and `[::1]`: what a browser treats as the same machine. Takes `URL.hostname`. */
+export function isLoopbackName(hostname: string): boolean {
+  return hostname === 'localhost' || hostname === '[::1]' || /^127\.\d+\.\d+\.\d+$/.test(hostname);
+}

@@ -1,15 +1,10 @@
 import { readFileSync } from 'node:fs';
 import { z } from 'zod';
-import { rangeProblem } from './addresses';
+import { isLoopbackName, rangeProblem } from './addresses';
 import { parseDatabaseUrl } from './database';
 
 /** Each of these may also be given as NAME_FILE, the path of a file that holds it (its last line end is cut). */
 const SECRETS = ['DATABASE_URL', 'DATABASE_MIGRATE_URL', 'SMTP_URL', 'SESSION_SECRET'] as const;
-
-/** `127.0.0.0/8`, `localhost` and `[::1]`: what a browser treats as the same machine. The URL parser has normalised it. */
-function isLoopback(hostname: string): boolean {
-  return hostname === 'localhost' || hostname === '[::1]' || /^127\.\d+\.\d+\.\d+$/.test(hostname);
-}
 
 const databaseUrl = z.string().superRefine((value, context) => {
   try {
@@ -41,7 +36,7 @@ const appOrigin = z.string().transform((value, context) => {
   if (parsed.username || parsed.password || parsed.pathname !== '/' || parsed.search || parsed.hash) {
     return problem('give the origin alone, without path, query or user');
   }
-  if (parsed.protocol === 'http:' && !isLoopback(parsed.hostname)) {
+  if (parsed.protocol === 'http:' && !isLoopbackName(parsed.hostname)) {
     return problem(
       `${parsed.origin} is plain HTTP, so passwords and session cookies would cross the network readable; ` +
         'put a TLS proxy in front and give its https:// address (plain HTTP is for localhost, 127.0.0.0/8 and [::1])',

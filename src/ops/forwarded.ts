@@ -1,6 +1,6 @@
 import type { IncomingHttpHeaders } from 'node:http';
 import { type BlockList, isIP } from 'node:net';
-import { containsAddress, plainAddress } from '@/config/addresses';
+import { containsAddress, isLoopbackName, plainAddress } from '@/config/addresses';
 
 /** What the rest of the product may believe about where a request came from. */
 export interface Forwarded {
@@ -68,4 +68,15 @@ export function overwriteForwarded(headers: IncomingHttpHeaders, believed: Forwa
   headers['x-forwarded-for'] = believed.address;
   headers['x-forwarded-proto'] = believed.proto;
   if (believed.host) headers['x-forwarded-host'] = believed.host;
+}
+
+/**
+ * Where to send somebody who opens a local lab under another name of the same machine (127.0.0.1 instead of localhost):
+ * signing in there would fail, because its Origin is not the product's. Null for everything but a page being opened.
+ */
+export function sameMachineElsewhere(headers: IncomingHttpHeaders, url: string, origin: string): string | null {
+  if (headers['sec-fetch-mode'] !== 'navigate' || !headers.host) return null;
+  const [here, home] = [`http://${headers.host}`, new URL(origin)];
+  if (!URL.canParse(here) || !isLoopbackName(new URL(here).hostname) || !isLoopbackName(home.hostname)) return null;
+  return new URL(here).host === home.host ? null : `${home.origin}${url.startsWith('/') ? url : '/'}`;
 }

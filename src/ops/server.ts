@@ -8,7 +8,7 @@ import next from 'next';
 import { addressRanges } from '@/config/addresses';
 import { env, EnvError } from '@/config/env';
 import { drain, onStop } from './drain';
-import { forwarded, overwriteForwarded } from './forwarded';
+import { forwarded, overwriteForwarded, sameMachineElsewhere } from './forwarded';
 import { errorDetails, logLine } from './log';
 
 const DRAIN_LIMIT_MS = 20_000;
@@ -34,7 +34,7 @@ function logRequest(request: IncomingMessage, response: ServerResponse, address:
 }
 
 async function main(): Promise<void> {
-  const { PORT, HOST, TRUSTED_PROXIES } = env();
+  const { APP_ORIGIN, PORT, HOST, TRUSTED_PROXIES } = env();
   const trusted = addressRanges(TRUSTED_PROXIES);
   const dev = process.argv.includes('--dev');
   const app = next({ dev, hostname: HOST, port: PORT });
@@ -49,6 +49,11 @@ async function main(): Promise<void> {
     overwriteForwarded(request.headers, believed);
     if (stopping) response.setHeader('Connection', 'close');
     response.once('close', () => logRequest(request, response, believed.address, begun));
+    const elsewhere = sameMachineElsewhere(request.headers, request.url ?? '/', APP_ORIGIN);
+    if (elsewhere) {
+      response.writeHead(307, { Location: elsewhere }).end();
+      return;
+    }
     handle(request, response).catch((error: unknown) => {
       logLine('error', 'request failed', errorDetails(error));
       if (!response.headersSent) response.writeHead(500);

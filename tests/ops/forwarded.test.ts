@@ -1,5 +1,5 @@
 import { addressRanges } from '@/config/addresses';
-import { forwarded, overwriteForwarded } from '@/ops/forwarded';
+import { forwarded, overwriteForwarded, sameMachineElsewhere } from '@/ops/forwarded';
 
 const NOBODY = addressRanges([]);
 const PROXIES = addressRanges(['10.0.0.0/8', '192.0.2.7', 'fd00::/8']);
@@ -45,4 +45,21 @@ test('every forwarding header is replaced', () => {
     'x-forwarded-proto': 'http',
     'x-forwarded-host': 'inner:3000',
   });
+});
+
+test.each([
+  [
+    'another name of this machine',
+    '127.0.0.1:3000',
+    'navigate',
+    'http://localhost:3000',
+    'http://localhost:3000/jobs?x=1',
+  ],
+  ['the right name', 'localhost:3000', 'navigate', 'http://localhost:3000', null],
+  ['a script', '127.0.0.1:3000', undefined, 'http://localhost:3000', null],
+  ['a fetch of a page', '127.0.0.1:3000', 'cors', 'http://localhost:3000', null],
+  ['a lab behind its proxy', '127.0.0.1:3000', 'navigate', 'https://stillfield.example', null],
+  ['a name that is no loopback', 'stillfield.example', 'navigate', 'http://localhost:3000', null],
+])('a page opened under %s', (_, host, mode, origin, target) => {
+  expect(sameMachineElsewhere({ host, 'sec-fetch-mode': mode }, '/jobs?x=1', origin)).toBe(target);
 });
