@@ -3,7 +3,8 @@ import { contentSecurityPolicy, newNonce, pageHeaders } from '@/http/securityHea
 
 /**
  * Runs before each page and only there: it gives the page its nonce and its headers. Next reads the nonce from the
- * policy on the request, our own code from `x-nonce`. Who may see a page is decided by the services it calls.
+ * policy on the request, our own code from `x-nonce`; `x-stillfield-path` is where a page sends the reader back to after
+ * signing in. Who may see a page is decided by the services it calls.
  */
 export function proxy(request: NextRequest): NextResponse {
   const nonce = newNonce();
@@ -11,6 +12,7 @@ export function proxy(request: NextRequest): NextResponse {
   const headers = new Headers(request.headers);
   headers.set('x-nonce', nonce);
   headers.set('content-security-policy', policy);
+  headers.set('x-stillfield-path', request.nextUrl.pathname + request.nextUrl.search);
   const response = NextResponse.next({ request: { headers } });
   for (const [name, value] of pageHeaders(policy)) response.headers.set(name, value);
   return response;

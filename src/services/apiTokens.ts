@@ -5,7 +5,7 @@ import { Conflict, Invalid, type Issue, NotFound, Unauthenticated } from '@/erro
 import { ApiToken } from '@/models/apiToken';
 import { newPublicId } from '@/models/publicId';
 import { unitOfWork } from '@/models/unitOfWork';
-import { User } from '@/models/user';
+import { type User } from '@/models/user';
 import { recordChange } from './audit';
 import { findUser } from './users';
 

@@ -38,7 +38,7 @@ export async function admitAttempt(email: string, address: string, now: Date): P
       lock: currentTransaction().LOCK.UPDATE,
     });
     const waitS = Math.max(...rows.map((row) => secondsBlocked(row, now)));
-    if (waitS > 0) throw new Throttled(waitS, `Too many tries. The next one is let in after ${inWords(waitS)}.`);
+    if (waitS > 0) throw new Throttled(waitS, `The next try is let in after ${inWords(waitS)}.`);
     const counted: Attempt['counted'] = [];
     for (const { kind, key, rule } of keys) {
       const state = withFailure(
