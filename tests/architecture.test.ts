@@ -12,7 +12,7 @@ const ARROW: Readonly<Record<string, readonly string[]>> = {
   http: ['services', 'auth', 'schemas', 'errors', 'config'],
   components: ['schemas', 'format', 'emc', 'auth/permissions'],
   models: ['config', 'emc/types', 'emc/kinds'],
-  auth: ['models', 'services', 'schemas', 'config', 'errors'],
+  auth: ['schemas', 'config', 'errors'],
   mail: ['config', 'format', 'schemas', 'errors'],
   pdf: ['format', 'schemas', 'emc', 'errors'],
   // an operation names its permission
