@@ -1,0 +1,205 @@
+import type { CleanBytes } from './bytes';
+import { isComment, splitCells } from './cells';
+import { textNumberReader } from './numbers';
+import { lineEndFrom, linesFrom, textOf } from './sample';
+import type { Block, Scan } from './scan';
+
+/** Rows that belong to one sweep, in file order. */
+export interface Piece {
+  name: string | null;
+  startedAt: string | null;
+  firstRow: number;
+  rows: number;
+  /** Index of the block it starts in, whose preamble speaks for it. */
+  block: number;
+}
+
+/** A row that is not whole. */
+export interface Damage {
+  line: number;
+  text: string;
+  cells: string[];
+  /** Row of the scan that comes before it. */
+  rowBefore: number;
+  /** The file ends with this line. */
+  atEnd: boolean;
+  /** The row has all its cells, but the last one is cut. */
+  cut: boolean;
+}
+
+export interface Resolved {
+  pieces: Piece[];
+  damage: Damage | null;
+  remarks: { text: string; line: number | null }[];
+}
+
+const DIGITS_ONLY = /^[\s\d.,;:+\-−eE|"'/]+$/;
+const DATE = /^\s*\d{1,4}([-/.])\d{1,2}\1\d{2,4}\b|^\s*\d{1,2}:\d{2}/;
+
+/** Does this line look like a row that broke, rather than like a heading or a footer? */
+function looksBroken(text: string, scan: Scan, clean: CleanBytes, block: Block): boolean {
+  const { template } = scan;
+  const cells = splitCells(text, template.delimiter);
+  const firstNumber = template.contents.findIndex((content) => content === 'number');
+  if (firstNumber === 0) {
+    if (textNumberReader(template)(cells[0] ?? '') !== null) return true;
+    return DIGITS_ONLY.test(text) && /\d/.test(text) && !DATE.test(text);
+  }
+  const last = textOf(clean.bytes, block.lastFrom, lineEndFrom(clean.bytes, block.lastFrom));
+  const [label = ''] = splitCells(last, template.delimiter);
+  return cells[0] === label || (DATE.test(label) && DATE.test(cells[0] ?? '')) || DIGITS_ONLY.test(text);
+}
+
+function damageAt(clean: CleanBytes, scan: Scan, block: Block, gap: NonNullable<Block['gap']>): Damage {
+  const end = lineEndFrom(clean.bytes, gap.from);
+  const text = textOf(clean.bytes, gap.from, Math.min(end, gap.from + 2000));
+  const rest = textOf(clean.bytes, end, Math.min(end + 16, clean.bytes.length));
+  return {
+    line: gap.line,
+    text,
+    cells: splitCells(text, scan.template.delimiter),
+    rowBefore: block.firstRow + block.rows - 1,
+    atEnd: rest.trim() === '' && end + 16 >= clean.bytes.length,
+    cut: false,
+  };
+}
+
+/** Digits after the decimal mark of the last cell of each of a block's last rows. */
+function lastDecimals(clean: CleanBytes, scan: Scan, block: Block): number[] {
+  const { delimiter, decimal } = scan.template;
+  const reach = Math.max(block.from, block.lastFrom - 4096);
+  return linesFrom(clean, reach, 0, 200, 8192)
+    .slice(reach === block.from ? 0 : 1)
+    .filter(({ text, from }) => text.trim() !== '' && from <= block.lastFrom)
+    .map(({ text }) => splitCells(text, delimiter).findLast((cell) => cell !== '') ?? '')
+    .map((cell) => cell.split(decimal)[1]?.length ?? 0);
+}
+
+/** The file ends inside the last number: fewer decimals than every row before, or rows missing, and no line end. */
+function cutNumber(clean: CleanBytes, scan: Scan, block: Block, missing: boolean): Damage | null {
+  if (clean.endsWithLineEnd || block.next < clean.bytes.length || block.rows < 2) return null;
+  const decimals = lastDecimals(clean, scan, block);
+  const last = decimals.pop() ?? 0;
+  const fewer = decimals.length >= 3 && decimals.every((count) => count === decimals[0]) && last < decimals[0]!;
+  if (!fewer && !missing) return null;
+  const gap = { line: block.lastLine, from: block.lastFrom, lines: 1 };
+  return { ...damageAt(clean, scan, block, gap), rowBefore: block.firstRow + block.rows - 2, cut: true };
+}
+
+function mainBlock(blocks: readonly Block[]): number {
+  let main = 0;
+  for (const [i, block] of blocks.entries()) if (block.rows > blocks[main]!.rows) main = i;
+  return main;
+}
+
+export function mainBlockOf(scan: Scan): Block {
+  return scan.blocks[mainBlock(scan.blocks)]!;
+}
+
+/**
+ * Which blocks are sweeps, which belong together, and whether a row between or after them is broken.
+ * @param axis column of `cells` that rises through a sweep; null for layouts whose rows are whole sweeps
+ * @param declaredPoints the count the file states, to tell a cut last row
+ */
+export function resolveBlocks(
+  clean: CleanBytes,
+  scan: Scan,
+  axis: number | null,
+  declaredPoints: number | null,
+): Resolved {
+  const { blocks, cells, columns } = scan;
+  const wide = columns.length;
+  const main = mainBlock(blocks);
+  const most = blocks[main]!.rows;
+  const remarks: Resolved['remarks'] = [];
+  const at = (row: number) => cells[row * wide + (axis ?? 0)]!;
+  const lastRow = (block: Block) => block.firstRow + block.rows - 1;
+  const sense = Math.sign(at(lastRow(blocks[main]!)) - at(blocks[main]!.firstRow)) || 1;
+  const step = Math.abs(at(lastRow(blocks[main]!)) - at(blocks[main]!.firstRow)) / Math.max(1, most - 1);
+  const steady = (block: Block) => {
+    let back = 0;
+    for (let row = block.firstRow + 1; row <= lastRow(block); row++) if ((at(row) - at(row - 1)) * sense < 0) back++;
+    return back <= 0.1 * block.rows;
+  };
+  const isPeer = (i: number) =>
+    i === main || (axis !== null && blocks[i]!.rows >= Math.max(3, most * 0.05) && steady(blocks[i]!));
+
+  const pieces: Piece[] = [];
+  let joinsOn = false;
+  for (const [i, block] of blocks.entries()) {
+    const next = blocks[i + 1];
+    const { gap } = block;
+    const gapText = gap
+      ? textOf(clean.bytes, gap.from, Math.min(lineEndFrom(clean.bytes, gap.from), gap.from + 4000))
+      : '';
+    const ahead = next && axis !== null ? (at(next.firstRow) - at(lastRow(block))) * sense : NaN;
+    const touches = isPeer(i) || i + 1 === main;
+    const continues = ahead >= 0 && ahead <= 5 * step && touches;
+    const broken = gap !== null && looksBroken(gapText, scan, clean, block);
+    const wordless = gap?.lines === 1 && !/[a-z]{2}/i.test(gapText);
+    if (isPeer(i) || joinsOn) {
+      const last = pieces.at(-1);
+      if (joinsOn && last) last.rows += block.rows;
+      else pieces.push({ name: null, startedAt: null, firstRow: block.firstRow, rows: block.rows, block: i });
+    } else if (continues && (broken || wordless)) {
+      pieces.push({ name: null, startedAt: null, firstRow: block.firstRow, rows: block.rows, block: i });
+    } else if (block.rows > 1) {
+      remarks.push({
+        text: `Lines ${block.firstLine} to ${block.lastLine} hold ${block.rows} rows that are not part of a sweep; they were not read.`,
+        line: block.firstLine,
+      });
+    }
+    if (gap && touches && !isComment(gapText)) {
+      if (broken && (continues || isPeer(i))) return { pieces, damage: damageAt(clean, scan, block, gap), remarks };
+      if (continues && wordless) return { pieces, damage: damageAt(clean, scan, block, gap), remarks };
+    }
+    joinsOn = (isPeer(i) || joinsOn) && continues && gap !== null && isComment(gapText);
+  }
+  const last = blocks.at(-1)!;
+  const inLast = pieces.at(-1);
+  if (inLast && lastRow(last) === inLast.firstRow + inLast.rows - 1) {
+    const missing = declaredPoints !== null && axis !== null && inLast.rows < declaredPoints && pieces.length === 1;
+    const cut = cutNumber(clean, scan, last, missing);
+    if (cut) return { pieces, damage: cut, remarks };
+    if (last.gap) {
+      const { line, lines } = last.gap;
+      const text = `${lines === 1 ? 'One line' : `${lines} lines`} after the last row, from line ${line}, hold no row and were not read.`;
+      remarks.push({ text, line });
+    }
+  }
+  return { pieces, damage: null, remarks };
+}
+
+/** Splits pieces where the axis returns to where it began: several sweeps under one another. */
+export function splitAtRestarts(pieces: readonly Piece[], axisAt: (row: number) => number): Piece[] {
+  return pieces.flatMap((piece) => {
+    const starts = [piece.firstRow];
+    const origin = axisAt(piece.firstRow);
+    const second = axisAt(piece.firstRow + 1);
+    for (let row = piece.firstRow + 2; row < piece.firstRow + piece.rows; row++) {
+      if (axisAt(row) === origin && axisAt(row - 1) !== origin && second !== origin) starts.push(row);
+    }
+    return starts.map((firstRow, i) => ({
+      ...piece,
+      firstRow,
+      rows: (starts[i + 1] ?? piece.firstRow + piece.rows) - firstRow,
+    }));
+  });
+}
+
+/** Splits pieces where their first text cell changes from one stretch of rows to the next: named tables in one file. */
+export function splitAtLabels(pieces: readonly Piece[], labelAt: (row: number) => string): Piece[] | null {
+  const split: Piece[] = [];
+  for (const piece of pieces) {
+    let from = piece.firstRow;
+    for (let row = from; row < piece.firstRow + piece.rows; row++) {
+      if (row > from && labelAt(row) !== labelAt(row - 1)) {
+        split.push({ ...piece, name: labelAt(from), firstRow: from, rows: row - from });
+        from = row;
+        if (split.length > 200) return null;
+      }
+    }
+    split.push({ ...piece, name: labelAt(from), firstRow: from, rows: piece.firstRow + piece.rows - from });
+  }
+  return split.every((piece) => piece.rows >= 2) ? split : null;
+}

@@ -1,0 +1,210 @@
+/** The bytes of a text file, brought to UTF-8 without byte-order mark and without NUL padding. Line ends stay as they are. */
+export interface CleanBytes {
+  bytes: Uint8Array;
+  /** e.g. `ascii`, `utf-8 with BOM`, `utf-16le with BOM`, `windows-1252`, `ascii with NUL bytes (1442)` */
+  encoding: string;
+  /** `LF`, `CRLF`, `CR`, `none`, or `mixed: 1045 CRLF, 1 LF` */
+  lineEnds: string;
+  nulBytes: number;
+  /** Lines in the file; an unterminated last line counts. */
+  lines: number;
+  endsWithLineEnd: boolean;
+  /** Share of control characters at the start of the file: above 0.1 it is no text. */
+  controlShare: number;
+}
+
+export interface DecodedText {
+  /** Line ends are `\n` only, so line n of this text is line n of the file. */
+  text: string;
+  encoding: string;
+  lineEnds: string;
+  nulBytes: number;
+}
+
+const CHUNK = 1 << 20;
+
+/** Code points of 0x80 to 0x9F in Windows-1252 (WHATWG Encoding Standard, index windows-1252). */
+const WINDOWS_1252 = [
+  0x20ac, 0x81, 0x201a, 0x192, 0x201e, 0x2026, 0x2020, 0x2021, 0x2c6, 0x2030, 0x160, 0x2039, 0x152, 0x8d, 0x17d, 0x8f,
+  0x90, 0x2018, 0x2019, 0x201c, 0x201d, 0x2022, 0x2013, 0x2014, 0x2dc, 0x2122, 0x161, 0x203a, 0x153, 0x9d, 0x17e, 0x178,
+];
+
+/** UTF-16 shows as NULs on one side of every pair; padding shows on both sides or seldom. */
+function utf16Guess(bytes: Uint8Array): 'utf-16le' | 'utf-16be' | null {
+  const pairs = Math.min(bytes.length >> 1, 4096);
+  if (pairs < 2) return null;
+  let even = 0;
+  let odd = 0;
+  for (let i = 0; i < pairs * 2; i += 2) {
+    if (bytes[i] === 0) even++;
+    if (bytes[i + 1] === 0) odd++;
+  }
+  if (odd > 0.7 * pairs && even < 0.05 * pairs) return 'utf-16le';
+  if (even > 0.7 * pairs && odd < 0.05 * pairs) return 'utf-16be';
+  return null;
+}
+
+function join(parts: Uint8Array[]): Uint8Array {
+  const whole = new Uint8Array(parts.reduce((sum, part) => sum + part.length, 0));
+  let at = 0;
+  for (const part of parts) {
+    whole.set(part, at);
+    at += part.length;
+  }
+  return whole;
+}
+
+function* fromUtf16(bytes: Uint8Array, encoding: 'utf-16le' | 'utf-16be'): Generator<void, Uint8Array> {
+  const decoder = new TextDecoder(encoding);
+  const encoder = new TextEncoder();
+  const parts: Uint8Array[] = [];
+  for (let at = 0; at < bytes.length; at += CHUNK) {
+    parts.push(encoder.encode(decoder.decode(bytes.subarray(at, at + CHUNK), { stream: at + CHUNK < bytes.length })));
+    yield;
+  }
+  return join(parts);
+}
+
+function* fromWindows1252(bytes: Uint8Array): Generator<void, Uint8Array> {
+  const encoder = new TextEncoder();
+  const parts: Uint8Array[] = [];
+  const points: number[] = [];
+  for (let at = 0; at < bytes.length; at += CHUNK) {
+    const stop = Math.min(at + CHUNK, bytes.length);
+    const pieces: string[] = [];
+    for (let i = at; i < stop; i++) {
+      const byte = bytes[i]!;
+      points.push(byte >= 0x80 && byte <= 0x9f ? WINDOWS_1252[byte - 0x80]! : byte);
+      if (points.length === 4096 || i + 1 === stop) pieces.push(String.fromCharCode(...points.splice(0)));
+    }
+    parts.push(encoder.encode(pieces.join('')));
+    yield;
+  }
+  return join(parts);
+}
+
+function* isUtf8(bytes: Uint8Array): Generator<void, boolean> {
+  const decoder = new TextDecoder('utf-8', { fatal: true });
+  try {
+    for (let at = 0; at < bytes.length; at += CHUNK) {
+      decoder.decode(bytes.subarray(at, at + CHUNK), { stream: at + CHUNK < bytes.length });
+      yield;
+    }
+    return true;
+  } catch {
+    return false;
+  }
+}
+
+function withoutNul(bytes: Uint8Array): Uint8Array {
+  const kept = new Uint8Array(bytes.length);
+  let n = 0;
+  for (let i = 0; i < bytes.length; i++) if (bytes[i] !== 0) kept[n++] = bytes[i]!;
+  return kept.subarray(0, n);
+}
+
+function startsWith(bytes: Uint8Array, ...mark: number[]): boolean {
+  return mark.every((byte, i) => bytes[i] === byte);
+}
+
+/** Position after the line end at `at`; `\r\r\n`, which text-mode copying makes, is one line end. */
+export function afterLineEnd(bytes: Uint8Array, at: number): number {
+  if (bytes[at] === 10) return at + 1;
+  if (bytes[at + 1] === 10) return at + 2;
+  if (bytes[at + 1] === 13 && bytes[at + 2] === 10) return at + 3;
+  return at + 1;
+}
+
+function describeLineEnds(crlf: number, lf: number, cr: number): string {
+  const kinds = [
+    ['CRLF', crlf],
+    ['LF', lf],
+    ['CR', cr],
+  ].filter(([, count]) => count !== 0);
+  if (kinds.length === 0) return 'none';
+  if (kinds.length === 1) return String(kinds[0]![0]);
+  return `mixed: ${kinds.map(([name, count]) => `${count} ${name}`).join(', ')}`;
+}
+
+/** Byte level of recognition. Yields about every megabyte so that a server can serve others meanwhile. */
+export function* cleanSteps(raw: Uint8Array): Generator<void, CleanBytes> {
+  let bytes = raw;
+  let encoding = '';
+  let nulBytes = 0;
+  const unmarked = startsWith(raw, 0xff, 0xfe) || startsWith(raw, 0xfe, 0xff) ? null : utf16Guess(raw);
+  if (startsWith(raw, 0xff, 0xfe)) {
+    bytes = yield* fromUtf16(raw, 'utf-16le');
+    encoding = 'utf-16le with BOM';
+  } else if (startsWith(raw, 0xfe, 0xff)) {
+    bytes = yield* fromUtf16(raw, 'utf-16be');
+    encoding = 'utf-16be with BOM';
+  } else if (unmarked) {
+    bytes = yield* fromUtf16(raw, unmarked);
+    encoding = unmarked;
+  } else if (startsWith(raw, 0xef, 0xbb, 0xbf)) {
+    bytes = raw.subarray(3);
+    encoding = 'utf-8 with BOM';
+  }
+  if (bytes.includes(0)) {
+    const before = bytes.length;
+    bytes = withoutNul(bytes);
+    nulBytes = before - bytes.length;
+    yield;
+  }
+
+  let high = 0;
+  let crlf = 0;
+  let lf = 0;
+  let cr = 0;
+  let control = 0;
+  const head = Math.min(bytes.length, 65_536);
+  for (let i = 0; i < bytes.length;) {
+    const stop = Math.min(i + CHUNK, bytes.length);
+    while (i < stop) {
+      const byte = bytes[i]!;
+      high |= byte;
+      if (byte === 10) lf++;
+      else if (byte === 13) {
+        const next = afterLineEnd(bytes, i);
+        if (bytes[next - 1] === 10) crlf++;
+        else cr++;
+        i = next;
+        continue;
+      } else if (byte < 32 && i < head && byte !== 9 && byte !== 12) control++;
+      i++;
+    }
+    yield;
+  }
+
+  if (high & 0x80 && !encoding.startsWith('utf-16') && !(yield* isUtf8(bytes))) {
+    bytes = yield* fromWindows1252(bytes);
+    encoding = 'windows-1252';
+  }
+  encoding ||= high & 0x80 ? 'utf-8' : 'ascii';
+  const last = bytes[bytes.length - 1];
+  const endsWithLineEnd = last === 10 || last === 13;
+  return {
+    bytes,
+    encoding: nulBytes > 0 ? `${encoding} with NUL bytes (${nulBytes})` : encoding,
+    lineEnds: describeLineEnds(crlf, lf, cr),
+    nulBytes,
+    lines: crlf + lf + cr + (bytes.length > 0 && !endsWithLineEnd ? 1 : 0),
+    endsWithLineEnd,
+    controlShare: head === 0 ? 0 : control / head,
+  };
+}
+
+/** Runs a stepwise piece of work to its end. */
+export function runThrough<T>(steps: Generator<unknown, T>): T {
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
+}
+
+/** The whole file as text, for readers that want lines: line n of the text is line n of the file. */
+export function decode(raw: Uint8Array): DecodedText {
+  const clean = runThrough(cleanSteps(raw));
+  const text = new TextDecoder('utf-8', { ignoreBOM: true }).decode(clean.bytes).replace(/\r?\r\n|\r/g, '\n');
+  return { text, encoding: clean.encoding, lineEnds: clean.lineEnds, nulBytes: clean.nulBytes };
+}

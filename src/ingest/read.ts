@@ -1,0 +1,108 @@
+import { runThrough } from './bytes';
+import { delimiterName } from './cells';
+import { IngestError } from './ingestError';
+import { moved } from './numbers';
+import { prepareSteps } from './prepare';
+import { scanSteps } from './scan';
+import { axisOf, levelsOf, tableFor, tableSteps } from './table';
+import { tracesOf } from './traces';
+import type { Answers, ReadSweep, ReadTrace, Recognition } from './types';
+import { TO_HZ } from './units';
+
+function unanswered(found: string, expected: string, message: string): IngestError {
+  return new IngestError(null, found, expected, message);
+}
+
+/** Answers that reading cannot do without. */
+function settle(recognition: Recognition, answers: Answers) {
+  const unit = answers.frequencyUnit ?? recognition.frequency.unit;
+  if (unit === null) {
+    const message = 'The unit of the frequencies is not settled. Say which before the sweep is read.';
+    throw unanswered('no frequency unit', 'Hz, kHz, MHz or GHz', message);
+  }
+  const count = recognition.sweeps.length;
+  const sweepIndex = answers.sweepIndex ?? (count === 1 ? 0 : null);
+  if (sweepIndex === null) {
+    throw unanswered(`${count} sweeps`, 'one of them', `The file holds ${count} sweeps. Say which one is this run.`);
+  }
+  if (!(sweepIndex >= 0 && sweepIndex < count)) {
+    const message = `The file holds ${count} sweeps; there is no sweep ${sweepIndex + 1}.`;
+    throw unanswered(`sweep ${sweepIndex + 1}`, `1 to ${count}`, message);
+  }
+  const centreHz = recognition.frequency.offset ? answers.centreHz : 0;
+  if (centreHz === undefined) {
+    const message = 'The frequencies are offsets from a centre that the file does not hold. Give the centre frequency.';
+    throw unanswered('offsets', 'a centre frequency in Hz', message);
+  }
+  return { unit, sweepIndex, centreHz };
+}
+
+/**
+ * Reads one sweep as recognised and answered: every point, in file order, nothing sorted, merged or rounded. Yields
+ * about every 16,384 rows.
+ * @param file the bytes as they came, or the text decoded from them
+ * @throws IngestError when the file was refused, an answer it needs is missing, or it is not the file recognised
+ */
+export function* readSweepSteps(
+  file: Uint8Array | string,
+  recognition: Recognition,
+  answers: Answers = {},
+): Generator<void, ReadSweep> {
+  if (recognition.refusal) {
+    const { line, found, expected, message } = recognition.refusal;
+    throw new IngestError(line, found, expected, message);
+  }
+  const { unit, sweepIndex, centreHz } = settle(recognition, answers);
+  const prepared = yield* prepareSteps(typeof file === 'string' ? new TextEncoder().encode(file) : file);
+  const { template, clean } = prepared;
+  const { column } = recognition.frequency;
+  const shift = TO_HZ[unit];
+  const same =
+    template &&
+    delimiterName(template.delimiter) === recognition.delimiter &&
+    template.decimal === recognition.decimalMark;
+  if (!same) {
+    const message = 'The file is not the one that was recognised. Drop it again.';
+    throw unanswered('another shape', `the shape recognised`, message);
+  }
+  const shifts: number[] = [];
+  if (column !== null) shifts[column] = shift;
+  const scan = yield* scanSteps(clean, template, shifts);
+  const table = yield* tableSteps(prepared, scan, { layout: recognition.layout, axisColumn: column });
+  const piece = table.pieces[sweepIndex];
+  if (!piece || table.damage || table.layout !== recognition.layout) {
+    const message = 'The file is not the one that was recognised. Drop it again.';
+    throw unanswered('other rows', 'the rows recognised', message);
+  }
+
+  // Pairs were shifted as they were scanned; the frequencies of row layouts stand elsewhere and are shifted here.
+  const frequencyHz = axisOf(table, piece, shift);
+  if (table.hop && shift !== 0) frequencyHz.forEach((value, i) => (frequencyHz[i] = moved(value, shift)));
+  if (centreHz !== 0) frequencyHz.forEach((value, i) => (frequencyHz[i] = centreHz + value));
+  yield;
+
+  const own = sweepIndex === 0 ? null : tracesOf(tableFor(prepared, table, piece), piece, frequencyHz, 0);
+  const traces: ReadTrace[] = [];
+  for (const trace of recognition.traces) {
+    const answer = answers.traces?.find(({ index }) => index === trace.index);
+    if (answer ? !answer.use : trace.blank) continue;
+    const stated = own?.[trace.index] ?? trace;
+    const traceUnit = answer?.unit ?? stated.unit;
+    if (!traceUnit) {
+      const message = `The unit of “${trace.name}” is not settled. Say which before the sweep is read.`;
+      throw unanswered('no level unit', 'a level unit', message);
+    }
+    const name = answer?.name ?? (table.layout === 'pairs' ? trace.name : (piece.name ?? trace.name));
+    const detector = answer?.detector ?? stated.detector ?? 'unknown';
+    traces.push({ index: trace.index, name, unit: traceUnit, detector, values: levelsOf(table, piece, trace.column) });
+    yield;
+  }
+  if (traces.length === 0)
+    throw unanswered('no trace in use', 'at least one trace', 'Choose at least one trace to read.');
+  return { frequencyHz, traces };
+}
+
+/** `readSweepSteps` in one go. */
+export function readSweep(file: Uint8Array | string, recognition: Recognition, answers: Answers = {}): ReadSweep {
+  return runThrough(readSweepSteps(file, recognition, answers));
+}

@@ -1,0 +1,176 @@
+import type { Piece } from './blocks';
+import { runThrough } from './bytes';
+import { delimiterName } from './cells';
+import { describeColumns } from './columns';
+import { correctionsOf } from './corrections';
+import { factorQuestions, factorTraces, isFactorTable } from './factorShape';
+import { axisRemarks, axisUnit, declaredSpan, describeAxis } from './frequency';
+import { IngestError } from './ingestError';
+import { prepareSteps, type Prepared } from './prepare';
+import { bareLines, previewOf } from './preview';
+import { questionsFor } from './questions';
+import { brokenRow, commaTwice, notOverFrequency, noTable, type Refusal } from './refusals';
+import { scanSteps } from './scan';
+import { settingsOf } from './settings';
+import { axisOf, tableFor, tableSteps, type Table } from './table';
+import { commaIsBoth } from './template';
+import { tracesOf } from './traces';
+import type { Recognition, RecognisedTrace } from './types';
+import { TO_HZ } from './units';
+
+const MOST_SWEEPS = 2000;
+
+const NO_AXIS: Recognition['frequency'] = {
+  column: null,
+  unit: null,
+  unitEvidence: null,
+  proposedUnit: 'Hz',
+  offset: false,
+  firstHz: 0,
+  lastHz: 0,
+  points: 0,
+  ascending: false,
+  duplicates: 0,
+  stepHz: 0,
+  evenStep: false,
+};
+
+/** A refusal with whatever was recognised before it. */
+function refused(prepared: Prepared, refusal: Refusal, table: Table | null): Recognition {
+  const { clean, template, announced } = prepared;
+  const style = template ?? { decimal: '.' as const, thousands: null, delimiter: announced ?? ',' };
+  return {
+    kind: 'refused',
+    refusal,
+    encoding: clean.encoding,
+    lineEnds: clean.lineEnds,
+    delimiter: delimiterName(style.delimiter),
+    decimalMark: style.decimal,
+    thousandsMark: style.thousands,
+    layout: table?.layout ?? 'pairs',
+    preambleLines: table ? (table.headings.line ?? table.main.firstLine) - 1 : 0,
+    headerLine: table?.headings.line ?? null,
+    firstDataLine: table?.main.firstLine ?? 1,
+    lastDataLine: table?.main.lastLine ?? 1,
+    columns: table ? describeColumns(table, [], prepared.option) : [],
+    frequency: NO_AXIS,
+    traces: [],
+    sweeps: [],
+    settings: (table?.declared ?? settingsOf([], style)).settings,
+    correctedFor: [],
+    questions: [],
+    remarks: table?.remarks ?? [],
+    preview: table ? previewOf(prepared, table) : bareLines(prepared),
+  };
+}
+
+/** Sweeps with a preamble each may name different detectors or units; what differs is left open until one is chosen. */
+function settleAcross(prepared: Prepared, table: Table, traces: RecognisedTrace[], chosen: Piece): RecognisedTrace[] {
+  const others = table.pieces.filter(({ block }) => block !== chosen.block).slice(0, 50);
+  if (others.length === 0 || table.layout !== 'pairs') return traces;
+  const each = others.map((piece) => tracesOf(tableFor(prepared, table, piece), piece, axisOf(table, piece), 0));
+  return traces.map((trace, i) => {
+    const agree = (same: (other: RecognisedTrace) => boolean) =>
+      each.every((list) => list[i] !== undefined && same(list[i]));
+    const detector = agree((other) => other.detector === trace.detector) ? trace.detector : null;
+    const unit = agree((other) => other.unit === trace.unit) ? trace.unit : null;
+    return { ...trace, detector, unit, detectorAsWritten: detector === null ? null : trace.detectorAsWritten };
+  });
+}
+
+/**
+ * What a file is, as far as the file itself says; everything else becomes a question. Never throws on a file: one that
+ * cannot be read is answered as refused. Yields often, so that a server can serve others meanwhile.
+ * @param raw the file's bytes as they came
+ * @param fileName the name of the file; a hint for a network-parameter file, nothing more
+ * @param sweepIndex which of several sweeps to describe; without it the first is described, and what differs between
+ *   them is left open
+ */
+export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?: number): Generator<void, Recognition> {
+  const prepared = yield* prepareSteps(raw);
+  const { clean, template, option } = prepared;
+  if (template === null) return refused(prepared, noTable(prepared), null);
+  let table: Table;
+  try {
+    const scan = yield* scanSteps(clean, template);
+    if (scan.rows < 2) return refused(prepared, noTable(prepared), null);
+    table = yield* tableSteps(prepared, scan);
+  } catch (error) {
+    if (!(error instanceof IngestError)) throw error;
+    const { line, found, expected, message } = error;
+    return refused(prepared, { line, found, expected, message }, null);
+  }
+  if (commaIsBoth(template, prepared.sample, table.headings.line === null ? null : table.headings.count)) {
+    const row = prepared.sample.find(({ from }) => from === table.main.from);
+    return refused(prepared, commaTwice(table.main.firstLine, row?.text ?? ''), table);
+  }
+  if (table.noAxis) return refused(prepared, notOverFrequency(table), table);
+  const piece = table.pieces[sweepIndex ?? 0] ?? table.pieces[0];
+  if (!piece) return refused(prepared, brokenRow(table, null), table);
+
+  const own = tableFor(prepared, table, piece);
+  const axis = axisOf(own, piece);
+  yield;
+  const unit = axisUnit(prepared, own, axis);
+  const frequency = describeAxis(own, axis, unit);
+  yield;
+  const shift = TO_HZ[unit.unit ?? unit.proposed];
+  let traces: RecognisedTrace[];
+  try {
+    traces = option ? factorTraces(clean, own, option, axis, shift) : tracesOf(own, piece, axis, shift);
+  } catch (error) {
+    if (!(error instanceof IngestError)) throw error;
+    const { line, found, expected, message } = error;
+    return refused(prepared, { line, found, expected, message }, table);
+  }
+  if (sweepIndex === undefined) traces = settleAcross(prepared, table, traces, piece);
+  yield;
+  if (traces.length === 0) {
+    const found = 'no column of levels';
+    const message = `Line ${table.main.firstLine}: ${found} beside the frequencies. Export the trace with its levels.`;
+    return refused(prepared, { line: table.main.firstLine, found, expected: 'a level per frequency', message }, table);
+  }
+
+  const pieces = table.pieces.slice(0, MOST_SWEEPS);
+  const sweeps = pieces.map(({ name, startedAt }, i) => ({ name: name ?? `sweep ${i + 1}`, startedAt }));
+  const correctedFor = correctionsOf(own.preamble, own.entries);
+  const settings = { ...own.declared.settings, ...declaredSpan(own, axis, unit) };
+  const factor = isFactorTable(own, option);
+  const filler = traces.filter(({ blank }) => blank);
+  const remarks = [
+    ...own.remarks,
+    ...unit.remarks,
+    ...axisRemarks(own, frequency),
+    ...filler.map(({ name, min }) => ({ text: `“${name}” holds ${min} in every row; it is left out.`, line: null })),
+    ...(table.pieces.length > MOST_SWEEPS
+      ? [{ text: `The file holds ${table.pieces.length} sweeps; the first ${MOST_SWEEPS} are offered.`, line: null }]
+      : []),
+  ];
+  const known = { frequency, traces, sweeps, settings, correctedFor };
+  const recognition: Recognition = {
+    kind: factor ? 'factor-table' : 'sweep',
+    refusal: null,
+    encoding: clean.encoding,
+    lineEnds: clean.lineEnds,
+    delimiter: delimiterName(template.delimiter),
+    decimalMark: template.decimal,
+    thousandsMark: template.thousands,
+    layout: table.layout,
+    preambleLines: (own.headings.line ?? table.scan.blocks[piece.block]!.firstLine) - 1,
+    headerLine: own.headings.line,
+    firstDataLine: table.scan.blocks[piece.block]!.firstLine + (table.time?.firstRowIsHeading ? 1 : 0),
+    lastDataLine: table.scan.blocks[table.pieces.at(-1)!.block]!.lastLine,
+    columns: describeColumns(own, traces, option),
+    ...known,
+    questions: factor ? factorQuestions(own, unit, axis, known) : questionsFor(own, unit, axis, known),
+    remarks,
+    preview: previewOf(prepared, own),
+  };
+  if (table.damage === null) return recognition;
+  return { ...recognition, kind: 'refused', refusal: brokenRow(table, unit.unit), questions: [] };
+}
+
+/** `recogniseSteps` in one go. */
+export function recognise(raw: Uint8Array, fileName?: string, sweepIndex?: number): Recognition {
+  return runThrough(recogniseSteps(raw, fileName, sweepIndex));
+}
