@@ -96,6 +96,12 @@ async function runProject(project, paths, extra) {
   say(`${project}: ${result.numPassedTests} passed, ${failed} failed, ${skipped} skipped${note} (${seconds} s)`);
 }
 
+/** The tsconfig that Next may rewrite as it likes: see next.config.js. */
+function writeTsconfig() {
+  fs.mkdirSync(STATE, { recursive: true });
+  fs.writeFileSync(path.join(ROOT, `${DIST}.tsconfig.json`), '{ "extends": "../tsconfig.json" }\n');
+}
+
 /** Builds the pages for the tests when their sources have changed. */
 function build() {
   const stamp = path.join(STATE, 'build.sha256');
@@ -142,6 +148,7 @@ run(async () => {
   };
   for (const signal of ['SIGINT', 'SIGTERM']) process.once(signal, () => void stop(1));
 
+  writeTsconfig();
   if (!first) checkSources();
   if (wanted.includes('core')) await runProject('core', paths, {});
   if (wanted.some((name) => name !== 'core')) {
