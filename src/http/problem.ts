@@ -1,4 +1,4 @@
-import { DomainError, Invalid, StaleVersion, Throttled, Unreadable, type Issue } from '@/errors';
+import { type DomainError, Invalid, StaleVersion, Throttled, Unreadable, type Issue } from '@/errors';
 
 const STATUS: Record<string, { status: number; title: string }> = {
   unauthenticated: { status: 401, title: 'Not signed in' },

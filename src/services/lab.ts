@@ -1,4 +1,5 @@
 import { Setting } from '@/models/setting';
+import { unitOfWork } from '@/models/unitOfWork';
 
 export interface LabSettings {
   name: string;
@@ -20,4 +21,9 @@ export function dayIn(zone: string, at: Date): string {
   return new Intl.DateTimeFormat('en-CA', { timeZone: zone, year: 'numeric', month: '2-digit', day: '2-digit' }).format(
     at,
   );
+}
+
+/** The lab's zone, for a page that shows times. */
+export function labZone(): Promise<string> {
+  return unitOfWork(async () => (await labSettings()).zone);
 }

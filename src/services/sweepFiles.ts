@@ -4,7 +4,7 @@ import { NotFound, Unreadable } from '@/errors';
 import { IngestError } from '@/ingest/ingestError';
 import { proposeFromName } from '@/ingest/proposals';
 import { readSweepSteps } from '@/ingest/read';
-import { recognise } from '@/ingest/recognise';
+import { recogniseSteps } from '@/ingest/recognise';
 import type { Answers, ReadSweep, Recognition } from '@/ingest/types';
 import { writeUpload } from '@/models/blobs';
 import { newPublicId } from '@/models/publicId';
@@ -23,7 +23,7 @@ export async function createSweepFile(
   file: { name: string; bytes: Uint8Array },
 ): Promise<SweepFileView> {
   authorise(actor, 'sweep-file.create');
-  const recognition = recognise(file.bytes, file.name);
+  const recognition = await inTurns(recogniseSteps(file.bytes, file.name));
   const sha256 = createHash('sha256').update(file.bytes).digest('hex');
   return unitOfWork(async () => {
     const upload = await Upload.create({

@@ -1,0 +1,45 @@
+import Link from 'next/link';
+import { VerdictWord } from '@/components/ui/VerdictWord';
+import type { SweepView } from '@/schemas/sweep';
+import { PORT_WORDS } from '@/format/words';
+
+/** The port's verdict over every run of this state, and what is missing for it. */
+export function Coverage({ sweep }: { sweep: SweepView }) {
+  const { portVerdict, state, port } = sweep;
+  return (
+    <>
+      <p>
+        {PORT_WORDS[port]} at {state.label}: <VerdictWord verdict={portVerdict.verdict} />
+      </p>
+      {portVerdict.missing.length > 0 ? (
+        <ul className="mt-[22px]">
+          {portVerdict.missing.map((missing) => (
+            <li key={missing}>{missing}</li>
+          ))}
+        </ul>
+      ) : (
+        <p>Nothing is missing for a verdict on this port.</p>
+      )}
+      <p className="mt-[22px]">
+        Runs:{' '}
+        {portVerdict.runs.map((run, i) => (
+          <span key={run.id}>
+            {i > 0 ? ', ' : ''}
+            {run.id === sweep.id ? (
+              <b className="t-figure">{run.number}</b>
+            ) : (
+              <Link className="t-figure" href={`/sweeps/${run.id}`}>
+                {run.number}
+              </Link>
+            )}
+          </span>
+        ))}
+      </p>
+    </>
+  );
+}
+
+function Summary({ sweep }: { sweep: SweepView }) {
+  return <VerdictWord verdict={sweep.portVerdict.verdict} />;
+}
+Coverage.Summary = Summary;

@@ -1,0 +1,217 @@
+'use client';
+
+import { useCallback, useId, useMemo, useState } from 'react';
+import { ChartLegend } from '@/components/charts/ChartLegend';
+import { chartSubject } from '@/components/charts/chartSubject';
+import type { ChartMode } from '@/components/charts/marginSeries';
+import { SweepChart } from '@/components/charts/SweepChart';
+import { CandidateGrid, type CandidateFigure } from '@/components/grids/CandidateGrid';
+import { Sheet } from '@/components/shell/Sheet';
+import { SheetHeader } from '@/components/shell/SheetHeader';
+import { useKey } from '@/components/shell/keys';
+import { ButtonLink } from '@/components/ui/Button';
+import { Id } from '@/components/ui/IdentityLine';
+import type { CandidateView, SweepView, WindowView } from '@/schemas/sweep';
+import { formatDayTime } from '@/format/dates';
+import { findingOf } from '@/format/finding';
+import { formatBandwidth, formatFrequency } from '@/format/frequencies';
+import { formatCount, formatMargin } from '@/format/quantities';
+import { PURPOSE_WORDS } from '@/format/words';
+import { Coverage } from './Coverage';
+import { History, type HistoryEntry } from './History';
+import { Record } from './Record';
+import { orientationOf, runWords } from './runWords';
+import { SettingsLine } from './SettingsLine';
+import { useCandidates, type CandidatePage } from './useCandidates';
+import { useWindow } from './useWindow';
+import { useWorking } from './useWorking';
+import { Working } from './Working';
+import './sum.css';
+
+interface Props {
+  sweep: SweepView;
+  overview: WindowView;
+  first: CandidatePage;
+  /** null for a reader who does not see it. */
+  history: HistoryEntry[] | null;
+  zone: string;
+  /** Whether the reader is one of the lab's people. */
+  lab: boolean;
+}
+
+/** What is open in the Working: a figure of a candidate. */
+interface Open {
+  rank: number;
+  figure: CandidateFigure;
+}
+
+/** The sheet of one run: finding, chart, candidates, and beside them how each figure came about. */
+export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props) {
+  const tableId = useId();
+  const [mode, setMode] = useState<ChartMode>('margin');
+  const [clockHz, setClockHz] = useState<number | null>(null);
+  const [selectedRank, setSelectedRank] = useState<number | null>(first.items[0]?.rank ?? null);
+  const [open, setOpen] = useState<Open | null>(null);
+  const { candidates, total, more, busy: loadingMore } = useCandidates(sweep.id, first);
+  const { window, ask } = useWindow(sweep.id, overview);
+  const { working, busy, problem, load, clear } = useWorking(sweep.id);
+  const subject = useMemo(() => chartSubject(sweep, orientationOf(sweep)), [sweep]);
+  const finding = findingOf(sweep.evaluation, sweep.traces, sweep.limitSet.lines);
+
+  const show = useCallback(
+    (candidate: CandidateView, figure: CandidateFigure = 'margin') => {
+      setSelectedRank(candidate.rank);
+      setOpen({ rank: candidate.rank, figure });
+      load({ frequencyHz: candidate.frequencyHz, trace: candidate.traceIndex, line: candidate.lineId });
+    },
+    [load],
+  );
+  const close = useCallback(() => {
+    setOpen(null);
+    clear();
+  }, [clear]);
+  const step = (by: 1 | -1) => {
+    const at = candidates.findIndex(({ rank }) => rank === selectedRank);
+    const next = candidates[at + by];
+    if (!next) return;
+    if (open) show(next, open.figure);
+    else setSelectedRank(next.rank);
+  };
+  useKey('L', () => setMode((now) => (now === 'margin' ? 'level' : 'margin')), { says: 'margin or level', weak: true });
+  useKey('ArrowDown', () => step(1), { says: 'next candidate', weak: true });
+  useKey('ArrowUp', () => step(-1), { says: 'candidate before', weak: true });
+  const selected = candidates.find(({ rank }) => rank === selectedRank) ?? null;
+  useKey('W', () => void (selected && show(selected)), { says: 'working', when: selected !== null });
+  useKey('Enter', () => void (selected && show(selected)), { when: selected !== null, weak: true });
+
+  const current = selected ? `${formatMargin(selected.marginDb)} at ${formatFrequency(selected.frequencyHz)}` : null;
+
+  return (
+    <Sheet
+      header={
+        <SheetHeader
+          title={sweep.sample.product}
+          state={{ label: sweep.state.label }}
+          identity={
+            <>
+              <span>{sweep.organisation.name}</span>
+              <span>
+                job <Id>{sweep.job.number}</Id>
+              </span>
+              <span>
+                run <Id>{sweep.number}</Id>, {runWords(sweep)}, {PURPOSE_WORDS[sweep.purpose]}
+              </span>
+              {sweep.path && (
+                <span>
+                  path <Id>{sweep.path.code}</Id>
+                </span>
+              )}
+              <span>{formatDayTime(sweep.measuredAt ?? sweep.keptAt, zone)}</span>
+              <span>{sweep.by.name}</span>
+            </>
+          }
+          finding={{ verdict: sweep.evaluation.verdict, runs: finding }}
+          actions={
+            lab ? (
+              <ButtonLink kind="primary" keyName="U" href={`/sweeps/new?state=${sweep.state.id}`}>
+                Upload sweep files
+              </ButtonLink>
+            ) : undefined
+          }
+        />
+      }
+      margin={[
+        {
+          id: 'working',
+          title: 'Working',
+          subject: working && open ? `${open.figure} at ${formatFrequency(working.frequencyHz)}` : undefined,
+          onClose: open ? close : undefined,
+          children: (
+            <div aria-busy={busy} aria-live="polite">
+              {open && working ? (
+                <Working working={working} />
+              ) : problem ? (
+                <p className="text-madder">
+                  {problem.title} {problem.detail}
+                </p>
+              ) : (
+                <p className="column-quiet">{busy ? 'Adding up.' : 'Click any figure and its working opens here.'}</p>
+              )}
+            </div>
+          ),
+        },
+        {
+          id: 'coverage',
+          title: 'Port',
+          summary: <Coverage.Summary sweep={sweep} />,
+          children: <Coverage sweep={sweep} />,
+        },
+        {
+          id: 'record',
+          title: 'Record',
+          summary: sweep.file.name,
+          children: <Record sweep={sweep} zone={zone} />,
+        },
+        ...(history
+          ? [
+              {
+                id: 'history',
+                title: 'History',
+                summary: `${history.length === 1 ? '1 change' : `${history.length} changes`}`,
+                children: <History entries={history} zone={zone} />,
+              },
+            ]
+          : []),
+      ]}
+      marginLine={current}
+      keys={[
+        { keys: ['ArrowUp', 'ArrowDown'], does: 'rows' },
+        { keys: ['W'], does: 'working' },
+        { keys: ['L'], does: 'level' },
+        { keys: ['?'], does: 'all keys' },
+      ]}
+    >
+      <ChartLegend
+        mode={mode}
+        onMode={setMode}
+        traces={sweep.traces}
+        purpose={PURPOSE_WORDS[sweep.purpose]}
+        clockHz={clockHz}
+        onClock={setClockHz}
+      >
+        <SettingsLine sweep={sweep} />
+      </ChartLegend>
+      <SweepChart
+        subject={subject}
+        window={window}
+        candidates={candidates}
+        total={total}
+        mode={mode}
+        onMode={setMode}
+        selectedRank={selectedRank}
+        onSelect={(candidate) => (open ? show(candidate, open.figure) : setSelectedRank(candidate.rank))}
+        onWorking={show}
+        onWindow={ask}
+        clockHz={clockHz}
+        onClock={setClockHz}
+        tableId={tableId}
+      />
+      <CandidateGrid
+        id={tableId}
+        sweep={sweep}
+        candidates={candidates}
+        total={total}
+        selectedRank={selectedRank}
+        open={open}
+        onSelect={(candidate) => setSelectedRank(candidate.rank)}
+        onFigure={show}
+        onMore={more}
+        loading={loadingMore}
+      />
+      <p className="t-detail mt-4">
+        A pre-compliance record of {formatCount(sweep.points)} points, step{' '}
+        {sweep.stepHz === null ? 'uneven' : formatBandwidth(sweep.stepHz)}; not a certificate.
+      </p>
+    </Sheet>
+  );
+}

@@ -1,0 +1,74 @@
+import Link from 'next/link';
+import { Message } from '@/components/ui/Message';
+import { SectionHeading } from '@/components/ui/SectionHeading';
+import { formatDay } from '@/format/dates';
+import { formatBandwidth } from '@/format/frequencies';
+import type { PathView } from '@/schemas/bench';
+import type { SweepFileView } from '@/schemas/sweepFile';
+import { typedNumber } from './typedNumber';
+import type { Draft } from './draft';
+
+/** What is worth a look before keeping: questions, what the file says of itself, equipment dates, a repeat. */
+export function LookAtFirst({ file, draft, path }: { file: SweepFileView; draft: Draft; path: PathView | undefined }) {
+  const { recognition, repeats } = file;
+  const { frequency } = recognition;
+  const rbwHz = (typedNumber(draft.traces.find((trace) => trace.use)?.rbwKhz ?? '') ?? 0) * 1e3;
+  const wide = rbwHz > 0 && frequency.stepHz > rbwHz / 2;
+  const dated = path?.items.filter((item) => item.due !== 'in-date' && item.dueOn !== null) ?? [];
+  return (
+    <section className="mt-5">
+      <SectionHeading>Look at first</SectionHeading>
+      <div className="mt-2">
+        {recognition.questions
+          .filter(({ key }) => ['frequencyUnit', 'centreHz', 'sweepIndex'].includes(key))
+          .map((question) => (
+            <Message key={question.key} tone="inconclusive" lead={question.text}>
+              {question.proposal !== null && question.key === 'frequencyUnit'
+                ? `${question.proposal} is likely.`
+                : null}
+            </Message>
+          ))}
+        {recognition.correctedFor.map(({ what, evidence, line }) => (
+          <Message key={line} tone="inconclusive" lead={`Line ${line} says that its values hold ${what} already.`}>
+            “{evidence}”. What is ticked under “already in the reading” is not added again.
+          </Message>
+        ))}
+        {wide && (
+          <Message
+            tone="inconclusive"
+            lead={`Step ${formatBandwidth(frequency.stepHz)} is wider than half the RBW (${formatBandwidth(rbwHz / 2)}).`}
+          >
+            A narrow peak may read low. Fine for a prescan; finals must be tuned.
+          </Message>
+        )}
+        {dated.map((item) => (
+          <Message
+            key={item.identifier}
+            tone={item.due === 'lapsed' ? 'over' : 'inconclusive'}
+            lead={`${item.identifier} calibration ${item.due === 'lapsed' ? 'lapsed on' : 'is due on'} ${formatDay(item.dueOn!)}.`}
+          >
+            {item.due === 'lapsed' ? 'Choose another path, or have it calibrated first.' : 'This run is covered.'}
+          </Message>
+        ))}
+        {recognition.remarks.map(({ text, line }) => (
+          <Message key={text} tone="inconclusive" lead={line === null ? text : `Line ${line}: ${text}`} />
+        ))}
+        {repeats.length > 0 ? (
+          <Message tone="inconclusive" lead="The same file was kept before.">
+            {repeats.map((run, i) => (
+              <span key={run.sweepId}>
+                {i > 0 ? ', ' : 'See '}
+                <Link href={`/sweeps/${run.sweepId}`}>{run.number}</Link>
+              </span>
+            ))}
+            . Keeping it again makes another run.
+          </Message>
+        ) : (
+          <Message tone="under" lead="Not a repeat:">
+            no run has this file’s fingerprint.
+          </Message>
+        )}
+      </div>
+    </section>
+  );
+}
