@@ -8,7 +8,7 @@ module.exports = {
       \`seq\` BIGINT UNSIGNED NOT NULL,
       \`at\` DATETIME(3) NOT NULL,
       \`actor_id\` BIGINT UNSIGNED NULL,
-      \`action\` VARCHAR(60) NOT NULL,
+      \`action\` VARCHAR(240) NOT NULL,
       \`subject_type\` VARCHAR(40) NOT NULL,
       \`subject_id\` CHAR(16) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       \`canonical\` LONGTEXT CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL,

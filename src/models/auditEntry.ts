@@ -29,7 +29,7 @@ export function defineAuditEntry(sequelize: Sequelize): void {
       seq: { type: DataTypes.BIGINT.UNSIGNED, allowNull: false },
       at: { type: DataTypes.DATE(3), allowNull: false },
       actorId: { type: DataTypes.BIGINT.UNSIGNED, field: 'actor_id', allowNull: true },
-      action: { type: DataTypes.STRING(60), allowNull: false },
+      action: { type: DataTypes.STRING(240), allowNull: false },
       subjectType: { type: DataTypes.STRING(40), field: 'subject_type', allowNull: false },
       subjectId: { type: DataTypes.CHAR(16), field: 'subject_id', allowNull: false },
       canonical: { type: DataTypes.TEXT('long'), allowNull: false },

@@ -24,8 +24,8 @@ export function database(): Sequelize {
   if (!holder.stillfieldDatabase) {
     Sequelize.useCLS(namespace);
     const sequelize = new Sequelize(connectionOptions(env().DATABASE_URL));
-    sequelize.addHook('beforeQuery', () => {
-      if (!scope.getStore()?.get('transaction')) throw new Error('A query ran outside a unit of work');
+    sequelize.addHook('beforeQuery', (options: { transaction?: unknown }) => {
+      if (!options.transaction) throw new Error('A query ran outside a unit of work');
     });
     holder.stillfieldDatabase = sequelize;
   }
