@@ -1,0 +1,121 @@
+import {
+  bandwidthRequiredOrNarrower,
+  bandwidthRequiredOrWider,
+  detectorAtOrAbove,
+  detectorAtOrBelow,
+} from './detectors';
+import { detectorOrder, provesOver, provesUnder, readAsAsked, type AskedFor, type ReadWith } from './detectors';
+import { VERDICTS, type Detector, type LineDetector, type Purpose, type Verdict } from './kinds';
+
+/** One reading beside the line it is judged against. Null where there is no limit, no level or no uncertainty. */
+export interface ReadingFacts {
+  marginDb: number | null;
+  uncertaintyDb: number | null;
+  detector: Detector;
+  rbwHz: number | null;
+  lineDetector: LineDetector;
+  requiredBandwidthHz: number;
+  purpose: Purpose;
+}
+
+export interface ReadingVerdict {
+  verdict: Verdict;
+  /** Why the reading cannot decide, as a sentence; null when it can. */
+  because: string | null;
+}
+
+/** What readings of one trace can show about one line, whatever their margins. */
+export interface Reach {
+  under: boolean;
+  over: boolean;
+  otherwise: 'inconclusive' | 'needs-final' | 'not-covered';
+}
+
+/**
+ * What a trace can show about a line. A final read with the line's own detector and bandwidth decides as far as its
+ * uncertainty lets it. Anything else shows under only from a detector at or above the line's own in the required
+ * bandwidth or wider, and over only from one at or below in the required bandwidth or narrower. An ambient run is
+ * without the sample and shows nothing about it.
+ */
+export function reachOf(trace: ReadWith, line: AskedFor, purpose: Purpose): Reach {
+  if (purpose === 'ambient') return { under: false, over: false, otherwise: 'not-covered' };
+  const decides = purpose === 'final' && readAsAsked(trace, line);
+  return {
+    under: provesUnder(trace, line),
+    over: provesOver(trace, line),
+    otherwise: decides ? 'inconclusive' : 'needs-final',
+  };
+}
+
+/** Guarded by U: under beyond the guard band, over beyond it, otherwise what the reach leaves. Source: JCGM 106:2012. */
+export function decide(reach: Reach, marginDb: number, uncertaintyDb: number): Verdict {
+  if (reach.under && marginDb > uncertaintyDb) return 'under';
+  if (reach.over && marginDb < -uncertaintyDb) return 'over';
+  return reach.otherwise;
+}
+
+/** The verdict of one reading. Throws RangeError when a margin or an uncertainty is given that is not a figure. */
+export function readingVerdict(facts: ReadingFacts): ReadingVerdict {
+  const { marginDb, uncertaintyDb, purpose } = facts;
+  if (purpose === 'ambient') return { verdict: 'not-covered', because: 'An ambient run does not judge the sample.' };
+  if (marginDb === null) {
+    return { verdict: 'not-covered', because: 'Without a level and a limit here there is no margin.' };
+  }
+  if (uncertaintyDb === null)
+    return { verdict: 'not-covered', because: 'No uncertainty is stated for this frequency.' };
+  if (!Number.isFinite(marginDb)) throw new RangeError(`Margin ${marginDb} dB is no figure.`);
+  if (!(uncertaintyDb >= 0 && Number.isFinite(uncertaintyDb))) {
+    throw new RangeError(`Expanded uncertainty ${uncertaintyDb} dB is no figure.`);
+  }
+  const line = { detector: facts.lineDetector, bandwidthHz: facts.requiredBandwidthHz };
+  const verdict = decide(reachOf(facts, line, purpose), marginDb, uncertaintyDb);
+  return { verdict, because: becauseOf(verdict, facts, marginDb, uncertaintyDb) };
+}
+
+/** The worse of verdicts first: over, needs a final, inconclusive, not covered, under. Null for an empty list. */
+export function worstVerdict(verdicts: Iterable<Verdict>): Verdict | null {
+  let worst: Verdict | null = null;
+  for (const verdict of verdicts) if (worst === null || severity(verdict) < severity(worst)) worst = verdict;
+  return worst;
+}
+
+/** 0 is the worst. */
+export function severity(verdict: Verdict): number {
+  return VERDICTS.indexOf(verdict);
+}
+
+function becauseOf(verdict: Verdict, facts: ReadingFacts, marginDb: number, uncertaintyDb: number): string | null {
+  if (verdict === 'under' || verdict === 'over') return null;
+  if (verdict === 'inconclusive') {
+    return 'The margin is within the expanded uncertainty; another reading would not settle it.';
+  }
+  const { detector, rbwHz, lineDetector, requiredBandwidthHz } = facts;
+  const required = bandwidthText(requiredBandwidthHz);
+  if (detector === 'unknown') return 'The detector is not known, so the reading shows neither under nor over.';
+  if (detectorOrder(detector) === null) {
+    return `A reading in ${detector} shows neither under nor over against a limit in ${lineDetector}.`;
+  }
+  if (rbwHz === null) return `The RBW is not known; the limit asks for ${required}.`;
+  if (marginDb > uncertaintyDb) {
+    if (!detectorAtOrAbove(detector, lineDetector)) {
+      return `A reading in ${detector} can lie below ${lineDetector}, so it does not show under.`;
+    }
+    if (!bandwidthRequiredOrWider(rbwHz, requiredBandwidthHz)) {
+      return `RBW ${bandwidthText(rbwHz)} is narrower than the ${required} required, so the level may read low.`;
+    }
+  }
+  if (marginDb < -uncertaintyDb) {
+    if (!detectorAtOrBelow(detector, lineDetector)) {
+      return `A reading in ${detector} can lie above ${lineDetector}, so it does not show over.`;
+    }
+    if (!bandwidthRequiredOrNarrower(rbwHz, requiredBandwidthHz)) {
+      return `RBW ${bandwidthText(rbwHz)} is wider than the ${required} required, so the level may read high.`;
+    }
+  }
+  return `The margin is within the expanded uncertainty; a final in ${lineDetector} at ${required} has to decide.`;
+}
+
+function bandwidthText(hz: number): string {
+  if (hz >= 1e6) return `${hz / 1e6} MHz`;
+  return hz >= 1e3 ? `${hz / 1e3} kHz` : `${hz} Hz`;
+}
