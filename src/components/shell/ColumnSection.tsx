@@ -2,7 +2,7 @@
 
 import { KeyHint } from '@/components/ui/KeyHint';
 import { useKey } from './keys';
-import type { MarginSection } from './MarginColumn';
+import type { MarginSection } from './marginSection';
 import { useSheet } from './sheetState';
 
 /** One part of the column: open, or folded to one line with its summary; on a phone the panel of its tab. */

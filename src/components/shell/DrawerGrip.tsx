@@ -2,7 +2,7 @@
 
 import type { ReactNode } from 'react';
 import type { DrawerDrag } from './drawerDrag';
-import type { MarginSection } from './MarginColumn';
+import type { MarginSection } from './marginSection';
 import { useSheet } from './sheetState';
 
 /** The head of a phone's drawer: drag it, press it, or move it with the arrow keys between 92 px, 358 px and full. */
