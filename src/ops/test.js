@@ -36,6 +36,8 @@ function cleanEnvironment(extra) {
 }
 
 const tool = (file) => path.join(ROOT, 'node_modules', file);
+/** The jest that runs now, for a signal to end with us. */
+let jest = null;
 const total = { passed: 0, failed: 0, skipped: 0 };
 
 /** Runs one tool; its words are shown only when it fails, and a failure counts as one. */
@@ -67,6 +69,7 @@ async function runProject(project, paths, extra) {
     // the report goes to the file; what jest tells a reader comes on standard error
     stdio: ['ignore', 'ignore', 'inherit'],
   });
+  jest = child;
   let overtime = null;
   let reportedAt = null;
   const watch = setInterval(() => {
@@ -143,6 +146,7 @@ run(async () => {
 
   let database = null;
   const stop = async (code) => {
+    jest?.kill('SIGKILL');
     await database?.stop();
     process.exit(code);
   };

@@ -30,18 +30,34 @@ function freePort(): Promise<number> {
   });
 }
 
-/** Runs a TypeScript entry point to its end; throws with its words when it fails. */
-export async function runEntry(file: string, args: string[], env: Record<string, string>): Promise<string> {
+export interface RunningEntry {
+  process: ChildProcess;
+  /** what it has written so far */
+  words(): string;
+  /** its exit code, null when a signal ended it */
+  ended: Promise<number | null>;
+}
+
+/** Starts a TypeScript entry point; it drains by itself when this process is gone. */
+export function startEntry(file: string, args: string[], env: Record<string, string>): RunningEntry {
   const child = spawn(process.execPath, ['--import', 'tsx', path.join(ROOT, file), ...args], {
     cwd: ROOT,
     env: { ...process.env, ...env },
+    stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
   });
   let words = '';
-  child.stdout.on('data', (chunk: Buffer) => (words += chunk.toString()));
-  child.stderr.on('data', (chunk: Buffer) => (words += chunk.toString()));
-  const code = await new Promise<number | null>((resolve) => child.once('exit', resolve));
-  if (code !== 0) throw new Error(`${file} ended with ${code}:\n${words}`);
-  return words;
+  child.stdout?.on('data', (chunk: Buffer) => (words += chunk.toString()));
+  child.stderr?.on('data', (chunk: Buffer) => (words += chunk.toString()));
+  const ended = new Promise<number | null>((resolve) => child.once('exit', resolve));
+  return { process: child, words: () => words, ended };
+}
+
+/** Runs a TypeScript entry point to its end; throws with its words when it fails. */
+export async function runEntry(file: string, args: string[], env: Record<string, string>): Promise<string> {
+  const entry = startEntry(file, args, env);
+  const code = await entry.ended;
+  if (code !== 0) throw new Error(`${file} ended with ${code}:\n${entry.words()}`);
+  return entry.words();
 }
 
 /** What a server or an entry point of the tests runs with. */
@@ -71,15 +87,7 @@ export async function startServer(urls: SchemaUrls, extra: Record<string, string
   }
   const port = await freePort();
   const environment = { ...testEnvironment(urls, port), ...extra };
-  const child = spawn(process.execPath, ['--import', 'tsx', path.join(ROOT, 'src/ops/server.ts')], {
-    cwd: ROOT,
-    env: { ...process.env, ...environment },
-    stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
-  });
-  let words = '';
-  child.stdout?.on('data', (chunk: Buffer) => (words += chunk.toString()));
-  child.stderr?.on('data', (chunk: Buffer) => (words += chunk.toString()));
-  const exited = new Promise<number | null>((resolve) => child.once('exit', resolve));
+  const { process: child, words, ended } = startEntry('src/ops/server.ts', [], environment);
   const origin = `http://127.0.0.1:${port}`;
   const until = Date.now() + 30_000;
   for (;;) {
@@ -89,17 +97,17 @@ export async function startServer(urls: SchemaUrls, extra: Record<string, string
     if (ready) break;
     if (child.exitCode !== null || Date.now() > until) {
       child.kill('SIGKILL');
-      throw new Error(`the server did not get ready:\n${words}`);
+      throw new Error(`the server did not get ready:\n${words()}`);
     }
     await new Promise((resolve) => setTimeout(resolve, 100));
   }
   return {
     origin,
-    log: () => words,
+    log: words,
     process: child,
     stop: () => {
       child.kill('SIGTERM');
-      return exited;
+      return ended;
     },
   };
 }
