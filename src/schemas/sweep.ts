@@ -235,8 +235,10 @@ export const workingView = z.strictObject({
       figure: z.number(),
       unit: z.string(),
       name: z.string(),
-      /** Where it comes from: file and column, table, calibration date, limit revision. */
+      /** Where it comes from: file, or table and revision. */
       source: z.string(),
+      /** The calibration a factor was taken from. */
+      calibration: z.strictObject({ on: day, certificate: z.string() }).nullable(),
       warning: z.string().nullable(),
       applied: z.boolean(),
       notAppliedBecause: z.string().nullable(),

@@ -64,15 +64,22 @@ function sourced(term: WorkingTerm, run: Run, context: RunContext): WorkingView[
   return {
     ...figure,
     source: loaded ? sourceOf(loaded) : readingSource(term, run, context),
+    calibration: loaded ? calibrationOf(loaded) : null,
     warning: loaded ? warningOf(loaded, context.day) : null,
     table: rows && loaded ? { name: loaded.table.name, ...rows } : null,
   };
 }
 
+/** The table by its name, which begins with its equipment's identifier by custom. */
 function sourceOf({ item, table }: LoadedTerm): string {
+  const { identifier } = item.equipment;
+  const name = table.name.startsWith(identifier) ? table.name : `${identifier}, ${table.name}`;
+  return table.revision === 1 ? name : `${name}, revision ${table.revision}`;
+}
+
+function calibrationOf({ table }: LoadedTerm): WorkingView['terms'][number]['calibration'] {
   const { calibration } = table as typeof table & { calibration: { calibratedOn: string; certificate: string } | null };
-  const from = calibration ? `calibrated ${calibration.calibratedOn}, ${calibration.certificate}` : table.source;
-  return `${item.equipment.identifier}, ${table.name}, revision ${table.revision}, ${from}`;
+  return calibration && { on: calibration.calibratedOn, certificate: calibration.certificate };
 }
 
 function warningOf({ item }: LoadedTerm, day: string): string | null {
@@ -92,6 +99,6 @@ function warningOf({ item }: LoadedTerm, day: string): string | null {
 function readingSource(term: WorkingTerm, run: Run, context: RunContext): string {
   if (term.sign !== '') return 'dBm into 50 ohm, 10 log10(50) + 90';
   const receiver = context.path?.items.findLast((item) => item.stored.term === null)?.equipment.identifier;
-  const parts = [receiver, run.file.name, `SHA-256 ${run.file.sha256.slice(0, 12)}`];
+  const parts = [receiver, run.file.name];
   return parts.filter(Boolean).join(', ');
 }

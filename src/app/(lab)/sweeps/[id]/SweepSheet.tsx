@@ -99,7 +99,7 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
                 job <Id>{sweep.job.number}</Id>
               </span>
               <span>
-                run <Id>{sweep.number}</Id>, {runWords(sweep)}, {PURPOSE_WORDS[sweep.purpose]}
+                run <Id>{sweep.number}</Id>, {runWords(sweep)}
               </span>
               {sweep.path && (
                 <span>

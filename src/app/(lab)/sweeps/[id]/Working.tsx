@@ -9,6 +9,7 @@ import {
   marginText,
   unitLabel,
 } from '@/format/quantities';
+import { formatDay } from '@/format/dates';
 import { LEVEL_UNITS, type LevelUnit } from '@/emc/kinds';
 import { VERDICT_WORDS } from '@/format/words';
 
@@ -63,7 +64,10 @@ function interval(marginDb: number, uncertaintyDb: number | null): string {
 }
 
 function SumRow({ term }: { term: Term }) {
-  const { sign, figure, unit, name, source, warning, applied, notAppliedBecause } = term;
+  const { sign, figure, unit, name, calibration, warning, applied, notAppliedBecause } = term;
+  const source = calibration
+    ? `${term.source}, calibrated ${formatDay(calibration.on)}, ${calibration.certificate}`
+    : term.source;
   const digits =
     unit === 'V' || unit === 'W' || unit === 'mV' || unit === 'mW' ? formatFigure(figure, 6) : formatDb(figure);
   return (
