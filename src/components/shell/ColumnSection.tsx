@@ -55,7 +55,7 @@ export function ColumnSection({
         {!open && section.summary && <span className="column-summary">{section.summary}</span>}
         {open && section.remark && <span className="column-remark">{section.remark}</span>}
         {open && onClose && (
-          <button type="button" className="column-close" aria-label={`Close ${section.title}`} onClick={onClose}>
+          <button type="button" className="column-close" aria-label={`Esc, close ${section.title}`} onClick={onClose}>
             <KeyHint name="Escape" />
           </button>
         )}

@@ -9,7 +9,7 @@ export interface Section {
   name: string;
   /** Other beginnings of a path that belong to this section. */
   also?: readonly string[];
-  /** What waits there: `decide` crosses the line in ochre, `act` stands above it in madder. */
+  /** What waits there: `decide` crosses the line in ochre, `act` stands above it in madder; `says` is `2 to decide`. */
   waiting?: { state: 'decide' | 'act'; count: number; says: string };
   /** Shown beside Menu on a phone. */
   onPhone?: boolean;
@@ -42,17 +42,17 @@ function SectionLink({ section, current }: { section: Section; current: boolean 
   const { waiting } = section;
   return (
     <Link className="top-section" href={section.href} aria-current={current ? 'page' : undefined}>
+      <span className="top-section-name" data-word={section.name}>
+        {section.name}
+      </span>
       {waiting && waiting.count > 0 && (
         <>
           <span className={classes('top-waits', `top-waits-${waiting.state}`)} aria-hidden>
             {waiting.count}
           </span>
-          <span className="sr-only">{waiting.says}: </span>
+          <span className="sr-only">, {waiting.says}</span>
         </>
       )}
-      <span className="top-section-name" data-word={section.name}>
-        {section.name}
-      </span>
     </Link>
   );
 }

@@ -20,20 +20,22 @@ export function SignInFrame({ title, labName, room, children, foot }: SignInFram
     <div className="signin">
       <SpectrumPicture />
       <div className="signin-line" />
-      <div className="signin-above">
-        <p>A limit is a line. A quiet product stays under it.</p>
-        <p>
-          Bench PC in the chamber? <RoomToggle room={room} />
-        </p>
-      </div>
-      <div className="signin-words">
-        <p className="signin-word">Stillfield</p>
-        <p className="signin-of">
-          The working record of
-          <br />
-          <strong>{labName ?? 'your lab'}</strong>
-        </p>
-      </div>
+      <header>
+        <div className="signin-above">
+          <p>A limit is a line. A quiet product stays under it.</p>
+          <p>
+            Bench PC in the chamber? <RoomToggle room={room} />
+          </p>
+        </div>
+        <div className="signin-words">
+          <p className="signin-word">Stillfield</p>
+          <p className="signin-of">
+            The working record of
+            <br />
+            <strong>{labName ?? 'your lab'}</strong>
+          </p>
+        </div>
+      </header>
       <main className="signin-slip" id="sheet">
         <h1 className="signin-title">{title}</h1>
         {children}

@@ -1,6 +1,6 @@
 'use client';
 
-import { useEffect, useId, useRef, type ReactNode } from 'react';
+import { useId, useLayoutEffect, useRef, type ReactNode } from 'react';
 import { Button } from './Button';
 
 export interface DialogProps {
@@ -20,7 +20,7 @@ export function Dialog({ open, title, children, safe = 'Not yet', onClose, act }
   const safeButton = useRef<HTMLButtonElement>(null);
   const id = useId();
 
-  useEffect(() => {
+  useLayoutEffect(() => {
     const element = dialog.current;
     if (!element || element.open === open) return;
     if (!open) return element.close();
