@@ -74,7 +74,7 @@ export function traceOf(
   };
 }
 
-export function inputOf(more: Partial<EvaluationInput> & { traces: Trace[] }): EvaluationInput {
+export function inputOf(more: Partial<EvaluationInput> & Pick<EvaluationInput, 'traces'>): EvaluationInput {
   return {
     terms: [],
     lines: [lineOf([[0.1, 30, 60, 60]])],
