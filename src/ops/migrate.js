@@ -83,18 +83,18 @@ async function pending(connection) {
 async function migrate({ migrateUrl, databaseUrl, tell = say, hosts }) {
   const { parseDatabaseUrl } = require('../config/database');
   const { applyGrants } = require('../config/grants');
+  const { user, database } = parseDatabaseUrl(databaseUrl);
+  if (user === parseDatabaseUrl(migrateUrl).user) {
+    throw new Refusal(
+      'DATABASE_URL and DATABASE_MIGRATE_URL use one account: create a second, restricted one (README).',
+    );
+  }
   const owner = await open(migrateUrl, 'DATABASE_MIGRATE_URL');
   try {
     const migrated = (await pending(owner)).length;
     if (migrated) {
       sequelizeCli(migrateUrl, 'db:migrate');
       tell(`${migrated} migration${migrated === 1 ? '' : 's'} applied`);
-    }
-    const { user, database } = parseDatabaseUrl(databaseUrl);
-    if (user === parseDatabaseUrl(migrateUrl).user) {
-      throw new Refusal(
-        'DATABASE_URL and DATABASE_MIGRATE_URL use one account: create a second, restricted one (README).',
-      );
     }
     const restricted = await inspect(databaseUrl);
     const tables = await applyGrants(owner, user, hosts ?? [restricted.host], database);
