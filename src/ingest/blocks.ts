@@ -107,12 +107,12 @@ export function resolveBlocks(
   axis: number | null,
   declaredPoints: number | null,
 ): Resolved {
-  const { blocks, cells, columns } = scan;
-  const wide = columns.length;
+  const { blocks } = scan;
   const main = mainBlock(blocks);
   const most = blocks[main]!.rows;
   const remarks: Resolved['remarks'] = [];
-  const at = (row: number) => cells[row * wide + (axis ?? 0)]!;
+  const along = scan.data[axis ?? 0]!;
+  const at = (row: number) => along[row]!;
   const lastRow = (block: Block) => block.firstRow + block.rows - 1;
   const sense = Math.sign(at(lastRow(blocks[main]!)) - at(blocks[main]!.firstRow)) || 1;
   const step = Math.abs(at(lastRow(blocks[main]!)) - at(blocks[main]!.firstRow)) / Math.max(1, most - 1);
@@ -171,13 +171,13 @@ export function resolveBlocks(
 }
 
 /** Splits pieces where the axis returns to where it began: several sweeps under one another. */
-export function splitAtRestarts(pieces: readonly Piece[], axisAt: (row: number) => number): Piece[] {
+export function splitAtRestarts(pieces: readonly Piece[], axis: Float64Array): Piece[] {
   return pieces.flatMap((piece) => {
     const starts = [piece.firstRow];
-    const origin = axisAt(piece.firstRow);
-    const second = axisAt(piece.firstRow + 1);
-    for (let row = piece.firstRow + 2; row < piece.firstRow + piece.rows; row++) {
-      if (axisAt(row) === origin && axisAt(row - 1) !== origin && second !== origin) starts.push(row);
+    const origin = axis[piece.firstRow];
+    const distinct = axis[piece.firstRow + 1] !== origin;
+    for (let row = piece.firstRow + 2; distinct && row < piece.firstRow + piece.rows; row++) {
+      if (axis[row] === origin && axis[row - 1] !== origin) starts.push(row);
     }
     return starts.map((firstRow, i) => ({
       ...piece,

@@ -126,6 +126,39 @@ function describeLineEnds(crlf: number, lf: number, cr: number): string {
   return `mixed: ${kinds.map(([name, count]) => `${count} ${name}`).join(', ')}`;
 }
 
+interface Seen {
+  high: number;
+  crlf: number;
+  lf: number;
+  cr: number;
+  control: number;
+}
+
+const HEAD = 65_536;
+
+/** Counts line ends and, at the start of the file, control characters. Returns where it stopped, past a whole line end. */
+function lookAt(bytes: Uint8Array, from: number, to: number, seen: Seen): number {
+  let { high, crlf, lf, cr, control } = seen;
+  let at = from;
+  while (at < to) {
+    const byte = bytes[at]!;
+    high |= byte;
+    if (byte < 32) {
+      if (byte === 10) lf++;
+      else if (byte === 13) {
+        const next = afterLineEnd(bytes, at);
+        if (bytes[next - 1] === 10) crlf++;
+        else cr++;
+        at = next;
+        continue;
+      } else if (at < HEAD && byte !== 9 && byte !== 12) control++;
+    }
+    at++;
+  }
+  Object.assign(seen, { high, crlf, lf, cr, control });
+  return at;
+}
+
 /** Byte level of recognition. Yields about every megabyte so that a server can serve others meanwhile. */
 export function* cleanSteps(raw: Uint8Array): Generator<void, CleanBytes> {
   let bytes = raw;
@@ -152,29 +185,13 @@ export function* cleanSteps(raw: Uint8Array): Generator<void, CleanBytes> {
     yield;
   }
 
-  let high = 0;
-  let crlf = 0;
-  let lf = 0;
-  let cr = 0;
-  let control = 0;
-  const head = Math.min(bytes.length, 65_536);
-  for (let i = 0; i < bytes.length;) {
-    const stop = Math.min(i + CHUNK, bytes.length);
-    while (i < stop) {
-      const byte = bytes[i]!;
-      high |= byte;
-      if (byte === 10) lf++;
-      else if (byte === 13) {
-        const next = afterLineEnd(bytes, i);
-        if (bytes[next - 1] === 10) crlf++;
-        else cr++;
-        i = next;
-        continue;
-      } else if (byte < 32 && i < head && byte !== 9 && byte !== 12) control++;
-      i++;
-    }
+  const seen: Seen = { high: 0, crlf: 0, lf: 0, cr: 0, control: 0 };
+  for (let at = 0; at < bytes.length;) {
+    at = lookAt(bytes, at, Math.min(at + CHUNK, bytes.length), seen);
     yield;
   }
+  const { high, crlf, lf, cr, control } = seen;
+  const head = Math.min(bytes.length, HEAD);
 
   if (high & 0x80 && !encoding.startsWith('utf-16') && !(yield* isUtf8(bytes))) {
     bytes = yield* fromWindows1252(bytes);

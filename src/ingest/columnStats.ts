@@ -77,21 +77,30 @@ export interface Steps {
   ascending: boolean;
 }
 
+function isEven(values: Float64Array, step: number): boolean {
+  const within = 1e-6 * step;
+  for (let i = 1; i < values.length; i++) {
+    if (!(Math.abs(Math.abs(values[i]! - values[i - 1]!) - step) <= within)) return false;
+  }
+  return true;
+}
+
 export function stepsOf(values: Float64Array, stats: ColumnStats): Steps {
-  const distances = new Float64Array(Math.max(values.length - 1, 0));
-  for (let i = 0; i < distances.length; i++) distances[i] = Math.abs(values[i + 1]! - values[i]!);
-  const step = medianOf(Float64Array.from(distances));
+  const n = values.length;
   const oneWay = stats.rising === 0 || stats.falling === 0;
+  const mean = n > 1 ? Math.abs(stats.last - stats.first) / (n - 1) : 0;
+  const even = oneWay && n > 1 && isEven(values, mean);
+  let step = mean;
+  if (!even && n > 1) {
+    const distances = new Float64Array(n - 1);
+    for (let i = 1; i < n; i++) distances[i - 1] = Math.abs(values[i]! - values[i - 1]!);
+    step = medianOf(distances);
+  }
   let duplicates = stats.equal;
   if (!oneWay) {
     const sorted = Float64Array.from(values).sort();
     duplicates = 0;
-    for (let i = 1; i < sorted.length; i++) if (sorted[i] === sorted[i - 1]) duplicates++;
+    for (let i = 1; i < n; i++) if (sorted[i] === sorted[i - 1]) duplicates++;
   }
-  return {
-    step,
-    even: oneWay && values.length > 1 && distances.every((distance) => Math.abs(distance - step) <= 1e-6 * step),
-    duplicates,
-    ascending: values.length > 1 && stats.rising === values.length - 1,
-  };
+  return { step, even, duplicates, ascending: n > 1 && stats.rising === n - 1 };
 }

@@ -76,7 +76,7 @@ export function* readSweepSteps(
   }
 
   // Pairs were shifted as they were scanned; the frequencies of row layouts stand elsewhere and are shifted here.
-  const frequencyHz = axisOf(table, piece, shift);
+  const frequencyHz = axisOf(table, piece, shift).slice();
   if (table.hop && shift !== 0) frequencyHz.forEach((value, i) => (frequencyHz[i] = moved(value, shift)));
   if (centreHz !== 0) frequencyHz.forEach((value, i) => (frequencyHz[i] = centreHz + value));
   yield;
@@ -94,7 +94,13 @@ export function* readSweepSteps(
     }
     const name = answer?.name ?? (table.layout === 'pairs' ? trace.name : (piece.name ?? trace.name));
     const detector = answer?.detector ?? stated.detector ?? 'unknown';
-    traces.push({ index: trace.index, name, unit: traceUnit, detector, values: levelsOf(table, piece, trace.column) });
+    traces.push({
+      index: trace.index,
+      name,
+      unit: traceUnit,
+      detector,
+      values: levelsOf(table, piece, trace.column).slice(),
+    });
     yield;
   }
   if (traces.length === 0)

@@ -61,11 +61,9 @@ export function brokenRow(table: Table, unit: FrequencyUnit | null): Refusal {
   const { scan, axisColumn, hop, pieces } = table;
   const width = scan.template.contents.length;
   const filled = damage.cells.filter((cell) => cell !== '').length;
-  const wide = scan.columns.length;
   const axis = hop ? hop.low : axisColumn === null ? null : scan.columns.indexOf(axisColumn);
   const read = damage.rowBefore - (pieces[0]?.firstRow ?? 0) + 1;
-  const upTo =
-    axis === null || read < 1 ? '' : ` up to ${inMegahertz(scan.cells[damage.rowBefore * wide + axis]!, unit)}`;
+  const upTo = axis === null || read < 1 ? '' : ` up to ${inMegahertz(scan.data[axis]![damage.rowBefore]!, unit)}`;
   const declared = table.declared.settings.declaredPoints;
   const points = table.layout === 'pairs' ? 'points' : 'rows';
   const count = `${read} ${points} were read before it${upTo}${declared === null ? '' : `; ${declared} are declared`}.`;

@@ -19,20 +19,19 @@ export interface HopRows {
 
 export function hopRowsIn(scan: Scan, block: Block): HopRows | null {
   const wide = scan.columns.length;
-  const { cells } = scan;
+  const { data } = scan;
   const from = block.firstRow;
   const to = block.firstRow + block.rows;
   for (let low = 0; low + 4 <= wide; low++) {
-    const width = cells[from * wide + low + 1]! - cells[from * wide + low]!;
-    const bin = cells[from * wide + low + 2]!;
+    const width = data[low + 1]![from]! - data[low]![from]!;
+    const bin = data[low + 2]![from]!;
     const bins = Math.round(width / bin);
     if (!(width > 0) || !(bin > 0) || bins < 1 || Math.abs(width / bin - bins) > 1e-6 * bins) continue;
     let fits = true;
     let joins = 0;
     for (let row = from; row < to && fits; row++) {
-      const at = row * wide + low;
-      fits = Math.abs(cells[at + 1]! - cells[at]! - width) <= 1e-6 * width && cells[at + 2] === bin;
-      if (row > from && Math.abs(cells[at]! - cells[at - wide + 1]!) <= 1e-6 * width) joins++;
+      fits = Math.abs(data[low + 1]![row]! - data[low]![row]! - width) <= 1e-6 * width && data[low + 2]![row] === bin;
+      if (row > from && Math.abs(data[low]![row]! - data[low + 1]![row - 1]!) <= 1e-6 * width) joins++;
     }
     if (!fits || joins < 0.5 * (block.rows - 1)) continue;
     const after = wide - low - 3;
@@ -44,7 +43,7 @@ export function hopRowsIn(scan: Scan, block: Block): HopRows | null {
     if (values !== bins + 1) continue;
     let repeated = true;
     for (let row = from; row < to && repeated; row++) {
-      repeated = cells[(row + 1) * wide - 1] === cells[(row + 1) * wide - 2];
+      repeated = data[wide - 1]![row] === data[wide - 2]![row];
     }
     if (repeated) return { low, binWidth: low + 2, firstLevel, bins, repeated };
   }
@@ -71,8 +70,7 @@ function monotone(values: readonly number[]): boolean {
 }
 
 export function timeRowsIn(clean: CleanBytes, scan: Scan, block: Block, before: readonly Line[]): TimeRows | null {
-  const { template, columns, cells } = scan;
-  const wide = columns.length;
+  const { template, columns, data } = scan;
   const read = textNumberReader(template);
   const firstText = template.contents[0] === 'text';
   const written = before.filter(({ text }) => text.trim() !== '');
@@ -95,7 +93,7 @@ export function timeRowsIn(clean: CleanBytes, scan: Scan, block: Block, before: 
       const values = frequencies.map((text) => read(text));
       if (values.some((value) => value === null) || !monotone(values as number[])) continue;
       const first = block.firstRow + (isRow ? 1 : 0);
-      const across = levels.map((_, i) => cells[first * wide + skip + i]!);
+      const across = levels.map((_, i) => data[skip + i]![first]!);
       if (monotone(across)) continue;
       return { line: heading.line, frequencies, firstLevel: skip, firstRowIsHeading: isRow };
     }

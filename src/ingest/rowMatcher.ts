@@ -1,21 +1,30 @@
 import { afterLineEnd } from './bytes';
 import { EXACT_MANTISSA, EXACT_POWERS, numberFromBytes } from './numbers';
 import type { Template } from './template';
+import { wideDecimal } from './wideDecimal';
+
+/** Where a stretch of rows ended: position of the line that is no row (or of the next row), rows taken, last row's place. */
+export interface Stretch {
+  next: number;
+  rows: number;
+  lastFrom: number;
+}
+
+export interface RowMatcher {
+  /** One row at `at` into `data[column][row]`; the position of the next line, or −1 when the line is no row. */
+  one(at: number, data: readonly Float64Array[], row: number): number;
+  /** Rows that follow one another, at most `most`. Keeps their byte offsets where `rowFrom` is given. */
+  many(at: number, data: readonly Float64Array[], row: number, most: number, rowFrom: Uint32Array | null): Stretch;
+}
 
 /**
- * The fast reader: takes one row of plain numbers straight from the bytes.
+ * The fast reader: takes rows of plain numbers straight from the bytes.
  *
  * A number of up to 15 or 16 digits whose power of ten is within ±22 is one exact integer times or over one exact
- * power, so a single rounding gives what `Number()` gives (Clinger 1990). Everything else is handed to `Number()`.
- *
- * @returns a function of (position, target, index in target) that answers the position of the next line, or −1 when the
- *   line is not a row of this shape
+ * power, so a single rounding gives what `Number()` gives (Clinger 1990). Up to 22 digits go through `wideDecimal`,
+ * which proves its rounding. Everything else is handed to `Number()`.
  */
-export function rowMatcher(
-  bytes: Uint8Array,
-  template: Template,
-  shifts: readonly number[],
-): (at: number, cells: Float64Array, out: number) => number {
+export function rowMatcher(bytes: Uint8Array, template: Template, shifts: readonly number[]): RowMatcher {
   const width = template.contents.length;
   /** 0 number, 1 empty, 2 text, 3 sparse */
   const kinds = Uint8Array.from(template.contents, (c) => ['number', 'empty', 'text', 'sparse'].indexOf(c));
@@ -25,28 +34,30 @@ export function rowMatcher(
   const mark = template.decimal === ',' ? 44 : 46;
   const comma = mark === 44;
   const tabDelimits = delimiter === 9;
+  const end = bytes.length;
 
-  return (start, cells, out) => {
-    const end = bytes.length;
+  const one = (start: number, data: readonly Float64Array[], row: number): number => {
     let p = start;
-    let o = out;
+    let o = 0;
     for (let c = 0; c < width; c++) {
       while (p < end && (bytes[p] === 32 || (bytes[p] === 9 && !tabDelimits))) p++;
       const kind = kinds[c];
       if (kind === 0 || kind === 3) {
         let byte = p < end ? bytes[p]! : 10;
         if (kind === 3 && (byte === delimiter || byte === 10 || byte === 13)) {
-          cells[o++] = NaN;
+          data[o++]![row] = NaN;
         } else {
           const from = p;
           const negative = byte === 45;
           if (negative || byte === 43) byte = ++p < end ? bytes[p]! : 10;
           let mantissa = 0;
-          let slow = false;
+          let back = 0;
+          let backDigits = 0;
           const digitsFrom = p;
           while (byte >= 48 && byte <= 57) {
-            if (mantissa > EXACT_MANTISSA) slow = true;
-            else mantissa = mantissa * 10 + (byte - 48);
+            if (mantissa > EXACT_MANTISSA) {
+              if (++backDigits <= 7) back = back * 10 + (byte - 48);
+            } else mantissa = mantissa * 10 + (byte - 48);
             byte = ++p < end ? bytes[p]! : 10;
           }
           let digits = p - digitsFrom;
@@ -55,8 +66,9 @@ export function rowMatcher(
             const fractionFrom = p + 1;
             byte = ++p < end ? bytes[p]! : 10;
             while (byte >= 48 && byte <= 57) {
-              if (mantissa > EXACT_MANTISSA) slow = true;
-              else mantissa = mantissa * 10 + (byte - 48);
+              if (mantissa > EXACT_MANTISSA) {
+                if (++backDigits <= 7) back = back * 10 + (byte - 48);
+              } else mantissa = mantissa * 10 + (byte - 48);
               byte = ++p < end ? bytes[p]! : 10;
             }
             digits += p - fractionFrom;
@@ -76,15 +88,20 @@ export function rowMatcher(
             if (p === exponentFrom) return -1;
             power += down ? -exponent : exponent;
           }
-          let value: number;
-          if (slow || power > 22 || power < -22) {
-            value = mantissa === 0 && !slow ? (negative ? -0 : 0) : numberFromBytes(bytes, from, p, comma, shift[c]!);
-            if (!Number.isFinite(value)) return -1;
-          } else {
-            value = power < 0 ? mantissa / EXACT_POWERS[-power]! : mantissa * EXACT_POWERS[power]!;
-            if (negative) value = -value;
+          let value = NaN;
+          if (backDigits === 0) {
+            if (power >= -22 && power <= 22) {
+              value = power < 0 ? mantissa / EXACT_POWERS[-power]! : mantissa * EXACT_POWERS[power]!;
+            } else if (mantissa === 0) value = 0;
+          } else if (backDigits <= 7 && power < 0 && power >= -22) {
+            value = wideDecimal(mantissa, back, backDigits, -power);
           }
-          cells[o++] = value;
+          if (value === value) data[o++]![row] = negative ? -value : value;
+          else {
+            value = numberFromBytes(bytes, from, p, comma, shift[c]!);
+            if (!Number.isFinite(value)) return -1;
+            data[o++]![row] = value;
+          }
         }
       } else if (kind === 2) {
         const from = p;
@@ -110,4 +127,20 @@ export function rowMatcher(
     if (p >= end) return end;
     return bytes[p] === 10 || bytes[p] === 13 ? afterLineEnd(bytes, p) : -1;
   };
+
+  const many: RowMatcher['many'] = (start, data, row, most, rowFrom) => {
+    let at = start;
+    let rows = 0;
+    let lastFrom = start;
+    while (rows < most && at < end) {
+      const next = one(at, data, row + rows);
+      if (next < 0) break;
+      if (rowFrom) rowFrom[row + rows] = at;
+      lastFrom = at;
+      at = next;
+      rows++;
+    }
+    return { next: at, rows, lastFrom };
+  };
+  return { one, many };
 }

@@ -1,14 +1,13 @@
 import { afterLineEnd, type CleanBytes } from './bytes';
-import { isComment, splitCells } from './cells';
+import { splitCells } from './cells';
 import { IngestError } from './ingestError';
 import { textNumberReader } from './numbers';
 import { rowMatcher } from './rowMatcher';
 import { lineEndFrom, LONGEST_LINE, textOf } from './sample';
 import type { Template } from './template';
 
-/** Rows without other text between them; blank and comment lines do not end a block. */
+/** Rows without other text between them; blank lines do not end a block. */
 export interface Block {
-  /** Index of the first row in `cells`. */
   firstRow: number;
   rows: number;
   firstLine: number;
@@ -17,16 +16,16 @@ export interface Block {
   /** Byte offsets of the last row and of the line after it. */
   lastFrom: number;
   next: number;
-  /** First line after the block that is neither row, blank nor comment; null at the end of the file. */
+  /** First line after the block that is neither row nor blank; null at the end of the file. */
   gap: { line: number; from: number; lines: number } | null;
 }
 
 export interface Scan {
   template: Template;
-  /** File column of each column of `cells`. */
+  /** File column of each column of `data`. */
   columns: number[];
-  /** Row by row. A hole in a sparse column is NaN here and never leaves the ingest. */
-  cells: Float64Array;
+  /** Column by column, then row by row. A hole in a sparse column is NaN here and never leaves the ingest. */
+  data: Float64Array[];
   rows: number;
   blocks: Block[];
   /** Byte offset of every row, kept only where rows carry text (time stamps, table names). */
@@ -37,6 +36,31 @@ export interface Scan {
 export const MOST_CELLS = 24_000_000;
 const MOST_BLOCKS = 5000;
 const ROWS_PER_STEP = 16_384;
+const BYTES_PER_STEP = 1 << 20;
+
+function tooMuch(line: number, found: string, expected: string, next: string): IngestError {
+  return new IngestError(line, found, expected, `Line ${line}: ${found}. ${next}`);
+}
+
+/** Irregular rows: quotes (papaparse), grouped digits, typographic minus. Same outcome as the fast reader. */
+function textRowReader(template: Template, shifts: readonly number[]) {
+  const { contents, delimiter } = template;
+  const read = textNumberReader(template);
+  return (text: string, data: readonly Float64Array[], row: number): boolean => {
+    const cells = splitCells(text, delimiter);
+    for (let i = contents.length; i < cells.length; i++) if (cells[i] !== '') return false;
+    let out = 0;
+    for (const [i, content] of contents.entries()) {
+      const cell = cells[i] ?? '';
+      if (content === 'text' ? cell === '' : content === 'empty' && cell !== '') return false;
+      if (content !== 'number' && content !== 'sparse') continue;
+      const value = cell === '' && content === 'sparse' ? NaN : read(cell, shifts[i] ?? 0);
+      if (value === null) return false;
+      data[out++]![row] = value;
+    }
+    return true;
+  };
+}
 
 /**
  * Reads every row of the shape. Rows of plain numbers go through the byte reader, others through papaparse.
@@ -47,120 +71,101 @@ export function* scanSteps(clean: CleanBytes, template: Template, shifts: number
   const { bytes } = clean;
   const { contents } = template;
   const columns = contents.flatMap((content, i) => (content === 'number' || content === 'sparse' ? [i] : []));
-  const wide = columns.length;
-  const most = Math.min(clean.lines * wide, MOST_CELLS + wide);
-  let cells = new Float64Array(Math.min(most, 65_536 * wide));
-  let rowFrom = contents.includes('text') ? new Uint32Array(Math.min(clean.lines, 65_536)) : null;
+  const mostRows = Math.ceil(MOST_CELLS / columns.length);
+  let room = Math.min(clean.lines, mostRows + 1, Math.max(16, Math.floor(3_000_000 / columns.length)));
+  let data = columns.map(() => new Float64Array(room));
+  let rowFrom = contents.includes('text') ? new Uint32Array(room) : null;
   const match = rowMatcher(bytes, template, shifts);
-  const readText = textNumberReader(template);
+  const matchText = textRowReader(template, shifts);
   const plain = template.thousands === null;
-
-  /** Irregular rows: quotes, grouped digits, typographic minus. */
-  const matchText = (text: string, at: number): boolean => {
-    const row = splitCells(text, template.delimiter);
-    for (let i = contents.length; i < row.length; i++) if (row[i] !== '') return false;
-    let out = at;
-    for (const [i, content] of contents.entries()) {
-      const cell = row[i] ?? '';
-      if (content === 'text' ? cell === '' : content === 'empty' && cell !== '') return false;
-      if (content !== 'number' && content !== 'sparse') continue;
-      const value = cell === '' && content === 'sparse' ? NaN : readText(cell, shifts[i] ?? 0);
-      if (value === null) return false;
-      cells[out++] = value;
-    }
-    return true;
-  };
+  const perStep = Math.max(1, Math.floor((ROWS_PER_STEP * 3) / columns.length));
 
   const blocks: Block[] = [];
   let block: Block | null = null;
   let rows = 0;
-  let at = 0;
+  let line = 1;
   let work = 0;
-  for (let line = 1; at < bytes.length; line++) {
-    if ((rows + 1) * wide > cells.length) {
-      if ((rows + 1) * wide > MOST_CELLS) {
-        const message = `Line ${line}: more than ${MOST_CELLS} numbers. Split the file and drop the parts.`;
-        throw new IngestError(line, `more than ${MOST_CELLS} numbers`, 'one sweep per file', message);
+  const take = (from: number, count: number, lastFrom: number, next: number) => {
+    if (block === null || block.gap !== null) {
+      block = { firstRow: rows, rows: 0, firstLine: line, lastLine: line, from, lastFrom, next, gap: null };
+      blocks.push(block);
+      if (blocks.length > MOST_BLOCKS) {
+        throw tooMuch(
+          line,
+          `rows are interrupted over ${MOST_BLOCKS} times`,
+          'one table',
+          'Export the trace as one table.',
+        );
       }
-      const larger = new Float64Array(Math.min(most, cells.length * 2));
-      larger.set(cells);
-      cells = larger;
     }
-    const out = rows * wide;
-    let next = plain ? match(at, cells, out) : -1;
-    if (next < 0) {
-      const end = lineEndFrom(bytes, at);
-      next = end < bytes.length ? afterLineEnd(bytes, end) : end;
-      work += (end - at) >> 6;
-      const text = end - at > LONGEST_LINE ? null : end === at ? '' : textOf(bytes, at, end);
-      const worth = text !== null && (!plain || /["\u2212\u00a0\u2009\u202f]/.test(text));
-      if (!(worth && matchText(text, out))) {
-        const skipped = text !== null && (text.trim() === '' || isComment(text));
-        if (block && !skipped) {
-          block.gap ??= { line, from: at, lines: 0 };
-          block.gap.lines++;
-        }
-        at = next;
-        if (++work >= ROWS_PER_STEP) {
-          work = 0;
-          yield;
-        }
+    Object.assign(block, { rows: block.rows + count, lastLine: line + count - 1, lastFrom, next });
+    rows += count;
+    line += count;
+  };
+
+  for (let at = 0; at < bytes.length;) {
+    if (rows >= mostRows) {
+      throw tooMuch(
+        line,
+        `more than ${MOST_CELLS} numbers`,
+        'one sweep per file',
+        'Split the file and drop the parts.',
+      );
+    }
+    if (rows >= room) {
+      room = Math.min(clean.lines, mostRows + 1, room * 2);
+      const grown = <T extends Float64Array | Uint32Array>(old: T, larger: T) => (larger.set(old), larger);
+      data = data.map((old) => grown(old, new Float64Array(room)));
+      rowFrom &&= grown(rowFrom, new Uint32Array(room));
+    }
+    if (plain) {
+      const stretch = match.many(at, data, rows, Math.min(perStep, room - rows), rowFrom);
+      if (stretch.rows > 0) {
+        take(at, stretch.rows, stretch.lastFrom, stretch.next);
+        at = stretch.next;
+        if (stretch.rows >= perStep) yield;
         continue;
       }
     }
-    if (block === null || block.gap !== null) {
-      block = { firstRow: rows, rows: 0, firstLine: line, lastLine: line, from: at, lastFrom: at, next, gap: null };
-      blocks.push(block);
-      if (blocks.length > MOST_BLOCKS) {
-        const message = `Line ${line}: rows of numbers are interrupted by other lines more than ${MOST_BLOCKS} times. Export the trace as one table.`;
-        throw new IngestError(line, `${MOST_BLOCKS} pieces`, 'one table', message);
+    const end = lineEndFrom(bytes, at);
+    const next = end < bytes.length ? afterLineEnd(bytes, end) : end;
+    const text = end - at > LONGEST_LINE ? null : end === at ? '' : textOf(bytes, at, end);
+    const irregular = text !== null && (!plain || /["\u2212\u00a0\u2009\u202f]/.test(text));
+    if (irregular && matchText(text, data, rows)) {
+      if (rowFrom) rowFrom[rows] = at;
+      take(at, 1, at, next);
+    } else {
+      const open: Block | null = blocks.at(-1) ?? null;
+      if (open && !(text !== null && text.trim() === '')) {
+        open.gap ??= { line, from: at, lines: 0 };
+        open.gap.lines++;
       }
+      line++;
     }
-    if (rowFrom) {
-      if (rows >= rowFrom.length) {
-        const larger = new Uint32Array(rowFrom.length * 2);
-        larger.set(rowFrom);
-        rowFrom = larger;
-      }
-      rowFrom[rows] = at;
-    }
-    block.rows++;
-    block.lastLine = line;
-    block.lastFrom = at;
-    block.next = next;
-    rows++;
+    work += end - at + 256;
     at = next;
-    if (++work >= ROWS_PER_STEP) {
+    if (work >= BYTES_PER_STEP) {
       work = 0;
       yield;
     }
   }
-  return { template, columns, cells, rows, blocks, rowFrom };
+  return { template, columns, data, rows, blocks, rowFrom };
 }
 
-/** One column of a stretch of rows. */
+/** One column over a stretch of rows; a view, not a copy. */
 export function columnOf(scan: Scan, column: number, firstRow: number, rows: number): Float64Array {
-  const wide = scan.columns.length;
-  const values = new Float64Array(rows);
-  for (let i = 0, at = firstRow * wide + column; i < rows; i++, at += wide) values[i] = scan.cells[at]!;
-  return values;
+  return scan.data[column]!.subarray(firstRow, firstRow + rows);
 }
 
-/** Line of a row within its block: blank and comment lines between rows make it later than its place would say. */
+/** Line of a row within its block: blank lines between rows make it later than its place would say. */
 export function lineOfRow(clean: CleanBytes, scan: Scan, row: number): number {
   const block = scan.blocks.find((b) => row >= b.firstRow && row < b.firstRow + b.rows)!;
   if (block.lastLine - block.firstLine + 1 === block.rows) return block.firstLine + row - block.firstRow;
-  const match = rowMatcher(clean.bytes, scan.template, []);
-  const spare = new Float64Array(scan.columns.length);
   let line = block.firstLine;
-  for (let at = block.from, seen = block.firstRow; ; line++) {
-    const next = match(at, spare, 0);
-    if (next >= 0 && seen++ === row) return line;
-    if (next >= 0) at = next;
-    else {
-      const end = lineEndFrom(clean.bytes, at);
-      if (end >= clean.bytes.length) return line;
-      at = afterLineEnd(clean.bytes, end);
-    }
+  for (let at = block.from, seen = block.firstRow; at < clean.bytes.length; line++) {
+    const end = lineEndFrom(clean.bytes, at);
+    if (textOf(clean.bytes, at, end).trim() !== '' && seen++ === row) break;
+    at = end < clean.bytes.length ? afterLineEnd(clean.bytes, end) : end;
   }
+  return line;
 }

@@ -98,7 +98,6 @@ export interface Settled {
 export function* tableSteps(prepared: Prepared, scan: Scan, settled: Settled | null = null): Generator<void, Table> {
   const { clean, option } = prepared;
   const { template, columns } = scan;
-  const wide = columns.length;
   const main = mainBlockOf(scan);
   const first = scan.blocks.indexOf(main);
   const { near, ...context } = contextOf(prepared, scan, first);
@@ -110,7 +109,6 @@ export function* tableSteps(prepared: Prepared, scan: Scan, settled: Settled | n
   const hop = tryHop ? hopRowsIn(scan, main) : null;
   if (hop) {
     const { pieces, damage, remarks } = resolveBlocks(clean, scan, hop.low, null);
-    const axisAt = (row: number) => scan.cells[row * wide + hop.low]!;
     const stamps = template.contents.slice(0, columns[0]).map((content, i) => (content === 'text' ? i : -1));
     const stampOf = (row: number) => {
       const from = scan.rowFrom?.[row];
@@ -118,7 +116,7 @@ export function* tableSteps(prepared: Prepared, scan: Scan, settled: Settled | n
       const row0 = splitCells(textOf(clean.bytes, from, lineEndFrom(clean.bytes, from)), template.delimiter);
       return stamps.flatMap((i) => (i >= 0 ? [row0[i] ?? ''] : [])).join(' ') || null;
     };
-    const split = splitAtRestarts(pieces, axisAt).map((piece) => {
+    const split = splitAtRestarts(pieces, scan.data[hop.low]!).map((piece) => {
       const startedAt = stampOf(piece.firstRow);
       return { ...piece, startedAt, name: startedAt && `sweep ${startedAt}` };
     });
@@ -136,7 +134,7 @@ export function* tableSteps(prepared: Prepared, scan: Scan, settled: Settled | n
       const from = scan.rowFrom?.[row];
       const stamp =
         from === undefined
-          ? String(scan.cells[row * wide])
+          ? String(scan.data[0]![row])
           : splitCells(
               textOf(clean.bytes, from, Math.min(from + 400, lineEndFrom(clean.bytes, from))),
               template.delimiter,
@@ -193,7 +191,6 @@ export function* tableSteps(prepared: Prepared, scan: Scan, settled: Settled | n
     const end = Math.min(from + 200, lineEndFrom(clean.bytes, from));
     return splitCells(textOf(clean.bytes, from, end), template.delimiter)[0]!;
   };
-  const axisAt = (row: number) => scan.cells[row * wide + (choice.index ?? 0)]!;
   const named = labelled ? splitAtLabels(pieces, labelAt) : null;
   const axisColumn = choice.index === null ? null : columns[choice.index]!;
   const levelColumns = candidates
@@ -211,7 +208,7 @@ export function* tableSteps(prepared: Prepared, scan: Scan, settled: Settled | n
     axisEvidence: choice.evidence,
     noAxis,
     levelColumns,
-    pieces: named ?? splitAtRestarts(pieces, axisAt),
+    pieces: named ?? splitAtRestarts(pieces, scan.data[choice.index ?? 0]!),
     damage,
     remarks: [...nothing.remarks, ...remarks],
   };
@@ -228,13 +225,11 @@ export function axisOf(table: Table, piece: Piece, shift = 0): Float64Array {
     return Float64Array.from(time.frequencies, (text) => read(text, shift)!);
   }
   if (!hop) return columnOf(scan, scan.columns.indexOf(table.axisColumn!), piece.firstRow, piece.rows);
-  const wide = scan.columns.length;
+  const [low, width] = [scan.data[hop.low]!, scan.data[hop.binWidth]!];
   const axis = new Float64Array(piece.rows * hop.bins);
-  for (let row = 0; row < piece.rows; row++) {
-    const at = (piece.firstRow + row) * wide;
-    for (let bin = 0; bin < hop.bins; bin++) {
-      axis[row * hop.bins + bin] = scan.cells[at + hop.low]! + bin * scan.cells[at + hop.binWidth]!;
-    }
+  for (let i = 0; i < axis.length; i++) {
+    const row = piece.firstRow + Math.floor(i / hop.bins);
+    axis[i] = low[row]! + (i % hop.bins) * width[row]!;
   }
   return axis;
 }
@@ -242,16 +237,12 @@ export function axisOf(table: Table, piece: Piece, shift = 0): Float64Array {
 /** Levels of one piece. Row layouts have one trace that runs over several columns; pairs have one per column. */
 export function levelsOf(table: Table, piece: Piece, column: number): Float64Array {
   const { scan, hop, time } = table;
-  const wide = scan.columns.length;
   if (time) {
-    const from = piece.firstRow * wide + time.firstLevel;
-    return scan.cells.slice(from, from + table.levelColumns.length);
+    const from = scan.columns.indexOf(table.levelColumns[0]!);
+    return Float64Array.from(table.levelColumns, (_, i) => scan.data[from + i]![piece.firstRow]!);
   }
   if (!hop) return columnOf(scan, scan.columns.indexOf(column), piece.firstRow, piece.rows);
-  const levels = new Float64Array(piece.rows * hop.bins);
-  for (let row = 0; row < piece.rows; row++) {
-    const from = (piece.firstRow + row) * wide + hop.firstLevel;
-    levels.set(scan.cells.subarray(from, from + hop.bins), row * hop.bins);
-  }
-  return levels;
+  return Float64Array.from({ length: piece.rows * hop.bins }, (_, i) => {
+    return scan.data[hop.firstLevel + (i % hop.bins)]![piece.firstRow + Math.floor(i / hop.bins)]!;
+  });
 }
