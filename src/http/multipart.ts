@@ -38,7 +38,8 @@ export async function receiveFile(request: Request): Promise<ReceivedFile> {
       }),
   });
   const stream = Object.assign(Readable.fromWeb(request.body as NodeStream), {
-    headers: Object.fromEntries(request.headers),
+    // formidable takes a body without a stated length for none, unless it is said to come in chunks
+    headers: { 'transfer-encoding': 'chunked', ...Object.fromEntries(request.headers) },
     method: request.method,
     url: request.url,
   });

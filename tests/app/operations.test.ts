@@ -1,0 +1,183 @@
+import { readdirSync } from 'node:fs';
+import path from 'node:path';
+import { closePasswordWorkers } from '@/auth/passwordWorker';
+import { mayRole } from '@/auth/permissions';
+import type { RouteHandler } from '@/http/handle';
+import type { Operation } from '@/schemas/operation';
+import { OPERATIONS } from '@/schemas/operations';
+import { freshDatabase, type TestDatabase } from '../support/database';
+import { enterWorld, sweepFile, type Somebody, type World } from '../support/world';
+
+/* Every operation of the API × who asks: nobody, each role, the own and another organisation. */
+
+const ORIGIN = 'http://localhost:3000';
+const API = path.resolve(__dirname, '../../src/app/api');
+
+let schema: TestDatabase;
+let world: World;
+const handlers = new Map<string, RouteHandler>();
+
+beforeAll(async () => {
+  schema = await freshDatabase();
+  world = await enterWorld();
+  for (const file of readdirSync(API, { recursive: true, encoding: 'utf8' })) {
+    if (!file.endsWith('route.ts')) continue;
+    const module = (await import(path.join(API, file))) as Record<string, RouteHandler>;
+    for (const handler of Object.values(module)) {
+      if (handler.operation) handlers.set(handler.operation.id, handler);
+    }
+  }
+}, 120_000);
+afterAll(async () => {
+  await closePasswordWorkers();
+  await schema.close();
+});
+
+interface Sample {
+  params?: (w: World) => string;
+  query?: string;
+  body?: (w: World) => unknown;
+}
+
+const stateOf = (w: World) => w.sample.states[0]!;
+
+/** What makes each operation do something when the asker may; a missing row fails the test below. */
+const SAMPLES: Record<string, Sample> = {
+  signIn: { body: () => ({ email: 'nobody@harrowlane.example', password: 'wrong' }) },
+  signOut: {},
+  readMe: {},
+  listSessions: {},
+  endSession: { params: () => '0000000000000000' },
+  listOrganisations: {},
+  listProducts: {},
+  readProduct: { params: (w) => w.product.id },
+  createProduct: { body: (w) => ({ organisationId: w.client.publicId, code: `X-${Math.random()}`, name: 'X' }) },
+  changeProduct: { params: (w) => w.product.id, body: () => ({ description: 'changed' }) },
+  listJobs: {},
+  readJob: { params: (w) => w.job.id },
+  createJob: { body: (w) => ({ productId: w.product.id, title: 'another' }) },
+  changeJob: { params: (w) => w.job.id, body: () => ({ title: 'renamed' }) },
+  listSamples: {},
+  readSample: { params: (w) => w.sample.id },
+  createSample: { params: (w) => w.job.id, body: () => ({ serial: 'P2-0200' }) },
+  changeSample: { params: (w) => w.sample.id, body: () => ({ firmware: '1.2' }) },
+  createState: { params: (w) => w.sample.id, body: () => ({ description: 'ferrite' }) },
+  changeState: { params: (w) => stateOf(w).id, body: () => ({ description: 'as received, lid on' }) },
+  listPaths: {},
+  listLimitSets: {},
+  listEquipment: {},
+  createSweepFile: {},
+  readSweepFile: { params: (w) => w.file.id },
+  previewSweepFile: { params: (w) => w.file.id, body: (w) => w.choice },
+  keepSweep: { body: (w) => ({ ...w.choice, ...w.about, fileId: w.file.id }) },
+  listSweeps: {},
+  readSweep: { params: (w) => w.run.id },
+  readWindow: { params: (w) => w.run.id, query: '?fromHz=100e6&toHz=200e6&columns=64' },
+  listCandidates: { params: (w) => w.run.id },
+  readWorking: { params: (w) => w.run.id, query: '?frequencyHz=144e6&trace=0' },
+  downloadSweepFile: { params: (w) => w.run.id },
+};
+
+/** A change names the version that is current now; two allowed roles may have changed it before. */
+async function versionFor(op: Operation): Promise<string> {
+  const reader: Record<string, [string, string]> = {
+    changeProduct: ['readProduct', world.product.id],
+    changeJob: ['readJob', world.job.id],
+    changeSample: ['readSample', world.sample.id],
+    changeState: ['readSample', world.sample.id],
+  };
+  const [id, record] = reader[op.id]!;
+  const answer = await handlers.get(id)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
+    params: Promise.resolve({ id: record }),
+  });
+  const view = (await answer.json()) as { version: number; states?: { id: string; version: number }[] };
+  const state = view.states?.find((one) => one.id === stateOf(world).id);
+  return `"${op.id === 'changeState' ? state!.version : view.version}"`;
+}
+
+async function ask(op: Operation, who: Somebody | null): Promise<Response> {
+  const sample = SAMPLES[op.id]!;
+  const headers = new Headers({ origin: ORIGIN });
+  if (who) headers.set('cookie', who.cookie);
+  if (op.ifMatch) headers.set('if-match', await versionFor(op));
+  const id = sample.params?.(world);
+  const url = ORIGIN + op.path.replace('{id}', id ?? '') + (sample.query ?? '');
+  let body: BodyInit | null = null;
+  if (op.upload) {
+    const { name, bytes } = sweepFile();
+    const form = new FormData();
+    form.append('file', new File([bytes], name));
+    body = form;
+  } else if (sample.body) {
+    headers.set('content-type', 'application/json');
+    body = JSON.stringify(sample.body(world));
+  }
+  const request = new Request(url, { method: op.method, headers, body });
+  return handlers.get(op.id)!(request, { params: Promise.resolve(id === undefined ? {} : { id }) });
+}
+
+test('every operation has one route handler, and every handler an operation', () => {
+  expect([...handlers.keys()].sort()).toEqual(OPERATIONS.map((op) => op.id).sort());
+});
+
+test('every operation has a sample to ask it with', () => {
+  expect(Object.keys(SAMPLES).sort()).toEqual(OPERATIONS.map((op) => op.id).sort());
+});
+
+test('operation ids and method-and-path pairs are unique', () => {
+  const pairs = OPERATIONS.map((op) => `${op.method} ${op.path}`);
+  expect(new Set(pairs).size).toBe(pairs.length);
+  expect(new Set(OPERATIONS.map((op) => op.id)).size).toBe(OPERATIONS.length);
+});
+
+const guarded = OPERATIONS.filter((op) => op.permission !== null);
+
+test.each(guarded.map((op) => [op.id, op] as const))('%s: nobody is answered 401', async (_id, op) => {
+  const answer = await ask(op, null);
+  expect([answer.status, answer.headers.get('content-type')]).toEqual([401, 'application/problem+json']);
+});
+
+const ROLES = ['manager', 'technician', 'designer'] as const;
+const matrix = guarded.flatMap((op) => ROLES.map((role) => [op.id, role, op] as const));
+
+test.each(matrix)('%s as %s: done when the table allows it, 403 when not', async (_id, role, op) => {
+  const answer = await ask(op, world[role]);
+  if (!mayRole(role, op.permission!)) expect(answer.status).toBe(403);
+  else if (op.id === 'endSession') expect(answer.status).toBe(404);
+  else expect([answer.status, answer.ok ? '' : await answer.text()]).toEqual([op.status, '']);
+  if (op.id === 'signOut' && answer.ok) {
+    const { signIn } = await import('@/services/sessions');
+    const { cookieOf, PASSWORD } = await import('../auth/people');
+    const { email } = world[role].actor;
+    const again = await signIn({ email, password: PASSWORD }, { address: '127.0.0.1', agent: 'test' });
+    world[role].cookie = cookieOf(again.cookie);
+  }
+});
+
+const ofOneRecord = guarded.filter((op) => mayRole('designer', op.permission!) && op.path.includes('{id}'));
+
+test.each(ofOneRecord.map((op) => [op.id, op] as const))(
+  '%s: a designer of another organisation is answered 404, as for a record that does not exist',
+  async (_id, op) => {
+    const answer = await ask(op, world.outsider);
+    expect(answer.status).toBe(404);
+    expect(await answer.text()).not.toMatch(/Pell|LD-40|HL-/);
+  },
+);
+
+const lists = ['listProducts', 'listJobs', 'listSamples', 'listSweeps'];
+
+test.each(lists)('%s: a designer sees the own organisation’s records and no other', async (id) => {
+  const op = OPERATIONS.find((one) => one.id === id)!;
+  const own = (await (await ask(op, world.designer)).json()) as { items: unknown[] };
+  const other = (await (await ask(op, world.outsider)).json()) as { items: unknown[] };
+  expect(own.items.length).toBeGreaterThan(0);
+  expect(other.items).toEqual([]);
+});
+
+test('a list filtered by another organisation’s sample is answered 404', async () => {
+  const request = new Request(`${ORIGIN}/api/sweeps?sampleId=${world.sample.id}`, {
+    headers: { cookie: world.outsider.cookie },
+  });
+  expect((await handlers.get('listSweeps')!(request)).status).toBe(404);
+});
