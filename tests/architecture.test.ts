@@ -10,6 +10,8 @@ const ARROW: Readonly<Record<string, readonly string[]>> = {
   app: ['components', 'http', 'services', 'auth', 'schemas', 'format'],
   services: ['models', 'emc', 'ingest', 'auth', 'schemas', 'mail', 'pdf', 'config', 'errors'],
   http: ['services', 'auth', 'schemas', 'errors', 'config'],
+  // Next asks for this one file beside app; it runs before every page
+  proxy: ['http', 'config'],
   components: ['schemas', 'format', 'emc', 'auth/permissions'],
   models: ['config', 'emc/types', 'emc/kinds'],
   auth: ['schemas', 'config', 'errors'],
@@ -104,7 +106,11 @@ function packageProblem(file: string, name: string): string | null {
   if (belongs(name, 'sequelize') && !['models', 'services', 'config', 'ops', 'outbox'].includes(room)) {
     return 'Sequelize is seen by models and services';
   }
-  if (belongs(name, 'next') && !['app', 'components'].includes(room) && file !== path.join('ops', 'server.ts')) {
+  if (
+    belongs(name, 'next') &&
+    !['app', 'components', 'proxy'].includes(room) &&
+    file !== path.join('ops', 'server.ts')
+  ) {
     return 'next/* is seen by app and components';
   }
   if ((belongs(name, 'react') || belongs(name, 'react-dom')) && !['app', 'components'].includes(room)) {
