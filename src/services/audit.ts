@@ -1,8 +1,9 @@
 import { createHash } from 'node:crypto';
-import { Op } from 'sequelize';
+import { Op, QueryTypes } from 'sequelize';
 import { authorise, type Actor } from '@/auth/actor';
 import { AuditChain } from '@/models/auditChain';
 import { AuditEntry } from '@/models/auditEntry';
+import { database } from '@/models/database';
 import { currentTransaction, lastly, unitOfWork } from '@/models/unitOfWork';
 
 export interface Change {
@@ -42,7 +43,11 @@ export function recordChange(actor: Actor | null, change: Change): void {
 
 async function append(actor: Actor | null, change: Change): Promise<void> {
   const at = change.at ?? new Date();
-  await AuditChain.bulkCreate([{ scope: change.scope, length: 0, head: GENESIS }], { ignoreDuplicates: true });
+  // Takes the exclusive lock whether or not the chain is there yet.
+  await database().query(
+    'INSERT INTO audit_chains (scope, length, head) VALUES (?, 0, ?) ON DUPLICATE KEY UPDATE length = length',
+    { replacements: [change.scope, GENESIS], type: QueryTypes.INSERT },
+  );
   const chain = await AuditChain.findOne({
     where: { scope: change.scope },
     lock: currentTransaction().LOCK.UPDATE,

@@ -1,18 +1,25 @@
+import { QueryTypes } from 'sequelize';
 import { Counter } from '@/models/counter';
+import { database } from '@/models/database';
 import { currentTransaction } from '@/models/unitOfWork';
 
 /**
  * The next number of a scope, without gaps or doubles: the row stays locked until the unit commits, so ask for it
- * just before the insert that needs it.
+ * just before the insert that needs it. One statement takes the exclusive lock at once; reading first and locking
+ * afterwards would let two units wait for each other.
  */
 export async function nextNumber(scope: string): Promise<number> {
-  await Counter.bulkCreate([{ scope, value: 0 }], { ignoreDuplicates: true });
+  await database().query(
+    'INSERT INTO counters (scope, value) VALUES (?, 1) ON DUPLICATE KEY UPDATE value = value + 1',
+    {
+      replacements: [scope],
+      type: QueryTypes.INSERT,
+    },
+  );
   const row = await Counter.findOne({
     where: { scope },
     lock: currentTransaction().LOCK.UPDATE,
     rejectOnEmpty: true,
   });
-  const value = Number(row.value) + 1;
-  await Counter.update({ value }, { where: { scope } });
-  return value;
+  return Number(row.value);
 }

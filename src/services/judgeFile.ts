@@ -2,6 +2,7 @@ import { Op } from 'sequelize';
 import { authorise, type Actor } from '@/auth/actor';
 import { evaluate } from '@/emc/evaluate';
 import type { Evaluation, EvaluationInput, Trace } from '@/emc/types';
+import { isReceiverInput } from '@/emc/units';
 import { Conflict, Invalid, type Issue } from '@/errors';
 import type { Recognition } from '@/ingest/types';
 import { readUpload } from '@/models/blobs';
@@ -10,6 +11,7 @@ import { SignalPath } from '@/models/signalPath';
 import { SignalPathRevision } from '@/models/signalPathRevision';
 import { unitOfWork } from '@/models/unitOfWork';
 import type { LimitLineView, PreviewView, SweepChoice } from '@/schemas/sweep';
+import { dueOnDay } from './calibrationState';
 import { inTurns } from './inTurns';
 import { dayIn, labSettings } from './lab';
 import { linesOf, toCoreLine } from './limitSets';
@@ -38,7 +40,12 @@ export function notAppliedBecause(
   return new Map(choice.alreadyCorrected.map((id) => [id, 'the reading holds it already, as stated when it was kept']));
 }
 
-function check(choice: SweepChoice, limitSet: LimitSet | null, path: LoadedPath | null): asserts limitSet is LimitSet {
+function check(
+  choice: SweepChoice,
+  held: readonly { index: number }[],
+  limitSet: LimitSet | null,
+  path: LoadedPath | null,
+): asserts limitSet is LimitSet {
   const issues: Issue[] = [];
   const say = (pointer: string, message: string) => issues.push({ pointer, message });
   if (!limitSet) throw new Invalid([{ pointer: '/limitSetId', message: 'is not a limit set of this lab' }]);
@@ -55,9 +62,13 @@ function check(choice: SweepChoice, limitSet: LimitSet | null, path: LoadedPath 
   const field = choice.valuesHold === 'field';
   choice.traces.forEach((trace, i) => {
     const isField = trace.unit === 'dBuV/m' || trace.unit === 'dBuA/m';
+    if (!held.some(({ index }) => index === trace.index)) say(`/traces/${i}/index`, 'is not a trace of this file');
     if (trace.unit === 'dB') say(`/traces/${i}/unit`, 'is relative; a level needs an absolute unit to be judged');
     else if (field && !isField) say(`/traces/${i}/unit`, 'is not field strength, but the values are said to be');
     else if (!field && isField) say(`/traces/${i}/unit`, 'is field strength; say that the values are field strength');
+    else if (!field && path && !isReceiverInput(trace.unit)) {
+      say(`/traces/${i}/unit`, 'takes no factor; this path would add some');
+    }
   });
   const known = new Set(path?.items.map((item) => item.equipment.identifier));
   choice.alreadyCorrected.forEach((id, i) => {
@@ -80,10 +91,16 @@ async function pathAt(publicId: string | null, at: Date): Promise<LoadedPath | n
       order: [['revision', 'DESC']],
     }));
   if (!revision) throw new Invalid([{ pointer: '/pathId', message: 'is not a signal path of this lab' }]);
-  const [loaded] = await loadPaths([revision], dayIn((await labSettings()).zone, at));
-  const held = loaded!.items.find((item) => item.equipment.state !== 'in-use');
-  if (held) {
-    throw new Conflict(`${held.equipment.identifier} on this path is ${held.equipment.state}. Choose another path.`);
+  const day = dayIn((await labSettings()).zone, at);
+  const [loaded] = await loadPaths([revision], day);
+  for (const { equipment, calibration } of loaded!.items) {
+    if (equipment.state !== 'in-use') {
+      throw new Conflict(`${equipment.identifier} on this path is ${equipment.state}. Choose another path.`);
+    }
+    if (dueOnDay(calibration, day) === 'lapsed') {
+      const { identifier } = equipment;
+      throw new Conflict(`The calibration of ${identifier} lapsed on ${calibration!.dueOn}. Choose another path.`);
+    }
   }
   return loaded!;
 }
@@ -100,7 +117,7 @@ export async function judgeFile(
 ): Promise<Judged> {
   const limitSet = await LimitSet.findOne({ where: { publicId: choice.limitSetId, withdrawnAt: null } });
   const path = await pathAt(choice.pathId, at);
-  check(choice, limitSet, path);
+  check(choice, recognition.traces, limitSet, path);
   const lines = (await linesOf([limitSet])).get(limitSet.id)!;
   const terms = path ? termsOf(path, choice.polarisation, notAppliedBecause(choice, path)) : [];
   const { frequencyUnit, centreHz, sweepIndex } = choice;
@@ -114,9 +131,8 @@ export async function judgeFile(
     }),
   });
   const input: EvaluationInput = {
-    traces: choice.traces.map((chosen, i): Trace => {
-      const values = read.traces.find((trace) => trace.index === chosen.index)?.values;
-      if (!values) throw new Invalid([{ pointer: `/traces/${i}/index`, message: 'is not a trace of this file' }]);
+    traces: choice.traces.map((chosen): Trace => {
+      const { values } = read.traces.find((trace) => trace.index === chosen.index)!;
       const reading = Float32Array.from(values);
       return { ...chosen, frequencyHz: read.frequencyHz, reading };
     }),
