@@ -19,6 +19,7 @@ const config = [
   },
   { files: ['src/models/**', 'src/services/**'], rules: { 'react-hooks/rules-of-hooks': 'off' } },
   { files: ['src/ops/**', 'fixtures/**', 'tests/**'], rules: { 'no-console': 'off' } },
+  { files: ['tests/**'], rules: { '@next/next/no-assign-module-variable': 'off' } },
 ];
 
 export default config;
