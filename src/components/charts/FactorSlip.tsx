@@ -1,6 +1,7 @@
 import type { WorkingView } from '@/schemas/sweep';
 import { formatFrequencyMhz } from '@/format/frequencies';
 import { formatDb, formatFigure, formatTrimmed } from '@/format/quantities';
+import { FORCED } from './chartText';
 
 type FactorRows = NonNullable<WorkingView['terms'][number]['table']>;
 
@@ -36,7 +37,7 @@ export function FactorSlip({ table, frequencyHz, factorDb }: Props) {
   // Its own figure keeps clear of the row figures at either end.
   const figureLeft = share > 0.62;
   return (
-    <figure className="border border-rule2 bg-sheet" aria-label={name}>
+    <figure className={`border border-rule2 bg-sheet ${FORCED}`} aria-label={name}>
       <svg width="100%" height="100" aria-hidden="true" className="block text-[12px]">
         <text x="8" y="19" fontWeight="600" className="fill-ink">
           {table.name}

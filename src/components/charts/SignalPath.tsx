@@ -1,6 +1,7 @@
 import type { SweepView } from '@/schemas/sweep';
 import { formatDue, formatShortDay } from '@/format/dates';
 import { formatDistance } from '@/format/quantities';
+import { FORCED } from './chartText';
 
 type PathItem = NonNullable<SweepView['path']>['items'][number];
 
@@ -18,7 +19,7 @@ interface Props {
 export function SignalPath({ items, sample, distanceM, today }: Props) {
   return (
     <ol
-      className="grid auto-cols-[minmax(5.75rem,6.75rem)] grid-flow-col overflow-x-auto pt-1"
+      className={`grid auto-cols-[minmax(5.75rem,6.75rem)] grid-flow-col overflow-x-auto pt-1 ${FORCED}`}
       aria-label="Signal path"
     >
       <li>

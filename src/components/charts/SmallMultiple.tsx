@@ -2,7 +2,7 @@ import { useId } from 'react';
 import type { CandidateView, WindowView } from '@/schemas/sweep';
 import { formatMargin } from '@/format/quantities';
 import { VERDICT_WORDS } from '@/format/words';
-import { FIGURE, VERDICT_MARKS } from './chartText';
+import { FIGURE, FORCED, VERDICT_MARKS } from './chartText';
 import { columnValues } from './marginSeries';
 import { plotScale } from './scale';
 import { figureWidthPx } from './textWidth';
@@ -26,7 +26,7 @@ export function SmallMultiple(props: SmallMultipleProps) {
   const said =
     needs ?? (worst ? `worst ${formatMargin(worst.marginDb)}, ${VERDICT_WORDS[worst.verdict]}` : 'not measured');
   return (
-    <figure role="img" aria-label={`${props.name}: ${said}`}>
+    <figure role="img" aria-label={`${props.name}: ${said}`} className={FORCED}>
       <Drawing {...props} size="wide" className="max-pad:hidden" />
       <Drawing {...props} size="narrow" className="pad:hidden" />
     </figure>

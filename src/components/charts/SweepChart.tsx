@@ -9,6 +9,7 @@ import { nearestTrace, spokenPoint, stepAlong, tracePoint, traceTip, type Cursor
 import { ChartFront } from './ChartFront';
 import { createStore } from './chartStore';
 import { holesOf, leadingTrace, type ChartSubject } from './chartSubject';
+import { FORCED } from './chartText';
 import { combTicks } from './combTicks';
 import { describeChart } from './describeChart';
 import { seriesExtremes, traceSeries, type ChartMode } from './marginSeries';
@@ -298,7 +299,7 @@ export function SweepChart(props: SweepChartProps) {
   );
   if (preview)
     return (
-      <div ref={box} role="img" aria-label={sentence} className="relative h-[256px]">
+      <div ref={box} role="img" aria-label={sentence} className={`relative h-[256px] ${FORCED}`}>
         {layers}
       </div>
     );
@@ -313,7 +314,7 @@ export function SweepChart(props: SweepChartProps) {
       aria-keyshortcuts="ArrowLeft ArrowRight + - 0 L C"
       tabIndex={candidates.length > 0 ? -1 : 0}
       onKeyDown={onKeyDown}
-      className="relative h-[316px] touch-pan-y select-none max-pad:-mx-4 max-pad:h-[262px]"
+      className={`relative h-[316px] touch-pan-y select-none max-pad:-mx-4 max-pad:h-[262px] ${FORCED}`}
     >
       <p id={`${id}-sentence`} className="sr-only">
         {sentence}

@@ -14,3 +14,19 @@ export const VERDICT_MARKS: Record<Verdict, { colour: string; solid: boolean }> 
   'not-covered': { colour: 'text-ink3', solid: false },
   under: { colour: 'text-kelp', solid: true },
 };
+
+/** In forced colours the drawing takes the system's: position, fill and word still carry the verdict. */
+export const FORCED = [
+  'forced-colors:[--ink:CanvasText]',
+  'forced-colors:[--ink2:CanvasText]',
+  'forced-colors:[--ink3:CanvasText]',
+  'forced-colors:[--kelp:CanvasText]',
+  'forced-colors:[--ochre:CanvasText]',
+  'forced-colors:[--madder:CanvasText]',
+  'forced-colors:[--pen:Highlight]',
+  'forced-colors:[--sheet:Canvas]',
+  'forced-colors:[--madderw:Canvas]',
+  'forced-colors:[--rule:GrayText]',
+  'forced-colors:[--rule2:GrayText]',
+  'forced-colors:[--edge:GrayText]',
+].join(' ');

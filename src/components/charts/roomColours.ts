@@ -26,7 +26,7 @@ function subscribe(changed: () => void): () => void {
 
 const read = () => {
   const style = getComputedStyle(document.documentElement);
-  if (window.matchMedia('(forced-colors: active)').matches) return 'CanvasText|CanvasText';
+  if (window.matchMedia('(forced-colors: active)').matches) return 'CanvasText|GrayText';
   return `${style.getPropertyValue('--ink').trim()}|${style.getPropertyValue('--ink3').trim()}`;
 };
 

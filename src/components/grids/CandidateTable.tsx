@@ -11,7 +11,7 @@ import { DETECTOR_MARKS, POLARISATION_MARKS } from '@/format/words';
 import type { CandidateView } from '@/schemas/sweep';
 import { candidateRemark, shownColumns, type CandidateFigures, type CandidateFrame } from './candidateColumns';
 import { GridHead, type GridHeadParams } from './GridHead';
-import { GRID_MODULES, gridOptions } from './gridLook';
+import { GRID_BOX, GRID_MODULES, gridOptions } from './gridLook';
 import { LevelFigure, MarginFigure } from './MarginFigure';
 
 interface Props extends CandidateFigures {
@@ -187,7 +187,7 @@ export default function CandidateTable({ candidates, frame, selectedRank, onSele
   };
 
   return (
-    <div ref={box} className="border-b border-rule">
+    <div ref={box} className={GRID_BOX}>
       <Figures.Provider value={figures}>
         <AgGridProvider modules={GRID_MODULES}>
           <AgGridReact<CandidateView>

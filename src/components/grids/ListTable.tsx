@@ -7,7 +7,7 @@ import type { CellFocusedEvent, CellKeyDownEvent, ColDef, RowClickedEvent } from
 import { useBoxSize } from '@/components/charts/useBoxSize';
 import { classes } from '@/components/ui/classes';
 import { GridHead } from './GridHead';
-import { GRID_MODULES, gridOptions } from './gridLook';
+import { GRID_BOX, GRID_MODULES, gridOptions } from './gridLook';
 import type { ListColumn, ListGridProps } from './listColumns';
 
 interface CellParams<Row> {
@@ -80,7 +80,7 @@ export default function ListTable<Row>({ label, columns, rows, rowId, href, onOp
   };
 
   return (
-    <div ref={box} className="border-b border-rule">
+    <div ref={box} className={GRID_BOX}>
       <AgGridProvider modules={GRID_MODULES}>
         <AgGridReact<Row>
           {...shared}

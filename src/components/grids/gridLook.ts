@@ -51,6 +51,14 @@ export const gridTheme = createTheme().withParams({
   wrapperBorderRadius: 0,
 });
 
+/** Round a grid: the last rule; in forced colours no cell borders, and a line around the selected row. */
+export const GRID_BOX = [
+  'border-b border-rule',
+  'forced-colors:[&_.ag-cell]:border-0',
+  'forced-colors:[&_.ag-row-selected]:outline',
+  'forced-colors:[&_.ag-row-selected]:-outline-offset-2',
+].join(' ');
+
 export const GRID_COLUMN: ColDef = {
   sortable: false,
   resizable: false,
