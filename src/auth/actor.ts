@@ -11,7 +11,8 @@ export interface Actor {
   organisationId: number;
   organisationName: string;
   /** A browser session or a personal token. */
-  via: { kind: 'session'; sessionId: number; assuranceLevel: number } | { kind: 'token'; scopes: readonly TokenScope[] };
+  via:
+    { kind: 'session'; sessionId: number; assuranceLevel: number } | { kind: 'token'; scopes: readonly TokenScope[] };
 }
 
 /** First statement of every use-case. Throws Unauthenticated without an actor, Forbidden without the right. */

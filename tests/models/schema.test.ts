@@ -52,9 +52,8 @@ const columns = () =>
 
 /** The column type a model asks for, in MariaDB's own spelling. */
 function typeOf(attribute: ModelAttributeColumnOptions): string {
-  const type = attribute.type as AbstractDataType & { options?: { length?: number } };
-  if (type instanceof DataTypes.JSON) return 'longtext';
-  const sql = type.toSql().toLowerCase();
+  if (attribute.type instanceof DataTypes.JSON) return 'longtext';
+  const sql = (attribute.type as AbstractDataType).toSql().toLowerCase();
   const plain: [RegExp, string][] = [
     [/^bigint unsigned$/, 'bigint(20) unsigned'],
     [/^integer unsigned$/, 'int(10) unsigned'],
