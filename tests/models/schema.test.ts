@@ -53,7 +53,7 @@ const columns = () =>
 /** The column type a model asks for, in MariaDB's own spelling. */
 function typeOf(attribute: ModelAttributeColumnOptions): string {
   if (attribute.type instanceof DataTypes.JSON) return 'longtext';
-  const sql = (attribute.type as AbstractDataType).toSql().toLowerCase();
+  const sql = (attribute.type as unknown as AbstractDataType).toSql().toLowerCase();
   const plain: [RegExp, string][] = [
     [/^bigint unsigned$/, 'bigint(20) unsigned'],
     [/^integer unsigned$/, 'int(10) unsigned'],
