@@ -38,10 +38,10 @@ export function SignInForm({ next }: { next: string }) {
 
   return (
     // Until this code has loaded, Enter posts: a password never stands in an address.
-    <form ref={form} method="post" action="/sign-in" onSubmit={signIn} noValidate className="flex flex-col gap-2">
+    <form ref={form} method="post" action="/sign-in" onSubmit={signIn} noValidate className="flex flex-col gap-3.5">
       <Field
         tall
-        label="E-mail"
+        label="Work e-mail"
         name="email"
         type="email"
         autoComplete="username"
@@ -67,7 +67,7 @@ export function SignInForm({ next }: { next: string }) {
         }
       />
       {problem && problem.errors.length === 0 && <ProblemMessage problem={problem} />}
-      <div className="mt-2 flex items-center gap-2">
+      <div className="mt-1 flex items-center gap-2">
         <Button kind="primary" size="tall" type="submit" keyName="Enter" busy={busy || leaving}>
           Sign in
         </Button>

@@ -13,6 +13,8 @@ import { EndSession, SignOut } from './EndSession';
 export const metadata: Metadata = { title: 'Where you are signed in' };
 
 const PAGE = 50;
+/** Columns a phone leaves out. */
+const DESK = 'max-md:hidden';
 
 interface Props {
   searchParams: Promise<{ after?: string | string[] }>;
@@ -52,9 +54,9 @@ export default async function AccountPage({ searchParams }: Props) {
           <TableHead>
             <HeadCell>Browser</HeadCell>
             <HeadCell>Address</HeadCell>
-            <HeadCell>Signed in</HeadCell>
+            <HeadCell className={DESK}>Signed in</HeadCell>
             <HeadCell>Last used</HeadCell>
-            <HeadCell>Ends at the latest</HeadCell>
+            <HeadCell className={DESK}>Ends at the latest</HeadCell>
             <HeadCell>
               <span className="sr-only">End it</span>
             </HeadCell>
@@ -66,9 +68,9 @@ export default async function AccountPage({ searchParams }: Props) {
                 <Cell>
                   <span className="t-figure">{session.address}</span>
                 </Cell>
-                <Cell>{at(session.startedAt)}</Cell>
+                <Cell className={DESK}>{at(session.startedAt)}</Cell>
                 <Cell>{at(session.lastSeenAt)}</Cell>
-                <Cell>{at(session.expiresAt)}</Cell>
+                <Cell className={DESK}>{at(session.expiresAt)}</Cell>
                 <Cell className="text-right">
                   {session.current ? 'this browser' : <EndSession id={session.id} name={agentName(session.agent)} />}
                 </Cell>
