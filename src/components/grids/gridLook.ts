@@ -55,8 +55,7 @@ export const gridTheme = createTheme().withParams({
 export const GRID_BOX = [
   'border-b border-rule',
   'forced-colors:[&_.ag-cell]:border-0',
-  'forced-colors:[&_.ag-row-selected]:outline',
-  'forced-colors:[&_.ag-row-selected]:-outline-offset-2',
+  'forced-colors:[&_.ag-row-selected]:outline-2',
 ].join(' ');
 
 export const GRID_COLUMN: ColDef = {
