@@ -104,3 +104,10 @@ export function stepsOf(values: Float64Array, stats: ColumnStats): Steps {
   }
   return { step, even, duplicates, ascending: n > 1 && stats.rising === n - 1 };
 }
+
+/** A running number: nearly every value is the one before it plus one. */
+export function countsRows(values: Float64Array): boolean {
+  let ones = 0;
+  for (let i = 1; i < values.length; i++) if (values[i]! - values[i - 1]! === 1) ones++;
+  return values.length >= 3 && ones >= 0.6 * (values.length - 1) && Number.isInteger(values[0]!);
+}

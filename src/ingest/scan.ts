@@ -77,7 +77,8 @@ export function* scanSteps(clean: CleanBytes, template: Template, shifts: number
   let rowFrom = contents.includes('text') ? new Uint32Array(room) : null;
   const match = rowMatcher(bytes, template, shifts);
   const matchText = textRowReader(template, shifts);
-  const plain = template.thousands === null;
+  // A comma can be decimal mark and delimiter only where quotes tell them apart.
+  const plain = template.thousands === null && template.decimal !== template.delimiter;
   const perStep = Math.max(1, Math.floor((ROWS_PER_STEP * 3) / columns.length));
 
   const blocks: Block[] = [];

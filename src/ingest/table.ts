@@ -1,7 +1,7 @@
 import { chooseAxis, headingIsFrequency, headingIsOther, headingIsPhase, headingIsTime } from './axis';
 import { mainBlockOf, resolveBlocks, splitAtLabels, splitAtRestarts, type Damage, type Piece } from './blocks';
 import { splitCells } from './cells';
-import { statsOf } from './columnStats';
+import { countsRows } from './columnStats';
 import { headingsOf, type Headings } from './headings';
 import { textNumberReader } from './numbers';
 import { entriesOf, type Entry } from './preamble';
@@ -10,7 +10,7 @@ import { hopRowsIn, timeRowsIn, type HopRows, type TimeRows } from './rowLayouts
 import { lineEndFrom, linesFrom, textOf, type Line } from './sample';
 import { columnOf, type Block, type Scan } from './scan';
 import { settingsOf, type Declared } from './settings';
-import { frequencyUnitIn } from './units';
+import { frequencyUnitIn, levelUnitIn } from './units';
 
 export interface Table {
   scan: Scan;
@@ -197,7 +197,7 @@ export function* tableSteps(prepared: Prepared, scan: Scan, settled: Settled | n
     .filter(({ column, heading, values }) => {
       if (column === axisColumn || template.contents[column] === 'sparse') return false;
       if (headingIsPhase(heading) || headingIsOther(heading) || headingIsTime(heading)) return false;
-      return !(labelled && heading === null && statsOf(values).rising >= 0.9 * (values.length - 1));
+      return levelUnitIn(heading ?? '') !== null || !countsRows(values);
     })
     .map(({ column }) => column);
   return {

@@ -46,7 +46,7 @@ interface Found {
 
 function stylesFor(delimiter: string, text: string): NumberStyle[] {
   const styles: NumberStyle[] = [{ decimal: '.', thousands: null }];
-  if (delimiter !== ',') styles.push({ decimal: ',', thousands: null });
+  if (delimiter !== ',' || /"[+-]?\d+,\d/.test(text)) styles.push({ decimal: ',', thousands: null });
   if (!GROUPED.test(text)) return styles;
   for (const { decimal } of [...styles]) {
     for (const thousands of [' ', "'", decimal === ',' ? '.' : ',']) {
