@@ -7,7 +7,7 @@ import type { LevelUnit, LineUnit } from '@/emc/kinds';
 
 /** U+2212: as wide as a figure, unlike the hyphen. */
 export const MINUS = '\u2212';
-/** U+202F: a thin gap that does not break the line (ISO 80000-1 groups digits by three with a small space). */
+/** U+202F: a thin gap that does not break the line (ISO 80000-1). It shows best in the mono, so counts go into a Figure. */
 export const THIN_GAP = '\u202f';
 /** What stands in a cell where there is no figure. */
 export const ABSENT = '\u2013';
