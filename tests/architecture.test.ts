@@ -7,7 +7,8 @@ const SRC = path.join(ROOT, 'src');
 
 /** Who may know whom: the arrow of DEVELOPERS.md. A room may always import from itself. */
 const ARROW: Readonly<Record<string, readonly string[]>> = {
-  app: ['components', 'http', 'services', 'auth', 'schemas', 'format'],
+  // a page turns what a service throws into its not-found page
+  app: ['components', 'http', 'services', 'auth', 'schemas', 'format', 'errors'],
   services: ['models', 'emc', 'ingest', 'auth', 'schemas', 'mail', 'pdf', 'config', 'errors'],
   http: ['services', 'auth', 'schemas', 'errors', 'config'],
   // Next asks for this one file beside app; it runs before every page

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { env } from '@/config/env';
 import { PERMISSIONS } from '@/auth/permissions';
 import type { Operation } from '@/schemas/operation';
 
@@ -37,7 +38,7 @@ function body(op: Operation): Json | undefined {
 }
 
 /** The OpenAPI 3.1 description of the API, made from the operations themselves. */
-export function openApiDocument(operations: readonly Operation[], origin: string): Json {
+export function openApiDocument(operations: readonly Operation[]): Json {
   const paths: Record<string, Json> = {};
   for (const op of operations) {
     const reply = op.download
@@ -59,7 +60,7 @@ export function openApiDocument(operations: readonly Operation[], origin: string
   return {
     openapi: '3.1.0',
     info: { title: 'Stillfield', version: '1', description: 'The working record of an EMC pre-compliance lab.' },
-    servers: [{ url: origin }],
+    servers: [{ url: env().APP_ORIGIN }],
     paths,
     components: {
       securitySchemes: {

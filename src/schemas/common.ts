@@ -27,3 +27,10 @@ export function pageOf<T extends z.ZodType>(item: T) {
 }
 export const person = z.strictObject({ id: publicId, name: z.string() });
 export const organisationRef = z.strictObject({ id: publicId, name: z.string() });
+
+export type Detector = z.infer<typeof detector>;
+export type LevelUnit = z.infer<typeof levelUnit>;
+export type Port = z.infer<typeof port>;
+export type Purpose = z.infer<typeof purpose>;
+export type MainsLine = z.infer<typeof mainsLine>;
+export type Polarisation = z.infer<typeof polarisation>;

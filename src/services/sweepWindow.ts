@@ -7,7 +7,7 @@ import { readLayers } from '@/models/layerStore';
 import { readPieces } from '@/models/traceStore';
 import { unitOfWork } from '@/models/unitOfWork';
 import type { windowQuery, WindowView } from '@/schemas/sweep';
-import { contextOf, findRun } from './runs';
+import { contextOf, findRun, type Run } from './runs';
 import { columnsView } from './sweepViews';
 
 /**
@@ -23,11 +23,7 @@ export async function readWindow(
   if (!(toHz > fromHz)) throw new Invalid([{ pointer: '/query/toHz', message: 'lies above fromHz' }]);
   return unitOfWork(async () => {
     const run = await findRun(actor, publicId);
-    if (fromHz <= run.firstHz && toHz >= run.lastHz && columns === LAYER_COLUMNS) {
-      const layers = await readLayers(run.evaluation.id);
-      const traces = layers.map(({ index, layer }) => columnsView(index, layer));
-      return { fromHz: run.firstHz, toHz: run.lastHz, columns, traces };
-    }
+    if (fromHz <= run.firstHz && toHz >= run.lastHz && columns === LAYER_COLUMNS) return overviewOf(run);
     const { heads, judged } = await contextOf(run);
     const pieces = await readPieces(run.id, { fromHz, toHz });
     const traces = heads.map((head) => {
@@ -38,4 +34,16 @@ export async function readWindow(
     });
     return { fromHz, toHz, columns, traces };
   });
+}
+
+/** The whole run at the width of its kept layer, which no request has to compute. */
+export async function readOverview(actor: Actor | null, publicId: string): Promise<WindowView> {
+  authorise(actor, 'sweep.read');
+  return unitOfWork(async () => overviewOf(await findRun(actor, publicId)));
+}
+
+async function overviewOf(run: Run): Promise<WindowView> {
+  const layers = await readLayers(run.evaluation.id);
+  const traces = layers.map(({ index, layer }) => columnsView(index, layer));
+  return { fromHz: run.firstHz, toHz: run.lastHz, columns: LAYER_COLUMNS, traces };
 }

@@ -10,7 +10,12 @@ export function SignOutButton() {
     if (busy) return;
     setBusy(true);
     const answer = await fetch('/api/session', { method: 'DELETE' }).catch(() => null);
-    if (answer && (answer.ok || answer.status === 401)) return window.location.assign('/sign-in');
+    if (answer && (answer.ok || answer.status === 401)) {
+      // A full load on purpose; the router would keep what was signed in.
+      // eslint-disable-next-line @next/next/no-location-assign-relative-destination
+      window.location.assign('/sign-in');
+      return;
+    }
     setBusy(false);
     setFailed(true);
   }

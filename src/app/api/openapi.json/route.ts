@@ -1,7 +1,6 @@
-import { env } from '@/config/env';
 import { openApiDocument } from '@/http/openapi';
 import { OPERATIONS } from '@/schemas/operations';
 
 export function GET(): Response {
-  return Response.json(openApiDocument(OPERATIONS, env().APP_ORIGIN));
+  return Response.json(openApiDocument(OPERATIONS));
 }

@@ -10,7 +10,7 @@ import {
   unitLabel,
 } from '@/format/quantities';
 import { formatDay } from '@/format/dates';
-import { LEVEL_UNITS, type LevelUnit } from '@/emc/kinds';
+import { levelUnit } from '@/schemas/common';
 import { VERDICT_WORDS } from '@/format/words';
 
 type Term = WorkingView['terms'][number];
@@ -113,5 +113,6 @@ function Line({ sign = '', figure, rule, away, tone, source, warning, children }
 }
 
 function labelOf(unit: string): string {
-  return (LEVEL_UNITS as readonly string[]).includes(unit) ? unitLabel(unit as LevelUnit) : unit;
+  const known = levelUnit.safeParse(unit);
+  return known.success ? unitLabel(known.data) : unit;
 }

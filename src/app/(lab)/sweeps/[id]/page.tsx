@@ -1,11 +1,10 @@
 import type { Metadata } from 'next';
 import { found } from '@/app/found';
 import { requireActor } from '@/app/requireActor';
-import { LAYER_COLUMNS } from '@/emc/columns';
 import { labZone } from '@/services/lab';
 import { historyOf } from '@/services/audit';
 import { listCandidates, readSweep } from '@/services/sweeps';
-import { readWindow } from '@/services/sweepWindow';
+import { readOverview } from '@/services/sweepWindow';
 import { SweepSheet } from './SweepSheet';
 
 interface Props {
@@ -23,9 +22,8 @@ export default async function SweepPage({ params }: Props) {
   const actor = await requireActor();
   const { id } = await params;
   const sweep = await found(readSweep(actor, id));
-  const whole = { fromHz: sweep.firstHz, toHz: sweep.lastHz, columns: LAYER_COLUMNS };
   const [window, candidates, zone] = await Promise.all([
-    readWindow(actor, id, whole),
+    readOverview(actor, id),
     listCandidates(actor, id, { limit: FIRST_CANDIDATES }),
     labZone(),
   ]);

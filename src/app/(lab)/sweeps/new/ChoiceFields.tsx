@@ -1,6 +1,6 @@
 'use client';
 
-import { MAINS_LINES, type MainsLine, type Polarisation, type Port, type Purpose } from '@/emc/kinds';
+import { mainsLine, type MainsLine, type Polarisation, type Port, type Purpose } from '@/schemas/common';
 import { CheckField } from '@/components/ui/CheckField';
 import { Field, SelectField } from '@/components/ui/Field';
 import { Switch } from '@/components/ui/Switch';
@@ -8,7 +8,7 @@ import { MAINS_LINE_WORDS, PORT_WORDS } from '@/format/words';
 import type { SweepFileView } from '@/schemas/sweepFile';
 import { proposedCorrected, proposedLimitSet, proposedPath, rangeOf, type Draft } from './draft';
 import { TraceFields } from './TraceFields';
-import type { UploadLists } from './UploadSheet';
+import type { UploadLists } from './uploadLists';
 
 interface Props {
   file: SweepFileView;
@@ -166,7 +166,7 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
           onChange={(event) => set({ line: event.target.value as MainsLine })}
         >
           {draft.line === '' && <option value="">say which conductor</option>}
-          {MAINS_LINES.map((line) => (
+          {mainsLine.options.map((line) => (
             <option key={line} value={line}>
               {MAINS_LINE_WORDS[line]}
             </option>

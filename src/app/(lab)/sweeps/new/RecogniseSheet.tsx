@@ -21,7 +21,7 @@ import { FilePreview } from './FilePreview';
 import { LookAtFirst } from './LookAtFirst';
 import { Recognised } from './Recognised';
 import { typedNumber } from './typedNumber';
-import type { UploadLists } from './UploadSheet';
+import type { UploadLists } from './uploadLists';
 import { usePreview } from './usePreview';
 
 interface Props extends UploadLists {

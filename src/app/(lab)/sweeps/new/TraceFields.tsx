@@ -1,6 +1,6 @@
 'use client';
 
-import { DETECTORS, LEVEL_UNITS, type Detector, type LevelUnit } from '@/emc/kinds';
+import { detector as detectors, levelUnit, type Detector, type LevelUnit } from '@/schemas/common';
 import { CheckField } from '@/components/ui/CheckField';
 import { Field, SelectField } from '@/components/ui/Field';
 import { formatFigure, unitLabel } from '@/format/quantities';
@@ -70,7 +70,7 @@ export function TraceFields({ file, traces, errors, onChange }: Props) {
                   onChange={(event) => onChange(trace.index, { unit: event.target.value as LevelUnit })}
                 >
                   {trace.unit === '' && <option value="">say which</option>}
-                  {LEVEL_UNITS.map((unit) => (
+                  {levelUnit.options.map((unit) => (
                     <option key={unit} value={unit}>
                       {UNIT_WORDS[unit] ?? unitLabel(unit)}
                     </option>
@@ -87,7 +87,7 @@ export function TraceFields({ file, traces, errors, onChange }: Props) {
                   onChange={(event) => onChange(trace.index, { detector: event.target.value as Detector })}
                 >
                   {trace.detector === '' && <option value="">say which</option>}
-                  {DETECTORS.map((detector) => (
+                  {detectors.options.map((detector) => (
                     <option key={detector} value={detector}>
                       {detector === 'average'
                         ? 'average (linear, CISPR)'

@@ -2,18 +2,11 @@
 
 import { useRouter } from 'next/navigation';
 import { useState } from 'react';
-import type { LimitSetView, PathView } from '@/schemas/bench';
-import type { SampleView } from '@/schemas/job';
 import type { SweepFileView } from '@/schemas/sweepFile';
 import { DropSheet } from './DropSheet';
 import { RecogniseSheet } from './RecogniseSheet';
 import { RefusedSheet } from './RefusedSheet';
-
-export interface UploadLists {
-  samples: readonly SampleView[];
-  paths: readonly PathView[];
-  limitSets: readonly LimitSetView[];
-}
+import type { UploadLists } from './uploadLists';
 
 interface Props extends UploadLists {
   held: SweepFileView | null;

@@ -1,4 +1,4 @@
-import type { Detector, LevelUnit, MainsLine, Polarisation, Port, Purpose } from '@/emc/kinds';
+import type { Detector, LevelUnit, MainsLine, Polarisation, Port, Purpose } from '@/schemas/common';
 import type { LimitSetView, PathView } from '@/schemas/bench';
 import type { SampleView } from '@/schemas/job';
 import type { SweepChoice } from '@/schemas/sweep';
