@@ -1,0 +1,58 @@
+import { ButtonLink } from '@/components/ui/Button';
+import { EmptyLine } from '@/components/ui/EmptyLine';
+import { SectionHeading } from '@/components/ui/SectionHeading';
+import { StateTag } from '@/components/ui/StateTag';
+import { formatCount } from '@/format/quantities';
+import { RunTable } from '../RunTable';
+import type { State } from '../stateGrid';
+import type { Run } from '../worstRun';
+import { StateActs } from './StateActs';
+
+interface Props {
+  state: State;
+  runs: readonly Run[];
+  zone: string;
+  upload: boolean;
+  change: boolean;
+}
+
+/** One modification state: what it is, its runs, and what the lab may do with it. */
+export function StateRuns({ state, runs, zone, upload, change }: Props) {
+  const counting =
+    state.planned && state.runs === 0
+      ? 'planned, not fitted yet'
+      : `${formatCount(state.runs)} ${state.runs === 1 ? 'run' : 'runs'}`;
+  return (
+    <section aria-label={`State ${state.label}`} id={state.label}>
+      <SectionHeading className="mt-6" remark={counting}>
+        <StateTag label={state.label} planned={state.planned} className="mr-2 align-[2px]" />
+        {state.description}
+      </SectionHeading>
+      {runs.length > 0 ? (
+        <RunTable caption={`Runs of ${state.label}`} runs={runs} zone={zone} />
+      ) : (
+        <EmptyLine
+          lead={
+            state.runs > 0
+              ? 'Its runs are older than this list.'
+              : state.planned
+                ? 'Nothing is measured before it is fitted.'
+                : upload
+                  ? 'Drop its sweep files to measure it.'
+                  : 'Not measured yet.'
+          }
+        />
+      )}
+      {(upload || change) && (
+        <div className="mt-2 flex flex-wrap items-start gap-x-2">
+          {upload && !state.planned && (
+            <ButtonLink prefetch={false} kind="quiet" size="table" href={`/sweeps/new?state=${state.id}`}>
+              Upload to {state.label}
+            </ButtonLink>
+          )}
+          {change && <StateActs state={state} />}
+        </div>
+      )}
+    </section>
+  );
+}
