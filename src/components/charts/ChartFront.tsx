@@ -12,10 +12,10 @@ import { combTicks } from './combTicks';
 import { frequencyTicks } from './frequencyTicks';
 import { floorPath } from './floorPath';
 import { limitLabels, type LimitLabel } from './limitLabels';
-import { drawnLimits, labelY, LimitLayer, zoneWords } from './LimitLayer';
+import { drawnLimits, labelY, LimitLayer, zoneWords, type ZoneWord } from './LimitLayer';
 import type { ChartMode } from './marginSeries';
 import { MarkLayer } from './MarkLayer';
-import { placeLabels, type Box } from './placeLabels';
+import { markBox, overlaps, placeLabels, type Box } from './placeLabels';
 import { PointTip } from './PointTip';
 import { FrequencyNumbers, Ruler } from './Ruler';
 import { NARROW_PX, plotScale, type PlotScale, type Frame, type Range, type Span } from './scale';
@@ -45,8 +45,12 @@ export const ChartFront = memo(function ChartFront(props: ChartFrontProps) {
   const { labels: frequencyLabels } = frequencyTicks(span, scale.right - scale.left);
   const narrow = preview || frame.width < NARROW_PX;
   const { envelope, bands } = drawnLimits(subject, span, mode);
-  const words = zoneWords({ envelope, bands, scale, narrow });
   const marks = candidateMarks(candidates, span, scale, mode, selectedRank);
+  // A zone is known by its place: where squares need the room, its word goes.
+  const words = zoneWords({ envelope, bands, scale, narrow }).filter(({ x, y, widthPx }) => {
+    const box = textBox(x - widthPx, y, widthPx);
+    return !marks.some((mark) => overlaps(box, markBox(mark)));
+  });
   const values = valueLabels(props, scale, marks, words);
   const obstacles: Box[] = [
     ...values.map((label) => textBox(label.x, labelY(scale, mode, label), label.widthPx)),
@@ -78,6 +82,7 @@ export const ChartFront = memo(function ChartFront(props: ChartFrontProps) {
         mode={mode}
         hatchId={hatchId}
         labels={values}
+        words={words}
         narrow={narrow}
       />
       <path
@@ -141,7 +146,7 @@ function valueLabels(
   { subject, mode, view }: ChartFrontProps,
   scale: PlotScale,
   marks: ReturnType<typeof candidateMarks>,
-  words: ReturnType<typeof zoneWords>,
+  words: ZoneWord[],
 ): LimitLabel[] {
   const inconclusive = words.find(({ word }) => word === 'inconclusive');
   const named = subject.lines.length > 1;

@@ -15,12 +15,13 @@ interface Props {
   mode: ChartMode;
   hatchId: string;
   labels: LimitLabel[];
+  words: ZoneWord[];
   /** Smaller words, and no word for the guard band: its hatch says it. */
   narrow: boolean;
 }
 
 /** The guard band ±U, the limit lines with their values riding on them, and the words of the three zones. */
-export function LimitLayer({ subject, span, scale, mode, hatchId, labels, narrow }: Props) {
+export function LimitLayer({ subject, span, scale, mode, hatchId, labels, words, narrow }: Props) {
   const { envelope, lines, bands } = drawnLimits(subject, span, mode);
   const at = ({ hz, value }: PathPoint) => `${scale.x(hz)} ${clampY(scale, scale.y(value))}`;
   const path = (points: PathPoint[]) => `M${points.map(at).join('L')}`;
@@ -51,7 +52,7 @@ export function LimitLayer({ subject, span, scale, mode, hatchId, labels, narrow
       />
       <path d={limits} className="stroke-ink" fill="none" strokeWidth="2" strokeLinejoin="miter" />
       <path d={steps} className="stroke-ink" fill="none" strokeWidth="2" />
-      <ZoneWords envelope={envelope} bands={bands} scale={scale} narrow={narrow} />
+      <ZoneWords words={words} narrow={narrow} />
       {labels.map((label) => (
         <text
           key={label.key}
@@ -104,6 +105,8 @@ interface ZoneWordsProps {
   narrow: boolean;
 }
 
+export type ZoneWord = ReturnType<typeof zoneWords>[number];
+
 /** The words at the right edge: what a square means above, across and under the line there. */
 export function zoneWords({ envelope, bands, scale, narrow }: ZoneWordsProps) {
   const last = envelope.at(-1)?.at(-1);
@@ -130,14 +133,14 @@ export function zoneWords({ envelope, bands, scale, narrow }: ZoneWordsProps) {
     .map((zone) => ({ ...zone, widthPx: wordWidthPx(zone.word, 13) + figureWidthPx(zone.figure, 13) + 4 }));
 }
 
-function ZoneWords(props: ZoneWordsProps) {
-  return zoneWords(props).map((zone) => (
+function ZoneWords({ words, narrow }: { words: ZoneWord[]; narrow: boolean }) {
+  return words.map((zone) => (
     <text
       key={zone.word}
       x={zone.x}
       y={zone.y}
       textAnchor="end"
-      fontSize={props.narrow ? 12.5 : 13}
+      fontSize={narrow ? 12.5 : 13}
       strokeWidth="4"
       className={zone.colour}
     >

@@ -52,10 +52,16 @@ export function limitLabels(lines: readonly LimitLineView[], named: boolean, pla
     const lead = labels.length === 0 ? 'limit ' : '';
     const left = x(stretch.fromHz) + INDENT_PX;
     const right = Math.min(x(stretch.toHz), place.rightPx);
-    for (const text of [`${lead}${values} ${unit}`, `${lead}${values}`, values]) {
-      const widthPx = figureWidthPx(text, sizePx);
-      const at = freeStart(left, right, widthPx, place.taken);
-      if (at === null) continue;
+    const wordings = [`${lead}${values} ${unit}`, `${lead}${values}`, values].map((text) => ({
+      text,
+      widthPx: figureWidthPx(text, sizePx),
+    }));
+    // A shorter text that stands clear is better than a longer one under a mark.
+    for (const taken of [place.taken, []]) {
+      const found = wordings.find(({ widthPx }) => freeStart(left, right, widthPx, taken) !== null);
+      if (!found) continue;
+      const { text, widthPx } = found;
+      const at = freeStart(left, right, widthPx, taken)!;
       const under = { fromHz: place.hz(at), toHz: Math.min(place.hz(at + widthPx), stretch.toHz) };
       const value = Math.max(
         ...drawn.flatMap(({ points }) => cutPolyline(points, under.fromHz, under.toHz).map((point) => point.value)),
@@ -67,12 +73,10 @@ export function limitLabels(lines: readonly LimitLineView[], named: boolean, pla
   return labels;
 }
 
-/** Where a text begins: at the left, or behind the marks in its way; at the left all the same when no place is free. */
+/** Where a text begins: at the left, or behind the marks in its way; null when no place is free. */
 function freeStart(left: number, right: number, width: number, taken: LabelPlace['taken']): number | null {
-  if (left + width > right) return null;
   const starts = [left, ...taken.map(([, end]) => end + CLEAR_PX)].filter((at) => at >= left && at + width <= right);
-  const free = starts.sort((a, b) => a - b).find((at) => taken.every(([from, to]) => at + width <= from || at >= to));
-  return free ?? left;
+  return starts.sort((a, b) => a - b).find((at) => taken.every(([from, to]) => at + width <= from || at >= to)) ?? null;
 }
 
 function endsOf(points: PathPoint[]): string {
