@@ -15,6 +15,9 @@ const manager = ['manager'] as const;
 export const PERMISSIONS = {
   'session.end': { roles: everyone, token: null },
   'session.list': { roles: everyone, token: null },
+  'user.create': { roles: manager, token: null },
+  'user.change': { roles: manager, token: null },
+  'organisation.enter': { roles: manager, token: null },
   'organisation.list': { roles: lab, token: 'read' },
   'product.list': { roles: everyone, token: 'read' },
   'product.read': { roles: everyone, token: 'read' },

@@ -4,6 +4,7 @@ import { mayRole } from '@/auth/permissions';
 import { env } from '@/config/env';
 import { DomainError, Forbidden, Invalid, Unauthenticated, type Issue } from '@/errors';
 import type { Operation } from '@/schemas/operation';
+import { TokenRefused } from '@/services/apiTokens';
 import { once } from '@/services/idempotency';
 import { actorOf } from '@/services/sessions';
 import { issuesOf, problemOf, problemResponse } from './problem';
@@ -156,7 +157,8 @@ const DATABASE_GONE = /^SequelizeConnection|^SequelizeHostNot|^SequelizeAccessDe
 function refuse(error: unknown, op: Operation, actor: Actor | null, address: string): Response {
   if (error instanceof DomainError) {
     if (error.kind === 'unauthenticated' || error.kind === 'forbidden' || error.kind === 'throttled') {
-      const event = error.kind === 'throttled' ? 'throttled' : 'denied';
+      const refused = error instanceof TokenRefused ? 'token-refused' : 'denied';
+      const event = error.kind === 'throttled' ? 'throttled' : refused;
       securityLog({ event, userId: actor?.publicId ?? null, operation: op.id, address, detail: error.kind });
     }
     return problemOf(error);

@@ -5,8 +5,13 @@ import { env } from '@/config/env';
 import { associate } from './associations';
 import { defineModels } from './define';
 
+type Scope = AsyncLocalStorage<Map<string, unknown>>;
+
+/** One pool and one scope for the whole process: Next bundles pages and routes apart, each with its own copy of this file. */
+const holder = globalThis as typeof globalThis & { stillfieldDatabase?: Sequelize; stillfieldScope?: Scope };
+
 /** What one unit of work carries along: its transaction (for Sequelize) and what is written just before it commits. */
-const scope = new AsyncLocalStorage<Map<string, unknown>>();
+const scope: Scope = (holder.stillfieldScope ??= new AsyncLocalStorage());
 
 /** Lets every query inside a unit of work find its transaction without passing it by hand. */
 const namespace = {
@@ -16,7 +21,6 @@ const namespace = {
   bind: <F>(work: F): F => work,
 };
 
-const holder = globalThis as typeof globalThis & { stillfieldDatabase?: Sequelize };
 let defined = false;
 
 /** The one pool of this process; the models of this bundle are ready to use once it has been called. */

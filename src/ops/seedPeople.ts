@@ -1,9 +1,8 @@
 import type { DemoOrganisation, DemoUser } from '@fixtures/demo/types';
 import type { Actor } from '@/auth/actor';
-import { Organisation } from '@/models/organisation';
-import { newPublicId } from '@/models/publicId';
-import { Setting } from '@/models/setting';
+import type { Organisation } from '@/models/organisation';
 import { User } from '@/models/user';
+import { enterClient, enterLab } from '@/services/organisations';
 import { createUser } from '@/services/users';
 
 export interface SeededPeople {
@@ -18,15 +17,10 @@ export async function seedPeople(
   at: Date,
 ): Promise<SeededPeople> {
   const organisations = new Map<string, Organisation>();
-  for (const { key, kind, name } of demoOrganisations) {
-    const shortName = name.split(' ').slice(0, 2).join(' ');
-    organisations.set(
-      key,
-      await Organisation.create({ publicId: newPublicId(), kind, name, shortName, createdAt: at }),
-    );
+  for (const { key, kind, name, timeZone: zone } of demoOrganisations) {
+    const entered = kind === 'lab' ? enterLab({ name, zone, jobPrefix: 'HL' }, at) : enterClient(null, name, at);
+    organisations.set(key, await entered);
   }
-  const lab = demoOrganisations.find(({ kind }) => kind === 'lab')!;
-  await Setting.create({ name: 'lab', value: { name: lab.name, zone: lab.timeZone, jobPrefix: 'HL' } });
   const actors = new Map<string, Actor>();
   for (const user of demoUsers) {
     const organisation = organisations.get(user.organisation)!;

@@ -1,6 +1,11 @@
 import { authorise, type Actor } from '@/auth/actor';
+import { Conflict } from '@/errors';
 import { Organisation } from '@/models/organisation';
+import { newPublicId } from '@/models/publicId';
+import { Setting } from '@/models/setting';
 import { unitOfWork } from '@/models/unitOfWork';
+import { recordChange } from './audit';
+import type { LabSettings } from './lab';
 import { olderThan, pageFrom, type PageRequest } from './paging';
 
 export async function listOrganisations(actor: Actor | null, page: PageRequest) {
@@ -13,4 +18,35 @@ export async function listOrganisations(actor: Actor | null, page: PageRequest) 
     });
     return pageFrom(rows, page, (row) => ({ id: row.publicId, name: row.name, kind: row.kind }));
   });
+}
+
+/** Enters a client organisation. Null is whoever runs commands on the lab's server. */
+export async function enterClient(actor: Actor | null, name: string, at = new Date()): Promise<Organisation> {
+  if (actor) authorise(actor, 'organisation.enter');
+  return unitOfWork(() => write(actor, 'client', name, at));
+}
+
+/** Sets up the one lab of this database with its settings. Conflict when there is one already. */
+export async function enterLab(settings: LabSettings, at = new Date()): Promise<Organisation> {
+  return unitOfWork(async () => {
+    const lab = await Organisation.findOne({ where: { kind: 'lab' } });
+    if (lab) throw new Conflict(`This database already belongs to ${lab.name}.`);
+    await Setting.create({ name: 'lab', value: settings });
+    return write(null, 'lab', settings.name, at);
+  });
+}
+
+async function write(actor: Actor | null, kind: 'lab' | 'client', name: string, at: Date): Promise<Organisation> {
+  const shortName = name.split(' ').slice(0, 2).join(' ');
+  const row = await Organisation.create({ publicId: newPublicId(), kind, name, shortName, createdAt: at });
+  recordChange(actor, {
+    scope: 'lab',
+    action: `${kind} ${name} entered`,
+    subjectType: 'organisation',
+    subjectId: row.publicId,
+    before: null,
+    after: { kind, name },
+    at,
+  });
+  return row;
 }

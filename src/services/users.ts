@@ -1,8 +1,8 @@
 import { literal, UniqueConstraintError, type WhereOptions } from 'sequelize';
-import type { Actor } from '@/auth/actor';
+import { authorise, type Actor } from '@/auth/actor';
 import { hashPassword, passwordIssues } from '@/auth/password';
 import type { Role } from '@/auth/permissions';
-import { Conflict, Forbidden, Invalid, type Issue, NotFound } from '@/errors';
+import { Conflict, Invalid, type Issue, NotFound } from '@/errors';
 import { Organisation } from '@/models/organisation';
 import { newPublicId } from '@/models/publicId';
 import { Session } from '@/models/session';
@@ -25,8 +25,8 @@ export interface NewUser {
  * Managers only, at a browser. Null is whoever runs commands on the lab's server or fills the demo lab; no operation
  * passes null on, since `handle` turns a stranger away first.
  */
-function mayManagePeople(actor: Actor | null): void {
-  if (actor && (actor.role !== 'manager' || actor.via.kind !== 'session')) throw new Forbidden();
+function mayManagePeople(actor: Actor | null, permission: 'user.create' | 'user.change'): void {
+  if (actor) authorise(actor, permission);
 }
 
 /** A person by public id or e-mail; call inside a unit of work. @throws {NotFound} */
@@ -59,7 +59,7 @@ function entryIssues(entry: NewUser, organisation: Organisation | null): Issue[]
  * @param at when it happened, for records that are entered later
  */
 export async function createUser(actor: Actor | null, entry: NewUser, at = new Date()): Promise<{ publicId: string }> {
-  mayManagePeople(actor);
+  mayManagePeople(actor, 'user.create');
   const user = { ...entry, name: entry.name.trim(), email: entry.email.trim().toLowerCase() };
   const find = () => Organisation.findOne({ where: { publicId: user.organisationId } });
   const issues = entryIssues(user, await unitOfWork(find));
@@ -95,7 +95,7 @@ export async function createUser(actor: Actor | null, entry: NewUser, at = new D
 
 /** Gives a person a new password and ends all their sessions; what strangers failed at their account is forgotten. */
 export async function setPassword(actor: Actor | null, publicIdOrEmail: string, password: string): Promise<void> {
-  mayManagePeople(actor);
+  mayManagePeople(actor, 'user.change');
   const { id, email, publicId } = await unitOfWork(() => findUser(publicIdOrEmail));
   const issues = passwordIssues(password, email);
   if (issues.length) throw new Invalid(issues);
@@ -117,7 +117,7 @@ export async function setPassword(actor: Actor | null, publicIdOrEmail: string, 
 
 /** Shuts a person out at once: their sessions end and their tokens open nothing. The last manager cannot be. */
 export async function disableUser(actor: Actor | null, publicIdOrEmail: string): Promise<void> {
-  mayManagePeople(actor);
+  mayManagePeople(actor, 'user.change');
   await unitOfWork(async () => {
     const user = await findUser(publicIdOrEmail);
     // Locked in one order, so that two managers cannot disable each other at the same moment.
