@@ -23,7 +23,11 @@ run(async () => {
   const [command, ...args] = process.argv.slice(2);
   const known = fs.existsSync(DIRECTORY) ? fs.readdirSync(DIRECTORY).filter((name) => name.endsWith('.ts')) : [];
   if (!command || !known.includes(fileOf(command))) {
-    const list = known.map((name) => name.replace(/\.ts$/, '')).sort().join(', ') || 'none yet';
+    const list =
+      known
+        .map((name) => name.replace(/\.ts$/, ''))
+        .sort()
+        .join(', ') || 'none yet';
     throw new Refusal(`Usage: npm run stillfield -- <command>; the commands are: ${list}`);
   }
   checkNode();
