@@ -1,10 +1,10 @@
 'use client';
 
 import { memo, useId, useMemo, useSyncExternalStore } from 'react';
-import type { CandidateView, WindowView } from '@/schemas/sweep';
+import type { CandidateView } from '@/schemas/sweep';
 import type { LineUnit } from '@/emc/kinds';
 import { candidateMarks, candidateValue } from './candidateMarks';
-import { candidateTip, traceTip, tracePoint, type Cursor } from './chartCursor';
+import { candidateTip, traceTip, tracePoint, windowAt, type Cursor, type Layers } from './chartCursor';
 import type { Store } from './chartStore';
 import type { ChartSubject } from './chartSubject';
 import { CombLayer } from './CombLayer';
@@ -26,7 +26,7 @@ export interface ChartFrontProps {
   range: Range;
   view: Store<Span>;
   cursor: Store<Cursor>;
-  window: WindowView | null;
+  layers: Layers;
   mode: ChartMode;
   unit: LineUnit;
   candidates: readonly CandidateView[];
@@ -67,8 +67,10 @@ export const ChartFront = memo(function ChartFront(props: ChartFrontProps) {
           candidates.map((c) => c.frequencyHz),
           subject.stepHz,
         );
+  const { overview, detail } = props.layers;
+  const finest = detail && detail.fromHz <= span.fromHz && detail.toHz >= span.toHz ? detail : overview;
   const floors = candidates.flatMap((candidate) => {
-    const path = candidate.kind === 'floor' ? floorPath(candidate, props.window, span, scale, mode) : '';
+    const path = candidate.kind === 'floor' ? floorPath(candidate, finest, span, scale, mode) : '';
     return path ? [{ rank: candidate.rank, path, verdict: candidate.verdict }] : [];
   });
   const tabRank = marks.some(({ id }) => id === selectedRank) ? selectedRank : Math.min(...marks.map(({ id }) => id));
@@ -110,7 +112,7 @@ export const ChartFront = memo(function ChartFront(props: ChartFrontProps) {
 
 /** Follows the pointer by itself: a hover redraws this layer alone. */
 function CursorLayer(props: ChartFrontProps & { scale: ReturnType<typeof plotScale>; span: Span }) {
-  const { cursor, candidates, selectedRank, window, mode, subject, unit, scale, span, frame } = props;
+  const { cursor, candidates, selectedRank, layers, mode, subject, unit, scale, span, frame } = props;
   const over = useSyncExternalStore(cursor.subscribe, cursor.get, cursor.get);
   const rank = over?.kind === 'candidate' ? over.rank : over ? null : selectedRank;
   const candidate = candidates.find((one) => one.rank === rank);
@@ -121,6 +123,7 @@ function CursorLayer(props: ChartFrontProps & { scale: ReturnType<typeof plotSca
     const y = scale.y(candidateValue(candidate, mode));
     return <PointTip x={scale.x(candidate.frequencyHz)} y={y + 1} text={text} scale={scale} />;
   }
+  const window = over?.kind === 'trace' ? windowAt(layers, over.hz) : null;
   if (over?.kind !== 'trace' || !window) return null;
   const point = tracePoint(window, over.traceIndex, over.hz, mode);
   if (!point || point.hz < span.fromHz || point.hz > span.toHz) return null;

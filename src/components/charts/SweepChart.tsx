@@ -1,12 +1,13 @@
 'use client';
 
 import dynamic from 'next/dynamic';
-import { useCallback, useEffect, useEffectEvent, useId, useMemo, useRef, useState, type ReactNode } from 'react';
+import { useCallback, useEffect, useId, useMemo, useRef, useState, type ReactNode } from 'react';
 import type { CandidateView, WindowView } from '@/schemas/sweep';
-import { candidateMarks, candidateValue, neighbour } from './candidateMarks';
+import { candidateMarks, candidateValue } from './candidateMarks';
 import { ChartBack } from './ChartBack';
-import { nearestTrace, spokenPoint, stepAlong, tracePoint, traceTip, type Cursor } from './chartCursor';
+import { nearestTrace, spokenPoint, traceTip, windowAt, type Cursor } from './chartCursor';
 import { ChartFront } from './ChartFront';
+import { pressChartKey } from './chartKeys';
 import { createStore } from './chartStore';
 import { holesOf, leadingTrace, type ChartSubject } from './chartSubject';
 import { FORCED } from './chartText';
@@ -22,17 +23,13 @@ import {
   PREVIEW_INSETS,
   SHEET_INSETS,
   wholeSpan,
-  type Span,
 } from './scale';
 import { useBoxSize } from './useBoxSize';
 import { useChartGestures } from './useChartGestures';
-import { bringIn, padded, sameSpan, zoomAt } from './viewport';
+import { useChartView } from './useChartView';
+import { bringIn, sameSpan } from './viewport';
 
 const TraceCanvas = dynamic(() => import('./TraceCanvas'), { ssr: false });
-
-const ASK_AFTER_MS = 160;
-const KEY_ZOOM = 1.6;
-const POINTS_PER_STEP = 10;
 
 export interface SweepChartProps {
   /** Key the chart by run, so that another run starts at its whole range. */
@@ -78,13 +75,15 @@ export function SweepChart(props: SweepChartProps) {
   }, [size, preview]);
 
   const whole = useMemo(() => wholeSpan(subject.firstHz, subject.lastHz), [subject.firstHz, subject.lastHz]);
-  const [view] = useState(() => createStore<Span>(whole));
+  const { view, changeView } = useChartView(whole, frame, onWindow);
   const [cursor] = useState(() => createStore<Cursor>(null));
   const [spoken, setSpoken] = useState('');
 
   const [overview, setOverview] = useState(shown);
   if (shown && shown !== overview && (!overview || sameSpan(shown, overview))) setOverview(shown);
   const detail = shown && overview && !sameSpan(shown, overview) ? shown : null;
+
+  const layers = useMemo(() => ({ overview, detail }), [overview, detail]);
 
   const range = useMemo(() => {
     const drawn = seriesExtremes(overview, mode);
@@ -112,50 +111,6 @@ export function SweepChart(props: SweepChartProps) {
   const unit = subject.lines[0]?.unit ?? 'dBuV';
   const scale = useCallback(() => plotScale(frame, view.get(), range), [frame, view, range]);
 
-  const ask = useEffectEvent(() => {
-    const span = view.get();
-    if (!onWindow || sameSpan(span, whole)) return;
-    const wanted = padded(span, whole);
-    const pixels = (frame.width - frame.left - frame.right) * Math.min(globalThis.devicePixelRatio || 1, 2);
-    const share = Math.log(wanted.toHz / wanted.fromHz) / Math.log(span.toHz / span.fromHz);
-    onWindow(wanted.fromHz, wanted.toHz, Math.max(16, Math.min(4096, Math.round(pixels * share))));
-  });
-  useEffect(() => {
-    let waiting: ReturnType<typeof setTimeout> | undefined;
-    const stop = view.subscribe(() => {
-      clearTimeout(waiting);
-      waiting = setTimeout(ask, ASK_AFTER_MS);
-    });
-    return () => {
-      clearTimeout(waiting);
-      stop();
-    };
-  }, [view]);
-
-  // Many pointer events fall into one frame; the last of them is drawn.
-  const queued = useRef<{ frame: number; span: Span } | null>(null);
-  const changeView = useCallback(
-    (span: Span) => {
-      if (queued.current) queued.current.span = span;
-      else {
-        const frame = requestAnimationFrame(() => {
-          const next = queued.current;
-          queued.current = null;
-          if (next && !sameSpan(next.span, view.get())) view.set(next.span);
-        });
-        queued.current = { frame, span };
-      }
-    },
-    [view],
-  );
-  useEffect(
-    () => () => {
-      if (queued.current) cancelAnimationFrame(queued.current.frame);
-      queued.current = null;
-    },
-    [],
-  );
-
   const marksNow = () => candidateMarks(candidates, view.get(), scale(), mode, selectedRank);
   const markAt = (point: { x: number; y: number }, reachPx: number) =>
     marksNow()
@@ -166,7 +121,7 @@ export function SweepChart(props: SweepChartProps) {
     const plot = scale();
     if (point.x < plot.left || point.x > plot.right || point.y < plot.top || point.y > plot.bottom) return null;
     const hz = plot.hz(point.x);
-    const source = detail && hz >= detail.fromHz && hz <= detail.toHz ? detail : overview;
+    const source = windowAt(layers, hz);
     const found = source ? nearestTrace(source, hz, plot.value(point.y), mode) : null;
     return found ? { kind: 'trace', traceIndex: found.traceIndex, hz: found.hz } : null;
   };
@@ -220,59 +175,30 @@ export function SweepChart(props: SweepChartProps) {
     if (selectedHz !== null) view.set(bringIn(view.get(), whole, selectedHz));
   }, [selectedHz, view, whole]);
 
-  function cursorHz(): number {
-    const at = cursor.get();
-    if (at?.kind === 'trace') return at.hz;
-    const span = view.get();
-    const hz = selected?.frequencyHz;
-    return hz !== undefined && hz >= span.fromHz && hz <= span.toHz ? hz : Math.sqrt(span.fromHz * span.toHz);
-  }
-
-  function alongTrace(direction: 1 | -1) {
-    const source = detail ?? overview;
-    const at = cursor.get();
-    const index = at?.kind === 'trace' ? at.traceIndex : (selected?.traceIndex ?? leadingTrace(subject.traces));
-    if (!source || index === null) return;
-    const hz = stepAlong(source, index, cursorHz(), direction * POINTS_PER_STEP, subject.stepHz);
-    const point = tracePoint(source, index, hz, mode);
-    if (!point) return;
-    view.set(bringIn(view.get(), whole, point.hz));
-    cursor.set({ kind: 'trace', traceIndex: index, hz: point.hz });
-    setSpoken(spokenPoint(traceTip(point, subject, unit)));
-  }
-
-  function toCandidate(direction: 1 | -1) {
-    const rank = cursor.get()?.kind === 'trace' ? null : (selected?.rank ?? null);
-    const next = neighbour(candidates, { hz: cursorHz(), rank }, direction);
-    if (!next) return;
-    cursor.set(null);
-    focusMark(next);
-  }
-
-  function onKeyDown(event: React.KeyboardEvent) {
-    if (event.ctrlKey || event.metaKey || event.altKey) return;
-    const acts: Record<string, (() => void) | undefined> = {
-      ArrowLeft: () => (event.shiftKey ? alongTrace(-1) : toCandidate(-1)),
-      ArrowRight: () => (event.shiftKey ? alongTrace(1) : toCandidate(1)),
-      '+': () => view.set(zoomAt(view.get(), whole, cursorHz(), KEY_ZOOM)),
-      '=': () => view.set(zoomAt(view.get(), whole, cursorHz(), KEY_ZOOM)),
-      '-': () => view.set(zoomAt(view.get(), whole, cursorHz(), 1 / KEY_ZOOM)),
-      '0': () => view.set(whole),
-      l: onMode && (() => onMode(mode === 'margin' ? 'level' : 'margin')),
-      c: onCombKey,
-      w: selected && onWorking ? () => onWorking(selected) : undefined,
-      Enter: selected && onWorking ? () => onWorking(selected) : undefined,
-      Escape: cursor.get() ? () => cursor.set(null) : undefined,
-    };
-    const act = acts[event.key.length === 1 ? event.key.toLowerCase() : event.key];
-    if (!act) return;
-    event.preventDefault();
-    event.stopPropagation();
-    act();
-  }
+  const onKeyDown = (event: React.KeyboardEvent) =>
+    pressChartKey(
+      {
+        ...{
+          view,
+          whole,
+          cursor,
+          candidates,
+          selected,
+          layers,
+          mode,
+          subject,
+          focusMark,
+          onMode,
+          onCombKey,
+          onWorking,
+        },
+        say: (point) => setSpoken(spokenPoint(traceTip(point, subject, unit))),
+      },
+      event,
+    );
 
   const sentence = describeChart(mode, whole, subject.limitName, candidates, total, overview !== null);
-  const layers = (
+  const drawing = (
     <>
       <ChartBack subject={subject} frame={frame} range={range} view={view} mode={mode} />
       {overview ? (
@@ -286,7 +212,7 @@ export function SweepChart(props: SweepChartProps) {
         range={range}
         view={view}
         cursor={cursor}
-        window={detail ?? overview}
+        layers={layers}
         mode={mode}
         unit={unit}
         candidates={candidates}
@@ -300,7 +226,7 @@ export function SweepChart(props: SweepChartProps) {
   if (preview)
     return (
       <div ref={box} role="img" aria-label={sentence} className={`relative h-[256px] ${FORCED}`}>
-        {layers}
+        {drawing}
       </div>
     );
   return (
@@ -319,7 +245,7 @@ export function SweepChart(props: SweepChartProps) {
       <p id={`${id}-sentence`} className="sr-only">
         {sentence}
       </p>
-      {layers}
+      {drawing}
       {overview === null && props.children ? (
         <div className="absolute inset-x-0 bottom-16 mx-auto w-[min(430px,calc(100%-112px))] bg-sheet px-4 py-2.5">
           {props.children}

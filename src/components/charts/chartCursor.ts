@@ -10,6 +10,17 @@ import type { TipText } from './PointTip';
 /** What the pointer or the keyboard rests on. */
 export type Cursor = { kind: 'candidate'; rank: number } | { kind: 'trace'; traceIndex: number; hz: number } | null;
 
+/** The whole range at hand, and the finer window inside it when there is one. */
+export interface Layers {
+  overview: WindowView | null;
+  detail: WindowView | null;
+}
+
+/** The finest window that holds a frequency. */
+export function windowAt({ overview, detail }: Layers, hz: number): WindowView | null {
+  return detail && hz >= detail.fromHz && hz <= detail.toHz ? detail : overview;
+}
+
 /** A point of a trace under the cursor: the highest reading of the nearest column. */
 export interface TracePoint {
   traceIndex: number;

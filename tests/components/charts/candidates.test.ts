@@ -1,6 +1,6 @@
 import type { CandidateView, WindowView } from '@/schemas/sweep';
 import { candidateMarks, neighbour } from '@/components/charts/candidateMarks';
-import { nearestTrace, stepAlong, tracePoint } from '@/components/charts/chartCursor';
+import { nearestTrace, stepAlong, tracePoint, windowAt } from '@/components/charts/chartCursor';
 import { describeCandidate, describeChart } from '@/components/charts/describeChart';
 import { floorPath } from '@/components/charts/floorPath';
 import { candidateRemark, shownColumns } from '@/components/grids/candidateColumns';
@@ -98,6 +98,13 @@ describe('the cursor on a trace', () => {
   test('has no margin where there is no limit', () => {
     expect(tracePoint(window, 0, 32e6, 'margin')).toBeNull();
     expect(tracePoint(window, 0, 32e6, 'level')!.marginDb).toBeNull();
+  });
+
+  test('reads the finer window inside it and the overview outside it', () => {
+    const detail = { ...window, fromHz: 30.5e6, toHz: 31.5e6 };
+    expect(windowAt({ overview: window, detail }, 31e6)).toBe(detail);
+    expect(windowAt({ overview: window, detail }, 32e6)).toBe(window);
+    expect(windowAt({ overview: null, detail: null }, 31e6)).toBeNull();
   });
 
   test('takes the trace nearer to the pointer', () => {
