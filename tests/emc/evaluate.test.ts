@@ -113,6 +113,23 @@ describe('one mains run against CISPR 32 class B', () => {
     expect(found.candidates.filter(({ verdict }) => verdict !== 'under')).toHaveLength(1);
   });
 
+  test('a prescan is guarded by its own U of 4 dB, a final by its U of 2 dB', () => {
+    const traces = [mains('quasi-peak', [[1, 53]], 0), mains('average', [], 1, 10)];
+    const worst = (purpose: Purpose) => evaluateNow(mainsInput(traces, { purpose })).candidates[0]!;
+    expect(worst('prescan')).toMatchObject({ uncertaintyDb: 4, verdict: 'needs-final' });
+    expect(worst('final')).toMatchObject({ uncertaintyDb: 2, verdict: 'under' });
+  });
+
+  test('the layer a trace is drawn from reaches down to the worst margin of its line', () => {
+    const found = evaluateNow(mainsInput([mains('quasi-peak', [[1, 66]], 0), mains('average', [[2, 30]], 1, 10)]));
+    found.pairs.forEach(({ worstMarginDb }, i) => {
+      const { marginMin, hasMargin } = found.layers[i]!;
+      expect(hasMargin.every((has) => has === 1)).toBe(true);
+      expect(Math.min(...marginMin)).toBe(Math.fround(worstMarginDb!));
+    });
+    expect(found.pairs[0]!.worstMarginDb).toBeLessThan(-9);
+  });
+
   test('an ambient run judges nothing: not covered, whatever its margins', () => {
     const found = evaluateNow(mainsInput([mains('quasi-peak', [[1, 90]])], { purpose: 'ambient' }));
     expect(found.verdict).toBe('not-covered');
@@ -325,6 +342,15 @@ describe('any run (property)', () => {
 });
 
 describe('pace', () => {
+  test('an emission in the last of several stretches is found where it is', () => {
+    const readings = Array.from({ length: 50_000 }, (_, i) => (i === 49_000 ? 58 : 20));
+    const trace = traceOf(readings, { startHz: 150e3, stepHz: 500 });
+    const found = evaluateNow(inputOf({ traces: [trace] }));
+    const frequencyHz = 150e3 + 49_000 * 500;
+    expect(found.candidates[0]).toMatchObject({ frequencyHz, marginDb: 2, verdict: 'needs-final' });
+    expect(found.pairs[0]).toMatchObject({ points: 50_000, worstMarginDb: 2, worstFrequencyHz: frequencyHz });
+  });
+
   test('a run of 100 000 points yields often, and every yield is a stretch of about 16384 points', () => {
     const trace = traceOf(
       Array.from({ length: 100_000 }, (_, i) => 20 + (i % 7)),

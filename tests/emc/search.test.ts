@@ -132,6 +132,34 @@ describe('a stretch whose noise floor is not proven under is one candidate', () 
     expect(margins[floors[0]!.worst]).toBeGreaterThan(-4.5);
   });
 
+  test('each of several emissions clear of it is listed, not only the worst', () => {
+    const margins = emission(emission([...quiet, ...loud, ...quiet], 450, -6), 650, -5);
+    expect(find(pairOf(margins)).peaks).toEqual([450, 650]);
+  });
+
+  test('ripple on the flank of a clear emission is neither listed nor the worst of the floor', () => {
+    const margins = emission([...quiet, ...loud, ...quiet], 550, -20);
+    margins[552] = margins[551]! + 1;
+    margins[553] = margins[552]! - 0.5;
+    const { peaks, floors } = find(pairOf(margins));
+    expect(peaks).toEqual([550]);
+    expect(margins[floors[0]!.worst]).toBeGreaterThan(-4.5);
+  });
+
+  test('its worst point is listed even where a worse one beside the stretch takes its prominence', () => {
+    const floor = Array.from({ length: 400 }, (_, i) => [4.6, 3.5, 4.6, 6][i % 4]!);
+    const { peaks, floors } = find(pairOf([...floor, 4.6, 3.4, 3.6, -1.5, 4.2, -3, 9]));
+    expect(peaks).toEqual([403, 405]);
+    expect(floors).toEqual([{ from: 1, to: 404, worst: 401 }]);
+  });
+
+  test('broad emissions that leave more than half of the window proven are no floor', () => {
+    const humps = Array.from({ length: 660 }, (_, i) => 1 + 0.5 * Math.abs((i % 33) - 16));
+    const { peaks, floors } = find(pairOf(humps));
+    expect(peaks).toEqual(Array.from({ length: 20 }, (_, k) => 16 + 33 * k));
+    expect(floors).toEqual([]);
+  });
+
   test('an emission less clear than that belongs to the floor, and is its worst point', () => {
     const { peaks, floors } = find(pairOf(emission([...quiet, ...loud, ...quiet], 550, -2.5)));
     expect(peaks).toEqual([]);

@@ -1,5 +1,6 @@
 import uncertainties from '@fixtures/published/uncertainty.json';
-import { expandedAt } from '@/emc/uncertainty';
+import fc from 'fast-check';
+import { expandedAt, expandedInto, prepareUncertainty } from '@/emc/uncertainty';
 
 const of2011 = (measurement: string) =>
   uncertainties.ucispr.rows.find((row) => row.measurement === measurement)!.ucisprDb2011;
@@ -46,5 +47,23 @@ describe('expanded uncertainty as steps over frequency', () => {
       expect(() => expandedAt([{ startHz: 1, stopHz: 2, expandedDb }], 1.5)).toThrow(RangeError);
     }
     expect(() => expandedAt([{ startHz: 2, stopHz: 2, expandedDb: 1 }], 2)).toThrow(RangeError);
+  });
+
+  test('many points at once give what one at a time gives, in whatever order they come (property)', () => {
+    const hertz = fc.oneof(
+      fc.constantFrom(8e3, 9e3, 150e3, 30e6, 31e6),
+      fc.double({ min: 8e3, max: 31e6, noNaN: true }),
+    );
+    fc.assert(
+      fc.property(fc.array(hertz, { maxLength: 40 }), (points) => {
+        const hz = Float64Array.from(points);
+        const expanded = new Float64Array(hz.length);
+        const has = new Uint8Array(hz.length);
+        expandedInto(prepareUncertainty(mains), hz, expanded, has);
+        expect(points.map((_, i) => (has[i] ? expanded[i]! : null))).toEqual(
+          points.map((one) => expandedAt(mains, one)),
+        );
+      }),
+    );
   });
 });
