@@ -48,7 +48,7 @@ export function ClockField({
             setTyped(null);
           }
         }}
-        className={`t-figure w-auto border-b border-dotted bg-transparent [field-sizing:content] placeholder:font-sans placeholder:text-pen ${
+        className={`t-figure w-auto border-b border-dotted bg-transparent [field-sizing:content] placeholder:font-sans placeholder:tracking-normal placeholder:text-pen placeholder:[word-spacing:normal] ${
           wrong ? 'border-madder text-madder' : 'border-rule2 text-pen'
         }`}
       />

@@ -1,6 +1,6 @@
 'use client';
 
-import { useCallback, useId, useMemo, useState } from 'react';
+import { useCallback, useId, useMemo, useRef, useState } from 'react';
 import { ChartLegend } from '@/components/charts/ChartLegend';
 import { chartSubject } from '@/components/charts/chartSubject';
 import type { ChartMode } from '@/components/charts/marginSeries';
@@ -48,6 +48,7 @@ interface Open {
 /** The sheet of one run: finding, chart, candidates, and beside them how each figure came about. */
 export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props) {
   const tableId = useId();
+  const legend = useRef<HTMLDivElement>(null);
   const [mode, setMode] = useState<ChartMode>('margin');
   const [clockHz, setClockHz] = useState<number | null>(null);
   const [selectedRank, setSelectedRank] = useState<number | null>(first.items[0]?.rank ?? null);
@@ -70,6 +71,9 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
     setOpen(null);
     clear();
   }, [clear]);
+  function nameClock() {
+    legend.current?.querySelector<HTMLInputElement>('input[type="text"]')?.focus();
+  }
   const step = (by: 1 | -1) => {
     const at = candidates.findIndex(({ rank }) => rank === selectedRank);
     const next = candidates[at + by];
@@ -77,6 +81,7 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
     if (open) show(next, open.figure);
     else setSelectedRank(next.rank);
   };
+  useKey('C', nameClock, { says: 'harmonics of a clock', weak: true });
   useKey('L', () => setMode((now) => (now === 'margin' ? 'level' : 'margin')), { says: 'margin or level', weak: true });
   useKey('ArrowDown', () => step(1), { says: 'next candidate', weak: true });
   useKey('ArrowUp', () => step(-1), { says: 'candidate before', weak: true });
@@ -171,16 +176,18 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
         { keys: ['?'], does: 'all keys' },
       ]}
     >
-      <ChartLegend
-        mode={mode}
-        onMode={setMode}
-        traces={sweep.traces}
-        purpose={PURPOSE_WORDS[sweep.purpose]}
-        clockHz={clockHz}
-        onClock={setClockHz}
-      >
-        <SettingsLine sweep={sweep} />
-      </ChartLegend>
+      <div ref={legend}>
+        <ChartLegend
+          mode={mode}
+          onMode={setMode}
+          traces={sweep.traces}
+          purpose={PURPOSE_WORDS[sweep.purpose]}
+          clockHz={clockHz}
+          onClock={setClockHz}
+        >
+          <SettingsLine sweep={sweep} />
+        </ChartLegend>
+      </div>
       <SweepChart
         subject={subject}
         window={window}
@@ -194,6 +201,7 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
         onWindow={ask}
         clockHz={clockHz}
         onClock={setClockHz}
+        onCombKey={nameClock}
         tableId={tableId}
       />
       <CandidateGrid
@@ -205,6 +213,7 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
         open={open}
         onSelect={(candidate) => setSelectedRank(candidate.rank)}
         onFigure={show}
+        clockHz={clockHz}
         onMore={more}
         loading={loadingMore}
       />

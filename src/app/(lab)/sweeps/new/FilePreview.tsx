@@ -32,7 +32,7 @@ export function FilePreview({ recognition, wrongLine }: { recognition: Recogniti
             </th>
             {columns.slice(0, 8).map((column) => (
               <th key={column.index} className="px-2 pb-1 font-normal whitespace-nowrap" scope="col">
-                <span className="block border-t border-x border-pen px-1 pt-0.5 font-sans">
+                <span className="block border-t border-x border-pen px-1 pt-0.5 font-sans tracking-normal [word-spacing:normal]">
                   {roleWords(recognition, column)}
                 </span>
               </th>

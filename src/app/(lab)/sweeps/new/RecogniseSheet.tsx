@@ -12,7 +12,7 @@ import { Button } from '@/components/ui/Button';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { VerdictWord } from '@/components/ui/VerdictWord';
 import { formatFrequency } from '@/format/frequencies';
-import { formatBytes, formatCount, formatMargin } from '@/format/quantities';
+import { formatBytes, formatCount, formatMarginDb } from '@/format/quantities';
 import { keepSweepOperation, type SweepView } from '@/schemas/sweep';
 import type { SweepFileView } from '@/schemas/sweepFile';
 import { ChoiceFields } from './ChoiceFields';
@@ -152,7 +152,7 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
               <VerdictWord verdict={preview.verdict} />
               {preview.worst ? (
                 <>
-                  , worst <span className="t-figure">{formatMargin(preview.worst.marginDb)}</span> dB at{' '}
+                  , worst <span className="t-figure">{formatMarginDb(preview.worst.marginDb)}</span> at{' '}
                   <span className="t-figure">{formatFrequency(preview.worst.frequencyHz)}</span>
                 </>
               ) : null}
@@ -161,10 +161,10 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
           ) : previewProblem && previewProblem.errors.length === 0 ? (
             <ProblemMessage problem={previewProblem} />
           ) : null}
+          <LookAtFirst file={file} draft={draft} path={path} />
         </div>
         <div className="min-w-0">
           <ChoiceFields file={file} draft={draft} lists={lists} errors={errors} onDraft={setDraft} />
-          <LookAtFirst file={file} draft={draft} path={path} />
         </div>
       </div>
     </Sheet>

@@ -47,9 +47,10 @@ function overlap(set: LimitSetView, firstHz: number, lastHz: number): number {
   return Math.log10(Math.min(high, lastHz) / Math.max(low, firstHz, 1));
 }
 
-/** The set of a port that covers most of a range; the first of equals. */
+/** The set of a port that covers most of a range; of equals the one the lab entered first (the list is newest first). */
 export function proposedLimitSet(sets: readonly LimitSetView[], port: Port, firstHz: number, lastHz: number): string {
-  const fit = sets
+  const fit = [...sets]
+    .reverse()
     .filter((set) => set.port === port)
     .map((set) => ({ set, covers: overlap(set, firstHz, lastHz) }))
     .sort((a, b) => b.covers - a.covers);
