@@ -72,6 +72,11 @@ function evenness(values: Float64Array, stats: ColumnStats): 'linear' | 'logarit
   return within((i) => stats.first * Math.exp(ratio * i), closest * 0.5) ? 'logarithmic' : null;
 }
 
+/** Steps as even as an axis has them; no run of levels does that. */
+export function evenSteps(values: Float64Array): boolean {
+  return evenness(values, statsOf(values)) === 'linear';
+}
+
 /** Unit under which first and last are what the preamble declares; null when no unit does that. */
 export function unitByDeclaration(
   first: number,

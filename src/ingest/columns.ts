@@ -44,7 +44,7 @@ export function describeColumns(
     if (!levelColumns.includes(index)) {
       if (headingIsPhase(heading)) return { role: 'phase', evidence: `heading “${heading}”` };
       if (headingIsTime(heading)) return { role: 'time', evidence: `heading “${heading}”` };
-      return { role: 'other', evidence: heading === null ? 'rises like a counter' : `heading “${heading}”` };
+      return { role: 'other', evidence: heading === null ? 'steady steps: no level' : `heading “${heading}”` };
     }
     const trace = traces.find(({ column }) => column === index);
     if (trace?.blank) return { role: 'blank', evidence: `${trace.min} in every row` };

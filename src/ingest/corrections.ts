@@ -16,13 +16,11 @@ const THINGS: [RegExp, string][] = [
     'preamplifier',
   ],
   [/\b(?:amn|lisn|isn|artificial (?:mains )?network|voltage division)\b/, 'network factor'],
-  [
-    /ref(?:erence)? ?(?:level)? ?offset|level offset|amplitude offset|amplitude correction|correction factors?|user correction|^corrections?$/,
-    'level offset',
-  ],
+  [/ref(?:erence)? ?(?:level)? ?offset|level offset|amplitude offset/, 'level offset'],
+  [/amplitude correction|correction factors?|user correction|^corrections?$/, 'correction'],
 ];
 
-const APPLIED = /\b(?:corrected|included|incl|applied|compensated|taken into account|considered|with)\b/;
+const APPLIED = /\b(?:corrected|included|incl|applied|compensated|considered)\b/;
 const NOT_APPLIED = /\b(?:not|no|without|un(?:corrected|compensated)|excluding|excl)\b/;
 /** Settings inside the receiver, which it accounts for itself. */
 const INSIDE = /\b(?:state|band|internal|int|marker|noise|valid|azimuth|roll|elevation)\b/;
@@ -53,9 +51,10 @@ function fromEntry(entry: Entry): Correction | null {
 function fromSentence({ line, text }: Line): Correction[] {
   const words = wordsOnly(text);
   if (!APPLIED.test(words) || NOT_APPLIED.test(words)) return [];
-  if (!/\b(?:corrected|included|incl|applied|compensated)\b/.test(words)) return [];
   const decibels = /(\d+(?:[.,]\d+)?)\s?dB(?![a-zµ])/.exec(text)?.[1];
-  const things = THINGS.filter(([pattern, what]) => what !== 'level offset' && pattern.test(words));
+  const things = THINGS.filter(
+    ([pattern, what]) => what !== 'level offset' && what !== 'correction' && pattern.test(words),
+  );
   return things.map(([, what]) => ({
     what: decibels && things.length === 1 ? `${what} ${decibels} dB` : what,
     evidence: text.trim(),

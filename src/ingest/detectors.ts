@@ -13,8 +13,8 @@ const WORDS: [RegExp, Detector][] = [
   [/quasi|\bqp\b|\bqpk\b|\bqpeak\b|\bq peak\b|cisprqp/, 'quasi-peak'],
   [/\bauto ?(?:pk|peak)\b|\bautopeak|\bnormal\b|rosenfell|^auto$|\balternat/, 'unknown'],
   [/\bneg|\bmin ?(?:pk|peak)\b|\bminpeak|\bmin(?:imum)?\b/, 'negative-peak'],
-  [/\brms|cisprrms|\bpower av|\bpwr av/, 'rms-average'],
   [/\blog|video ?av|\bvid av/, 'log-average'],
+  [/\brms|cisprrms|\bpower av|\bpwr av/, 'rms-average'],
   [/\bav\b|\bavg?\b|\baver|\bcav\b|\bcisprav|\bmean\b|\blin(?:ear)? av|voltage av|\bcispr av/, 'average'],
   [/\bsamp/, 'sample'],
   [/peak|\bpk\b|cisprpk|\bpositive\b|\bpos\b|\bmaxp|\bpkmax\b/, 'peak'],
@@ -55,5 +55,5 @@ export function averageKind(text: string): Detector | null {
 
 /** Trace modes that leave no single detector: averages over sweeps and minimum hold. */
 export function modeHidesDetector(mode: string): boolean {
-  return /\bav|aver|min/.test(wordsOf(mode));
+  return /\bav|aver|avg|\bmin/.test(wordsOf(mode));
 }

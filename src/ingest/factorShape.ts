@@ -5,7 +5,8 @@ import { signOf } from './lossOrGain';
 import { networkTraces } from './network';
 import { moved } from './numbers';
 import type { OptionLine } from './prepare';
-import { levelsOf, type Table } from './table';
+import { levelsOf } from './series';
+import type { Table } from './table';
 import type { Question, Recognition, RecognisedTrace } from './types';
 import { levelUnitIn } from './units';
 

@@ -7,7 +7,8 @@ import { networkTraces } from './network';
 import { moved } from './numbers';
 import { prepareSteps } from './prepare';
 import { scanSteps } from './scan';
-import { axisOf, levelsOf, tableSteps } from './table';
+import { axisOf, levelsOf } from './series';
+import { tableSteps } from './table';
 import type { Recognition } from './types';
 import { TO_HZ, type FrequencyUnit } from './units';
 

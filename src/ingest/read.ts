@@ -4,7 +4,8 @@ import { IngestError } from './ingestError';
 import { moved } from './numbers';
 import { prepareSteps } from './prepare';
 import { scanSteps } from './scan';
-import { axisOf, levelsOf, tableFor, tableSteps } from './table';
+import { axisOf, levelsOf } from './series';
+import { tableFor, tableSteps } from './table';
 import { tracesOf } from './traces';
 import type { Answers, ReadSweep, ReadTrace, Recognition } from './types';
 import { TO_HZ } from './units';
@@ -86,7 +87,7 @@ export function* readSweepSteps(
   for (const trace of recognition.traces) {
     const answer = answers.traces?.find(({ index }) => index === trace.index);
     if (answer ? !answer.use : trace.blank) continue;
-    const stated = own?.[trace.index] ?? trace;
+    const stated = own?.find(({ column: its }) => its === trace.column) ?? trace;
     const traceUnit = answer?.unit ?? stated.unit;
     if (!traceUnit) {
       const message = `The unit of “${trace.name}” is not settled. Say which before the sweep is read.`;

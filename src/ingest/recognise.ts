@@ -12,7 +12,8 @@ import { questionsFor } from './questions';
 import { brokenRow, commaTwice, notOverFrequency, noTable, type Refusal } from './refusals';
 import { scanSteps } from './scan';
 import { settingsOf } from './settings';
-import { axisOf, tableFor, tableSteps, type Table } from './table';
+import { axisOf } from './series';
+import { tableFor, tableSteps, type Table } from './table';
 import { commaIsBoth } from './template';
 import { tracesOf } from './traces';
 import type { Recognition, RecognisedTrace } from './types';
@@ -82,7 +83,7 @@ function settleAcross(prepared: Prepared, table: Table, traces: RecognisedTrace[
  * What a file is, as far as the file itself says; everything else becomes a question. Never throws on a file: one that
  * cannot be read is answered as refused. Yields often, so that a server can serve others meanwhile.
  * @param raw the file's bytes as they came
- * @param fileName the name of the file; a hint for a network-parameter file, nothing more
+ * @param fileName names the only sweep of a file; nothing is concluded from it
  * @param sweepIndex which of several sweeps to describe; without it the first is described, and what differs between
  *   them is left open
  */
@@ -132,7 +133,10 @@ export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?:
   }
 
   const pieces = table.pieces.slice(0, MOST_SWEEPS);
-  const sweeps = pieces.map(({ name, startedAt }, i) => ({ name: name ?? `sweep ${i + 1}`, startedAt }));
+  const sweeps = pieces.map(({ name, startedAt }, i) => ({
+    name: name ?? (pieces.length === 1 ? (fileName ?? 'sweep') : `sweep ${i + 1}`),
+    startedAt,
+  }));
   const correctedFor = correctionsOf(own.preamble, own.entries);
   const settings = { ...own.declared.settings, ...declaredSpan(own, axis, unit) };
   const factor = isFactorTable(own, option);

@@ -5,9 +5,10 @@ import { frequencyUnitIn, TO_HZ } from './units';
 
 /** Keys as instruments write them (common practice), in the form `wordsOnly` gives. */
 export const KEYS = {
-  rbw: /^(?:rbw|res(?:olution)? ?(?:bw|bandwidth)|if ?(?:bw|bandwidth)|meas(?:urement|uring)? ?(?:bw|bandwidth)|bandwidth|bw)$/,
+  rbw: /^(?:rbw|res(?:olution)? ?(?:bw|bandwidth)|if ?(?:bw|bandwidth)|meas(?:urement|uring)? ?(?:bw|bandwidth))$/,
+  bandwidth: /^(?:bandwidth|bw)$/,
   filter:
-    /^(?:(?:rbw|bandwidth|if|resolution bandwidth) )?(?:filter|window|shape|type)(?: (?:bw|bandwidth|type|shape))*$/,
+    /^(?:(?:rbw|bandwidth|if|resolution bandwidth) (?:filter|window|shape|type)|filter)(?: (?:bw|bandwidth|type|shape))*$/,
   vbw: /^(?:vbw|video ?(?:bw|bandwidth))$/,
   vbwState: /^(?:vbw|video ?(?:bw|bandwidth)) (?:enabled?|state|active)$/,
   sweepTime: /^(?:swt|sweep ?time(?: actual)?)$/,
@@ -57,6 +58,12 @@ function bareAuto({ value, unit }: Quantity): number | null {
   return unit !== null && /^(?:auto|man(?:ual)?)$/i.test(unit) && value >= 200 ? value : null;
 }
 
+/** `Bandwidth` alone may be that of an input or of a recording; a CISPR 16-1-1 bandwidth is the measuring one. */
+function cisprBandwidthHz(quantity: Quantity | null): number | null {
+  const hz = bandwidthHz(quantity);
+  return hz === 200 || hz === 9e3 || hz === 120e3 || hz === 1e6 ? hz : null;
+}
+
 function seconds(quantity: Quantity | null): number | null {
   if (!quantity) return null;
   const unit = (quantity.unit ?? 's').toLowerCase().replace('μ', 'µ');
@@ -93,7 +100,7 @@ export function settingsOf(entries: readonly Entry[], style: NumberStyle): Decla
   const points = find(KEYS.points);
   return {
     settings: {
-      rbwHz: bandwidthHz(find(KEYS.rbw)),
+      rbwHz: bandwidthHz(find(KEYS.rbw)) ?? cisprBandwidthHz(find(KEYS.bandwidth)),
       rbwShape: filter === undefined ? null : /3\s?db/i.test(filter) ? '3 dB' : '6 dB',
       vbwHz: vbwEnabled === false || vbwValues.size > 1 ? null : bandwidthHz(vbw),
       vbwEnabled,

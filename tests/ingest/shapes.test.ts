@@ -156,6 +156,20 @@ describe('traces, detectors and settings', () => {
   });
 });
 
+describe('columns that are no levels', () => {
+  it('corrections, limits and margins beside the levels', () => {
+    const recognition = recognised('level-and-correction-columns.csv');
+    expect(recognition.columns.map(({ role }) => role)).toEqual(['frequency', 'level', 'other', 'other', 'other']);
+    expect(recognition.remarks).toMatchObject([{ text: expect.stringContaining('“Corr. [dB]”'), line: 2 }]);
+  });
+
+  it('frequencies written again for each trace', () => {
+    const recognition = recognised('frequencies-repeated-per-trace.csv');
+    expect(recognition.columns.map(({ role }) => role)).toEqual(['frequency', 'level', 'other', 'level']);
+    expect(detectors(recognition)).toEqual(['peak', 'average']);
+  });
+});
+
 describe('what is already in the values', () => {
   test.each([
     ['limiter-already-in.csv', 'limiter 10 dB', 2],
@@ -212,6 +226,7 @@ describe('refusals say where, what and the next step', () => {
     ['time-axis.csv', 2, /column 1 is time .*Export the trace over frequency\.$/],
     ['time-axis-by-unit-line.csv', 1, /an axis in s/],
     ['comma-twice.csv', 1, /the comma is both decimal mark and separator/],
+    ['two-frequency-axes.csv', 1, /columns 1 and 3 are both frequencies, and they differ/],
     ['levels-alone.txt', 2, /levels without frequencies/],
     ['prose.txt', null, /No two lines hold a frequency and a level/],
   ])('%s at line %s', (name, line, message) => {
