@@ -53,8 +53,8 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
 
   const subject = useMemo<ChartSubject>(
     () => ({
-      firstHz: Math.max(firstHz, 1),
-      lastHz: Math.max(lastHz, firstHz + 1, 2),
+      firstHz,
+      lastHz,
       stepHz: file.recognition.frequency.stepHz,
       limitName: limitSet?.name ?? '',
       lines: limitSet?.lines ?? [],
@@ -137,7 +137,10 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
           <SectionHeading className="mt-5" remark={judging ? 'judging' : undefined}>
             As it will be drawn
           </SectionHeading>
-          {limitSet && (
+          {limitSet && firstHz <= 0 && (
+            <p className="t-text mt-1 text-ink2">The chart waits for the centre frequency.</p>
+          )}
+          {limitSet && firstHz > 0 && (
             <SweepChart
               key={`${firstHz} ${lastHz} ${limitSet.id}`}
               subject={subject}
