@@ -36,7 +36,7 @@ export function LimitSets({ sets, firstHref, nextHref }: Props) {
           <HeadCell>Detector</HeadCell>
           <HeadCell>Limit</HeadCell>
           <HeadCell className={WIDE}>Edition and source</HeadCell>
-          <HeadCell>Basis</HeadCell>
+          <HeadCell className={WIDE}>Basis</HeadCell>
         </TableHead>
         {sets.map((set) => (
           <tbody key={set.id}>
@@ -63,7 +63,9 @@ export function LimitSets({ sets, firstHref, nextHref }: Props) {
 }
 
 function LineRow({ line }: { line: LimitLineView }) {
-  const source = `${line.document}; ${line.source}; revision ${line.revision}`;
+  const { document, source: where, revision } = line;
+  const source = `${where.startsWith(document) ? where : `${document}; ${where}`}; revision ${revision}`;
+  const basis = <VerdictWord verdict={line.basis === 'verified' ? 'under' : 'inconclusive'}>{line.basis}</VerdictWord>;
   return (
     <Row>
       <Cell className="align-top">
@@ -71,10 +73,11 @@ function LineRow({ line }: { line: LimitLineView }) {
         <span className="t-detail block whitespace-nowrap">
           RBW <span className="t-figure">{formatBandwidth(line.bandwidthHz)}</span>
         </span>
+        <span className="block pad:hidden">{basis}</span>
       </Cell>
       <Cell className="align-top">
         {line.segments.map((segment) => (
-          <span key={segment.startHz} className="block">
+          <span key={segment.startHz} className="block pad:whitespace-nowrap">
             <span className="t-figure">{formatFrequencyRange(segment.startHz, segment.stopHz)}</span>:{' '}
             <span className="t-figure">{valueOf(segment)}</span> {unitLabel(line.unit)}
             {segment.startLimit !== segment.stopLimit && <span className="text-ink2"> {SLOPES[segment.over]}</span>}
@@ -85,14 +88,7 @@ function LineRow({ line }: { line: LimitLineView }) {
       <Cell className={`${WIDE} align-top`} quiet>
         {source}
       </Cell>
-      <Cell className="align-top">
-        <VerdictWord
-          verdict={line.basis === 'verified' ? 'under' : 'inconclusive'}
-          className="max-pad:whitespace-normal"
-        >
-          {line.basis}
-        </VerdictWord>
-      </Cell>
+      <Cell className={`${WIDE} align-top`}>{basis}</Cell>
     </Row>
   );
 }

@@ -32,17 +32,23 @@ export function stripScale(today: string): StripScale {
   };
   const todayPercent = percentOf(today, scale);
   let yearShown = 0;
+  let lastEnd = -Infinity;
   for (let months = -MONTHS_BACK; months < MONTHS_AHEAD; months++) {
     const day = monthStart(today, months);
     const [year, month] = day.split('-').map(Number) as [number, number];
     if ((month - 1) % 4 !== 0) continue;
     const percent = percentOf(day, scale);
-    const label = year === yearShown ? NAMES[month - 1]! : `${NAMES[month - 1]} ${year}`;
-    const end = percent + label.length * PERCENT_PER_LETTER;
-    const clear = end < todayPercent - FLAG_HALF_PERCENT || percent > todayPercent + FLAG_HALF_PERCENT;
-    const shown = clear && end <= 100;
-    if (shown) yearShown = year;
-    scale.ticks.push({ percent, label: shown ? label : null });
+    const short = NAMES[month - 1]!;
+    const fits = (label: string) => {
+      const end = percent + label.length * PERCENT_PER_LETTER;
+      const clear = end < todayPercent - FLAG_HALF_PERCENT || percent > todayPercent + FLAG_HALF_PERCENT;
+      return clear && percent > lastEnd && end <= 100;
+    };
+    const wanted = year === yearShown ? [short] : [`${short} ${year}`, short];
+    const label = wanted.find(fits) ?? null;
+    if (label) lastEnd = percent + label.length * PERCENT_PER_LETTER;
+    if (label && label !== short) yearShown = year;
+    scale.ticks.push({ percent, label });
   }
   return scale;
 }

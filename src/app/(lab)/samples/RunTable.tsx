@@ -32,7 +32,7 @@ export function RunTable({
         <HeadCell className={WIDE}>Port</HeadCell>
         <HeadCell className={WIDE}>Line or pol.</HeadCell>
         <HeadCell className={WIDE}>Purpose</HeadCell>
-        <HeadCell figure unit="dB">
+        <HeadCell figure unit="dB" className="max-pad:pr-0!">
           Worst
         </HeadCell>
         <HeadCell figure unit="MHz" className={WIDE}>
@@ -61,7 +61,7 @@ export function RunTable({
                   {run.product} <StateTag label={run.state} />
                 </span>
               )}
-              <span className="t-detail block font-normal pad:hidden">{secondLine(run, zone)}</span>
+              <span className="t-detail block font-normal whitespace-normal pad:hidden">{secondLine(run, zone)}</span>
             </KeyCell>
             {whose && (
               <Cell className={`${WIDE} whitespace-nowrap`} strong>
@@ -78,9 +78,9 @@ export function RunTable({
             <Cell className={WIDE} quiet>
               {PURPOSE_WORDS[run.purpose]}
             </Cell>
-            <Cell figure strong className="max-pad:pt-2">
+            <Cell figure strong className="max-pad:pt-2 max-pad:pr-0!">
               {run.worst ? formatMargin(run.worst.marginDb) : ABSENT}
-              <span className="mt-1 flex justify-end font-sans font-normal tracking-normal pad:hidden">
+              <span className="mt-1 flex justify-end font-sans font-normal tracking-normal [word-spacing:normal] pad:hidden">
                 <VerdictWord verdict={run.verdict} />
               </span>
             </Cell>

@@ -3,7 +3,7 @@ import { SmallMultiple } from '@/components/charts/SmallMultiple';
 import { wholeSpan } from '@/components/charts/scale';
 import { StateTag } from '@/components/ui/StateTag';
 import { VerdictWord } from '@/components/ui/VerdictWord';
-import { formatDay, formatShortDay } from '@/format/dates';
+import { formatShortDay } from '@/format/dates';
 import { formatFrequencyRange } from '@/format/frequencies';
 import { formatDistance } from '@/format/quantities';
 import { capitalised, PORT_METHODS, PORT_WORDS, VERDICT_WORDS } from '@/format/words';
@@ -94,7 +94,7 @@ function Cell({ cell, name }: { cell: GridCell; name: string }) {
       href={`/sweeps/${sweep.id}`}
       className="block text-ink hover:no-underline"
       data-cell
-      title={`${sweep.number}, kept ${formatDay(sweep.keptAt.slice(0, 10))}`}
+      title={sweep.number}
     >
       {chart}
       {verdict !== sweep.evaluation.worst?.verdict && (

@@ -28,7 +28,7 @@ export function sampleFinding(standings: readonly Stands[]): { verdict: Verdict;
   if (!worst) {
     return {
       verdict: 'not-covered',
-      runs: [plain('Nothing is measured yet. The line is here, and the sweep will hang from it.')],
+      runs: [plain('Nothing is measured yet.')],
     };
   }
   const runs = [...opening(worst), plain('.')];

@@ -106,7 +106,8 @@ export default async function JobPage({ params }: Props) {
 function stateLine(state: string, reason: string | null, history: readonly HistoryEntry[], zone: string): string {
   const change = history.find(({ action }) => action === `job ${state}`);
   const when = change ? ` ${formatDay(change.at, zone)}${change.by ? ` by ${change.by}` : ''}` : '';
-  return `${state}${when}${reason && state === 'closed' ? `: ${reason}` : ''}`;
+  const word = state === 'open' && change ? 'reopened' : state;
+  return `${word}${when}${reason && state === 'closed' ? `: ${reason}` : ''}`;
 }
 
 function stopped(text: string): string {

@@ -24,21 +24,24 @@ const NONE: NewProduct = { organisationId: '', code: '', name: '', description: 
 export function NewJobForm({ products, clients, chosen }: Props) {
   const router = useRouter();
   const job = useSubmit<{ productId: string; title: string }, JobView>(WRITES.createJob);
-  const product = useSubmit<NewProduct, ProductView>(WRITES.createProduct);
+  const enter = useSubmit<NewProduct, ProductView>(WRITES.createProduct);
   const [known, setKnown] = useState(products);
   const [from, setFrom] = useState<'known' | 'new'>(products.items.length > 0 ? 'known' : 'new');
   const [productId, setProductId] = useState(chosen ?? '');
   const [entered, setEntered] = useState(NONE);
   const [title, setTitle] = useState('');
-  const [missing, setMissing] = useState<string | null>(null);
+  const [missing, setMissing] = useState<{ product?: string; title?: string }>({});
   const [leaving, setLeaving] = useState(false);
 
   async function open(event: FormEvent) {
     event.preventDefault();
-    setMissing(null);
+    const product = from === 'known' && !productId ? 'Choose the product the job is for.' : undefined;
+    const untitled = title.trim() ? undefined : 'A job needs a title.';
+    setMissing({ product, title: untitled });
+    if (product ?? untitled) return;
     let id = productId;
     if (from === 'new') {
-      const answer = await product.submit(entered);
+      const answer = await enter.submit(entered);
       if (!answer.ok) return;
       // From here on it is a known product, whatever becomes of the job.
       setKnown((before) => ({ ...before, items: [answer.reply, ...before.items] }));
@@ -46,14 +49,13 @@ export function NewJobForm({ products, clients, chosen }: Props) {
       setFrom('known');
       setEntered(NONE);
     }
-    if (!id) return setMissing('Choose the product the job is for.');
     const answer = await job.submit({ productId: id, title });
     if (!answer.ok) return;
     setLeaving(true);
     router.push(`/jobs/${answer.reply.id}`);
   }
 
-  const wrong = [product.problem, job.problem].find((problem) => problem && problem.errors.length === 0) ?? null;
+  const wrong = [enter.problem, job.problem].find((problem) => problem && problem.errors.length === 0) ?? null;
   return (
     <form onSubmit={open} noValidate className="mt-4 grid max-w-[36rem] gap-4" aria-label="Open a job">
       <Switch
@@ -72,10 +74,10 @@ export function NewJobForm({ products, clients, chosen }: Props) {
           onPage={setKnown}
           value={productId}
           onChange={setProductId}
-          error={missing ?? (job.fieldErrors.productId && `Product ${job.fieldErrors.productId}.`)}
+          error={missing.product ?? (job.fieldErrors.productId && `Product ${job.fieldErrors.productId}.`)}
         />
       ) : (
-        <NewProductFields value={entered} onChange={setEntered} clients={clients} errors={product.fieldErrors} />
+        <NewProductFields value={entered} onChange={setEntered} clients={clients} errors={enter.fieldErrors} />
       )}
       <Field
         label="Title of the job"
@@ -84,7 +86,7 @@ export function NewJobForm({ products, clients, chosen }: Props) {
         value={title}
         onChange={(event) => setTitle(event.target.value)}
         hint="What is asked for, as in: LD-40, CISPR 32 class B, mains and radiated"
-        error={job.fieldErrors.title && `Title ${job.fieldErrors.title}.`}
+        error={missing.title ?? (job.fieldErrors.title && `Title ${job.fieldErrors.title}.`)}
       />
       <div>
         <p className="field-label">Decision rule</p>
@@ -95,7 +97,7 @@ export function NewJobForm({ products, clients, chosen }: Props) {
       </div>
       <ProblemMessage problem={wrong} />
       <div className="flex flex-wrap gap-2">
-        <Button kind="primary" type="submit" busy={product.busy || job.busy || leaving}>
+        <Button kind="primary" type="submit" busy={enter.busy || job.busy || leaving}>
           {from === 'new' ? 'Enter the product and open the job' : 'Open the job'}
         </Button>
         <ButtonLink kind="quiet" href="/jobs">

@@ -28,21 +28,8 @@ export function StateRuns({ state, runs, zone, upload, change }: Props) {
         <StateTag label={state.label} planned={state.planned} className="mr-2 align-[2px]" />
         {state.description}
       </SectionHeading>
-      {runs.length > 0 ? (
-        <RunTable caption={`Runs of ${state.label}`} runs={runs} zone={zone} />
-      ) : (
-        <EmptyLine
-          lead={
-            state.runs > 0
-              ? 'Its runs are older than this list.'
-              : state.planned
-                ? 'Nothing is measured before it is fitted.'
-                : upload
-                  ? 'Drop its sweep files to measure it.'
-                  : 'Not measured yet.'
-          }
-        />
-      )}
+      {!state.planned && <RunTable caption={`Runs of ${state.label}`} runs={runs} zone={zone} />}
+      {runs.length === 0 && <EmptyLine lead={nothingHere(state, upload)} />}
       {(upload || change) && (
         <div className="mt-2 flex flex-wrap items-start gap-x-2">
           {upload && !state.planned && (
@@ -50,9 +37,19 @@ export function StateRuns({ state, runs, zone, upload, change }: Props) {
               Upload to {state.label}
             </ButtonLink>
           )}
-          {change && <StateActs state={state} />}
+          {change && (
+            <div className="min-w-0 flex-1">
+              <StateActs state={state} />
+            </div>
+          )}
         </div>
       )}
     </section>
   );
+}
+
+function nothingHere(state: State, upload: boolean): string {
+  if (state.runs > 0) return 'Its runs are older than this list.';
+  if (state.planned) return 'Nothing is measured before it is fitted.';
+  return upload ? 'Upload its sweep files to measure it.' : 'Not measured yet.';
 }
