@@ -83,11 +83,13 @@ export function resolveBlocks(
         line: block.firstLine,
       });
     }
-    if (gap && touches && !isComment(gapText)) {
+    // `####` is an overflow in the place of a row, not a remark, when a frequency is missing there.
+    const isRemark = isComment(gapText) && !(wordless && ahead > 1.5 * step);
+    if (gap && touches && !isRemark) {
       if (broken && (continues || isPeer(i))) return { pieces, damage: damageAt(clean, scan, block, gap), remarks };
       if (continues && wordless) return { pieces, damage: damageAt(clean, scan, block, gap), remarks };
     }
-    joinsOn = (isPeer(i) || joinsOn) && continues && gap !== null && isComment(gapText);
+    joinsOn = (isPeer(i) || joinsOn) && continues && gap !== null && isRemark;
   }
   const last = blocks.at(-1)!;
   const inLast = pieces.at(-1);
