@@ -1,7 +1,7 @@
 import { renderToStaticMarkup } from 'react-dom/server';
 import type { Actor } from '@/auth/actor';
 import { closePasswordWorkers } from '@/auth/passwordWorker';
-import { changeJob } from '@/services/jobs';
+import { changeJob, createJob } from '@/services/jobs';
 import { createState } from '@/services/samples';
 import { freshDatabase, type TestDatabase } from '../../support/database';
 import { enterWorld, type World } from '../../support/world';
@@ -155,4 +155,19 @@ test('a declined job says why, to its designer too, and takes no sample', async 
   expect(words(await markup(world.designer.actor, 'jobs/[id]'))).toContain(`Declined: ${reason}.`);
   expect(words(await markup(world.technician.actor, 'jobs/[id]'))).toContain('waits for the job to be open');
   expect(words(await markup(world.manager.actor, 'jobs/[id]'))).toMatch(/declined \d+ \w+ \d{4} by manager/);
+});
+
+test('a long list goes onward by its cursor and back to the first page, each job once', async () => {
+  const { id: productId } = world.product;
+  for (let i = 0; i < 30; i++) {
+    await createJob(world.manager.actor, { productId, title: `another ${i}`, decisionRule: 'guarded-by-u' });
+  }
+  const numbers = (html: string) => html.match(/HL-\d{4,}(?=<\/a>)/g) ?? [];
+  const first = await markup(world.manager.actor, 'jobs');
+  const after = /href="\/jobs\?after=([\w-]+)"[^>]*>Next/.exec(first)?.[1];
+  const second = await markup(world.manager.actor, 'jobs', { query: { after: after! } });
+  expect(words(first)).toContain('Of these 25 jobs 25 are open.');
+  expect([numbers(first).length, numbers(second).length]).toEqual([25, 6]);
+  expect(new Set([...numbers(first), ...numbers(second)]).size).toBe(31);
+  expect(second).toMatch(/href="\/jobs"[^>]*>First/);
 });

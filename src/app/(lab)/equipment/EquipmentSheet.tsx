@@ -76,7 +76,8 @@ interface TableProps {
 }
 
 const WIDE = 'max-pad:hidden';
-const BENCH = 'max-bench:hidden';
+/** The margin says it again beside the table. */
+const BROAD = 'max-wide:hidden';
 
 function EquipmentTable({ items, scale, chosenId, onChoose }: TableProps) {
   const { open } = useSheet();
@@ -92,7 +93,7 @@ function EquipmentTable({ items, scale, chosenId, onChoose }: TableProps) {
       <TableHead>
         <HeadCell>Item</HeadCell>
         <HeadCell className={WIDE}>Kind</HeadCell>
-        <HeadCell className={`${BENCH} w-[23%]`}>What it is</HeadCell>
+        <HeadCell className={`${BROAD} w-[23%]`}>What it is</HeadCell>
         <HeadCell className="w-[31%] max-pad:w-[34%]">
           <span className="sr-only">Calibrated until</span>
           <StripHead scale={scale} />
@@ -125,7 +126,7 @@ function EquipmentTable({ items, scale, chosenId, onChoose }: TableProps) {
             <Cell className={`${WIDE} whitespace-nowrap`} quiet>
               {kindOf(item.role)}
             </Cell>
-            <Cell className={`${BENCH} max-w-0 truncate`} quiet title={item.description}>
+            <Cell className={`${BROAD} max-w-0 truncate`} quiet title={item.description}>
               {item.description}
             </Cell>
             <Cell>

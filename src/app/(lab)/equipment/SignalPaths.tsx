@@ -42,7 +42,12 @@ export function SignalPaths({ paths, today, firstHref, nextHref }: Props) {
               )}
               <span>revision {path.revision}</span>
             </p>
-            <div className="mt-2">
+            <div
+              className="mt-2 overflow-x-auto [&>ol]:overflow-visible"
+              role="region"
+              aria-label={`Path ${path.code}`}
+              tabIndex={0}
+            >
               <SignalPath
                 items={path.items}
                 sample={{ name: 'EUT', where: `position ${path.position}` }}

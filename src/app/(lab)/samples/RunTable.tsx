@@ -5,7 +5,7 @@ import { VerdictWord } from '@/components/ui/VerdictWord';
 import { dayOf, formatDayTime, formatShortDay } from '@/format/dates';
 import { formatFrequencyMhz } from '@/format/frequencies';
 import { ABSENT, formatCount, formatMargin } from '@/format/quantities';
-import { MAINS_LINE_WORDS, PORT_WORDS, PURPOSE_WORDS } from '@/format/words';
+import { MAINS_LINE_WORDS, POLARISATION_MARKS, PORT_WORDS, PURPOSE_WORDS } from '@/format/words';
 import type { Run } from './worstRun';
 
 /** Hidden on a phone, where the second line of the first cell says it. */
@@ -23,6 +23,8 @@ export function RunTable({
   zone: string;
   whose?: boolean;
 }) {
+  // A sheet of one sample has its margin beside it.
+  const last = whose ? WIDE : 'max-wide:hidden';
   return (
     <Table caption={caption} className="max-pad:[&_td]:align-top max-pad:[&_th]:align-top">
       <TableHead>
@@ -39,11 +41,11 @@ export function RunTable({
           at
         </HeadCell>
         <HeadCell className={WIDE}>Verdict</HeadCell>
-        <HeadCell figure className={WIDE}>
+        <HeadCell figure className={last}>
           Points
         </HeadCell>
         <HeadCell className={WIDE}>Kept</HeadCell>
-        <HeadCell className={WIDE}>By</HeadCell>
+        <HeadCell className={last}>By</HeadCell>
       </TableHead>
       <tbody>
         {runs.map((run) => (
@@ -90,13 +92,13 @@ export function RunTable({
             <Cell className={WIDE}>
               <VerdictWord verdict={run.verdict} />
             </Cell>
-            <Cell figure quiet className={WIDE}>
+            <Cell figure quiet className={last}>
               {formatCount(run.points)}
             </Cell>
             <Cell quiet className={`${WIDE} whitespace-nowrap`}>
               {formatDayTime(run.keptAt, zone)}
             </Cell>
-            <Cell quiet className={`${WIDE} whitespace-nowrap`}>
+            <Cell quiet className={`${last} whitespace-nowrap`}>
               {run.by}
             </Cell>
           </Row>
@@ -113,7 +115,7 @@ export function positionOf({ line, polarisation }: Pick<Run, 'line' | 'polarisat
 
 /** Kept short: it shares a phone's width with the margin. */
 function secondLine(run: Run, zone: string): string {
-  const position = run.line ?? run.polarisation;
+  const position = run.line ?? (run.polarisation && POLARISATION_MARKS[run.polarisation]);
   return [PORT_WORDS[run.port], position, PURPOSE_WORDS[run.purpose], formatShortDay(dayOf(run.keptAt, zone))]
     .filter(Boolean)
     .join(', ');

@@ -60,7 +60,7 @@ function PortRow({ row }: { row: GridRow }) {
   return (
     <>
       <div className="pt-4 max-pad:sticky max-pad:left-0 max-pad:flex max-pad:w-[calc(100vw-2rem)] max-pad:items-baseline max-pad:justify-between max-pad:pb-1">
-        <h3 className="text-[14px] leading-5 font-semibold">{capitalised(PORT_WORDS[port])}</h3>
+        <h2 className="text-[14px] leading-5 font-semibold">{capitalised(PORT_WORDS[port])}</h2>
         <p className="t-detail">{methodOf(latest)}</p>
         <p className="t-figure text-[12.5px] leading-4 text-ink2 max-pad:hidden">{rangeOf(cells, latest)}</p>
       </div>
