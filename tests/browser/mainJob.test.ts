@@ -49,7 +49,7 @@ test('a dropped file is recognised, judged before it is kept, and says what is s
 
 test('it is kept with Enter and its verdict stands in the first sentence', async () => {
   const { page } = technician;
-  await page.getByLabel('Purpose').getByText('Final').click();
+  await page.getByRole('radio', { name: 'Final' }).check();
   await page.getByLabel('Operating mode').fill('dimmed to 10 %');
   await page.getByText('Everything is said.').waitFor();
   await page.getByRole('button', { name: 'Keep as a run' }).click();
