@@ -11,8 +11,8 @@ export type Span = Interval & { what: 'covered' | 'no-factor' | 'no-uncertainty'
 const { turn, hole } = STEP;
 const { yes } = JUDGED;
 
-/** One step, and a hair for the rounding of the axis. */
-const REACH_STEPS = 1 + 1e-9;
+/** Steps a sweep reaches beyond its ends. */
+const REACH_STEPS = 1;
 
 /** A line's segments as ranges; a hole between segments asks for nothing. */
 export function askedRanges(line: LimitLine): Interval[] {

@@ -52,7 +52,7 @@ export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
   const counts = Object.fromEntries(VERDICTS.map((verdict) => [verdict, 0])) as Record<Verdict, number>;
   for (const { verdict } of candidates) counts[verdict]++;
   counts['not-covered'] += gaps.length;
-  const uncovered: Verdict[] = pairs.length === 0 || gaps.length > 0 ? ['not-covered'] : [];
+  const uncovered: Verdict[] = gaps.length > 0 ? ['not-covered'] : [];
   const verdict = worstVerdict([...candidates.map((candidate) => candidate.verdict), ...uncovered]) ?? 'not-covered';
   return { engine: ENGINE, verdict, counts, pairs, candidates, gaps, layers };
 }

@@ -1,11 +1,16 @@
 import { POINTS_PER_TURN } from './pace';
 
 /**
- * Positions of every local minimum of values[from..to): lower than its neighbour on each side, an end being lower
+ * Positions of every local minimum of values[from..to) that is not above `atMost`: lower than its neighbour on each side, an end being lower
  * than its only neighbour, a plateau counting once by its first point. From every point the values fall, step by
  * step, to one of them.
  */
-export function* localMinima(values: Float64Array, from: number, to: number): Generator<void, number[]> {
+export function* localMinima(
+  values: Float64Array,
+  from: number,
+  to: number,
+  atMost = Infinity,
+): Generator<void, number[]> {
   const found: number[] = [];
   let lowest = from;
   let falling = true;
@@ -16,14 +21,14 @@ export function* localMinima(values: Float64Array, from: number, to: number): Ge
         falling = true;
         lowest = i;
       } else if (values[i]! > values[lowest]!) {
-        if (falling) found.push(lowest);
+        if (falling && values[lowest]! <= atMost) found.push(lowest);
         falling = false;
         lowest = i;
       }
     }
     yield;
   }
-  if (falling && from < to) found.push(lowest);
+  if (falling && from < to && values[lowest]! <= atMost) found.push(lowest);
   return found;
 }
 

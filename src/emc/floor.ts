@@ -18,6 +18,9 @@ const SEPARATE_IN_WINDOW = 4;
 const HALF_WINDOW_POINTS = 50;
 const HALF_WINDOW_BANDWIDTHS = 10;
 
+/** Minima looked at between two yields: each may call for the median of another window. */
+const MINIMA_PER_TURN = 2_048;
+
 /**
  * Points in the window of the running median: odd, at least 101 points and at least 20 bandwidths, so that a single
  * emission, which is a few bandwidths wide, never fills half of it however finely it was swept.
@@ -34,8 +37,8 @@ export function floorWindow(frequencyHz: Float64Array, { from, to }: PointRange,
  * Where the median is proven but the noise on top of it is not, more than four maxima within a window, none clear of
  * the floor, say the same. `minima` are the local minima of the margin that are not proven.
  *
- * At the ends of the run the window stays inside it; a run shorter than the window has no floor. A stretch begins and
- * ends with a point that is not proven, takes in those that adjoin it, and is one with the next when less than a
+ * At the ends of the run the window stays inside it; a run shorter than the window has no floor and is not to be asked.
+ * A stretch begins and ends with a point that is not proven, takes in those that adjoin it, and is one with the next when less than a
  * window lies between them.
  */
 export function* floorStretches(
@@ -46,16 +49,22 @@ export function* floorStretches(
   minima: readonly number[],
   clearAt: (point: number) => number,
 ): Generator<void, PointRange[]> {
-  if (run.to - run.from < window) return [];
   const unproven = (i: number) => marginDb[i]! <= provenAbove;
   const stretches = yield* medianUnproven(run, unproven, window);
-  const small = minima.filter((i) => marginDb[i]! > clearAt(i));
-  yield;
+  const small: number[] = [];
+  for (let k = 0; k < minima.length; k++) {
+    if (marginDb[minima[k]!]! > clearAt(minima[k]!)) small.push(minima[k]!);
+    if (k % MINIMA_PER_TURN === MINIMA_PER_TURN - 1) yield;
+  }
+  const crowds: PointRange[] = [];
   for (let k = 0; k + SEPARATE_IN_WINDOW < small.length; k++) {
     const last = small[k + SEPARATE_IN_WINDOW]!;
-    if (last - small[k]! < window) stretches.push({ from: small[k]!, to: last + 1 });
+    if (last - small[k]! >= window) continue;
+    const crowd = crowds[crowds.length - 1];
+    if (crowd && small[k]! < crowd.to) crowd.to = last + 1;
+    else crowds.push({ from: small[k]!, to: last + 1 });
   }
-  return joined(stretches, run, unproven, window);
+  return joined([...stretches, ...crowds], run, unproven, window);
 }
 
 function* medianUnproven(
@@ -122,18 +131,18 @@ export function floorGauge(
 ): { clearAt(point: number): number } {
   const half = window >> 1;
   const buffer = new Float64Array(window);
-  const known = new Map<number, number>();
+  const known = new Float64Array(Math.ceil((run.to - run.from) / half)).fill(Infinity);
   function clearAt(point: number): number {
     const cell = Math.floor((point - run.from) / half);
-    let clear = known.get(cell);
-    if (clear === undefined) {
+    let clear = known[cell]!;
+    if (clear === Infinity) {
       const centre = run.from + cell * half + (half >> 1);
       const start = Math.max(run.from, Math.min(centre - half, run.to - window));
       buffer.set(marginDb.subarray(start, start + window));
       const medianDb = nthSmallest(buffer, half);
       const scatterDb = nthSmallest(buffer, half + (half >> 1)) - medianDb;
       clear = medianDb - Math.min(CLEAR_AT_MOST_DB, Math.max(CLEAR_OF_FLOOR_DB, CLEAR_OF_SCATTER * scatterDb));
-      known.set(cell, clear);
+      known[cell] = clear;
     }
     return clear;
   }

@@ -4,6 +4,13 @@ export interface Interval {
   toHz: number;
 }
 
+/** Narrower than this part of its frequency, a range is the rounding of an axis and not a range. */
+const HAIR = 1e-9;
+
+function isRange(fromHz: number, toHz: number): boolean {
+  return toHz - fromHz > HAIR * toHz;
+}
+
 /** The same ground in ascending ranges that do not touch one another. */
 export function merged(ranges: readonly Interval[]): Interval[] {
   const out: Interval[] = [];
@@ -15,7 +22,7 @@ export function merged(ranges: readonly Interval[]): Interval[] {
   return out;
 }
 
-/** What both lists cover, leaving out single frequencies. Both are merged first. */
+/** What both lists cover, leaving out single frequencies and what rounding leaves. Both are merged first. */
 export function intersected(a: readonly Interval[], b: readonly Interval[]): Interval[] {
   const left = merged(a);
   const right = merged(b);
@@ -26,13 +33,13 @@ export function intersected(a: readonly Interval[], b: readonly Interval[]): Int
     for (let k = j; k < right.length && right[k]!.fromHz < range.toHz; k++) {
       const fromHz = Math.max(range.fromHz, right[k]!.fromHz);
       const toHz = Math.min(range.toHz, right[k]!.toHz);
-      if (toHz > fromHz) out.push({ fromHz, toHz });
+      if (isRange(fromHz, toHz)) out.push({ fromHz, toHz });
     }
   }
   return out;
 }
 
-/** What `whole` covers and `taken` does not, leaving out single frequencies. Both are merged first. */
+/** What `whole` covers and `taken` does not, leaving out single frequencies and what rounding leaves. Both are merged first. */
 export function without(whole: readonly Interval[], taken: readonly Interval[]): Interval[] {
   const out: Interval[] = [];
   const holes = merged(taken);
@@ -41,10 +48,10 @@ export function without(whole: readonly Interval[], taken: readonly Interval[]):
     let at = range.fromHz;
     while (j < holes.length && holes[j]!.toHz <= at) j++;
     for (let k = j; k < holes.length && holes[k]!.fromHz < range.toHz; k++) {
-      if (holes[k]!.fromHz > at) out.push({ fromHz: at, toHz: holes[k]!.fromHz });
+      if (isRange(at, holes[k]!.fromHz)) out.push({ fromHz: at, toHz: holes[k]!.fromHz });
       at = Math.max(at, holes[k]!.toHz);
     }
-    if (at < range.toHz) out.push({ fromHz: at, toHz: range.toHz });
+    if (isRange(at, range.toHz)) out.push({ fromHz: at, toHz: range.toHz });
   }
   return out;
 }

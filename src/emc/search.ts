@@ -74,12 +74,16 @@ function* searchRun(
   // The lowest margin is always prominent: when it is proven, everything is.
   if (!prominent.some(unproven)) return;
 
-  const minima = (yield* localMinima(marginDb, run.from, run.to)).filter(unproven);
+  const minima = yield* localMinima(marginDb, run.from, run.to, provenAbove);
   const window = floorWindow(frequencyHz, run, bandwidthHz);
+  if (run.to - run.from < window) {
+    for (const i of minima) found.peaks.push(i);
+    return;
+  }
   const { clearAt } = floorGauge(marginDb, run, window);
   const stretches = yield* floorStretches(marginDb, run, provenAbove, window, minima, clearAt);
-  const standsOut = new Set(stretches.length > 0 ? prominent : []);
   let next = 0;
+  let nextProminent = 0;
   for (const stretch of stretches) {
     while (next < minima.length && minima[next]! < stretch.from) found.peaks.push(minima[next++]!);
     let floor = -1;
@@ -88,7 +92,8 @@ function* searchRun(
     for (; next < minima.length && minima[next]! < stretch.to; next++) {
       const i = minima[next]!;
       const clear = marginDb[i]! <= clearAt(i);
-      if (clear && standsOut.has(i)) {
+      while (prominent[nextProminent]! < i) nextProminent++;
+      if (clear && prominent[nextProminent] === i) {
         found.peaks.push(i);
         listed = lower(listed, i, marginDb);
       } else {

@@ -122,6 +122,7 @@ export interface Evaluation {
   engine: string;
   /** Worst first by verdict, then by margin. */
   verdict: Verdict;
+  /** Candidates by verdict; every gap counts as not covered. */
   counts: Record<Verdict, number>;
   pairs: JudgedPair[];
   candidates: Candidate[];

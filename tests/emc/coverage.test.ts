@@ -31,6 +31,25 @@ describe('what a run leaves open of a limit line', () => {
     expect(gapsOf({ traces: [to(999.9)] }, line)).toEqual([[999.96, 1000, 'no-trace']]);
   });
 
+  test('one step short by the rounding of the axis is one step', () => {
+    const hz = Array.from({ length: 30 }, (_, i) => 1e6 * (1 + i / 30));
+    const reach = hz[29]! + (hz[29]! - hz[28]!);
+    const line = lineOf([[1, (reach + 1e-6) / 1e6, 60, 60]]);
+    expect(
+      gapsOf(
+        {
+          traces: [
+            traceOf(
+              hz.map(() => QUIET),
+              { frequencyHz: hz },
+            ),
+          ],
+        },
+        line,
+      ),
+    ).toEqual([]);
+  });
+
   test('a sweep that stops short leaves the rest without a trace, from one step after its last point', () => {
     expect(gapsOf({ traces: [sweep(1, 10, 51)] })).toEqual([[1.51, 2, 'no-trace']]);
     expect(gapsOf({ traces: [sweep(1.5, 10, 51)] })).toEqual([[1, 1.49, 'no-trace']]);
