@@ -1,0 +1,103 @@
+import { readFileSync } from 'node:fs';
+import type { Browser } from 'playwright-core';
+import { launchBrowser, testOrigin } from '../support/browser';
+import { DESK, openAs, PHONE, runId, type Window } from './people';
+
+/* Every page, as each role that may see it, at a desk's and a phone's width and in both rooms. */
+
+const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
+
+let browser: Browser;
+beforeAll(async () => {
+  browser = await launchBrowser();
+}, 60_000);
+afterAll(() => browser.close());
+
+interface Violation {
+  id: string;
+  nodes: { html: string; failureSummary: string }[];
+}
+
+/** What axe-core finds against WCAG 2.2 A and AA. Its own script is injected past the page's policy, as an extension would. */
+async function violations({ page }: Window): Promise<string[]> {
+  await page.evaluate(AXE);
+  const found = await page.evaluate(async () => {
+    const { axe } = window as unknown as { axe: { run(options: object): Promise<{ violations: Violation[] }> } };
+    return (await axe.run({ runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'] })).violations;
+  });
+  return found.flatMap(({ id, nodes }) => nodes.map((node) => `${id}: ${node.html.slice(0, 160)}`));
+}
+
+/** Whether the page is wider than its window; content may scroll inside its own frame, the page may not. */
+const tooWide = ({ page }: Window) =>
+  page.evaluate(() => document.documentElement.scrollWidth > document.documentElement.clientWidth + 1);
+
+/** Addresses of the records that the pages below show, looked up as the person who opens them. */
+async function pagesFor(window: Window, key: string): Promise<string[]> {
+  const first = async (list: string) => {
+    const answer = await window.context.request.get(`${testOrigin()}/api/${list}?limit=1`);
+    return ((await answer.json()) as { items: { id: string }[] }).items[0]!.id;
+  };
+  const shared = [
+    '/sweeps',
+    `/sweeps/${await runId(window, key === 'teo' || key === 'mira' || key === 'anselm' ? '-032' : '-035')}`,
+    '/jobs',
+    `/jobs/${await first('jobs')}`,
+    `/samples/${await first('samples')}`,
+    '/products',
+    `/products/${await first('products')}`,
+    '/account',
+  ];
+  return key === 'teo' ? shared : [...shared, '/sweeps/new', '/jobs/new', '/equipment'];
+}
+
+const widths = [
+  ['a desk', DESK],
+  ['a phone', PHONE],
+] as const;
+const cases = widths.flatMap(([width, viewport]) =>
+  (['paper', 'dim'] as const).flatMap((room) =>
+    (['anselm', 'mira', 'teo'] as const).map((key) => ({ width, viewport, room, key })),
+  ),
+);
+
+test.each(cases)(
+  '$key at $width, $room: no page has an accessibility violation, is wider than its window or makes the browser complain',
+  async ({ key, viewport, room }) => {
+    const window = await openAs(browser, key, viewport, room);
+    const wrong: string[] = [];
+    for (const path of await pagesFor(window, key)) {
+      const answer = await window.page.goto(testOrigin() + path, { waitUntil: 'load' });
+      if (answer!.status() !== 200) wrong.push(`${path}: ${answer!.status()}`);
+      if (/^\/sweeps\/[0-9a-z]{16}$/.test(path)) await window.page.locator('canvas').first().waitFor();
+      for (const found of await violations(window)) wrong.push(`${path}: ${found}`);
+      if (await tooWide(window)) wrong.push(`${path}: wider than its window`);
+    }
+    expect([...wrong, ...window.complaints]).toEqual([]);
+    await window.context.close();
+  },
+  180_000,
+);
+
+test.each(widths)(
+  'the sign-in page at %s has no accessibility violation in either room',
+  async (_width, viewport) => {
+    for (const room of ['paper', 'dim']) {
+      const window = await openAs(browser, null, viewport, room);
+      await window.page.goto(`${testOrigin()}/sign-in`);
+      expect([...(await violations(window)), ...window.complaints]).toEqual([]);
+      expect(await tooWide(window)).toBe(false);
+      await window.context.close();
+    }
+  },
+  60_000,
+);
+
+test('the first Tab reaches a link past the top line, and it leads to the sheet', async () => {
+  const window = await openAs(browser, 'mira');
+  await window.page.goto(`${testOrigin()}/sweeps`);
+  await window.page.keyboard.press('Tab');
+  await window.page.keyboard.press('Enter');
+  expect(await window.page.evaluate(() => document.activeElement?.id)).toBe('sheet');
+  await window.context.close();
+}, 60_000);
