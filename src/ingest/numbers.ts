@@ -21,7 +21,8 @@ export interface TextNumberReader {
 export function textNumberReader(style: NumberStyle): TextNumberReader {
   const mark = style.decimal === '.' ? '\\.' : ',';
   const gap = style.thousands === null ? null : GAP_CLASS[style.thousands]!;
-  const whole = gap === null ? '\\d+' : `\\d{1,3}(?:${gap}\\d{3})+|\\d+`;
+  // Whoever groups digits writes no zero before them: `00 150` and `075000` are pieces of other numbers.
+  const whole = gap === null ? '\\d+' : `[1-9]\\d{0,2}(?:${gap}\\d{3})+|0|[1-9]\\d*`;
   const shape = new RegExp(`^[+-]?(?:(?:${whole})(?:${mark}\\d*)?|${mark}\\d+)(?:[eE][+-]?\\d{1,9})?$`);
   const gaps = gap === null ? null : new RegExp(gap, 'g');
   return (text, shift = 0) => {

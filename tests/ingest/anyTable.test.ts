@@ -121,6 +121,12 @@ it('pairs and several traces: delimiter × decimal mark × unit × order × prea
   );
 });
 
+it('a level with two decimals before a frequency, parted by a space, is no grouped number', () => {
+  const rows = Array.from({ length: 12 }, (_, i) => `0,00 ${(150 + i * 0.075).toFixed(6).replace('.', ',')}`);
+  const recognition = recognise(utf8(`${rows.join('\n')}\n`));
+  expect(recognition).toMatchObject({ delimiter: 'space', decimalMark: ',', thousandsMark: null });
+});
+
 it('thousands in groups by any gap', () => {
   const gaps = fc.constantFrom(
     ['.', ','],
