@@ -1,11 +1,17 @@
 /** What lies between a point and the one before it. */
 export const STEP = { joined: 0, turn: 1, hole: 2 } as const;
 
-/** Steps on either side of a step that say what is usual there. */
+/**
+ * Steps on either side of a step that say what is usual there. Chosen here, because a median of 15 outlives a few
+ * odd steps and still follows a logarithmic axis.
+ */
 const NEIGHBOURS = 15;
-/** A step beyond this many usual steps is a hole. */
+/** A step beyond this many usual steps is a hole. Chosen here, because a row or two lost in printing is no hole yet. */
 const HOLE_STEPS = 3;
-/** Fewer points than this, wider apart than the bandwidth, are spot readings: nothing between them was swept. */
+/**
+ * Fewer points than this, wider apart than the bandwidth, are spot readings: nothing between them was swept. Chosen
+ * here, because with fewer there are not 15 steps to say what is usual.
+ */
 export const SWEEP_POINTS = 16;
 
 /** Throws RangeError unless every frequency is finite and above zero. */

@@ -1,4 +1,5 @@
 import { STEP } from './axis';
+import { BANDWIDTH_TOLERANCE } from './detectors';
 import { intersected, merged, without, type Interval } from './intervals';
 import { POINTS_PER_TURN } from './pace';
 import { JUDGED, type PairPoints } from './pair';
@@ -22,12 +23,16 @@ export function askedRanges(line: LimitLine): Interval[] {
 /**
  * What one trace covers of a line. The stretch between two neighbouring points is covered when both are judged; it
  * lacks what either of them lacks; across a hole of the axis it is a gap, and so is a point that holds no level.
+ * Between two points further apart than the RBW a narrow emission would not be seen at all, so that is a gap too,
+ * however even the axis is. Where the RBW is not known (null) no step is too wide: such a reading proves nothing anyway.
  * A sweep reaches one step beyond its first and its last point: one to 999.975 MHz in steps of 60 kHz is one to
  * 1000 MHz, and it adjoins one that begins at 1000 MHz.
  */
-export function* spansOf(pair: PairPoints): Generator<void, Span[]> {
+export function* spansOf(pair: PairPoints, rbwHz: number | null): Generator<void, Span[]> {
   const spans: Span[] = [];
   const { frequencyHz, steps } = pair;
+  // Within what counts as the same bandwidth, so that printed frequencies do not turn an axis of RBW steps into gaps.
+  const widestHz = rbwHz === null ? Infinity : rbwHz * (1 + BANDWIDTH_TOLERANCE);
   let first = 0;
   let what: Span['what'] | null = null;
   const close = (last: number) => {
@@ -36,7 +41,7 @@ export function* spansOf(pair: PairPoints): Generator<void, Span[]> {
   for (let start = 1; start < frequencyHz.length; start += POINTS_PER_TURN) {
     const end = Math.min(start + POINTS_PER_TURN, frequencyHz.length);
     for (let i = start; i < end; i++) {
-      const between = steps[i] === turn ? null : whatLies(pair, i);
+      const between = steps[i] === turn ? null : whatLies(pair, i, widestHz);
       if (between === what && between !== null) continue;
       close(i - 1);
       first = i - 1;
@@ -62,14 +67,16 @@ export function gapsOf(line: LimitLine, spans: readonly Span[]): CoverageGap[] {
   return gaps.sort((a, b) => a.fromHz - b.fromHz);
 }
 
-function whatLies({ steps, judged }: PairPoints, i: number): Span['what'] | null {
+function whatLies({ frequencyHz, steps, judged }: PairPoints, i: number, widestHz: number): Span['what'] | null {
   if (steps[i] === hole) return 'gap';
-  if (judged[i - 1] === yes && judged[i] === yes) return 'covered';
+  const tooWide = Math.abs(frequencyHz[i]! - frequencyHz[i - 1]!) > widestHz;
+  if (judged[i - 1] === yes && judged[i] === yes) return tooWide ? 'gap' : 'covered';
   for (const state of [judged[i - 1], judged[i]]) {
     if (state === JUDGED.noFactor) return 'no-factor';
     if (state === JUDGED.noUncertainty) return 'no-uncertainty';
     if (state === JUDGED.notRead) return 'gap';
   }
+  if (tooWide) return 'gap';
   return judged[i - 1] === yes || judged[i] === yes ? 'covered' : null;
 }
 

@@ -14,7 +14,7 @@ import { prepareUncertainty, type PreparedUncertainty } from './uncertainty';
 import { reachOf, worstVerdict } from './verdict';
 
 /** Named in every evaluation. A change that moves any figure or verdict raises the number. */
-export const ENGINE = 'stillfield-emc 1';
+export const ENGINE = 'stillfield-emc 2';
 
 /**
  * Evaluates one run: levels, margins, verdicts, candidates, coverage and the layer each trace is drawn from. Yields
@@ -116,7 +116,7 @@ function* judgeSweep(
     const found = yield* findCandidates(pair.points, reach, pair.bandwidthHz, LISTED_AT_LEAST);
     const { open, others } = candidatesOf(found, trace, hung, pair.line, pair.points, purpose);
     yield;
-    const spans = yield* spansOf(pair.points);
+    const spans = yield* spansOf(pair.points, trace.rbwHz);
     const judged = { traceIndex: trace.index, lineId: line.id, ...worstOf(pair.points) };
     judgements.push({ line, pair: judged, open, others, spans });
   }

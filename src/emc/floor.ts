@@ -9,12 +9,22 @@ export interface PointRange {
 
 /** A peak stands clear of the floor from here on (receivers want ambient and floor 6 dB down: CISPR 16-2-3). */
 export const CLEAR_OF_FLOOR_DB = 6;
-/** Noise read without averaging scatters more and asks for more: this many times its own scatter, up to 12 dB. */
+/**
+ * Noise read without averaging scatters more and asks for more: this many times its own scatter, up to 12 dB. Chosen
+ * here, because three quartile distances (two standard deviations of normal noise) leave few peaks to noise, and
+ * because a peak 12 dB clear is an emission whatever the noise does.
+ */
 const CLEAR_OF_SCATTER = 3;
 const CLEAR_AT_MOST_DB = 12;
-/** More unproven maxima than this within one window, none of them clear of the floor, are the floor. */
+/**
+ * More unproven maxima than this within one window, none of them clear of the floor, are the floor. Chosen here,
+ * because four can still be looked at one by one, and a list of dozens hides what matters.
+ */
 const SEPARATE_IN_WINDOW = 4;
-/** The floor is judged over this many points on either side, and at least this many bandwidths. */
+/**
+ * The floor is judged over this many points on either side, and at least this many bandwidths. Chosen here, because a
+ * median of 101 points is steady to a fraction of the scatter, and because an emission is a few bandwidths wide.
+ */
 const HALF_WINDOW_POINTS = 50;
 const HALF_WINDOW_BANDWIDTHS = 10;
 

@@ -8,8 +8,9 @@ const QUIET = 10;
 const sweep = (startMhz: number, stepKhz: number, points: number, more: Parameters<typeof traceOf>[1] = {}) =>
   traceOf(
     Array.from({ length: points }, () => QUIET),
-    { startHz: startMhz * 1e6, stepHz: stepKhz * 1e3, ...more },
+    { startHz: startMhz * 1e6, stepHz: stepKhz * 1e3, rbwHz: stepKhz * 1e3, ...more },
   );
+const RBW = { rbwHz: 10e3 };
 const LINE = lineOf([[1, 2, 60, 60]]);
 
 /** Gaps as [from MHz, to MHz, because]. */
@@ -41,7 +42,7 @@ describe('what a run leaves open of a limit line', () => {
           traces: [
             traceOf(
               hz.map(() => QUIET),
-              { frequencyHz: hz },
+              { frequencyHz: hz, rbwHz: 40e3 },
             ),
           ],
         },
@@ -55,7 +56,9 @@ describe('what a run leaves open of a limit line', () => {
     expect(gapsOf({ traces: [sweep(1.5, 10, 51)] })).toEqual([[1, 1.49, 'no-trace']]);
     expect(
       gapsOf({
-        traces: [traceOf(Array(51).fill(QUIET), { frequencyHz: Array.from({ length: 51 }, (_, i) => 2e6 - i * 1e4) })],
+        traces: [
+          traceOf(Array(51).fill(QUIET), { frequencyHz: Array.from({ length: 51 }, (_, i) => 2e6 - i * 1e4), ...RBW }),
+        ],
       }),
     ).toEqual([[1, 1.49, 'no-trace']]);
   });
@@ -96,13 +99,13 @@ describe('what a run leaves open of a limit line', () => {
         traces: [
           traceOf(
             hz.map(() => QUIET),
-            { frequencyHz: hz },
+            { frequencyHz: hz, ...RBW },
           ),
         ],
       }),
     ).toEqual([[1.3, 1.4, 'gap']]);
     const volts = Array.from({ length: 101 }, (_, i) => (i === 50 ? 0 : 5));
-    expect(gapsOf({ traces: [traceOf(volts, { startHz: 1e6, stepHz: 1e4, unit: 'uV' })] })).toEqual([
+    expect(gapsOf({ traces: [traceOf(volts, { startHz: 1e6, stepHz: 1e4, unit: 'uV', ...RBW })] })).toEqual([
       [1.49, 1.51, 'gap'],
     ]);
   });
@@ -119,7 +122,7 @@ describe('what a run leaves open of a limit line', () => {
           traces: [
             traceOf(
               hz.map(() => QUIET),
-              { frequencyHz: hz },
+              { frequencyHz: hz, ...RBW },
             ),
           ],
         },
@@ -131,6 +134,40 @@ describe('what a run leaves open of a limit line', () => {
   test('what one trace of the chosen kind covers is covered', () => {
     const halves = [sweep(1, 10, 51, { index: 0 }), sweep(1.5, 10, 51, { index: 1 })];
     expect(gapsOf({ traces: halves })).toEqual([]);
+  });
+
+  test('40 points every 25.6 MHz at RBW 120 kHz see next to nothing of 30 to 1000 MHz: one gap, not covered', () => {
+    const line = publishedLine('cispr32-b-re-3m');
+    const coarse = (rbwHz: number | null) => sweep(30, 25_600, 40, { unit: 'dBuV/m', rbwHz });
+    const run = (rbwHz: number | null) => evaluateNow(inputOf({ traces: [coarse(rbwHz)], lines: [line] }));
+    expect(gapsOf({ traces: [coarse(120e3)] }, line)).toEqual([[30, 1000, 'gap']]);
+    expect(run(120e3)).toMatchObject({ verdict: 'not-covered', counts: { over: 0, 'needs-final': 0 } });
+    expect(run(26e6)).toMatchObject({ verdict: 'under', gaps: [] });
+    // Without an RBW nothing is proven, however close the points are.
+    expect(run(null)).toMatchObject({ verdict: 'needs-final', gaps: [] });
+  });
+
+  test('a step as wide as the RBW is covered, one wider by more than printing rounds is not', () => {
+    const steps = (stepKhz: number) => gapsOf({ traces: [sweep(0.9, stepKhz, 400, { rbwHz: 9e3 })] });
+    expect([4.5, 9, 9.05].map(steps)).toEqual([[], [], []]);
+    expect(steps(9.2)).toEqual([[1, 2, 'gap']]);
+  });
+
+  test('the coarse part of a sweep is one gap and its fine parts are covered; a finer trace fills it', () => {
+    const even = (fromHz: number, stepHz: number, points: number) =>
+      Array.from({ length: points }, (_, i) => fromHz + i * stepHz);
+    const hz = [...even(1e6, 9e3, 40), ...even(1.36e6, 20e3, 10), ...even(1.56e6, 9e3, 60)];
+    const mixed = traceOf(
+      hz.map(() => QUIET),
+      { frequencyHz: hz },
+    );
+    expect(gapsOf({ traces: [mixed] })).toEqual([[1.36, 1.56, 'gap']]);
+    expect(gapsOf({ traces: [mixed, sweep(1.3, 4.5, 80, { index: 1, rbwHz: 9e3 })] })).toEqual([]);
+  });
+
+  test('a line narrower than a coarse step is not covered by the points around it', () => {
+    const around = sweep(0.4, 1_000, 40, { rbwHz: 9e3 });
+    expect(gapsOf({ traces: [around] }, lineOf([[2.5, 3, 60, 60]]))).toEqual([[2.5, 3, 'gap']]);
   });
 
   test('spot readings cover nothing between them', () => {
