@@ -47,6 +47,8 @@ export function candidatesOf(
       ...facts,
       detector: trace.detector,
       rbwHz: trace.rbwHz,
+      vbwHz: trace.vbwHz,
+      rbwShape: trace.rbwShape,
       lineDetector: line.detector,
       requiredBandwidthHz: line.bandwidthHz,
       purpose,

@@ -5,6 +5,10 @@ export interface ReadWith {
   detector: Detector;
   /** Resolution bandwidth; null when not known. */
   rbwHz: number | null;
+  /** Video bandwidth where it is stated. */
+  vbwHz?: number | null;
+  /** How far down the RBW is measured; not stated counts as 6 dB. */
+  rbwShape?: '6 dB' | '3 dB' | null;
 }
 
 /** What a line asks for. */
@@ -28,18 +32,46 @@ export function detectorOrder(detector: Detector): number | null {
   return null;
 }
 
+/** Width of a Gaussian filter 6 dB down beside its width 3 dB down: √(6 dB / 3 dB) = 1.414. Source: |H|² = exp(−a·f²). */
+export const GAUSSIAN_6DB_PER_3DB = Math.SQRT2;
+
+/**
+ * True when a VBW is stated that is narrower than the RBW: a peak or quasi-peak reading behind it is a video average,
+ * which can lie below any of the detectors. An average stays an average.
+ */
+export function isVideoAverage({ detector, rbwHz, vbwHz }: ReadWith): boolean {
+  if (detector !== 'peak' && detector !== 'quasi-peak') return false;
+  return rbwHz !== null && vbwHz != null && vbwHz < rbwHz * (1 - BANDWIDTH_TOLERANCE);
+}
+
+/**
+ * The widest the filter can be 6 dB down, which is how a line's bandwidth is stated: 1.41 times the RBW for a filter
+ * stated at 3 dB, taken as Gaussian. Null when the RBW is not known.
+ */
+export function widestAt6DbHz({ rbwHz, rbwShape }: ReadWith): number | null {
+  return rbwHz !== null && rbwShape === '3 dB' ? rbwHz * GAUSSIAN_6DB_PER_3DB : rbwHz;
+}
+
 /** True when a level under the line, read this way, shows that the line's own detector would read under it too. */
 export function provesUnder(trace: ReadWith, line: AskedFor): boolean {
+  if (isVideoAverage(trace)) return false;
+  // A filter stated at 3 dB is at least as wide 6 dB down, whatever its shape: the RBW itself is what is certain.
   return detectorAtOrAbove(trace.detector, line.detector) && bandwidthRequiredOrWider(trace.rbwHz, line.bandwidthHz);
 }
 
 /** True when a level over the line, read this way, shows that the line's own detector would read over it too. */
 export function provesOver(trace: ReadWith, line: AskedFor): boolean {
-  return detectorAtOrBelow(trace.detector, line.detector) && bandwidthRequiredOrNarrower(trace.rbwHz, line.bandwidthHz);
+  if (isVideoAverage(trace)) return false;
+  const widestHz = widestAt6DbHz(trace);
+  return detectorAtOrBelow(trace.detector, line.detector) && bandwidthRequiredOrNarrower(widestHz, line.bandwidthHz);
 }
 
-/** True when the trace was read with the line's own detector in the bandwidth the line asks for. */
+/**
+ * True when the trace was read with the line's own detector in the bandwidth the line asks for, which is stated at
+ * 6 dB: a filter stated at 3 dB is never that one.
+ */
 export function readAsAsked(trace: ReadWith, line: AskedFor): boolean {
+  if (trace.rbwShape === '3 dB') return false;
   return trace.detector === line.detector && provesUnder(trace, line) && provesOver(trace, line);
 }
 

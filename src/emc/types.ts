@@ -55,6 +55,10 @@ export interface Trace {
   name: string;
   detector: Detector;
   rbwHz: number | null;
+  /** Video bandwidth where it is stated. */
+  vbwHz?: number | null;
+  /** How far down the RBW is measured; not stated counts as 6 dB, which is how CISPR 16-1-1 states its bandwidths. */
+  rbwShape?: '6 dB' | '3 dB' | null;
   unit: LevelUnit;
   frequencyHz: Float64Array;
   /** As read, rounded once to Float32. */

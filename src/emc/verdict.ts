@@ -3,6 +3,8 @@ import {
   bandwidthRequiredOrWider,
   detectorAtOrAbove,
   detectorAtOrBelow,
+  isVideoAverage,
+  widestAt6DbHz,
 } from './detectors';
 import { detectorOrder, provesOver, provesUnder, readAsAsked, type AskedFor, type ReadWith } from './detectors';
 import { VERDICTS, type Detector, type LineDetector, type Purpose, type Verdict } from './kinds';
@@ -13,6 +15,8 @@ export interface ReadingFacts {
   uncertaintyDb: number | null;
   detector: Detector;
   rbwHz: number | null;
+  vbwHz?: number | null;
+  rbwShape?: '6 dB' | '3 dB' | null;
   lineDetector: LineDetector;
   requiredBandwidthHz: number;
   purpose: Purpose;
@@ -33,7 +37,7 @@ export interface Reach {
 
 /**
  * What a trace can show about a line. A final read with the line's own detector and bandwidth decides as far as its
- * uncertainty lets it. Anything else shows under only from a detector at or above the line's own in the required
+ * uncertainty lets it. Behind a VBW narrower than its RBW a peak shows nothing. Anything else shows under only from a detector at or above the line's own in the required
  * bandwidth or wider, and over only from one at or below in the required bandwidth or narrower. An ambient run is
  * without the sample and shows nothing about it.
  */
@@ -89,33 +93,43 @@ function becauseOf(verdict: Verdict, facts: ReadingFacts, marginDb: number, unce
   if (verdict === 'inconclusive') {
     return 'The margin is within the expanded uncertainty; another reading would not settle it.';
   }
-  const { detector, rbwHz, lineDetector, requiredBandwidthHz } = facts;
+  const { detector, rbwHz, vbwHz, rbwShape, lineDetector, requiredBandwidthHz } = facts;
   const required = bandwidthText(requiredBandwidthHz);
   if (detector === 'unknown') return 'The detector is not known, so the reading shows neither under nor over.';
   if (detectorOrder(detector) === null) {
     return `A reading in ${detector} shows neither under nor over against a limit in ${lineDetector}.`;
   }
   if (rbwHz === null) return `The RBW is not known; the limit asks for ${required}.`;
+  if (isVideoAverage(facts) && vbwHz != null) {
+    const than = `narrower than RBW ${bandwidthText(rbwHz)}`;
+    return `VBW ${bandwidthText(vbwHz)} is ${than}, so the reading is a video average.`;
+  }
+  const stated = `RBW ${bandwidthText(rbwHz)}${rbwShape === '3 dB' ? ' at 3 dB' : ''}`;
   if (marginDb > uncertaintyDb) {
     if (!detectorAtOrAbove(detector, lineDetector)) {
       return `A reading in ${detector} can lie below ${lineDetector}, so it does not show under.`;
     }
     if (!bandwidthRequiredOrWider(rbwHz, requiredBandwidthHz)) {
-      return `RBW ${bandwidthText(rbwHz)} is narrower than the ${required} required, so the level may read low.`;
+      return `${stated} is narrower than the ${required} required, so the level may read low.`;
     }
   }
   if (marginDb < -uncertaintyDb) {
     if (!detectorAtOrBelow(detector, lineDetector)) {
       return `A reading in ${detector} can lie above ${lineDetector}, so it does not show over.`;
     }
-    if (!bandwidthRequiredOrNarrower(rbwHz, requiredBandwidthHz)) {
-      return `RBW ${bandwidthText(rbwHz)} is wider than the ${required} required, so the level may read high.`;
+    if (!bandwidthRequiredOrNarrower(widestAt6DbHz(facts), requiredBandwidthHz)) {
+      return `${stated} is wider than the ${required} required, so the level may read high.`;
     }
   }
   return `The margin is within the expanded uncertainty; a final in ${lineDetector} at ${required} has to decide.`;
 }
 
-function bandwidthText(hz: number): string {
-  if (hz >= 1e6) return `${hz / 1e6} MHz`;
-  return hz >= 1e3 ? `${hz / 1e3} kHz` : `${hz} Hz`;
+/**
+ * A bandwidth in words, with at most four significant digits: 120 kHz, 9 kHz, 1 MHz, 119.3 kHz. It is wording, for
+ * sentences that name a setting, and not a result: nothing is computed from it and no figure on a page comes from it.
+ */
+export function bandwidthText(hz: number): string {
+  const digits = (figure: number) => Number(figure.toPrecision(4));
+  if (digits(hz) >= 1e6) return `${digits(hz / 1e6)} MHz`;
+  return digits(hz) >= 1e3 ? `${digits(hz / 1e3)} kHz` : `${digits(hz)} Hz`;
 }

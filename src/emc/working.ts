@@ -66,6 +66,8 @@ function judgement(
     uncertaintyDb: at.uncertaintyDb,
     detector: trace.detector,
     rbwHz: trace.rbwHz,
+    vbwHz: trace.vbwHz,
+    rbwShape: trace.rbwShape,
     lineDetector: line.detector,
     requiredBandwidthHz: line.bandwidthHz,
     purpose: input.purpose,

@@ -58,6 +58,8 @@ export function traceOf(
     stepHz?: number;
     detector?: Detector;
     rbwHz?: number | null;
+    vbwHz?: number | null;
+    rbwShape?: '6 dB' | '3 dB' | null;
     unit?: LevelUnit;
     index?: number;
   } = {},
@@ -68,6 +70,8 @@ export function traceOf(
     name: `trace ${more.index ?? 0}`,
     detector: more.detector ?? 'quasi-peak',
     rbwHz: more.rbwHz === undefined ? 9_000 : more.rbwHz,
+    vbwHz: more.vbwHz,
+    rbwShape: more.rbwShape,
     unit: more.unit ?? 'dBuV',
     frequencyHz: Float64Array.from(more.frequencyHz ?? readings.map((_, i) => startHz + i * stepHz)),
     reading: Float32Array.from(readings),

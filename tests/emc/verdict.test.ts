@@ -1,6 +1,6 @@
 import uncertainties from '@fixtures/published/uncertainty.json';
 import { DETECTORS, LINE_DETECTORS, PURPOSES, VERDICTS, type Detector, type Verdict } from '@/emc/kinds';
-import { readingVerdict, worstVerdict, type ReadingFacts } from '@/emc/verdict';
+import { bandwidthText, readingVerdict, worstVerdict, type ReadingFacts } from '@/emc/verdict';
 
 const AS_ASKED: ReadingFacts = {
   marginDb: 5,
@@ -110,6 +110,17 @@ describe('why a reading cannot decide', () => {
     ['the detector is above the line', { detector: 'peak', marginDb: -9 }, /peak can lie above quasi-peak/],
     ['the bandwidth is narrower', { rbwHz: 100e3 }, /RBW 100 kHz is narrower than the 120 kHz required/],
     ['the bandwidth is wider', { rbwHz: 1e6, marginDb: -9 }, /RBW 1 MHz is wider than the 120 kHz required/],
+    [
+      'the video bandwidth is narrower',
+      { detector: 'peak', vbwHz: 100 },
+      /^VBW 100 Hz is narrower than RBW 120 kHz, so the reading is a video average\.$/,
+    ],
+    [
+      'the filter is stated at 3 dB',
+      { rbwShape: '3 dB', marginDb: -9 },
+      /^RBW 120 kHz at 3 dB is wider than the 120 kHz required/,
+    ],
+    ['the bandwidth is no round figure', { rbwHz: 100e3 / 3 }, /RBW 33\.33 kHz is narrower than the 120 kHz/],
     ['the bandwidth is not known', { rbwHz: null }, /RBW is not known; the limit asks for 120 kHz/],
     ['the detector is not known', { detector: 'unknown' }, /detector is not known/],
     ['the detector proves nothing', { detector: 'log-average' }, /log-average shows neither under nor over/],
@@ -117,6 +128,26 @@ describe('why a reading cannot decide', () => {
     ['a final is within U', { marginDb: 1, purpose: 'final' }, /another reading would not settle it/],
   ])('%s', (_, facts, sentence) => {
     expect(because(facts)).toMatch(sentence);
+  });
+
+  test('a final behind a 3 dB filter, or a narrow VBW, needs another one', () => {
+    expect(verdictOf({ rbwShape: '3 dB', marginDb: -9 })).toBe('needs-final');
+    expect(verdictOf({ rbwShape: '3 dB', marginDb: 1 })).toBe('needs-final');
+    expect(verdictOf({ rbwShape: '3 dB', marginDb: 9 })).toBe('under');
+    expect(verdictOf({ vbwHz: 10e3, marginDb: 9 })).toBe('needs-final');
+  });
+
+  test.each<[number, string]>([
+    [200, '200 Hz'],
+    [9e3, '9 kHz'],
+    [120e3, '120 kHz'],
+    [1e6, '1 MHz'],
+    [120e3 * 1.1 - 1e-7, '132 kHz'],
+    [999.99, '1 kHz'],
+    [999_999, '1 MHz'],
+    [1 / 3, '0.3333 Hz'],
+  ])('%d Hz is written as %s', (hz, text) => {
+    expect(bandwidthText(hz)).toBe(text);
   });
 
   test('no sentence says pass or fail', () => {
