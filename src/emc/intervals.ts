@@ -7,7 +7,8 @@ export interface Interval {
 /** Narrower than this part of its frequency, a range is the rounding of an axis and not a range. */
 const HAIR = 1e-9;
 
-function isRange(fromHz: number, toHz: number): boolean {
+/** True when there is ground between two frequencies, and not only what rounding leaves. */
+export function isRange(fromHz: number, toHz: number): boolean {
   return toHz - fromHz > HAIR * toHz;
 }
 

@@ -1,4 +1,5 @@
 import { detectorOrder } from './detectors';
+import { isRange } from './intervals';
 import type { Detector, LineDetector, LineUnit } from './kinds';
 import type { LimitLine } from './types';
 
@@ -15,7 +16,7 @@ export interface PairableTrace {
 const PROVE_NOTHING: Detector[] = ['unknown', 'rms-average', 'sample', 'log-average', 'negative-peak'];
 
 /**
- * The traces a line is judged by. Only traces in the line's unit with a point in its range are asked. Of these:
+ * The traces a line is judged by. Only traces in the line's unit that share a range with it are asked. Of these:
  * the ones read with the line's own detector; without one, those with the nearest detector above it, which can show
  * under (quasi-peak before peak for an average line: both lie above average, quasi-peak closer); else the nearest
  * below, which can show over; else one kind that proves nothing, so that its candidates still ask for a final.
@@ -44,8 +45,16 @@ export function ownLine(trace: PairableTrace, lines: readonly LimitLine[]): Limi
   return hangingLines(trace.detector, trace.levelUnit, lines).find((line) => reaches(line, trace)) ?? null;
 }
 
+/**
+ * True when trace and line share a range. An edge in common alone is none: a sweep that ends at 1 GHz is not one of a
+ * line that begins there. A reading at a single frequency reaches every line that has a limit at it.
+ */
 function reaches(line: LimitLine, { lowestHz, highestHz }: PairableTrace): boolean {
-  return line.segments.some(({ startHz, stopHz }) => startHz <= highestHz && stopHz >= lowestHz);
+  return line.segments.some(({ startHz, stopHz }) => {
+    const fromHz = Math.max(startHz, lowestHz);
+    const toHz = Math.min(stopHz, highestHz);
+    return lowestHz === highestHz ? fromHz <= toHz : isRange(fromHz, toHz);
+  });
 }
 
 function preference(detector: Detector, asked: LineDetector): number {

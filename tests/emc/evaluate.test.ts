@@ -211,6 +211,25 @@ describe('1 GHz, where lines of different detectors meet', () => {
   });
 });
 
+describe('a quasi-peak sweep that ends at 1 GHz beside lines that begin there', () => {
+  test('is judged by the quasi-peak line alone; the lines above 1 GHz are open', () => {
+    const lines = ['cispr32-b-re-3m', 'cispr32-b-re-1g-av', 'cispr32-b-re-1g-pk'].map(publishedLine);
+    const hz = Array.from({ length: 401 }, (_, i) => 980e6 + i * 50e3);
+    const swept = traceOf(
+      hz.map(() => 20),
+      { frequencyHz: hz, unit: 'dBuV/m', rbwHz: 120e3 },
+    );
+    const found = evaluateNow(inputOf({ traces: [swept], lines }));
+    expect(found.pairs.map(({ lineId }) => lineId)).toEqual(['cispr32-b-re-3m']);
+    expect(found.counts['needs-final']).toBe(0);
+    expect(found.gaps.map(({ lineId, because }) => [lineId, because])).toEqual([
+      ['cispr32-b-re-3m', 'no-trace'],
+      ['cispr32-b-re-1g-av', 'no-trace'],
+      ['cispr32-b-re-1g-pk', 'no-trace'],
+    ]);
+  });
+});
+
 /** Any small run: several traces, terms applied or not, lines with and without holes. */
 const anyInput = fc
   .record({

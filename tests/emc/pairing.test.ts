@@ -40,7 +40,29 @@ describe('which traces judge a line', () => {
     expect(tracesFor(QP, [{ ...trace!, levelUnit: null }])).toEqual([]);
     expect(tracesFor(QP, [{ ...trace!, lowestHz: 31e6, highestHz: 1e9 }])).toEqual([]);
     expect(tracesFor(RE_PK, [radiated('peak', 30, 999.99)])).toEqual([]);
-    expect(tracesFor(RE_PK, [radiated('peak', 30, 1000)])).toHaveLength(1);
+  });
+});
+
+describe('an edge in common is no reach', () => {
+  const reached = (line: typeof QP, from: number, to: number) => tracesFor(line, [radiated('peak', from, to)]).length;
+  test('a sweep that ends where the line begins, or begins where it ends, does not reach it', () => {
+    expect(reached(RE_PK, 30, 1000)).toBe(0);
+    expect(reached(RE_PK, 30, 1000 + 1e-10)).toBe(0);
+    expect(reached(RE_QP, 1000, 6000)).toBe(0);
+    expect(reached(RE_PK, 30, 1000.1)).toBe(1);
+  });
+
+  test('one that begins below and ends at the end of the line reaches it, and so does one that begins at its start', () => {
+    expect(reached(RE_QP, 20, 1000)).toBe(1);
+    expect(reached(RE_QP, 30, 40)).toBe(1);
+    expect(reached(RE_QP, 999, 1000)).toBe(1);
+    expect(reached(RE_PK, 1000, 6000)).toBe(1);
+  });
+
+  test('a reading at one frequency reaches every line with a limit there', () => {
+    expect(reached(RE_QP, 1000, 1000)).toBe(1);
+    expect(reached(RE_PK, 1000, 1000)).toBe(1);
+    expect(reached(RE_PK, 999, 999)).toBe(0);
   });
 });
 
