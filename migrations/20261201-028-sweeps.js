@@ -14,6 +14,7 @@ module.exports = {
       \`line\` ENUM('L','N','L1','L2','L3') NULL,
       \`polarisation\` ENUM('horizontal','vertical') NULL,
       \`height_m\` DOUBLE NULL,
+      \`height_swept\` BOOLEAN NOT NULL DEFAULT FALSE,
       \`azimuth_deg\` DOUBLE NULL,
       \`distance_m\` DOUBLE NULL,
       \`operating_mode\` VARCHAR(120) NOT NULL,

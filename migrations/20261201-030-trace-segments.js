@@ -6,8 +6,8 @@ module.exports = {
       \`sweep_id\` BIGINT UNSIGNED NOT NULL,
       \`trace_index\` SMALLINT UNSIGNED NOT NULL,
       \`seq\` INT UNSIGNED NOT NULL,
-      \`low_level\` FLOAT NOT NULL,
-      \`high_level\` FLOAT NOT NULL,
+      \`low_level\` FLOAT NULL,
+      \`high_level\` FLOAT NULL,
       \`levels\` MEDIUMBLOB NOT NULL,
       PRIMARY KEY (\`sweep_id\`, \`trace_index\`, \`seq\`),
       CONSTRAINT \`fk_trace_segments_sweep\` FOREIGN KEY (\`sweep_id\`) REFERENCES \`sweeps\` (\`id\`)

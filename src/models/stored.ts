@@ -27,6 +27,9 @@ export interface StoredReading {
   alreadyCorrected: string[];
   traces: { index: number; name: string; unit: LevelUnit; detector: Detector; rbwHz: number | null }[];
   remarks: string[];
+  /** As the file states them; a video filter narrower than the RBW averages. */
+  vbwHz?: number | null;
+  rbwShape?: '6 dB' | '3 dB' | null;
 }
 
 /** The revisions an evaluation used, by public id. */

@@ -20,6 +20,7 @@ export class Sweep extends Model<InferAttributes<Sweep>, InferCreationAttributes
   declare line: CreationOptional<'L' | 'N' | 'L1' | 'L2' | 'L3' | null>;
   declare polarisation: CreationOptional<'horizontal' | 'vertical' | null>;
   declare heightM: CreationOptional<number | null>;
+  declare heightSwept: CreationOptional<boolean>;
   declare azimuthDeg: CreationOptional<number | null>;
   declare distanceM: CreationOptional<number | null>;
   declare operatingMode: string;
@@ -53,6 +54,7 @@ export function defineSweep(sequelize: Sequelize): void {
       line: { type: DataTypes.ENUM('L', 'N', 'L1', 'L2', 'L3'), allowNull: true },
       polarisation: { type: DataTypes.ENUM('horizontal', 'vertical'), allowNull: true },
       heightM: { type: DataTypes.DOUBLE, field: 'height_m', allowNull: true },
+      heightSwept: { type: DataTypes.BOOLEAN, field: 'height_swept', allowNull: false, defaultValue: false },
       azimuthDeg: { type: DataTypes.DOUBLE, field: 'azimuth_deg', allowNull: true },
       distanceM: { type: DataTypes.DOUBLE, field: 'distance_m', allowNull: true },
       operatingMode: { type: DataTypes.STRING(120), field: 'operating_mode', allowNull: false },

@@ -25,14 +25,16 @@ export function evenAxis(frequencyHz: Float64Array): { startHz: number; stepHz: 
   return { startHz, stepHz };
 }
 
-function extremes(values: Float64Array | Float32Array): [number, number] {
+/** Lowest and highest finite value; null when there is none. */
+function extremes(values: Float64Array | Float32Array): [number, number] | [null, null] {
   let low = Infinity;
   let high = -Infinity;
   for (const value of values) {
+    if (!Number.isFinite(value)) continue;
     if (value < low) low = value;
     if (value > high) high = value;
   }
-  return [low, high];
+  return low <= high ? [low, high] : [null, null];
 }
 
 /** Writes the axis once and the levels of each trace, in file order, segment by segment. */
@@ -50,8 +52,8 @@ export async function writeTraces(
       seq,
       firstIndex: at,
       points: axis.length,
-      lowHz,
-      highHz,
+      lowHz: lowHz ?? 0,
+      highHz: highHz ?? 0,
       startHz: even?.startHz ?? null,
       stepHz: even?.stepHz ?? null,
       axis: even ? null : bytesOf(axis),

@@ -19,7 +19,7 @@ import type { Actor } from '@/auth/actor';
 import { evaluateNow } from '@/emc/evaluate';
 import { recognise } from '@/ingest/recognise';
 import { createJob } from '@/services/jobs';
-import { judgeFile } from '@/services/judgeFile';
+import { gather, judge } from '@/services/judgeFile';
 import { keepSweep } from '@/services/keepSweep';
 import { createProduct } from '@/services/products';
 import { createSample } from '@/services/samples';
@@ -103,7 +103,14 @@ async function enterLab(): Promise<Lab> {
 async function benchImport({ actor, choice, stateId }: Lab): Promise<string> {
   const text = sweepText(POINTS);
   const bytes = new TextEncoder().encode(text);
-  const about = { stateId, operatingMode: 'bench', heightM: null, azimuthDeg: null, measuredAt: null };
+  const about = {
+    stateId,
+    operatingMode: 'bench',
+    heightM: null,
+    heightSwept: false,
+    azimuthDeg: null,
+    measuredAt: null,
+  };
   let runId = '';
   const whole = await median(async () => {
     const file = await createSweepFile(actor, { name: 'bench.csv', bytes });
@@ -112,7 +119,9 @@ async function benchImport({ actor, choice, stateId }: Lab): Promise<string> {
   const papaparse = await median(() => Papa.parse(text, { dynamicTyping: true }));
   const reading = await median(() => bytes.reduce((sum, byte) => sum ^ byte, 0));
   const recognising = await median(() => recognise(bytes, 'bench.csv'));
-  const { input } = await unitOfWork(() => judgeFile(bytes, recognise(bytes), choice, new Date()));
+  const recognition = recognise(bytes);
+  const gathered = await unitOfWork(() => gather(recognition, choice, new Date()));
+  const { input } = await judge(bytes, recognition, choice, gathered);
   const evaluating = await median(() => evaluateNow(input));
   say({
     bench: 'import',

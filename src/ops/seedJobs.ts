@@ -68,7 +68,18 @@ export async function seedRuns(
     const actor = people.actor(run.by);
     const { measuredAt, keptAt } = timesOf(run, seedDay);
     const file = await createSweepFile(actor, generateFile(run, seedDay));
-    const { purpose, port, operatingMode, line, polarisation, heightM, azimuthDeg, distanceM, valuesHold } = run;
+    const {
+      purpose,
+      port,
+      operatingMode,
+      line,
+      polarisation,
+      heightM,
+      heightSwept,
+      azimuthDeg,
+      distanceM,
+      valuesHold,
+    } = run;
     const { alreadyCorrected, frequencyUnit, traces } = run;
     await keepSweep(
       actor,
@@ -81,6 +92,7 @@ export async function seedRuns(
         line,
         polarisation,
         heightM,
+        heightSwept,
         azimuthDeg,
         distanceM,
         pathId: paths.get(run.path)!,
@@ -89,7 +101,7 @@ export async function seedRuns(
         alreadyCorrected,
         frequencyUnit,
         centreHz: null,
-        sweepIndex: 0,
+        sweepIndex: null,
         traces,
         measuredAt,
       },

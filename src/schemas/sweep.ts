@@ -31,11 +31,12 @@ export const sweepChoice = z.strictObject({
   pathId: publicId.nullable(),
   limitSetId: publicId,
   valuesHold: z.enum(['receiver-input', 'field']),
-  /** Path terms that the reading already holds, by term id. */
-  alreadyCorrected: z.array(z.string().max(80)).max(20).default([]),
+  /** Path terms that the reading already holds, by term id; null: nobody has said, which a file that says it is corrected refuses. */
+  alreadyCorrected: z.array(z.string().max(80)).max(20).nullable().default(null),
   frequencyUnit: z.enum(['Hz', 'kHz', 'MHz', 'GHz']),
   centreHz: z.number().nullable().default(null),
-  sweepIndex: z.int().min(0).default(0),
+  /** Which sweep of the file; null only where it holds one. */
+  sweepIndex: z.int().min(0).nullable().default(null),
   traces: z
     .array(
       z.strictObject({
@@ -58,6 +59,8 @@ export const keepSweep = z.strictObject({
   stateId: publicId,
   operatingMode: z.string().trim().min(1, 'is needed').max(120),
   heightM: z.number().min(0).max(10).nullable().default(null),
+  /** The height was varied while the maximum was held; heightM is then where the maximum was, if known. */
+  heightSwept: z.boolean().default(false),
   azimuthDeg: z.number().min(0).max(360).nullable().default(null),
   measuredAt: instant.nullable().default(null),
 });
@@ -150,6 +153,7 @@ export const sweepView = z.strictObject({
   line: mainsLine.nullable(),
   polarisation: polarisation.nullable(),
   heightM: z.number().nullable(),
+  heightSwept: z.boolean(),
   azimuthDeg: z.number().nullable(),
   distanceM: z.number().nullable(),
   operatingMode: z.string(),
@@ -176,7 +180,17 @@ export const sweepView = z.strictObject({
   /** The port's verdict over every run of this sample state, and what is missing for it. */
   portVerdict: z.strictObject({
     verdict,
-    missing: z.array(z.string()),
+    missing: z.array(
+      z.strictObject({
+        what: z.enum(['position', 'height', 'no-line', 'comparison', 'range']),
+        position: z.union([polarisation, mainsLine]).nullable(),
+        lineName: z.string().nullable(),
+        fromHz: z.number().nullable(),
+        toHz: z.number().nullable(),
+        because: gapView.shape.because.nullable(),
+        heightM: z.number().nullable(),
+      }),
+    ),
     runs: z.array(z.strictObject({ id: publicId, number: z.string() })),
   }),
 });

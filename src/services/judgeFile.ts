@@ -1,5 +1,6 @@
 import { Op } from 'sequelize';
 import { authorise, type Actor } from '@/auth/actor';
+import { LAYER_COLUMNS } from '@/emc/columns';
 import { evaluate } from '@/emc/evaluate';
 import type { Evaluation, EvaluationInput, Trace } from '@/emc/types';
 import { isReceiverInput } from '@/emc/units';
@@ -19,11 +20,7 @@ import { loadPaths, termsOf, type LoadedPath, type LoadedTerm } from './signalPa
 import { findUpload, readAsAnswered, recognitionOf } from './sweepFiles';
 import { candidateOf, columnsView, traceViews } from './sweepViews';
 
-export interface Judged {
-  path: LoadedPath | null;
-  terms: LoadedTerm[];
-  limitSet: LimitSet;
-  lines: LimitLineView[];
+export interface Judged extends Gathered {
   input: EvaluationInput;
   evaluation: Evaluation;
 }
@@ -37,12 +34,14 @@ export function notAppliedBecause(
     const ids = path?.items.map((item) => item.equipment.identifier) ?? [];
     return new Map(ids.map((id) => [id, 'the file holds field strength already']));
   }
-  return new Map(choice.alreadyCorrected.map((id) => [id, 'the reading holds it already, as stated when it was kept']));
+  return new Map(
+    (choice.alreadyCorrected ?? []).map((id) => [id, 'the reading holds it already, as stated when it was kept']),
+  );
 }
 
 function check(
   choice: SweepChoice,
-  held: readonly { index: number }[],
+  recognition: Recognition,
   limitSet: LimitSet | null,
   path: LoadedPath | null,
 ): asserts limitSet is LimitSet {
@@ -62,7 +61,8 @@ function check(
   const field = choice.valuesHold === 'field';
   choice.traces.forEach((trace, i) => {
     const isField = trace.unit === 'dBuV/m' || trace.unit === 'dBuA/m';
-    if (!held.some(({ index }) => index === trace.index)) say(`/traces/${i}/index`, 'is not a trace of this file');
+    if (!recognition.traces.some(({ index }) => index === trace.index))
+      say(`/traces/${i}/index`, 'is not a trace of this file');
     if (trace.unit === 'dB') say(`/traces/${i}/unit`, 'is relative; a level needs an absolute unit to be judged');
     else if (field && !isField) say(`/traces/${i}/unit`, 'is not field strength, but the values are said to be');
     else if (!field && isField) say(`/traces/${i}/unit`, 'is field strength; say that the values are field strength');
@@ -71,9 +71,16 @@ function check(
     }
   });
   const known = new Set(path?.items.map((item) => item.equipment.identifier));
-  choice.alreadyCorrected.forEach((id, i) => {
+  (choice.alreadyCorrected ?? []).forEach((id, i) => {
     if (!known.has(id)) say(`/alreadyCorrected/${i}`, 'is not an item of this signal path');
   });
+  const corrected = recognition.correctedFor.map(({ what, line }) => `${what} (line ${line})`).join(', ');
+  if (choice.alreadyCorrected === null && !field && corrected) {
+    say('/alreadyCorrected', `is needed: the file says that its values hold ${corrected}`);
+  }
+  const sweeps = recognition.sweeps.length;
+  if (choice.sweepIndex === null && sweeps > 1) say('/sweepIndex', `is needed: the file holds ${sweeps} sweeps`);
+  if (choice.sweepIndex !== null && choice.sweepIndex >= Math.max(1, sweeps)) say('/sweepIndex', 'is not in this file');
   if (new Set(choice.traces.map((trace) => trace.index)).size !== choice.traces.length) {
     say('/traces', 'names a trace twice');
   }
@@ -105,36 +112,54 @@ async function pathAt(publicId: string | null, at: Date): Promise<LoadedPath | n
   return loaded!;
 }
 
+export interface Gathered {
+  path: LoadedPath | null;
+  terms: LoadedTerm[];
+  limitSet: LimitSet;
+  lines: LimitLineView[];
+}
+
+/** What a choice refers to, checked; queries only. `at` decides which revision of the path applies. Throws Invalid. */
+export async function gather(recognition: Recognition, choice: SweepChoice, at: Date): Promise<Gathered> {
+  const limitSet = await LimitSet.findOne({ where: { publicId: choice.limitSetId, withdrawnAt: null } });
+  const path = await pathAt(choice.pathId, at);
+  check(choice, recognition, limitSet, path);
+  const lines = (await linesOf([limitSet])).get(limitSet.id)!;
+  const terms = path ? termsOf(path, choice, notAppliedBecause(choice, path)) : [];
+  return { path, terms, limitSet, lines };
+}
+
 /**
- * Reads a file as chosen, rounds its levels to Float32 once and evaluates them against the limit set. `at` decides
- * which revision of the path applies. Throws Invalid with a pointer per entry, Unreadable with the line of the file.
+ * Reads a file as chosen, rounds its levels to Float32 once and evaluates them against the limit set; no queries.
+ * Throws Unreadable with the line of the file, Invalid where the frequencies cannot be an axis.
  */
-export async function judgeFile(
+export async function judge(
   bytes: Uint8Array,
   recognition: Recognition,
   choice: SweepChoice,
-  at: Date,
+  gathered: Gathered,
 ): Promise<Judged> {
-  const limitSet = await LimitSet.findOne({ where: { publicId: choice.limitSetId, withdrawnAt: null } });
-  const path = await pathAt(choice.pathId, at);
-  check(choice, recognition.traces, limitSet, path);
-  const lines = (await linesOf([limitSet])).get(limitSet.id)!;
-  const terms = path ? termsOf(path, choice.polarisation, notAppliedBecause(choice, path)) : [];
+  const { path, terms, lines } = gathered;
   const { frequencyUnit, centreHz, sweepIndex } = choice;
   const read = await readAsAnswered(bytes, recognition, {
     frequencyUnit,
-    sweepIndex,
+    sweepIndex: sweepIndex ?? 0,
     ...(centreHz !== null && { centreHz }),
     traces: recognition.traces.map(({ index }) => {
       const chosen = choice.traces.find((trace) => trace.index === index);
       return chosen ? { index, use: true, unit: chosen.unit, detector: chosen.detector } : { index, use: false };
     }),
   });
+  if (!read.frequencyHz.some((f) => f > 0)) {
+    const pointer = centreHz === null ? '/frequencyUnit' : '/centreHz';
+    throw new Invalid([{ pointer, message: 'leaves no frequency above 0 Hz' }]);
+  }
+  const { rbwShape, vbwHz, vbwEnabled } = recognition.settings;
+  const filter = { rbwShape, vbwHz: vbwEnabled === false ? null : vbwHz };
   const input: EvaluationInput = {
     traces: choice.traces.map((chosen): Trace => {
       const { values } = read.traces.find((trace) => trace.index === chosen.index)!;
-      const reading = Float32Array.from(values);
-      return { ...chosen, frequencyHz: read.frequencyHz, reading };
+      return { ...chosen, ...filter, frequencyHz: read.frequencyHz, reading: Float32Array.from(values) };
     }),
     terms: terms.map(({ term }) => term),
     lines: lines.map(toCoreLine),
@@ -143,32 +168,49 @@ export async function judgeFile(
     port: choice.port,
     rule: 'guarded-by-u',
   };
-  return { path, terms, limitSet, lines, input, evaluation: await inTurns(evaluate(input)) };
+  return { ...gathered, input, evaluation: await inTurns(evaluate(input)) };
+}
+
+/** Lowest and highest frequency above 0 Hz; there is one. */
+export function rangeOf(frequencyHz: Float64Array): { firstHz: number; lastHz: number } {
+  let firstHz = Infinity;
+  let lastHz = 0;
+  for (const f of frequencyHz) {
+    if (f > 0 && f < firstHz) firstHz = f;
+    if (f > lastHz) lastHz = f;
+  }
+  return { firstHz, lastHz };
 }
 
 /** A held file judged as it would be kept now; nothing is stored. */
 export async function previewSweepFile(actor: Actor | null, fileId: string, choice: SweepChoice): Promise<PreviewView> {
   authorise(actor, 'sweep-file.read');
-  return unitOfWork(async () => {
+  const { bytes, recognition, gathered } = await unitOfWork(async () => {
     const upload = await findUpload(fileId);
-    const judged = await judgeFile(await readUpload(upload.id), recognitionOf(upload), choice, new Date());
-    const { evaluation, input, lines } = judged;
-    const axis = input.traces[0]!.frequencyHz;
-    const worst = evaluation.candidates[0];
+    const recognition = recognitionOf(upload);
     return {
-      window: {
-        fromHz: axis.reduce((low, f) => Math.min(low, f), Infinity),
-        toHz: axis.reduce((high, f) => Math.max(high, f), 0),
-        columns: evaluation.layers[0]?.frequencyHz.length ?? 0,
-        traces: input.traces.map((trace, i) => columnsView(trace.index, evaluation.layers[i]!)),
-      },
-      traces: traceViews(input),
-      lines,
-      uncertainty: [...input.uncertainty[input.purpose === 'final' ? 'final' : 'prescan']],
-      verdict: evaluation.verdict,
-      counts: evaluation.counts,
-      worst: worst ? candidateOf(worst, input.traces) : null,
-      gaps: evaluation.gaps,
+      recognition,
+      gathered: await gather(recognition, choice, new Date()),
+      bytes: await readUpload(upload.id),
     };
   });
+  // Nothing of the database is held while the file is read and judged.
+  const { evaluation, input, lines } = await judge(bytes, recognition, choice, gathered);
+  const { firstHz, lastHz } = rangeOf(input.traces[0]!.frequencyHz);
+  const worst = evaluation.candidates[0];
+  return {
+    window: {
+      fromHz: firstHz,
+      toHz: lastHz,
+      columns: LAYER_COLUMNS,
+      traces: input.traces.map((trace, i) => columnsView(trace.index, evaluation.layers[i]!)),
+    },
+    traces: traceViews(input),
+    lines,
+    uncertainty: [...input.uncertainty[input.purpose === 'final' ? 'final' : 'prescan']],
+    verdict: evaluation.verdict,
+    counts: evaluation.counts,
+    worst: worst ? candidateOf(worst, input.traces) : null,
+    gaps: evaluation.gaps,
+  };
 }

@@ -1,7 +1,7 @@
 import type { z } from 'zod';
 import { authorise, type Actor } from '@/auth/actor';
 import { ENGINE } from '@/emc/evaluate';
-import { Conflict, Invalid } from '@/errors';
+import { Conflict, Invalid, NotFound } from '@/errors';
 import { keepUpload, readUpload } from '@/models/blobs';
 import { Evaluation } from '@/models/evaluation';
 import { EvaluationCandidate } from '@/models/evaluationCandidate';
@@ -10,13 +10,14 @@ import { ModificationState } from '@/models/modificationState';
 import { newPublicId } from '@/models/publicId';
 import { Sweep } from '@/models/sweep';
 import { SweepFile } from '@/models/sweepFile';
-import { evenAxis, writeTraces } from '@/models/traceStore';
+import { SweepFilePart } from '@/models/sweepFilePart';
+import { writeTraces } from '@/models/traceStore';
 import { unitOfWork } from '@/models/unitOfWork';
 import type { Upload } from '@/models/upload';
 import type { keepSweep as keepSweepBody, SweepView } from '@/schemas/sweep';
 import { recordChange } from './audit';
 import { nextNumber } from './counters';
-import { judgeFile, type Judged } from './judgeFile';
+import { gather, judge, rangeOf, type Judged } from './judgeFile';
 import { dayIn, labSettings } from './lab';
 import { findSample, stateLabel } from './samples';
 import { findUpload, recognitionOf } from './sweepFiles';
@@ -24,16 +25,27 @@ import { readSweep } from './sweeps';
 
 type Body = z.infer<typeof keepSweepBody>;
 
+/** A bench PC's clock may run a little ahead. */
+const CLOCK_SLACK_MS = 5 * 60_000;
+
 /**
  * Keeps an uploaded file as a run of a sample state: the original bytes, the traces, the evaluation and its audit
- * entry, in one transaction. `at` is when it is kept; an earlier moment takes the path revision in force then.
+ * entry, in one transaction. The path's revision and its calibrations are those in force when it was measured; without
+ * that moment, when it is kept (`at`).
  */
 export async function keepSweep(actor: Actor | null, body: Body, at = new Date()): Promise<SweepView> {
   authorise(actor, 'sweep.keep');
   return unitOfWork(async () => {
     const state = await findState(actor, body.stateId);
-    const upload = await findUpload(body.fileId);
-    const judged = await judgeFile(await readUpload(upload.id), recognitionOf(upload), body, at);
+    // Locked, so that housekeeping cannot take the file away between reading and copying it.
+    const upload = await findUpload(body.fileId, { lock: true });
+    const recognition = recognitionOf(upload);
+    const measuredAt = body.measuredAt === null ? at : new Date(body.measuredAt);
+    if (measuredAt.getTime() > at.getTime() + CLOCK_SLACK_MS) {
+      throw new Invalid([{ pointer: '/measuredAt', message: 'lies in the future' }]);
+    }
+    const gathered = await gather(recognition, body, measuredAt);
+    const judged = await judge(await readUpload(upload.id), recognition, body, gathered);
     const run = await writeRun(actor, body, { state, upload, judged, at });
     const evaluation = await writeEvaluation(actor, run, judged, at);
     const { zone } = await labSettings();
@@ -91,9 +103,14 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
     createdAt: at,
   });
   await keepUpload(upload.id, file.id);
+  if ((await SweepFilePart.count({ where: { sweepFileId: file.id } })) === 0) throw new NotFound('uploaded file');
   const axis = judged.input.traces[0]!.frequencyHz;
-  const { purpose, port, line, polarisation, heightM, azimuthDeg, distanceM, operatingMode, valuesHold } = body;
-  const { frequencyUnit, centreHz, alreadyCorrected, traces, sweepIndex, measuredAt } = body;
+  const { purpose, port, line, polarisation, heightM, heightSwept, azimuthDeg, distanceM } = body;
+  const { operatingMode, valuesHold } = body;
+  const { frequencyUnit, centreHz, traces, sweepIndex, measuredAt } = body;
+  const { vbwHz = null, rbwShape = null } = judged.input.traces[0]!;
+  const alreadyCorrected = body.alreadyCorrected ?? [];
+  const remarks = remarksOn(upload, body);
   const publicId = newPublicId();
   const run = await Sweep.create({
     publicId,
@@ -101,26 +118,24 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
     number: publicId,
     stateId: state.id,
     sweepFileId: file.id,
-    sweepIndex,
+    sweepIndex: sweepIndex ?? 0,
     purpose,
     port,
     line,
     polarisation,
     heightM,
+    heightSwept,
     azimuthDeg,
     distanceM,
     operatingMode,
     valuesHold,
     pathRevisionId: judged.path?.revision.id ?? null,
     limitSetId: judged.limitSet.id,
-    reading: { frequencyUnit, centreHz, alreadyCorrected, traces, remarks: remarksOn(upload, body) },
+    reading: { frequencyUnit, centreHz, alreadyCorrected, traces, remarks, vbwHz, rbwShape },
     measuredAt: measuredAt === null ? null : new Date(measuredAt),
     points: axis.length,
-    firstHz: axis.reduce((low, f) => Math.min(low, f), Infinity),
-    lastHz: axis.reduce((high, f) => Math.max(high, f), 0),
-    stepHz:
-      evenAxis(axis)?.stepHz ??
-      (recognitionOf(upload).frequency.evenStep ? recognitionOf(upload).frequency.stepHz : null),
+    ...rangeOf(axis),
+    stepHz: stepOf(axis),
     userId: actor.userId,
     createdAt: at,
   });
@@ -132,10 +147,26 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
   return run;
 }
 
+/** The distance between neighbours when all are equal to a millionth of it, else null. */
+function stepOf(frequencyHz: Float64Array): number | null {
+  const steps = frequencyHz.length - 1;
+  if (steps < 1) return null;
+  const step = (frequencyHz[steps]! - frequencyHz[0]!) / steps;
+  for (let i = 0; i < steps; i++) {
+    if (Math.abs(frequencyHz[i + 1]! - frequencyHz[i]! - step) > Math.abs(step) * 1e-6) return null;
+  }
+  return step;
+}
+
 /** What recognition remarked, and where a person read the file otherwise than it says. */
 function remarksOn(upload: Upload, body: Body): string[] {
   const recognition = recognitionOf(upload);
   const remarks = recognition.remarks.map(({ text, line }) => (line === null ? text : `Line ${line}: ${text}`));
+  if (body.valuesHold === 'receiver-input' && !body.alreadyCorrected?.length) {
+    for (const { what, line } of recognition.correctedFor) {
+      remarks.push(`Line ${line} says that the values hold ${what}; nothing was left out for it, by hand.`);
+    }
+  }
   const { unit } = recognition.frequency;
   if (unit !== null && unit !== body.frequencyUnit) {
     remarks.push(`The file states its frequencies in ${unit}; they were read in ${body.frequencyUnit} by hand.`);
@@ -144,6 +175,12 @@ function remarksOn(upload: Upload, body: Body): string[] {
     const stated = recognition.traces.find(({ index }) => index === trace.index);
     if (stated?.unit && stated.unit !== trace.unit) {
       remarks.push(`The file states ${stated.unit} for ${trace.name}; it was read as ${trace.unit} by hand.`);
+    }
+    const { rbwHz } = recognition.settings;
+    if (rbwHz !== null && trace.rbwHz !== rbwHz) {
+      remarks.push(
+        `The file states an RBW of ${rbwHz} Hz; ${trace.name} was said to have ${trace.rbwHz ?? 'an unknown one'}.`,
+      );
     }
     if (stated?.detector && stated.detector !== trace.detector) {
       remarks.push(

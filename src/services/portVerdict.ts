@@ -21,6 +21,8 @@ export async function portVerdictOf(run: Pick<Sweep, 'stateId' | 'port'>): Promi
       purpose: row.purpose,
       polarisation: row.polarisation,
       line: row.line,
+      heightM: row.heightM,
+      heightSwept: row.heightSwept,
       verdict: row.evaluation.verdict,
       gaps: row.evaluation.gaps,
       lines: lines.get(row.limitSetId)!.map(({ id, name }) => ({ id, name })),

@@ -72,15 +72,16 @@ export async function contextOf(run: Run): Promise<RunContext> {
   const revision = run.pathRevisionId === null ? null : await SignalPathRevision.findByPk(run.pathRevisionId);
   const path = revision ? (await loadPaths([revision], day))[0]! : null;
   const lines = (await linesOf([run.limitSet])).get(run.limitSet.id)!;
-  const { valuesHold, purpose, port, polarisation, reading } = run;
-  const { alreadyCorrected, traces } = reading;
-  const terms = path ? termsOf(path, polarisation, notAppliedBecause({ valuesHold, alreadyCorrected }, path)) : [];
+  const { valuesHold, purpose, port, polarisation, distanceM, reading } = run;
+  const { alreadyCorrected, traces, vbwHz = null, rbwShape = null } = reading;
+  const setup = { polarisation, distanceM };
+  const terms = path ? termsOf(path, setup, notAppliedBecause({ valuesHold, alreadyCorrected }, path)) : [];
   return {
     path,
     day,
     terms,
     lines,
-    heads: traces,
+    heads: traces.map((trace) => ({ ...trace, vbwHz, rbwShape })),
     judged: {
       terms: terms.map(({ term }) => term),
       lines: lines.map(toCoreLine),

@@ -74,8 +74,16 @@ export function itemView(item: LoadedItem, day: string): z.infer<typeof pathItem
   };
 }
 
-/** The table an item uses for a polarisation; Invalid when it has one per polarisation and none was named. */
-function tableFor(item: LoadedItem, polarisation: Polarisation | null): FactorTableRevision | null {
+export interface Setup {
+  polarisation: Polarisation | null;
+  distanceM: number | null;
+}
+
+/**
+ * The table an item uses for a polarisation and a distance. Invalid when it has one per polarisation and none was
+ * named, or when the table was measured for another distance: an antenna factor is not carried over.
+ */
+function tableFor(item: LoadedItem, { polarisation, distanceM }: Setup): FactorTableRevision | null {
   const { tables } = item.stored;
   if (item.stored.term === null) return null;
   const id = tables.any ?? (polarisation && tables[polarisation]);
@@ -83,7 +91,11 @@ function tableFor(item: LoadedItem, polarisation: Polarisation | null): FactorTa
     const message = `is needed: ${item.equipment.identifier} has a table for each polarisation`;
     throw new Invalid([{ pointer: '/polarisation', message }]);
   }
-  return item.tables.find((table) => table.publicId === id)!;
+  const table = item.tables.find(({ publicId }) => publicId === id)!;
+  if (table.distanceM !== null && table.distanceM !== distanceM) {
+    throw new Invalid([{ pointer: '/distanceM', message: `is not that of ${table.name}, ${table.distanceM} m` }]);
+  }
+  return table;
 }
 
 export interface LoadedTerm {
@@ -96,13 +108,9 @@ export interface LoadedTerm {
  * The terms a run through a path adds, in the order of the path. `notApplied` says, by term id, why a term is in the
  * reading already; a term's id is its equipment's identifier.
  */
-export function termsOf(
-  path: LoadedPath,
-  polarisation: Polarisation | null,
-  notApplied: Map<string, string>,
-): LoadedTerm[] {
+export function termsOf(path: LoadedPath, setup: Setup, notApplied: Map<string, string>): LoadedTerm[] {
   return path.items.flatMap((item) => {
-    const table = tableFor(item, polarisation);
+    const table = tableFor(item, setup);
     if (!table) return [];
     const because = notApplied.get(item.equipment.identifier);
     return [

@@ -10,7 +10,7 @@ import { writeUpload } from '@/models/blobs';
 import { newPublicId } from '@/models/publicId';
 import { Sweep } from '@/models/sweep';
 import { SweepFile } from '@/models/sweepFile';
-import { unitOfWork } from '@/models/unitOfWork';
+import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import { Upload } from '@/models/upload';
 import type { RecognitionView, SweepFileView } from '@/schemas/sweepFile';
 import { inTurns } from './inTurns';
@@ -46,8 +46,8 @@ export async function readSweepFile(actor: Actor | null, publicId: string): Prom
 }
 
 /** An upload that is still held, or NotFound. Uploads belong to the lab; only its people reach this. */
-export async function findUpload(publicId: string): Promise<Upload> {
-  const row = await Upload.findOne({ where: { publicId } });
+export async function findUpload(publicId: string, { lock = false } = {}): Promise<Upload> {
+  const row = await Upload.findOne({ where: { publicId }, ...(lock && { lock: currentTransaction().LOCK.UPDATE }) });
   if (!row || row.expiresAt.getTime() < Date.now()) throw new NotFound('uploaded file (it is held for a day)');
   return row;
 }

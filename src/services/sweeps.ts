@@ -89,6 +89,7 @@ async function view(run: Run, context: RunContext): Promise<SweepView> {
     line: run.line,
     polarisation: run.polarisation,
     heightM: run.heightM,
+    heightSwept: run.heightSwept,
     azimuthDeg: run.azimuthDeg,
     distanceM: run.distanceM,
     operatingMode: run.operatingMode,

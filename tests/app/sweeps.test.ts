@@ -67,7 +67,7 @@ const issues = async (answer: Response) => {
 
 test('an upload answers what was recognised, and what of it is asked', async () => {
   const { recognition, repeats } = await send(sweepFile({ 200: 55 }, 'another.csv'));
-  expect(recognition).toMatchObject({ kind: 'sweep', delimiter: ',', frequency: { unit: 'MHz', points: 971 } });
+  expect(recognition).toMatchObject({ kind: 'sweep', delimiter: ',', frequency: { unit: 'MHz', points: 9701 } });
   expect(recognition.traces).toMatchObject([{ unit: 'dBuV', detector: 'peak' }]);
   expect(recognition.settings.rbwHz).toBe(120e3);
   expect(repeats).toEqual([]);
@@ -100,10 +100,70 @@ test('one polarisation never makes the port under; both do', async () => {
   const first = await kept(await ask(keep, '', { body: bodyFor(quiet, { stateId }) }));
   expect(first.evaluation.verdict).toBe('under');
   expect(first.portVerdict).toMatchObject({ verdict: 'not-covered' });
-  expect(first.portVerdict.missing).toEqual(['Vertical polarisation is not measured.']);
+  expect(first.portVerdict.missing).toMatchObject([{ what: 'position', position: 'vertical' }]);
   const body = bodyFor(quiet, { stateId, polarisation: 'vertical' });
   const second = await kept(await ask(keep, '', { body }));
   expect(second.portVerdict).toMatchObject({ verdict: 'under', missing: [] });
+});
+
+test('one height never makes the port under', async () => {
+  const { createState } = await import('@/services/samples');
+  const view = await createState(world.technician.actor, world.sample.id, { description: 'fixed', planned: false });
+  const quiet = await send(sweepFile({}));
+  const change = { stateId: view.states.at(-1)!.id, heightSwept: false };
+  await kept(await ask(keep, '', { body: bodyFor(quiet, change) }));
+  const body = bodyFor(quiet, { ...change, polarisation: 'vertical' });
+  const { portVerdict } = await kept(await ask(keep, '', { body }));
+  expect(portVerdict).toMatchObject({ verdict: 'not-covered', missing: [{ what: 'height' }, { what: 'height' }] });
+});
+
+const correctedFile = () => {
+  const { bytes } = sweepFile({ 144: 60.2 });
+  const text = `Corrected for,cable loss\n${new TextDecoder().decode(bytes)}`;
+  return { name: 'corrected.csv', bytes: new TextEncoder().encode(text) };
+};
+
+test('where the file says that it is corrected, nothing is added before somebody has said what', async () => {
+  const file = await send(correctedFile());
+  expect(file.recognition.correctedFor).toMatchObject([{ line: 1 }]);
+  expect(await issues(await ask(keep, '', { body: bodyFor(file) }))).toEqual([400, ['/alreadyCorrected']]);
+  const left = await kept(await ask(keep, '', { body: bodyFor(file, { alreadyCorrected: ['CBL-1'] }) }));
+  expect(left.evaluation.worst!.level).toBeCloseTo(44.2, 5);
+  const added = await kept(await ask(keep, '', { body: bodyFor(file, { alreadyCorrected: [] }) }));
+  expect(added.remarks.join()).toMatch(/Line 1 says .* nothing was left out/);
+});
+
+test('an RBW said otherwise than the file states it is remarked', async () => {
+  const traces = [{ ...world.choice.traces[0]!, rbwHz: 1e6 }];
+  const run = await kept(await ask(keep, '', { body: bodyFor(await send(sweepFile({})), { traces }) }));
+  expect(run.remarks.join()).toMatch(/RBW of 120000 Hz/);
+});
+
+test('a run is judged with the path revision of the moment it was measured, and not of the future', async () => {
+  const file = await send(sweepFile({}));
+  const tomorrow = new Date(Date.now() + 86_400_000).toISOString();
+  expect(await issues(await ask(keep, '', { body: bodyFor(file, { measuredAt: tomorrow }) }))).toEqual([
+    400,
+    ['/measuredAt'],
+  ]);
+  const long = new Date('2020-06-01T00:00:00Z').toISOString();
+  expect(await issues(await ask(keep, '', { body: bodyFor(file, { measuredAt: long }) }))).toEqual([400, ['/pathId']]);
+});
+
+test('an upload that housekeeping takes away while it is being kept is kept whole', async () => {
+  const file = await send(sweepFile({ 105: 41 }));
+  const { Upload } = await import('@/models/upload');
+  const purge = async () => {
+    await new Promise((resolve) => setTimeout(resolve, 30));
+    await unitOfWork(() => Upload.destroy({ where: { publicId: file.id } }));
+  };
+  const [answer] = await Promise.all([ask(keep, '', { body: bodyFor(file) }), purge()]);
+  if (answer!.status === 201) {
+    const run = (await answer!.json()) as SweepView;
+    expect((await ask(readFile, run.id)).status).toBe(200);
+  } else {
+    expect(answer!.status).toBe(404);
+  }
 });
 
 test('a term that the reading already holds is shown and not added', async () => {

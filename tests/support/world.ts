@@ -4,7 +4,7 @@ import { Setting } from '@/models/setting';
 import { unitOfWork } from '@/models/unitOfWork';
 import { User } from '@/models/user';
 import { hashPassword } from '@/auth/password';
-import type { Actor } from '@/auth/actor';
+import { type Actor, SERVER } from '@/auth/actor';
 import type { Role } from '@/auth/permissions';
 import type { SweepChoice } from '@/schemas/sweep';
 import { enterCalibration, enterEquipment } from '@/services/enterEquipment';
@@ -42,7 +42,7 @@ export async function enterWorld() {
 
   async function person(role: Role, of: Organisation, email: string): Promise<Somebody> {
     const entry = { organisationId: of.publicId, role, name: email.split('@')[0]!, email, password: null };
-    const { publicId } = await createUser(null, entry);
+    const { publicId } = await createUser(SERVER, entry);
     await unitOfWork(() => User.update({ passwordHash }, { where: { publicId } }));
     const { actor, cookie } = await signIn({ email, password: PASSWORD }, { address: '127.0.0.1', agent: 'test' });
     return { actor, cookie: cookieOf(cookie) };
@@ -133,16 +133,17 @@ export async function enterWorld() {
     pathId: path!.publicId,
     limitSetId: limitSet.publicId,
     valuesHold: 'receiver-input',
-    alreadyCorrected: [],
+    alreadyCorrected: null,
     frequencyUnit: 'MHz',
     centreHz: null,
-    sweepIndex: 0,
+    sweepIndex: null,
     traces: [{ index: 0, name: 'Peak', unit: 'dBuV', detector: 'peak', rbwHz: 120e3 }],
   };
   const about = {
     stateId: sample.states[0]!.id,
     operatingMode: 'full light',
     heightM: 1,
+    heightSwept: true,
     azimuthDeg: 0,
     measuredAt: null,
   };
@@ -169,9 +170,12 @@ export async function enterWorld() {
 
 export type World = Awaited<ReturnType<typeof enterWorld>>;
 
-/** 971 points from 30 to 1000 MHz at 30 dBµV, with some readings of your own, in a plain comma file in MHz. */
+/** 9 701 points from 30 to 1000 MHz, in steps below the RBW, at 30 dBµV, with some readings of your own, in a plain comma file in MHz. */
 export function sweepFile(readings: Record<number, number> = { 144: 60.2 }, name = 'sweep.csv') {
-  const rows = Array.from({ length: 971 }, (_, i) => `${(30 + i).toFixed(3)},${(readings[30 + i] ?? 30).toFixed(2)}`);
+  const rows = Array.from({ length: 9701 }, (_, i) => {
+    const mhz = (300 + i) / 10;
+    return `${mhz.toFixed(3)},${(readings[mhz] ?? 30).toFixed(2)}`;
+  });
   const text = ['RBW,120 kHz', 'Detector,Peak', 'Frequency (MHz),Level (dBuV)', ...rows, ''].join('\n');
   return { name, bytes: new TextEncoder().encode(text) };
 }

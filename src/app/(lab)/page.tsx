@@ -1,11 +1,12 @@
 import { redirect } from 'next/navigation';
 import { requireActor } from '@/app/requireActor';
-import { listProducts } from '@/services/products';
+import { listJobs } from '@/services/jobs';
 
-/** Where a person's work is: a designer's newest product, the lab's runs. */
+/** Where a person's work is: the lab's runs; for a designer the product of the newest open job. */
 export default async function Home() {
   const actor = await requireActor();
   if (actor.role !== 'designer') redirect('/sweeps');
-  const { items } = await listProducts(actor, { limit: 1 });
-  redirect(items[0] ? `/products/${items[0].id}` : '/products');
+  const { items } = await listJobs(actor, { limit: 50 });
+  const job = items.find(({ state }) => state === 'open') ?? items[0];
+  redirect(job ? `/products/${job.product.id}` : '/products');
 }

@@ -1,3 +1,4 @@
+import { missingText } from '@/format/missing';
 import type { Actor } from '@/auth/actor';
 import { found } from '@/app/found';
 import type { SweepView } from '@/schemas/sweep';
@@ -38,7 +39,8 @@ export function standingReader(actor: Actor) {
     if (!worst) return null;
     if (!known.has(worst.id)) known.set(worst.id, found(readSweep(actor, worst.id)));
     const sweep = await known.get(worst.id)!;
-    const { verdict, missing } = sweep.portVerdict;
+    const { verdict } = sweep.portVerdict;
+    const missing = sweep.portVerdict.missing.map(missingText);
     return { port: sweep.port, state: sweep.state.label, verdict, missing, worst: sweep.evaluation.worst, sweep };
   };
 }

@@ -97,7 +97,7 @@ export default async function SamplePage({ params }: Props) {
           )}
         </div>
       )}
-      {sample.states.map((state) => (
+      {[...sample.states].reverse().map((state) => (
         <StateRuns
           key={state.id}
           state={state}

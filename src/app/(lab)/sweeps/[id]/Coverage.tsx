@@ -1,6 +1,7 @@
 import Link from 'next/link';
 import { VerdictWord } from '@/components/ui/VerdictWord';
 import type { SweepView } from '@/schemas/sweep';
+import { missingText } from '@/format/missing';
 import { PORT_WORDS } from '@/format/words';
 
 /** The port's verdict over every run of this state, and what is missing for it. */
@@ -13,7 +14,7 @@ export function Coverage({ sweep }: { sweep: SweepView }) {
       </p>
       {portVerdict.missing.length > 0 ? (
         <ul className="mt-[22px]">
-          {portVerdict.missing.map((missing) => (
+          {portVerdict.missing.map(missingText).map((missing) => (
             <li key={missing}>{missing}</li>
           ))}
         </ul>

@@ -157,6 +157,11 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
             error={errors.azimuthDeg}
             onChange={(event) => set({ azimuthDeg: event.target.value })}
           />
+          <CheckField
+            label="Height swept, maximum held"
+            checked={draft.heightSwept}
+            onChange={(event) => set({ heightSwept: event.target.checked })}
+          />
         </div>
       ) : (
         <SelectField
@@ -261,8 +266,9 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
           <SelectField
             label="Which sweep"
             value={draft.sweepIndex}
-            onChange={(event) => set({ sweepIndex: Number(event.target.value) })}
+            onChange={(event) => set({ sweepIndex: event.target.value === '' ? '' : Number(event.target.value) })}
           >
+            {draft.sweepIndex === '' && <option value="">say which</option>}
             {recognition.sweeps.map((sweep, i) => (
               <option key={i} value={i}>
                 {sweep.name}

@@ -74,6 +74,7 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
       stateId: draft.stateId,
       operatingMode: draft.operatingMode,
       heightM: typedNumber(draft.heightM),
+      heightSwept: draft.port === 'enclosure' && draft.heightSwept,
       azimuthDeg: typedNumber(draft.azimuthDeg),
     });
     if (!outcome.ok) return;

@@ -26,6 +26,7 @@ export interface Draft {
   line: MainsLine | '';
   polarisation: Polarisation | '';
   heightM: string;
+  heightSwept: boolean;
   azimuthDeg: string;
   distanceM: string;
   pathId: string;
@@ -34,7 +35,8 @@ export interface Draft {
   alreadyCorrected: string[];
   frequencyUnit: FrequencyUnit | '';
   centreMhz: string;
-  sweepIndex: number;
+  /** Empty until chosen, where the file holds several. */
+  sweepIndex: number | '';
   traces: TraceDraft[];
 }
 
@@ -122,6 +124,7 @@ export function draftFrom(file: SweepFileView, { samples, paths, limitSets }: Li
     line: proposals.line ?? '',
     polarisation: proposals.polarisation ?? '',
     heightM: proposals.heightM === null ? '' : String(proposals.heightM),
+    heightSwept: false,
     azimuthDeg: '',
     distanceM: String(limitSets.find(({ id }) => id === limitSetId)?.distanceM ?? ''),
     pathId,
@@ -130,7 +133,7 @@ export function draftFrom(file: SweepFileView, { samples, paths, limitSets }: Li
     alreadyCorrected: field ? [] : proposedCorrected(file, path),
     frequencyUnit: frequency.unit ?? '',
     centreMhz: '',
-    sweepIndex: 0,
+    sweepIndex: recognition.sweeps.length > 1 ? '' : 0,
     traces: traces.map((trace) => ({
       index: trace.index,
       use: !trace.blank,
@@ -148,6 +151,7 @@ export function unsaid(draft: Draft, file: SweepFileView): string[] {
   const list: [boolean, string][] = [
     [draft.frequencyUnit === '', 'the unit of the frequencies'],
     [file.recognition.frequency.offset && typedNumber(draft.centreMhz) === null, 'the centre frequency'],
+    [draft.sweepIndex === '', 'which sweep it is'],
     [used.length === 0, 'a trace to use'],
     [used.some((trace) => trace.unit === ''), 'the unit of the levels'],
     [used.some((trace) => trace.detector === ''), 'the detector'],
@@ -177,7 +181,7 @@ export function choiceOf(draft: Draft, file: SweepFileView): SweepChoice | null 
     alreadyCorrected: draft.valuesHold === 'field' ? [] : draft.alreadyCorrected,
     frequencyUnit,
     centreHz: file.recognition.frequency.offset && centreMhz !== null ? centreMhz * 1e6 : null,
-    sweepIndex: draft.sweepIndex,
+    sweepIndex: draft.sweepIndex === '' ? null : draft.sweepIndex,
     traces: draft.traces
       .filter((trace) => trace.use)
       .map(({ index, name, unit, detector, rbwKhz }) => ({
