@@ -6,7 +6,7 @@ import { DomainError, Forbidden, Invalid, Unauthenticated, type Issue } from '@/
 import type { Operation } from '@/schemas/operation';
 import { TokenRefused } from '@/services/apiTokens';
 import { once } from '@/services/idempotency';
-import { actorOf } from '@/services/sessions';
+import { actorOf, SignInRefused } from '@/services/sessions';
 import { issuesOf, problemOf, problemResponse } from './problem';
 import { withApiHeaders } from './securityHeaders';
 import { securityLog } from './securityLog';
@@ -39,6 +39,7 @@ export function handle<P extends z.ZodType, Q extends z.ZodType, B extends z.Zod
   const route = async (request: Request, extra?: Extra): Promise<Response> => {
     const address = request.headers.get('x-forwarded-for')?.split(',')[0]?.trim() || '127.0.0.1';
     let actor: Actor | null = null;
+    let reached: Reached = 'input';
     try {
       actor = await actorOf(request.headers, address);
       checkOrigin(request, op, actor);
@@ -56,30 +57,39 @@ export function handle<P extends z.ZodType, Q extends z.ZodType, B extends z.Zod
         headers: new Headers({ 'cache-control': 'no-store' }),
       };
       const key = op.idempotent ? readKey(request) : null;
+      const work = async () => checkReply(op, await run(context));
       let reply: unknown;
       if (key && actor) {
-        const done = await once(actor, key, op.id, [context.params, context.body], op.status, () => run(context));
+        reached = 'keyed work';
+        const done = await once(actor, key, op.id, [context.params, context.body], op.status, work);
         if (done.repeated) context.headers.set('idempotency-replayed', 'true');
         reply = done.reply;
       } else {
-        reply = await run(context);
+        reached = 'work';
+        reply = await work();
       }
-      return withApiHeaders(respond(op, reply, context.headers));
+      return withApiHeaders(respond(op, reply, context.params, context.headers));
     } catch (error) {
-      return withApiHeaders(refuse(error, op, actor, address));
+      return withApiHeaders(refuse(error, op, { reached, actor, address }));
     }
   };
   return Object.assign(route, { operation: op as unknown as Operation });
 }
 
-function respond(op: Operation, reply: unknown, headers: Headers): Response {
+/** The reply as declared. Under an Idempotency-Key this runs inside the unit, so a wrong reply undoes the work. */
+function checkReply(op: Operation, reply: unknown): unknown {
+  return reply instanceof Response || op.status === 204 || !op.reply ? reply : op.reply.parse(reply);
+}
+
+/** An ETag goes out only with the record the path names, or the one just created: its version is what If-Match wants. */
+function respond(op: Operation, reply: unknown, params: unknown, headers: Headers): Response {
   if (reply instanceof Response) return reply;
   if (op.status === 204) return new Response(null, { status: 204, headers });
-  const checked = op.reply ? op.reply.parse(reply) : reply;
   headers.set('content-type', 'application/json');
-  const version = (checked as { version?: unknown })?.version;
-  if (typeof version === 'number') headers.set('etag', `"${version}"`);
-  return new Response(JSON.stringify(checked), { status: op.status, headers });
+  const { id, version } = (reply ?? {}) as { id?: unknown; version?: unknown };
+  const named = typeof id === 'string' && (op.status === 201 || id === (params as { id?: string } | undefined)?.id);
+  if (named && typeof version === 'number') headers.set('etag', `"${version}"`);
+  return new Response(JSON.stringify(reply), { status: op.status, headers });
 }
 
 /** A write that a cookie authorises must come from our own pages; a bearer token needs no such proof. */
@@ -126,19 +136,38 @@ async function readJson(request: Request): Promise<unknown> {
   if (Number(request.headers.get('content-length') ?? 0) > MAX_JSON_BYTES) {
     throw new HttpRefusal('too-large', 'A JSON body takes at most 1 MB.');
   }
-  const text = await request.text();
-  if (text.length > MAX_JSON_BYTES) throw new HttpRefusal('too-large', 'A JSON body takes at most 1 MB.');
+  const bytes = await readAtMost(request, MAX_JSON_BYTES);
   try {
-    return JSON.parse(text);
+    return JSON.parse(new TextDecoder().decode(bytes));
   } catch {
     throw new Invalid([{ pointer: '', message: 'is not JSON' }]);
+  }
+}
+
+/** Counts while it reads, since a body sent in chunks states no length. The rest of a longer one is not read. */
+async function readAtMost(request: Request, limit: number): Promise<Uint8Array> {
+  const reader = request.body?.getReader();
+  const chunks: Uint8Array[] = [];
+  let length = 0;
+  for (;;) {
+    const { done, value } = (await reader?.read()) ?? { done: true, value: undefined };
+    if (done) return Buffer.concat(chunks, length);
+    length += value.byteLength;
+    if (length > limit) {
+      await reader?.cancel().catch(() => undefined);
+      throw new HttpRefusal('too-large', 'A JSON body takes at most 1 MB.');
+    }
+    chunks.push(value);
   }
 }
 
 function readVersion(request: Request): number {
   const match = /^"?(\d{1,9})"?$/.exec(request.headers.get('if-match') ?? '');
   if (!match) {
-    throw new HttpRefusal('version-needed', 'Name the version you changed in If-Match, as the ETag of your last read.');
+    throw new HttpRefusal(
+      'version-needed',
+      'Name in If-Match the version of the record as your last read showed it, such as "3".',
+    );
   }
   return Number(match[1]);
 }
@@ -154,8 +183,27 @@ function readKey(request: Request): string | null {
 
 const DATABASE_GONE = /^SequelizeConnection|^SequelizeHostNot|^SequelizeAccessDenied/;
 
-function refuse(error: unknown, op: Operation, actor: Actor | null, address: string): Response {
+/** How far a request came: a failure after the work began may have come after its commit. */
+type Reached = 'input' | 'work' | 'keyed work';
+
+/** What became of a request that broke, as far as it is known. */
+function outcomeOf(op: Operation, reached: Reached): string {
+  if (op.method === 'GET') return 'This could not be read.';
+  if (reached === 'input') return 'Nothing was changed.';
+  const look = 'It is not certain that this was done. Look before you repeat it';
+  return reached === 'work' ? `${look}.` : `${look}; a repeat with the same Idempotency-Key is done once.`;
+}
+
+interface Broken {
+  reached: Reached;
+  actor: Actor | null;
+  address: string;
+}
+
+function refuse(error: unknown, op: Operation, { reached, actor, address }: Broken): Response {
   if (error instanceof DomainError) {
+    // Why a sign-in was refused is in the security log already.
+    if (error instanceof SignInRefused) return problemOf(error);
     if (error.kind === 'unauthenticated' || error.kind === 'forbidden' || error.kind === 'throttled') {
       const refused = error instanceof TokenRefused ? 'token-refused' : 'denied';
       const event = error.kind === 'throttled' ? 'throttled' : refused;
@@ -166,15 +214,11 @@ function refuse(error: unknown, op: Operation, actor: Actor | null, address: str
   const name = (error as Error)?.name ?? '';
   if (DATABASE_GONE.test(name)) {
     securityLog({ event: 'error', operation: op.id, address, status: 503, detail: name });
-    return problemResponse(
-      'unavailable',
-      'Nothing was changed. Try again in a few seconds.',
-      {},
-      { 'retry-after': '5' },
-    );
+    const again = op.method === 'GET' || reached === 'input' ? ' Try again in a few seconds.' : '';
+    return problemResponse('unavailable', outcomeOf(op, reached) + again, {}, { 'retry-after': '5' });
   }
   const detail = error instanceof Error ? `${error.name}: ${error.message}`.slice(0, 400) : 'unknown';
   securityLog({ event: 'error', userId: actor?.publicId ?? null, operation: op.id, address, status: 500, detail });
   if (process.env.STILLFIELD_TRACE) console.error(error);
-  return problemResponse('internal', 'Nothing was changed. The lab’s log holds the cause.');
+  return problemResponse('internal', `${outcomeOf(op, reached)} The lab’s log holds the cause.`);
 }

@@ -1,26 +1,49 @@
+import { createHash } from 'node:crypto';
 import { Readable, Writable } from 'node:stream';
 import type { ReadableStream as NodeStream } from 'node:stream/web';
 import formidable, { errors } from 'formidable';
-import { Invalid, TooLarge } from '@/errors';
+import { Invalid, Throttled, TooLarge } from '@/errors';
 
 export const MAX_FILE_BYTES = 100 * 1024 * 1024;
 
 export interface ReceivedFile {
   name: string;
   bytes: Uint8Array;
+  /** Hex, of `bytes`. */
+  sha256: string;
 }
 
+/** Each may hold 100 MB of memory; a bench that meets more waits a few seconds. */
+export const MAX_UPLOADS_AT_ONCE = 4;
+const RETRY_AFTER_S = 5;
+let receiving = 0;
+
 /**
- * Streams the one `file` of a multipart/form-data request into memory, at most 100 MB (TooLarge beyond that, the rest
- * is not read). Nothing touches a local disk, so any web process can serve the next request.
+ * Streams the one `file` of a multipart/form-data request into memory, at most 100 MB (TooLarge as soon as there is more;
+ * what still comes is thrown away, since a browser reads no answer before it has sent everything). Nothing touches a local disk, so any web process can serve the next request.
+ * @throws {Throttled} when as many uploads as this process takes at once are under way
  */
 export async function receiveFile(request: Request): Promise<ReceivedFile> {
+  if (receiving >= MAX_UPLOADS_AT_ONCE) {
+    throw new Throttled(RETRY_AFTER_S, 'Several files are being received at this moment. Send this one again shortly.');
+  }
+  receiving += 1;
+  try {
+    return await receive(request);
+  } finally {
+    receiving -= 1;
+  }
+}
+
+async function receive(request: Request): Promise<ReceivedFile> {
   const type = request.headers.get('content-type') ?? '';
   if (!/^multipart\/form-data\b/i.test(type) || !request.body) {
     throw new Invalid([{ pointer: '/file', message: 'is sent as multipart/form-data' }]);
   }
   if (Number(request.headers.get('content-length') ?? 0) > MAX_FILE_BYTES + 1024 * 1024) throw tooLarge();
   const parts: Buffer[] = [];
+  const hash = createHash('sha256');
+  let length = 0;
   const form = formidable({
     maxFiles: 1,
     maxFields: 10,
@@ -33,10 +56,17 @@ export async function receiveFile(request: Request): Promise<ReceivedFile> {
       new Writable({
         write(chunk: Buffer, _encoding, done) {
           parts.push(chunk);
+          hash.update(chunk);
+          length += chunk.length;
           done();
         },
       }),
   });
+  // A file part without a Content-Type of its own is a file all the same (RFC 7578 4.4); formidable calls it a field.
+  form.onPart = (part) => {
+    if (part.originalFilename) part.mimetype ??= 'application/octet-stream';
+    return form._handlePart(part);
+  };
   const stream = Object.assign(Readable.fromWeb(request.body as NodeStream), {
     // formidable takes a body without a stated length for none, unless it is said to come in chunks
     headers: { 'transfer-encoding': 'chunked', ...Object.fromEntries(request.headers) },
@@ -47,8 +77,9 @@ export async function receiveFile(request: Request): Promise<ReceivedFile> {
     const [, files] = await form.parse(stream as never);
     const file = files.file?.[0];
     if (!file) throw new Invalid([{ pointer: '/file', message: 'is missing' }]);
-    if (file.size === 0) throw new Invalid([{ pointer: '/file', message: 'is empty' }]);
-    return { name: safeName(file.originalFilename ?? 'sweep'), bytes: Buffer.concat(parts) };
+    if (length === 0) throw new Invalid([{ pointer: '/file', message: 'is empty' }]);
+    const name = safeName(file.originalFilename ?? 'sweep');
+    return { name, bytes: Buffer.concat(parts, length), sha256: hash.digest('hex') };
   } catch (error) {
     const code = (error as { code?: number }).code;
     if (code === errors.biggerThanMaxFileSize || code === errors.biggerThanTotalMaxFileSize) throw tooLarge();

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { env } from '@/config/env';
 import { PERMISSIONS } from '@/auth/permissions';
+import { sessionCookieName } from '@/auth/session';
 import type { Operation } from '@/schemas/operation';
 
 type Json = Record<string, unknown>;
@@ -25,7 +26,7 @@ function parameters(op: Operation): Json[] {
     list.push({ name, in: 'header', required, description, schema: { type: 'string' } });
   if (op.idempotent)
     header('Idempotency-Key', false, '8 to 80 visible ASCII characters; a repeat answers the first reply');
-  if (op.ifMatch) header('If-Match', true, 'The version you changed, as the ETag of your last read');
+  if (op.ifMatch) header('If-Match', true, 'The version of the record as your last read showed it');
   return list;
 }
 
@@ -35,6 +36,12 @@ function body(op: Operation): Json | undefined {
     return { required: true, content: { 'multipart/form-data': { schema } } };
   }
   return op.body && { required: true, content: { 'application/json': { schema: jsonSchema(op.body, 'input') } } };
+}
+
+/** A token is offered only where some scope of it is enough. */
+function security(op: Operation): Json[] {
+  if (!op.permission) return [];
+  return [{ session: [] }, ...(PERMISSIONS[op.permission].token === null ? [] : [{ token: [] }])];
 }
 
 /** The OpenAPI 3.1 description of the API, made from the operations themselves. */
@@ -48,7 +55,7 @@ export function openApiDocument(operations: readonly Operation[]): Json {
       operationId: op.id,
       summary: op.summary,
       ...(op.permission && { description: `Roles: ${PERMISSIONS[op.permission].roles.join(', ')}.` }),
-      security: op.permission ? [{ session: [] }, { token: [] }] : [],
+      security: security(op),
       parameters: parameters(op),
       ...(body(op) && { requestBody: body(op) }),
       responses: {
@@ -64,7 +71,7 @@ export function openApiDocument(operations: readonly Operation[]): Json {
     paths,
     components: {
       securitySchemes: {
-        session: { type: 'apiKey', in: 'cookie', name: 'stillfield' },
+        session: { type: 'apiKey', in: 'cookie', name: sessionCookieName() },
         token: { type: 'http', scheme: 'bearer' },
       },
     },
