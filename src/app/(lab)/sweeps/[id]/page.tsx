@@ -1,6 +1,8 @@
 import type { Metadata } from 'next';
+import { cache } from 'react';
 import { found } from '@/app/found';
 import { requireActor } from '@/app/requireActor';
+import type { Actor } from '@/auth/actor';
 import { labZone } from '@/services/lab';
 import { historyOf } from '@/services/audit';
 import { listCandidates, readSweep } from '@/services/sweeps';
@@ -13,15 +15,18 @@ interface Props {
 
 const FIRST_CANDIDATES = 50;
 
+/** Title and sheet are one read per request; the actor is the same object in both. */
+const readOnce = cache((actor: Actor, id: string) => found(readSweep(actor, id)));
+
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  const { number, sample } = await found(readSweep(await requireActor(), (await params).id));
+  const { number, sample } = await readOnce(await requireActor(), (await params).id);
   return { title: `${number}, ${sample.product}` };
 }
 
 export default async function SweepPage({ params }: Props) {
   const actor = await requireActor();
   const { id } = await params;
-  const sweep = await found(readSweep(actor, id));
+  const sweep = await readOnce(actor, id);
   const [window, candidates, zone] = await Promise.all([
     readOverview(actor, id),
     listCandidates(actor, id, { limit: FIRST_CANDIDATES }),
