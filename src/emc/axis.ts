@@ -1,3 +1,5 @@
+import type { Trace } from './types';
+
 /** What lies between a point and the one before it. */
 export const STEP = { joined: 0, turn: 1, hole: 2 } as const;
 
@@ -14,15 +16,27 @@ const HOLE_STEPS = 3;
  */
 export const SWEEP_POINTS = 16;
 
-/** Throws RangeError unless every frequency is finite and above zero. */
-export function checkAxis(frequencyHz: Float64Array, points: number, name: string): void {
-  if (frequencyHz.length !== points) {
-    throw new RangeError(`${name} holds ${frequencyHz.length} frequencies and ${points} readings.`);
+/** True for what a limit and a factor can hold at: finite and above zero. Files hold 0 Hz and offsets too. */
+export function isFrequency(hz: number): boolean {
+  return hz > 0 && hz < Infinity;
+}
+
+/**
+ * The points of a trace that have a place on the axis. A point at 0 Hz, below, or at no frequency at all has none: it
+ * counts as not read, and what lies between its neighbours is judged by the step between them. The trace itself when
+ * all have one. Throws RangeError when there are not as many readings as frequencies.
+ */
+export function onAxis(trace: Trace): Trace {
+  const { frequencyHz, reading, name } = trace;
+  if (frequencyHz.length !== reading.length) {
+    throw new RangeError(`${name} holds ${frequencyHz.length} frequencies and ${reading.length} readings.`);
   }
-  for (let i = 0; i < frequencyHz.length; i++) {
-    const hz = frequencyHz[i]!;
-    if (!(hz > 0 && hz < Infinity)) throw new RangeError(`${name}, point ${i + 1}: ${hz} Hz is no frequency.`);
-  }
+  if (frequencyHz.every(isFrequency)) return trace;
+  return {
+    ...trace,
+    frequencyHz: frequencyHz.filter(isFrequency),
+    reading: reading.filter((_, i) => isFrequency(frequencyHz[i]!)),
+  };
 }
 
 /** The lowest and highest frequency of an axis in any order; null when it is empty. */

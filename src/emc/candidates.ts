@@ -74,10 +74,42 @@ export function candidatesOf(
 /**
  * The list as it is numbered: everything not proven under, filled up with the nearest others to 12 in total; worst
  * verdict first, then smallest margin, then by frequency, trace and line so that the order never depends on chance.
+ * One frequency of a trace against one line is listed once, with the smallest of its margins; see `onePerPlace`.
  */
 export function rankCandidates(open: readonly Unranked[], others: readonly Unranked[]): Candidate[] {
-  const fill = [...others].sort(worseFirst).slice(0, Math.max(0, LISTED_AT_LEAST - open.length));
-  return [...open, ...fill].sort(worseFirst).map((candidate, i) => ({ rank: i + 1, ...candidate }));
+  const places = onePerPlace([
+    ...open.map((candidate) => ({ candidate, isOpen: true })),
+    ...others.map((candidate) => ({ candidate, isOpen: false })),
+  ]);
+  const listed = places.filter(({ isOpen }) => isOpen).map(({ candidate }) => candidate);
+  const nearest = places.filter(({ isOpen }) => !isOpen).map(({ candidate }) => candidate);
+  const fill = nearest.sort(worseFirst).slice(0, Math.max(0, LISTED_AT_LEAST - listed.length));
+  return [...listed, ...fill].sort(worseFirst).map((candidate, i) => ({ rank: i + 1, ...candidate }));
+}
+
+/**
+ * Two passes over one range, or joined pieces, can find the same frequency twice. It is one place: the smallest margin
+ * governs, a stretch of floor stays a stretch, and stretches found at it are one.
+ */
+function onePerPlace(
+  found: readonly { candidate: Unranked; isOpen: boolean }[],
+): { candidate: Unranked; isOpen: boolean }[] {
+  const places = new Map<string, { candidate: Unranked; isOpen: boolean }>();
+  for (const one of found) {
+    const { traceIndex, lineId, frequencyHz } = one.candidate;
+    const key = `${traceIndex} ${frequencyHz} ${lineId}`;
+    const before = places.get(key);
+    if (!before) places.set(key, one);
+    else
+      places.set(key, { candidate: samePlace(before.candidate, one.candidate), isOpen: before.isOpen || one.isOpen });
+  }
+  return [...places.values()];
+}
+
+function samePlace(a: Unranked, b: Unranked): Unranked {
+  const worst = b.marginDb < a.marginDb ? b : a;
+  const kind = a.kind === 'floor' || b.kind === 'floor' ? 'floor' : 'peak';
+  return { ...worst, kind, fromHz: Math.min(a.fromHz, b.fromHz), toHz: Math.max(a.toHz, b.toHz) };
 }
 
 function worseFirst(a: Unranked, b: Unranked): number {

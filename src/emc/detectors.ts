@@ -41,7 +41,7 @@ export const GAUSSIAN_6DB_PER_3DB = Math.SQRT2;
  */
 export function isVideoAverage({ detector, rbwHz, vbwHz }: ReadWith): boolean {
   if (detector !== 'peak' && detector !== 'quasi-peak') return false;
-  return rbwHz !== null && vbwHz != null && vbwHz < rbwHz * (1 - BANDWIDTH_TOLERANCE);
+  return rbwHz !== null && typeof vbwHz === 'number' && vbwHz < rbwHz * (1 - BANDWIDTH_TOLERANCE);
 }
 
 /**

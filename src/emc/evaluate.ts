@@ -1,4 +1,4 @@
-import { axisRange, axisSteps, checkAxis } from './axis';
+import { axisRange, axisSteps, onAxis } from './axis';
 import { candidatesOf, LISTED_AT_LEAST, rankCandidates, type Unranked } from './candidates';
 import { columnAccumulator, LAYER_COLUMNS } from './columns';
 import { gapsOf, spansOf, type Span } from './coverage';
@@ -7,6 +7,7 @@ import { prepareLine, type PreparedLine } from './limitLine';
 import { POINTS_PER_TURN } from './pace';
 import { JUDGED, judgeInto, pairPoints, type PairPoints } from './pair';
 import { tracesFor, type PairableTrace } from './pairing';
+import { governed } from './repeats';
 import { findCandidates } from './search';
 import { hangTrace, judgeSegment, type HungTrace } from './segment';
 import type { Columns, Evaluation, EvaluationInput, JudgedPair, LimitLine, Trace } from './types';
@@ -22,7 +23,8 @@ export const ENGINE = 'stillfield-emc 2';
  *
  * The verdict is the worst of the candidates and of the gaps (not covered); an ambient run, or one without a limit
  * line, is not covered. `counts` counts candidates by verdict, and every gap as not covered.
- * Throws RangeError on tables, lines, paths, uncertainties or axes that cannot be used.
+ * What a file can hold never throws: a reading that is no finite figure, and a point at 0 Hz, below or at none, is not
+ * read. Throws RangeError on tables, lines, paths or uncertainties that cannot be used.
  */
 export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
   const steps = input.purpose === 'final' ? input.uncertainty.final : input.uncertainty.prescan;
@@ -72,8 +74,8 @@ interface Sweep extends PairableTrace {
   hung: HungTrace;
 }
 
-function sweepOf(trace: Trace, { terms, lines }: EvaluationInput): Sweep {
-  checkAxis(trace.frequencyHz, trace.reading.length, trace.name);
+function sweepOf(given: Trace, { terms, lines }: EvaluationInput): Sweep {
+  const trace = onAxis(given);
   const hung = hangTrace(trace, terms, lines);
   const range = axisRange(trace.frequencyHz) ?? { lowestHz: Infinity, highestHz: 0 };
   return { trace, hung, index: trace.index, detector: trace.detector, levelUnit: hung.levelUnit, ...range };
@@ -113,7 +115,8 @@ function* judgeSweep(
   for (const pair of pairs) {
     const { line } = pair.line;
     const reach = reachOf(trace, line, purpose);
-    const found = yield* findCandidates(pair.points, reach, pair.bandwidthHz, LISTED_AT_LEAST);
+    const places = yield* findCandidates(pair.points, reach, pair.bandwidthHz, LISTED_AT_LEAST);
+    const found = yield* governed(pair.points, places);
     const { open, others } = candidatesOf(found, trace, hung, pair.line, pair.points, purpose);
     yield;
     const spans = yield* spansOf(pair.points, trace.rbwHz);

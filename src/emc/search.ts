@@ -70,7 +70,7 @@ function* searchRun(
   const provenAbove = reach.under ? uncertaintyDb[run.from]! : Infinity;
   const unproven = (i: number) => judges && marginDb[i]! <= provenAbove;
   const prominent = yield* prominentMinima(marginDb, run.from, run.to, PROMINENCE_DB);
-  for (const i of prominent) if (!unproven(i)) keepNearest(found.others, i, marginDb, nearest);
+  for (const i of prominent) if (!unproven(i)) keepNearest(found.others, i, frequencyHz, marginDb, nearest);
   // The lowest margin is always prominent: when it is proven, everything is.
   if (!prominent.some(unproven)) return;
 
@@ -120,8 +120,20 @@ function lower(a: number, b: number, marginDb: Float64Array): number {
   return marginDb[b]! < marginDb[a]! ? b : a;
 }
 
-function keepNearest(kept: number[], point: number, marginDb: Float64Array, most: number): void {
+/** Two passes over one frequency are one place: of these the smaller margin is kept. */
+function keepNearest(
+  kept: number[],
+  point: number,
+  frequencyHz: Float64Array,
+  marginDb: Float64Array,
+  most: number,
+): void {
   if (kept.length === most && (most === 0 || marginDb[kept[most - 1]!]! <= marginDb[point]!)) return;
+  const same = kept.findIndex((one) => frequencyHz[one] === frequencyHz[point]);
+  if (same >= 0) {
+    if (marginDb[kept[same]!]! <= marginDb[point]!) return;
+    kept.splice(same, 1);
+  }
   let at = kept.length;
   while (at > 0 && marginDb[kept[at - 1]!]! > marginDb[point]!) at--;
   kept.splice(at, 0, point);

@@ -1,3 +1,4 @@
+import { isFrequency } from './axis';
 import { levelsInto, POINT, preparePath, type PreparedPath } from './correction';
 import type { LineUnit } from './kinds';
 import { limitsInto, prepareLine, type PreparedLine } from './limitLine';
@@ -5,7 +6,7 @@ import { hangingLines } from './pairing';
 import type { LimitLine, PathTerm, Trace } from './types';
 
 // Held as locals: a bundler may turn an imported name into a getter, which a loop over a million points would feel.
-const { known } = POINT;
+const { known, notRead } = POINT;
 
 /** A trace without its points. */
 export type TraceHead = Omit<Trace, 'frequencyHz' | 'reading'>;
@@ -27,7 +28,7 @@ export function hangTrace(head: TraceHead, terms: readonly PathTerm[], lines: re
 /** Points of one trace with their levels, and their margins to the line they hang from. Arrays are equally long. */
 export interface JudgedSegment {
   frequencyHz: Float64Array;
-  /** Natural logarithm of the frequency. */
+  /** Natural logarithm of the frequency; 0 where there is no frequency. */
   logHz: Float64Array;
   /** Meaningful where `state` is POINT.known. */
   level: Float64Array;
@@ -40,15 +41,20 @@ export interface JudgedSegment {
 
 /**
  * Levels and margins of any run of points of a trace. The whole evaluation, a window of it and a single Working all
- * come through here, so they agree to the last bit.
+ * come through here, so they agree to the last bit. A point at 0 Hz, below, or at no frequency is not read.
  */
 export function judgeSegment(hung: HungTrace, frequencyHz: Float64Array, reading: Float32Array): JudgedSegment {
   const points = frequencyHz.length;
   const logHz = new Float64Array(points);
-  for (let i = 0; i < points; i++) logHz[i] = Math.log(frequencyHz[i]!);
+  let astray = false;
+  for (let i = 0; i < points; i++) {
+    if (isFrequency(frequencyHz[i]!)) logHz[i] = Math.log(frequencyHz[i]!);
+    else astray = true;
+  }
   const level = new Float64Array(points);
   const state = new Uint8Array(points);
   levelsInto(hung.path, frequencyHz, logHz, reading, level, state);
+  if (astray) for (let i = 0; i < points; i++) if (!isFrequency(frequencyHz[i]!)) state[i] = notRead;
   const marginDb = new Float64Array(points);
   const hasMargin = new Uint8Array(points);
   const limit = new Float64Array(points);

@@ -100,7 +100,7 @@ function becauseOf(verdict: Verdict, facts: ReadingFacts, marginDb: number, unce
     return `A reading in ${detector} shows neither under nor over against a limit in ${lineDetector}.`;
   }
   if (rbwHz === null) return `The RBW is not known; the limit asks for ${required}.`;
-  if (isVideoAverage(facts) && vbwHz != null) {
+  if (isVideoAverage(facts) && typeof vbwHz === 'number') {
     const than = `narrower than RBW ${bandwidthText(rbwHz)}`;
     return `VBW ${bandwidthText(vbwHz)} is ${than}, so the reading is a video average.`;
   }

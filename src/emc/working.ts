@@ -1,38 +1,43 @@
+import { isFrequency } from './axis';
 import { POINT } from './correction';
 import { factorAt } from './factorTable';
-import { signOf } from './correction';
 import { limitAt } from './limitLine';
-import { hangTrace, judgeSegment } from './segment';
-import type { EvaluationInput, LimitLine, PathTerm, Trace, Working, WorkingTerm } from './types';
+import { hangTrace, judgeSegment, type HungTrace } from './segment';
+import type { EvaluationInput, LimitLine, Trace, Working } from './types';
 import { expandedAt } from './uncertainty';
-import { DBM_TO_DBUV_50_OHM, isReceiverInput, powerAsDbm, toReceiverLevel } from './units';
 import { readingVerdict } from './verdict';
+import { pathTerms, readingTerms } from './workingTerms';
 
 /**
  * The column addition behind one figure: the measured point of a trace nearest to a frequency, its reading, every term
  * of its path (those not applied too, with their figure), the level, and the margin to a line: the one asked for, or
- * the first the trace hangs from that has a limit there. Where several points share the nearest frequency the highest
- * reading is shown, as it governs.
+ * the first the trace hangs from that has a limit there. Where several points are equally near (joined pieces, two
+ * passes over one range, the middle of a step) the one with the smallest margin is shown: it governs, and a candidate
+ * at its frequency came from it. `pointIndex` addresses a point of the trace exactly instead, from 0 in file order.
  *
  * The applied terms, added in their order, give exactly the level `evaluate` computed. A term whose table has no value
  * there has no figure and is left out; when it was to be applied the level is null and `because` names it.
- * Throws RangeError when the trace or the line is not in the input, or the trace is empty.
+ * Throws RangeError when the trace, the point or the line is not in the input, or no point has a frequency.
  */
-export function workingAt(input: EvaluationInput, traceIndex: number, frequencyHz: number, lineId?: string): Working {
+export function workingAt(
+  input: EvaluationInput,
+  traceIndex: number,
+  frequencyHz: number,
+  lineId?: string,
+  pointIndex?: number,
+): Working {
   const trace = input.traces.find((one) => one.index === traceIndex);
   if (!trace) throw new RangeError(`There is no trace ${traceIndex}.`);
-  const point = nearestPoint(trace, frequencyHz);
-  const hz = trace.frequencyHz[point]!;
+  const asked = lineId === undefined ? null : input.lines.find((one) => one.id === lineId);
+  if (asked === undefined) throw new RangeError(`There is no limit line ${lineId}.`);
+  if (pointIndex !== undefined && !(pointIndex in trace.reading)) {
+    throw new RangeError(`${trace.name} has no point ${pointIndex}.`);
+  }
   const hung = hangTrace(trace, input.terms, input.lines);
-  const judged = judgeSegment(hung, Float64Array.of(hz), trace.reading.slice(point, point + 1));
-  const level = hung.levelUnit !== null && judged.state[0] === POINT.known ? judged.level[0]! : null;
-
-  const hanging = hung.lines.map((prepared) => prepared.line);
-  const line = lineId === undefined ? lineAt(hanging, hz) : input.lines.find((one) => one.id === lineId);
-  if (!line && lineId !== undefined) throw new RangeError(`There is no limit line ${lineId}.`);
-  const comparable = line && line.unit === hung.levelUnit ? line : null;
-  const limit = comparable ? limitAt(comparable, hz) : null;
-  const marginDb = level !== null && limit !== null ? limit - level : null;
+  const points = pointIndex === undefined ? nearestPoints(trace, frequencyHz) : [pointIndex];
+  const { point, hz, level, line, comparable, limit, marginDb } = points
+    .map((one) => figuresAt(trace, hung, asked, one))
+    .reduce((worst, one) => (worse(one, worst) ? one : worst));
   const steps = input.purpose === 'final' ? input.uncertainty.final : input.uncertainty.prescan;
   const uncertaintyDb = expandedAt(steps, hz);
 
@@ -46,8 +51,36 @@ export function workingAt(input: EvaluationInput, traceIndex: number, frequencyH
     limit,
     marginDb,
     uncertaintyDb,
-    ...judgement(input, trace, line ?? null, { marginDb, uncertaintyDb, level, hz, comparable: comparable !== null }),
+    ...judgement(input, trace, line, { marginDb, uncertaintyDb, level, hz, comparable: comparable !== null }),
   };
+}
+
+interface Figures {
+  point: number;
+  hz: number;
+  level: number | null;
+  line: LimitLine | null;
+  /** The line, when it is in the unit of the level. */
+  comparable: LimitLine | null;
+  limit: number | null;
+  marginDb: number | null;
+}
+
+function figuresAt(trace: Trace, hung: HungTrace, asked: LimitLine | null, point: number): Figures {
+  const hz = trace.frequencyHz[point]!;
+  const judged = judgeSegment(hung, Float64Array.of(hz), trace.reading.slice(point, point + 1));
+  const level = hung.levelUnit !== null && judged.state[0] === POINT.known ? judged.level[0]! : null;
+  const line = asked ?? lineAt(hung.lines, hz);
+  const comparable = line && line.unit === hung.levelUnit ? line : null;
+  const limit = comparable && isFrequency(hz) ? limitAt(comparable, hz) : null;
+  const marginDb = level !== null && limit !== null ? limit - level : null;
+  return { point, hz, level, line, comparable, limit, marginDb };
+}
+
+/** The smaller margin is the worse; where there is none, the higher level; what holds no level comes last. */
+function worse(a: Figures, b: Figures): boolean {
+  if (a.marginDb !== null || b.marginDb !== null) return (a.marginDb ?? Infinity) < (b.marginDb ?? Infinity);
+  return (a.level ?? -Infinity) > (b.level ?? -Infinity);
 }
 
 function judgement(
@@ -80,62 +113,23 @@ function noLevelBecause(input: EvaluationInput, trace: Trace, hz: number): strin
   return lacking ? `${lacking.table.name} has no value at this frequency.` : 'The reading is no level.';
 }
 
-/** The reading in its own unit, then what makes it a level at the receiver's input. */
-function readingTerms(trace: Trace, reading: number): WorkingTerm[] {
-  const { unit } = trace;
-  const given = { ...PLAIN, figure: reading, unit, name: 'reading' };
-  if (!Number.isFinite(reading)) return [];
-  if (unit === 'dB') return [{ ...given, applied: false, notAppliedBecause: 'relative dB is no level' }];
-  if (unit === 'dBuV' || !isReceiverInput(unit)) return [given];
-  const conversion = {
-    ...PLAIN,
-    sign: '+' as const,
-    figure: DBM_TO_DBUV_50_OHM,
-    unit: 'dB',
-    name: 'dBm to dBµV in 50 ohm',
-  };
-  if (unit === 'dBm') return [given, conversion];
-  const notAdded = { ...given, applied: false, notAppliedBecause: 'its level is added instead' };
-  const level = toReceiverLevel(reading, unit);
-  if (level === null) return [notAdded];
-  const dbm = powerAsDbm(reading, unit);
-  if (dbm === null) return [notAdded, { ...PLAIN, figure: level, unit: 'dBuV', name: 'reading as a level' }];
-  return [notAdded, { ...PLAIN, figure: dbm, unit: 'dBm', name: 'reading as a level' }, conversion];
+function lineAt(lines: HungTrace['lines'], hz: number): LimitLine | null {
+  if (!isFrequency(hz)) return null;
+  return lines.find(({ line }) => limitAt(line, hz) !== null)?.line ?? null;
 }
 
-function pathTerms(terms: readonly PathTerm[], hz: number): WorkingTerm[] {
-  return terms.flatMap((term): WorkingTerm[] => {
-    const factor = factorAt(term.table, hz);
-    if (factor === null) return [];
-    const { valueDb, ...rows } = factor;
-    return [
-      {
-        sign: signOf(term.table.quantity) > 0 ? '+' : '−',
-        figure: valueDb,
-        unit: term.table.quantity === 'antenna-factor' ? 'dB/m' : 'dB',
-        name: term.name,
-        termId: term.id,
-        applied: term.applied,
-        notAppliedBecause: term.applied ? null : (term.notAppliedBecause ?? null),
-        rows,
-      },
-    ];
-  });
-}
-
-const PLAIN = { sign: '' as const, termId: null, applied: true, notAppliedBecause: null, rows: null };
-
-function lineAt(lines: readonly LimitLine[], hz: number): LimitLine | undefined {
-  return lines.find((line) => limitAt(line, hz) !== null);
-}
-
-function nearestPoint({ frequencyHz, reading, name }: Trace, targetHz: number): number {
-  if (frequencyHz.length === 0) throw new RangeError(`${name} holds no points.`);
-  let nearest = 0;
-  for (let i = 1; i < frequencyHz.length; i++) {
-    const closer = Math.abs(frequencyHz[i]! - targetHz) - Math.abs(frequencyHz[nearest]! - targetHz);
-    const sameHz = frequencyHz[i] === frequencyHz[nearest];
-    if (closer < 0 || (sameHz && reading[i]! > reading[nearest]!)) nearest = i;
+/** Every point at the smallest distance from a frequency; never empty. */
+function nearestPoints({ frequencyHz, name }: Trace, targetHz: number): number[] {
+  let nearestHz = Infinity;
+  let points: number[] = [];
+  for (let i = 0; i < frequencyHz.length; i++) {
+    if (!isFrequency(frequencyHz[i]!)) continue;
+    const awayHz = Math.abs(frequencyHz[i]! - targetHz);
+    if (awayHz < nearestHz) {
+      nearestHz = awayHz;
+      points = [i];
+    } else if (awayHz === nearestHz) points.push(i);
   }
-  return nearest;
+  if (points.length === 0) throw new RangeError(`${name} holds no point near ${targetHz} Hz.`);
+  return points;
 }

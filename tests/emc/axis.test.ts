@@ -1,4 +1,5 @@
-import { axisRange, axisSteps, checkAxis, STEP } from '@/emc/axis';
+import { axisRange, axisSteps, onAxis, STEP } from '@/emc/axis';
+import { traceOf } from './given';
 
 const steps = (hz: number[], bandwidthHz = 9e3) => Array.from(axisSteps(Float64Array.from(hz), bandwidthHz));
 const breaks = (hz: number[], bandwidthHz?: number) =>
@@ -59,12 +60,20 @@ describe('how the points of an axis hang together', () => {
     expect(breaks(even(1e6, 1e6, 16))).toEqual([[0, STEP.turn]]);
   });
 
-  test('range in any order; null when empty; a frequency that is none is refused with its point', () => {
+  test('range in any order; null when empty', () => {
     expect(axisRange(Float64Array.of(3, 1, 2))).toEqual({ lowestHz: 1, highestHz: 3 });
     expect(axisRange(new Float64Array(0))).toBeNull();
     expect(steps([])).toEqual([]);
-    expect(() => checkAxis(Float64Array.of(1, 0), 2, 'trace')).toThrow('trace, point 2: 0 Hz is no frequency.');
-    expect(() => checkAxis(Float64Array.of(1, NaN), 2, 'trace')).toThrow(RangeError);
-    expect(() => checkAxis(Float64Array.of(1), 2, 'trace')).toThrow(/1 frequencies and 2 readings/);
+  });
+
+  test('points without a place on the axis are left out; a trace with none of them stays itself', () => {
+    const odd = onAxis(traceOf([1, 2, 3, 4, 5, 6], { frequencyHz: [0, 5, -3, NaN, Infinity, 7] }));
+    expect([Array.from(odd.frequencyHz), Array.from(odd.reading)]).toEqual([
+      [5, 7],
+      [2, 6],
+    ]);
+    const plain = traceOf([1, 2]);
+    expect(onAxis(plain)).toBe(plain);
+    expect(() => onAxis(traceOf([1, 2], { frequencyHz: [1] }))).toThrow(/1 frequencies and 2 readings/);
   });
 });

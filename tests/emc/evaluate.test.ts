@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { ENGINE, evaluate, evaluateNow } from '@/emc/evaluate';
 import { factorAt } from '@/emc/factorTable';
 import { limitAt } from '@/emc/limitLine';
-import { VERDICTS, type Detector, type Purpose } from '@/emc/kinds';
+import { VERDICTS, type Detector, type LevelUnit, type Purpose } from '@/emc/kinds';
 import type { EvaluationInput, Trace } from '@/emc/types';
 import { readingVerdict, severity } from '@/emc/verdict';
 import { inputOf, lineOf, publishedLine, repeatable, tableOf, termOf, traceOf } from './given';
@@ -382,6 +382,99 @@ describe('pace', () => {
   });
 });
 
+describe('what a file can hold is never refused', () => {
+  const line = lineOf([[1, 1.4, 60, 60]]);
+  const readings = (odd: number[], at: number) => {
+    const all = Array<number>(120).fill(20);
+    all.splice(at, odd.length, ...odd);
+    return all;
+  };
+  const levelsIn = ({ layers, candidates }: ReturnType<typeof evaluateNow>) => [
+    ...layers.flatMap((layer) => [...layer.levelMin, ...layer.levelMax, ...layer.marginMin, ...layer.marginMax]),
+    ...candidates.flatMap(({ level, marginDb }) => [level, marginDb]),
+  ];
+
+  test.each([[[1e39]], [[-1e39]], [[NaN]], [[Infinity, NaN, -Infinity]]])(
+    'readings of %p are not read: a gap, and never a level',
+    (odd) => {
+      for (const unit of ['dBuV', 'dBm', 'uV', 'W'] as const) {
+        const base = unit === 'dBm' ? -90 : unit === 'W' ? 1e-12 : 20;
+        const trace = traceOf(
+          readings(odd, 50).map((value) => (value === 20 ? base : value)),
+          { unit },
+        );
+        const found = evaluateNow(inputOf({ traces: [trace], lines: [line] }));
+        expect(found.gaps).toEqual([
+          {
+            lineId: 'line',
+            fromHz: trace.frequencyHz[49],
+            toHz: trace.frequencyHz[50 + odd.length],
+            because: 'gap',
+          },
+        ]);
+        expect(found.verdict).toBe('not-covered');
+        expect(found.pairs[0]!.points).toBe(89 - odd.length);
+        expect(levelsIn(found).every(Number.isFinite)).toBe(true);
+      }
+    },
+  );
+
+  test('frequencies of 0 Hz, below, or none have no place: the rest is judged as if they were not there', () => {
+    const rest = traceOf(Array<number>(120).fill(20));
+    const terms = [termOf(tableOf('loss', [[0.5, 1], [30, 1]]))]; // prettier-ignore
+    const whole = evaluateNow(inputOf({ traces: [rest], lines: [line], terms }));
+    for (const odd of [0, -4_500, NaN, Infinity]) {
+      const trace = traceOf([90, ...rest.reading, 90], { frequencyHz: [odd, ...rest.frequencyHz, odd] });
+      expect(evaluateNow(inputOf({ traces: [trace], lines: [line], terms }))).toEqual(whole);
+    }
+    const split = [...rest.frequencyHz];
+    split.splice(10, 3, -1, -1, -1);
+    expect(
+      evaluateNow(inputOf({ traces: [{ ...rest, frequencyHz: Float64Array.from(split) }], lines: [line] })),
+    ).toMatchObject({
+      verdict: 'not-covered',
+      gaps: [{ fromHz: rest.frequencyHz[9], toHz: rest.frequencyHz[13], because: 'gap' }],
+    });
+  });
+
+  test('an axis without any frequency leaves every line open from end to end', () => {
+    const trace = traceOf([1, 2, 3], { frequencyHz: [-2e6, -1e6, 0] });
+    const found = evaluateNow(inputOf({ traces: [trace], lines: [line, { ...line, id: 'other' }] }));
+    expect(found).toMatchObject({ verdict: 'not-covered', pairs: [], candidates: [] });
+    expect(found.gaps.map(({ lineId, fromHz, toHz, because }) => [lineId, fromHz, toHz, because])).toEqual([
+      ['line', 1e6, 1.4e6, 'no-trace'],
+      ['other', 1e6, 1.4e6, 'no-trace'],
+    ]);
+    expect(found.layers[0]!.frequencyHz).toHaveLength(0);
+  });
+
+  test('any frequencies and any readings evaluate, and every figure is finite (property)', () => {
+    const figure = fc.oneof(fc.double(), fc.integer({ min: -100, max: 200 }));
+    const hertz = fc.oneof(fc.double(), fc.integer({ min: -1_000_000, max: 3_000_000 }));
+    const units = fc.constantFrom<LevelUnit>('dBuV', 'dBm', 'V', 'mW', 'dB');
+    fc.assert(
+      fc.property(fc.array(fc.tuple(hertz, figure), { maxLength: 60 }), units, (points, unit) => {
+        const trace = traceOf(
+          points.map(([, value]) => value),
+          { frequencyHz: points.map(([hz]) => hz), unit },
+        );
+        const found = evaluateNow(inputOf({ traces: [trace], lines: [line] }));
+        expect(levelsIn(found).every(Number.isFinite)).toBe(true);
+      }),
+      { numRuns: 200 },
+    );
+  });
+});
+
+describe('a trace behind a narrow VBW', () => {
+  test('proves nothing, and every candidate says why', () => {
+    const trace = traceOf(Array<number>(120).fill(20), { detector: 'peak', vbwHz: 100 });
+    const found = evaluateNow(inputOf({ traces: [trace], lines: [lineOf([[1, 1.4, 60, 60]])] }));
+    expect(found.verdict).toBe('needs-final');
+    expect(found.candidates.every(({ because }) => /VBW 100 Hz is narrower than RBW 9 kHz/.test(because!))).toBe(true);
+  });
+});
+
 describe('what cannot be evaluated is refused', () => {
   test.each<[string, Partial<EvaluationInput>]>([
     [
@@ -399,7 +492,6 @@ describe('what cannot be evaluated is refused', () => {
     ],
     ['a line without segments', { lines: [lineOf([])] }],
     ['a negative uncertainty', { uncertainty: { prescan: [{ startHz: 1, stopHz: 2, expandedDb: -1 }], final: [] } }],
-    ['an axis with zero in it', { traces: [traceOf([1, 2], { frequencyHz: [0, 1] })] }],
     ['fewer readings than frequencies', { traces: [traceOf([1], { frequencyHz: [1, 2] })] }],
   ])('%s', (_, more) => {
     expect(() => evaluateNow(inputOf({ traces: [traceOf([1])], ...more }))).toThrow(RangeError);

@@ -143,6 +143,87 @@ describe('the working of one figure', () => {
     expect(workingAt(swapped, 0, 2e6).terms[0]!.figure).toBe(30);
   });
 
+  test('a point is addressed exactly by its index, and one that is not there is refused', () => {
+    const trace = traceOf([10, 30, 20, 10], { frequencyHz: [1e6, 2e6, 2e6, 3e6] });
+    const figures = [0, 1, 2, 3].map((point) => {
+      const { frequencyHz, level } = workingAt(inputOf({ traces: [trace] }), 0, 2e6, undefined, point);
+      return [frequencyHz, level];
+    });
+    expect(figures).toEqual([
+      [1e6, 10],
+      [2e6, 30],
+      [2e6, 20],
+      [3e6, 10],
+    ]);
+    for (const point of [-1, 4, 0.5]) {
+      expect(() => workingAt(inputOf({ traces: [trace] }), 0, 2e6, undefined, point)).toThrow(RangeError);
+    }
+  });
+
+  test('equally near on either side, the smaller margin is shown, not the higher reading', () => {
+    const step = lineOf([
+      [1, 2, 60, 60],
+      [2, 4, 40, 40],
+    ]);
+    const trace = traceOf([45, 30], { frequencyHz: [1.5e6, 2.5e6] });
+    expect(workingAt(inputOf({ traces: [trace], lines: [step] }), 0, 2e6)).toMatchObject({
+      frequencyHz: 2.5e6,
+      marginDb: 10,
+    });
+  });
+
+  test('a point that holds no level never hides one at the same frequency', () => {
+    const trace = traceOf([10, Infinity, 20, 10], { frequencyHz: [1e6, 2e6, 2e6, 3e6] });
+    expect(workingAt(inputOf({ traces: [trace] }), 0, 2e6).level).toBe(20);
+    expect(workingAt(inputOf({ traces: [trace] }), 0, 2e6, undefined, 1)).toMatchObject({
+      level: null,
+      limit: 60,
+      verdict: 'not-covered',
+    });
+  });
+
+  test('a point at 0 Hz is no level and is never the nearest', () => {
+    const trace = traceOf([90, 10], { frequencyHz: [0, 1e6] });
+    expect(workingAt(inputOf({ traces: [trace] }), 0, 1).frequencyHz).toBe(1e6);
+    expect(workingAt(inputOf({ traces: [trace] }), 0, 1, undefined, 0)).toMatchObject({ level: null, limit: null });
+    expect(() => workingAt(inputOf({ traces: [traceOf([9], { frequencyHz: [-1] })] }), 0, 1)).toThrow(RangeError);
+  });
+
+  test('candidate margin is working margin where pieces join and where two passes cross one range (property)', () => {
+    const lines = [
+      lineOf([
+        [0.9, 1.3, 60, 60],
+        [1.3, 9, 50, 50],
+      ]),
+    ];
+    const axis = fc.constantFrom<'pieces' | 'passes' | 'back'>('pieces', 'passes', 'back');
+    fc.assert(
+      fc.property(fc.integer(), axis, fc.integer({ min: 10, max: 58 }), (seed, shape, floor) => {
+        const random = repeatable(seed);
+        const up = Array.from({ length: 130 }, (_, i) => 1e6 + i * 4_500);
+        const second =
+          shape === 'pieces' ? up.map((hz) => hz + 129 * 4_500) : shape === 'back' ? [...up].reverse() : up;
+        const hz = [...up, ...second];
+        const trace = traceOf(
+          hz.map(() => floor + 8 * random() + (random() < 0.05 ? 15 : 0)),
+          { frequencyHz: hz },
+        );
+        const input = inputOf({ traces: [trace], lines });
+        const { candidates } = evaluateNow(input);
+        expect(candidates.length).toBeGreaterThan(0);
+        for (const { traceIndex, lineId, frequencyHz, reading, marginDb, verdict, fromHz, toHz } of candidates) {
+          const working = workingAt(input, traceIndex, frequencyHz, lineId);
+          expect(working).toMatchObject({ frequencyHz, verdict });
+          expect([working.marginDb, working.terms[0]!.figure]).toEqual([marginDb, reading]);
+          expect(fromHz <= frequencyHz && frequencyHz <= toHz).toBe(true);
+        }
+        const places = candidates.map(({ frequencyHz }) => frequencyHz);
+        expect(new Set(places).size).toBe(places.length);
+      }),
+      { numRuns: 150 },
+    );
+  });
+
   test('the line asked for is the one compared; a line in another unit or without a limit there says so', () => {
     const other = lineOf([[1, 2, 60, 60]], { id: 'mains', unit: 'dBuV' });
     const short = { ...line, id: 'short', name: 'short line', segments: line.segments.slice(1) };
