@@ -27,6 +27,23 @@ export function authorise(actor: Actor | null, permission: Permission): asserts 
   }
 }
 
+/** Whoever runs commands on the lab's own server, or fills the demo lab there. No request is ever this. */
+export const SERVER = Symbol('server');
+export type Commander = Actor | typeof SERVER;
+
+/** `authorise` for what a command may do too. Nobody (null) is Unauthenticated here as everywhere. */
+export function authoriseCommander(
+  commander: Commander | null,
+  permission: Permission,
+): asserts commander is Commander {
+  if (commander !== SERVER) authorise(commander, permission);
+}
+
+/** The person behind a change, for its audit entry; null for the server itself. */
+export function personOf(commander: Commander): Actor | null {
+  return commander === SERVER ? null : commander;
+}
+
 /** Which organisations' records an actor sees: null means all (the lab's own people). */
 export function visibleOrganisation(actor: Actor): number | null {
   return actor.role === 'designer' ? actor.organisationId : null;

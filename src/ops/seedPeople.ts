@@ -1,5 +1,5 @@
 import type { DemoOrganisation, DemoUser } from '@fixtures/demo/types';
-import type { Actor } from '@/auth/actor';
+import { type Actor, SERVER } from '@/auth/actor';
 import type { Organisation } from '@/models/organisation';
 import { User } from '@/models/user';
 import { enterClient, enterLab } from '@/services/organisations';
@@ -18,7 +18,7 @@ export async function seedPeople(
 ): Promise<SeededPeople> {
   const organisations = new Map<string, Organisation>();
   for (const { key, kind, name, timeZone: zone } of demoOrganisations) {
-    const entered = kind === 'lab' ? enterLab({ name, zone, jobPrefix: 'HL' }, at) : enterClient(null, name, at);
+    const entered = kind === 'lab' ? enterLab({ name, zone, jobPrefix: 'HL' }, at) : enterClient(SERVER, name, at);
     organisations.set(key, await entered);
   }
   const actors = new Map<string, Actor>();
@@ -26,7 +26,7 @@ export async function seedPeople(
     const organisation = organisations.get(user.organisation)!;
     const { role, name, email, passphrase: password } = user;
     const { publicId } = await createUser(
-      null,
+      SERVER,
       { organisationId: organisation.publicId, role, name, email, password },
       at,
     );

@@ -1,4 +1,4 @@
-import { authorise, type Actor } from '@/auth/actor';
+import { authorise, authoriseCommander, type Actor, type Commander, personOf, SERVER } from '@/auth/actor';
 import { Conflict } from '@/errors';
 import { Organisation } from '@/models/organisation';
 import { newPublicId } from '@/models/publicId';
@@ -20,10 +20,10 @@ export async function listOrganisations(actor: Actor | null, page: PageRequest) 
   });
 }
 
-/** Enters a client organisation. Null is whoever runs commands on the lab's server. */
-export async function enterClient(actor: Actor | null, name: string, at = new Date()): Promise<Organisation> {
-  if (actor) authorise(actor, 'organisation.enter');
-  return unitOfWork(() => write(actor, 'client', name, at));
+/** Enters a client organisation; managers only, at a browser or on the server. */
+export async function enterClient(by: Commander | null, name: string, at = new Date()): Promise<Organisation> {
+  authoriseCommander(by, 'organisation.enter');
+  return unitOfWork(() => write(by, 'client', name, at));
 }
 
 /** Sets up the one lab of this database with its settings. Conflict when there is one already. */
@@ -32,14 +32,14 @@ export async function enterLab(settings: LabSettings, at = new Date()): Promise<
     const lab = await Organisation.findOne({ where: { kind: 'lab' } });
     if (lab) throw new Conflict(`This database already belongs to ${lab.name}.`);
     await Setting.create({ name: 'lab', value: settings });
-    return write(null, 'lab', settings.name, at);
+    return write(SERVER, 'lab', settings.name, at);
   });
 }
 
-async function write(actor: Actor | null, kind: 'lab' | 'client', name: string, at: Date): Promise<Organisation> {
+async function write(by: Commander, kind: 'lab' | 'client', name: string, at: Date): Promise<Organisation> {
   const shortName = name.split(' ').slice(0, 2).join(' ');
   const row = await Organisation.create({ publicId: newPublicId(), kind, name, shortName, createdAt: at });
-  recordChange(actor, {
+  recordChange(personOf(by), {
     scope: 'lab',
     action: `${kind} ${name} entered`,
     subjectType: 'organisation',

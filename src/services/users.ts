@@ -1,5 +1,5 @@
 import { literal, UniqueConstraintError, type WhereOptions } from 'sequelize';
-import { authorise, type Actor } from '@/auth/actor';
+import { authoriseCommander, type Commander, personOf } from '@/auth/actor';
 import { hashPassword, passwordIssues } from '@/auth/password';
 import type { Role } from '@/auth/permissions';
 import { Conflict, Invalid, type Issue, NotFound } from '@/errors';
@@ -19,14 +19,6 @@ export interface NewUser {
   email: string;
   /** Null: the person cannot sign in before a password is set. */
   password: string | null;
-}
-
-/**
- * Managers only, at a browser. Null is whoever runs commands on the lab's server or fills the demo lab; no operation
- * passes null on, since `handle` turns a stranger away first.
- */
-function mayManagePeople(actor: Actor | null, permission: 'user.create' | 'user.change'): void {
-  if (actor) authorise(actor, permission);
 }
 
 /** A person by public id or e-mail; call inside a unit of work. @throws {NotFound} */
@@ -55,11 +47,12 @@ function entryIssues(entry: NewUser, organisation: Organisation | null): Issue[]
 }
 
 /**
- * Enters a person. E-mail addresses are kept in lower case and belong to one person only.
+ * Enters a person; managers only, at a browser or on the server. E-mail addresses are kept in lower case and belong to
+ * one person only.
  * @param at when it happened, for records that are entered later
  */
-export async function createUser(actor: Actor | null, entry: NewUser, at = new Date()): Promise<{ publicId: string }> {
-  mayManagePeople(actor, 'user.create');
+export async function createUser(by: Commander | null, entry: NewUser, at = new Date()): Promise<{ publicId: string }> {
+  authoriseCommander(by, 'user.create');
   const user = { ...entry, name: entry.name.trim(), email: entry.email.trim().toLowerCase() };
   const find = () => Organisation.findOne({ where: { publicId: user.organisationId } });
   const issues = entryIssues(user, await unitOfWork(find));
@@ -80,7 +73,7 @@ export async function createUser(actor: Actor | null, entry: NewUser, at = new D
       if (!(error instanceof UniqueConstraintError)) throw error;
       throw new Invalid([{ pointer: '/email', message: 'belongs to somebody already' }]);
     });
-    recordChange(actor, {
+    recordChange(personOf(by), {
       scope: 'lab',
       action: 'person entered',
       subjectType: 'user',
@@ -94,8 +87,8 @@ export async function createUser(actor: Actor | null, entry: NewUser, at = new D
 }
 
 /** Gives a person a new password and ends all their sessions; what strangers failed at their account is forgotten. */
-export async function setPassword(actor: Actor | null, publicIdOrEmail: string, password: string): Promise<void> {
-  mayManagePeople(actor, 'user.change');
+export async function setPassword(by: Commander | null, publicIdOrEmail: string, password: string): Promise<void> {
+  authoriseCommander(by, 'user.change');
   const { id, email, publicId } = await unitOfWork(() => findUser(publicIdOrEmail));
   const issues = passwordIssues(password, email);
   if (issues.length) throw new Invalid(issues);
@@ -104,7 +97,7 @@ export async function setPassword(actor: Actor | null, publicIdOrEmail: string, 
     await User.update({ passwordHash, version: literal('version + 1') }, { where: { id } });
     const ended = await endAllSessions(id);
     await forgetFailures(email);
-    recordChange(actor, {
+    recordChange(personOf(by), {
       scope: 'lab',
       action: 'password set',
       subjectType: 'user',
@@ -116,8 +109,8 @@ export async function setPassword(actor: Actor | null, publicIdOrEmail: string, 
 }
 
 /** Shuts a person out at once: their sessions end and their tokens open nothing. The last manager cannot be. */
-export async function disableUser(actor: Actor | null, publicIdOrEmail: string): Promise<void> {
-  mayManagePeople(actor, 'user.change');
+export async function disableUser(by: Commander | null, publicIdOrEmail: string): Promise<void> {
+  authoriseCommander(by, 'user.change');
   await unitOfWork(async () => {
     const user = await findUser(publicIdOrEmail);
     // Locked in one order, so that two managers cannot disable each other at the same moment.
@@ -133,7 +126,7 @@ export async function disableUser(actor: Actor | null, publicIdOrEmail: string):
     const [disabled] = await User.update(change, { where: { id: user.id, disabledAt: null } });
     if (disabled === 0) return;
     const ended = await endAllSessions(user.id);
-    recordChange(actor, {
+    recordChange(personOf(by), {
       scope: 'lab',
       action: 'person disabled',
       subjectType: 'user',

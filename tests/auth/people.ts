@@ -1,4 +1,4 @@
-import type { Actor } from '@/auth/actor';
+import { type Actor, SERVER } from '@/auth/actor';
 import { hashPassword } from '@/auth/password';
 import type { Role } from '@/auth/permissions';
 import { Organisation } from '@/models/organisation';
@@ -28,7 +28,7 @@ export async function enterLab() {
     count += 1;
     const organisation = role === 'designer' ? client : lab;
     const [name, email] = [`Person ${count}`, `who${count}@harrowlane.example`];
-    const { publicId } = await createUser(null, {
+    const { publicId } = await createUser(SERVER, {
       organisationId: organisation.publicId,
       role,
       name,

@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
 import { authorise } from '@/auth/actor';
+import { SERVER } from '@/auth/actor';
 import { closePasswordWorkers } from '@/auth/passwordWorker';
 import { Conflict, Forbidden, Invalid, NotFound } from '@/errors';
 import { ApiToken } from '@/models/apiToken';
@@ -80,7 +81,7 @@ test('a token ends when it is revoked, runs out, or its owner is disabled', asyn
   const past = new Date(Date.now() - 1);
   await unitOfWork(() => ApiToken.update({ expiresAt: past }, { where: { publicId: overdue.id } }));
   await expect(as(overdue.token)).rejects.toThrow(TokenRefused);
-  await disableUser(null, owner.email);
+  await disableUser(SERVER, owner.email);
   await expect(as(orphan.token)).rejects.toThrow(TokenRefused);
   await expect(issue()).rejects.toThrow(Conflict);
   expect(await verifyChain('lab')).toBeNull();

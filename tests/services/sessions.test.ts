@@ -1,3 +1,4 @@
+import { SERVER } from '@/auth/actor';
 import { closePasswordWorkers } from '@/auth/passwordWorker';
 import { bcryptInput } from '@/auth/password';
 import { CAP_S, RULES, throttleKey } from '@/auth/throttle';
@@ -98,7 +99,7 @@ describe('a session', () => {
     await unitOfWork(() => User.update({ disabledAt: null }, { where: { publicId: who.publicId } }));
     expect(await sees()).not.toBeNull();
     await person('manager');
-    await disableUser(null, who.publicId);
+    await disableUser(SERVER, who.publicId);
     await unitOfWork(() => User.update({ disabledAt: null }, { where: { publicId: who.publicId } }));
     expect(await sees()).toBeNull();
   });
@@ -113,7 +114,7 @@ describe('a session', () => {
     await endSession(third.actor, listed.items[1]!.id);
     expect(await second.sees()).toBeNull();
     expect((await listSessions(third.actor, PAGE)).items).toHaveLength(1);
-    await setPassword(null, who.email, 'another tidal copper mast');
+    await setPassword(SERVER, who.email, 'another tidal copper mast');
     expect(await third.sees()).toBeNull();
     await expect(signIn({ email: who.email, password: PASSWORD }, HOME)).rejects.toThrow(SignInRefused);
     await signIn({ email: who.email, password: 'another tidal copper mast' }, HOME);
@@ -239,7 +240,7 @@ describe('throttling', () => {
     await besiege(who.email);
     const away = { ...HOME, address: '203.0.113.201' };
     await expect(signIn({ email: who.email, password: PASSWORD }, away)).rejects.toThrow(Throttled);
-    await setPassword(null, who.email, 'another tidal copper mast');
+    await setPassword(SERVER, who.email, 'another tidal copper mast');
     await signIn({ email: who.email, password: 'another tidal copper mast' }, away);
   });
 

@@ -1,9 +1,11 @@
+import { SERVER } from '@/auth/actor';
 import { closePasswordWorkers } from '@/auth/passwordWorker';
-import { Conflict, Forbidden, type Invalid, NotFound } from '@/errors';
+import { Conflict, Forbidden, type Invalid, NotFound, Unauthenticated } from '@/errors';
 import { AuditEntry } from '@/models/auditEntry';
 import { unitOfWork } from '@/models/unitOfWork';
 import { User } from '@/models/user';
 import { verifyChain } from '@/services/audit';
+import { enterClient } from '@/services/organisations';
 import { createUser, disableUser, type NewUser, setPassword } from '@/services/users';
 import { enterLab, PASSWORD, type TestPerson } from '../auth/people';
 import { freshDatabase, type TestDatabase } from '../support/database';
@@ -61,6 +63,15 @@ test('only a manager at a browser enters, changes or disables people', async () 
   }
 });
 
+test('nobody is not the server', async () => {
+  await expect(createUser(null, entry)).rejects.toThrow(Unauthenticated);
+  await expect(setPassword(null, manager.email, PASSWORD)).rejects.toThrow(Unauthenticated);
+  await expect(disableUser(null, manager.email)).rejects.toThrow(Unauthenticated);
+  await expect(enterClient(null, 'Tidewater Pumps')).rejects.toThrow(Unauthenticated);
+  const { publicId } = await enterClient(SERVER, 'Tidewater Pumps');
+  expect((await entriesOf(publicId)).map(({ actorId }) => actorId)).toEqual([null]);
+});
+
 test('every wrong entry is named at once', async () => {
   const wrong = {
     organisationId: '0000000000000000',
@@ -79,13 +90,13 @@ test('every wrong entry is named at once', async () => {
 
 test('the lab’s roles are for the lab, a designer is a client’s', async () => {
   const client = lab.client.publicId;
-  expect(await pointersOf(createUser(null, { ...entry, organisationId: client }))).toEqual(['/role']);
-  expect(await pointersOf(createUser(null, { ...entry, role: 'designer' }))).toEqual(['/role']);
+  expect(await pointersOf(createUser(SERVER, { ...entry, organisationId: client }))).toEqual(['/role']);
+  expect(await pointersOf(createUser(SERVER, { ...entry, role: 'designer' }))).toEqual(['/role']);
 });
 
 test('an e-mail belongs to one person, however many enter it at once and in whatever case', async () => {
   const email = 'twice@harrowlane.example';
-  const tries = [email, email.toUpperCase(), ` ${email}`].map((e) => createUser(null, { ...entry, email: e }));
+  const tries = [email, email.toUpperCase(), ` ${email}`].map((e) => createUser(SERVER, { ...entry, email: e }));
   const done = await Promise.allSettled(tries);
   const refused = done.filter((result) => result.status === 'rejected').map(({ reason }) => reason as Invalid);
   expect(refused).toHaveLength(2);
@@ -95,7 +106,7 @@ test('an e-mail belongs to one person, however many enter it at once and in what
 test('a new password is judged, replaces the old one, and is recorded without it', async () => {
   const who = await lab.person('technician');
   const before = await rowOf(who.publicId);
-  expect(await pointersOf(setPassword(null, who.email, 'password1234'))).toEqual(['/password']);
+  expect(await pointersOf(setPassword(SERVER, who.email, 'password1234'))).toEqual(['/password']);
   expect((await rowOf(who.publicId)).passwordHash).toBe(before.passwordHash);
   await setPassword(manager.actor, who.publicId, 'another tidal copper mast');
   const after = await rowOf(who.publicId);
@@ -104,7 +115,7 @@ test('a new password is judged, replaces the old one, and is recorded without it
   const audit = (await entriesOf(who.publicId)).at(-1)!;
   expect(audit.action).toBe('password set');
   expect(audit.canonical).not.toContain('s1$');
-  await expect(setPassword(null, 'nobody@harrowlane.example', PASSWORD)).rejects.toThrow(NotFound);
+  await expect(setPassword(SERVER, 'nobody@harrowlane.example', PASSWORD)).rejects.toThrow(NotFound);
 });
 
 test('the last manager cannot be disabled; of two that disable each other at once, one remains', async () => {
@@ -121,8 +132,8 @@ test('the last manager cannot be disabled; of two that disable each other at onc
 
 test('disabling twice is recorded once, and the chain holds', async () => {
   const who = await lab.person('technician', { signsIn: false });
-  await disableUser(null, who.publicId);
-  await disableUser(null, who.publicId);
+  await disableUser(SERVER, who.publicId);
+  await disableUser(SERVER, who.publicId);
   const actions = (await entriesOf(who.publicId)).map(({ action }) => action);
   expect(actions).toEqual(['person entered', 'person disabled']);
   expect(await verifyChain('lab')).toBeNull();

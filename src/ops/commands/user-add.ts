@@ -1,6 +1,7 @@
 /* npm run stillfield -- user-add E-MAIL NAME ROLE ORGANISATION [--generate]: enters a person who can sign in. */
 
 import { Op } from 'sequelize';
+import { SERVER } from '@/auth/actor';
 import type { Role } from '@/auth/permissions';
 import { NotFound } from '@/errors';
 import { Organisation } from '@/models/organisation';
@@ -29,7 +30,7 @@ export async function main(args: string[]): Promise<void> {
   if (!email || !name || !role || !ROLES.includes(role) || !organisation || rest.length > 0) throw new Usage(USAGE);
   const organisationId = await findOrganisation(organisation);
   const password = generate ? generatedPassword() : await askPassword();
-  const { publicId } = await createUser(null, { organisationId, role: role as Role, name, email, password });
+  const { publicId } = await createUser(SERVER, { organisationId, role: role as Role, name, email, password });
   if (generate) process.stdout.write(`${password}\n`);
   process.stderr.write(`${name} can sign in as ${email} (${role}, ${publicId}).\n`);
 }
