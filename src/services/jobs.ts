@@ -7,11 +7,11 @@ import type { Organisation } from '@/models/organisation';
 import { Product } from '@/models/product';
 import { newPublicId } from '@/models/publicId';
 import { Sample } from '@/models/sample';
-import { unitOfWork } from '@/models/unitOfWork';
+import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import type { changeJobBody, createJobBody, JobView } from '@/schemas/job';
 import { recordChange } from './audit';
 import { nextNumber } from './counters';
-import { labSettings } from './lab';
+import { dayIn, labSettings } from './lab';
 import { olderThan, pageFrom, type PageRequest } from './paging';
 import { changeVersioned } from './versions';
 
@@ -78,7 +78,7 @@ async function whole(actor: Actor, publicId: string): Promise<JobView> {
   return view(row, await Sample.count({ where: { jobId: row.id } }));
 }
 
-/** Jobs are numbered per lab year, `HL-2601` being the first of 2026; the prefix is the lab's own setting. */
+/** Jobs are numbered per year of the lab's own calendar, `HL-2601` being the first of 2026; the prefix is the lab's own setting. */
 export async function createJob(
   actor: Actor | null,
   body: z.infer<typeof createJobBody>,
@@ -88,12 +88,12 @@ export async function createJob(
   return unitOfWork(async () => {
     const product = await Product.findOne({ where: { publicId: body.productId }, include: ['organisation'] });
     if (!product) throw new Invalid([{ pointer: '/productId', message: 'is not a product of this lab' }]);
-    const { jobPrefix } = await labSettings();
-    const year = at.getUTCFullYear() % 100;
-    const count = await nextNumber(`job-${at.getUTCFullYear()}`);
+    const { jobPrefix, zone } = await labSettings();
+    const year = dayIn(zone, at).slice(0, 4);
+    const count = await nextNumber(`job-${year}`);
     const row = await Job.create({
       publicId: newPublicId(),
-      number: `${jobPrefix}-${year}${String(count).padStart(2, '0')}`,
+      number: `${jobPrefix}-${year.slice(2)}${String(count).padStart(2, '0')}`,
       organisationId: product.organisationId,
       productId: product.id,
       title: body.title,
@@ -122,7 +122,8 @@ export async function changeJob(
 ): Promise<JobView> {
   authorise(actor, 'job.change');
   return unitOfWork(async () => {
-    const row = await findJob(actor, publicId);
+    const { id } = await findJob(actor, publicId);
+    const row = await Job.findByPk(id, { lock: currentTransaction().LOCK.UPDATE, rejectOnEmpty: true });
     const before = { title: row.title, state: row.state, stateReason: row.stateReason };
     const after = { ...before, ...body };
     if (after.state === 'declined' && !after.stateReason) {

@@ -2,7 +2,7 @@ import { col, fn } from 'sequelize';
 import type { z } from 'zod';
 import { authorise, visibleOrganisation, type Actor } from '@/auth/actor';
 import { Conflict, NotFound } from '@/errors';
-import type { Job } from '@/models/job';
+import { Job } from '@/models/job';
 import { ModificationState } from '@/models/modificationState';
 import type { Organisation } from '@/models/organisation';
 import type { Product } from '@/models/product';
@@ -68,6 +68,16 @@ export async function findSample(actor: Actor, publicId: string): Promise<Sample
   return row as Whole;
 }
 
+/**
+ * Holds a job (row id) until the unit commits, so that nobody closes it meanwhile; take it before any row below it.
+ * @throws {Conflict} when it is not open
+ */
+export async function lockOpenJob(jobId: number): Promise<Job> {
+  const job = await Job.findByPk(jobId, { lock: currentTransaction().LOCK.UPDATE, rejectOnEmpty: true });
+  if (job.state !== 'open') throw new Conflict(`Job ${job.number} is ${job.state}. Reopen it first.`);
+  return job;
+}
+
 async function whole(actor: Actor, publicId: string): Promise<SampleView> {
   const row = await findSample(actor, publicId);
   return view(row, await runCounts([row]));
@@ -104,8 +114,7 @@ export async function createSample(
 ): Promise<SampleView> {
   authorise(actor, 'sample.create');
   return unitOfWork(async () => {
-    const job = await findJob(actor, jobId);
-    if (job.state !== 'open') throw new Conflict(`Job ${job.number} is ${job.state}. Reopen it to take in a sample.`);
+    const job = await lockOpenJob((await findJob(actor, jobId)).id);
     const code = `S-${String(await nextNumber('sample')).padStart(3, '0')}`;
     const { serial, firmware, description } = body;
     const row = await Sample.create({
@@ -138,6 +147,9 @@ export async function createSample(
   });
 }
 
+const lockedSample = (id: number): Promise<Sample> =>
+  Sample.findByPk(id, { lock: currentTransaction().LOCK.UPDATE, rejectOnEmpty: true });
+
 export async function changeSample(
   actor: Actor | null,
   publicId: string,
@@ -146,11 +158,13 @@ export async function changeSample(
 ): Promise<SampleView> {
   authorise(actor, 'sample.change');
   return unitOfWork(async () => {
-    const row = await findSample(actor, publicId);
+    const { id, job } = await findSample(actor, publicId);
+    await lockOpenJob(job.id);
+    const row = await lockedSample(id);
     const before = { serial: row.serial, firmware: row.firmware, description: row.description };
     await changeVersioned(Sample, row, version, body, 'sample');
     recordChange(actor, {
-      scope: `job-${row.job.publicId}`,
+      scope: `job-${job.publicId}`,
       action: 'sample changed',
       subjectType: 'sample',
       subjectId: publicId,
@@ -170,7 +184,8 @@ export async function createState(
   authorise(actor, 'state.create');
   return unitOfWork(async () => {
     const sample = await findSample(actor, sampleId);
-    await Sample.findByPk(sample.id, { lock: currentTransaction().LOCK.UPDATE });
+    await lockOpenJob(sample.job.id);
+    await lockedSample(sample.id);
     const position = await ModificationState.count({ where: { sampleId: sample.id } });
     const row = await ModificationState.create({
       publicId: newPublicId(),
@@ -201,10 +216,13 @@ export async function changeState(
 ): Promise<SampleView> {
   authorise(actor, 'state.change');
   return unitOfWork(async () => {
-    const row = await ModificationState.findOne({ where: { publicId }, include: ['sample'] });
-    if (!row) throw new NotFound('modification state');
-    const { sample } = row as ModificationState & { sample: Sample };
+    const found = await ModificationState.findOne({ where: { publicId }, include: ['sample'] });
+    if (!found) throw new NotFound('modification state');
+    const { sample } = found as ModificationState & { sample: Sample };
     const { job } = await findSample(actor, sample.publicId);
+    await lockOpenJob(job.id);
+    const lock = currentTransaction().LOCK.UPDATE;
+    const row = await ModificationState.findByPk(found.id, { lock, rejectOnEmpty: true });
     if (body.planned && (await Sweep.count({ where: { stateId: row.id } })) > 0) {
       throw new Conflict(`${stateLabel(row.position)} has been measured; it can no longer be planned.`);
     }
