@@ -1,12 +1,14 @@
 import type { z } from 'zod';
 import { authorise, type Actor } from '@/auth/actor';
 import { columnAccumulator, LAYER_COLUMNS } from '@/emc/columns';
-import { hangTrace, judgeSegment } from '@/emc/segment';
+import { hangTrace, judgeSegment, type TraceHead } from '@/emc/segment';
+import type { Columns, EvaluationInput } from '@/emc/types';
 import { Invalid } from '@/errors';
 import { readLayers } from '@/models/layerStore';
-import { readPieces } from '@/models/traceStore';
+import { readPieces, type StoredPiece } from '@/models/traceStore';
 import { unitOfWork } from '@/models/unitOfWork';
 import type { windowQuery, WindowView } from '@/schemas/sweep';
+import { inTurns } from './inTurns';
 import { contextOf, findRun, type Run } from './runs';
 import { columnsView } from './sweepViews';
 
@@ -26,14 +28,29 @@ export async function readWindow(
     if (fromHz <= run.firstHz && toHz >= run.lastHz && columns === LAYER_COLUMNS) return overviewOf(run);
     const { heads, judged } = await contextOf(run);
     const pieces = await readPieces(run.id, { fromHz, toHz });
-    const traces = heads.map((head) => {
-      const hung = hangTrace(head, judged.terms, judged.lines);
-      const accumulator = columnAccumulator(fromHz, toHz, columns);
-      for (const piece of pieces) accumulator.add(judgeSegment(hung, piece.frequencyHz, piece.levels.get(head.index)!));
-      return columnsView(head.index, accumulator.finish());
-    });
-    return { fromHz, toHz, columns, traces };
+    const window = { fromHz, toHz, columns };
+    const traces = [];
+    for (const head of heads) {
+      traces.push(columnsView(head.index, await inTurns(columnsOfPieces(head, judged, pieces, window))));
+    }
+    return { ...window, traces };
   });
+}
+
+/** Judges a trace and collects its columns, one stored piece per step. */
+function* columnsOfPieces(
+  head: TraceHead,
+  { terms, lines }: Pick<EvaluationInput, 'terms' | 'lines'>,
+  pieces: readonly StoredPiece[],
+  { fromHz, toHz, columns }: { fromHz: number; toHz: number; columns: number },
+): Generator<void, Columns> {
+  const hung = hangTrace(head, terms, lines);
+  const accumulator = columnAccumulator(fromHz, toHz, columns);
+  for (const { frequencyHz, levels } of pieces) {
+    accumulator.add(judgeSegment(hung, frequencyHz, levels.get(head.index)!));
+    yield;
+  }
+  return accumulator.finish();
 }
 
 /** The whole run at the width of its kept layer, which no request has to compute. */
