@@ -1,5 +1,5 @@
 import { PERMISSIONS } from '@/auth/permissions';
-import { openApiDocument } from '@/http/openapi';
+import type { openApiDocument } from '@/http/openapi';
 import { OPERATIONS } from '@/schemas/operations';
 
 interface Document {
