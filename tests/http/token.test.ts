@@ -100,6 +100,23 @@ test('a file larger than 100 MB is answered 413 while it is being sent, and the 
   expect((await ask('/api/sweeps')).status).toBe(200);
 }, 60_000);
 
+test('a JSON body that never ends is answered 413 as well, before anybody has signed in', async () => {
+  const chunk = new TextEncoder().encode(' '.repeat(64 * 1024));
+  let sent = 0;
+  const body = new ReadableStream({
+    pull(controller) {
+      sent += 1;
+      if (sent > 160) controller.close();
+      else controller.enqueue(chunk);
+    },
+  });
+  const headers = { 'content-type': 'application/json', origin: server.origin };
+  const init = { method: 'POST', headers, body, duplex: 'half' } as RequestInit;
+  const answer = await fetch(`${server.origin}/api/session`, init);
+  expect(answer.status).toBe(413);
+  expect((await ask('/api/sweeps')).status).toBe(200);
+});
+
 test('a token does what its scope says and nothing a person at a browser does', async () => {
   const answer = await ask('/api/products', {
     method: 'POST',
