@@ -22,7 +22,3 @@ export const DELIMITER_NAMES: Record<string, string> = { '\t': 'tab', ' ': 'spac
 export function delimiterName(delimiter: string): string {
   return DELIMITER_NAMES[delimiter] ?? delimiter;
 }
-
-export function delimiterFromName(name: string): string {
-  return name === 'tab' ? '\t' : name === 'space' ? ' ' : name;
-}

@@ -8,9 +8,30 @@ import {
 } from './axis';
 import { countsRows } from './columnStats';
 import type { NoAxis } from './context';
+import { detectorInHeading } from './detectors';
 import type { Content } from './template';
 import type { Recognition } from './types';
 import { levelUnitIn } from './units';
+
+/**
+ * Levels in some rows only, such as finals beside a sweep, are no trace: each such column is named with how many rows
+ * it has levels in. `values` are those of every row, NaN where a cell is empty.
+ */
+export function sparseLevels(
+  columns: readonly { column: number; heading: string | null; values: Float64Array }[],
+  contents: readonly Content[],
+  line: number,
+): Recognition['remarks'] {
+  return columns.flatMap(({ column, heading, values }) => {
+    if (contents[column] !== 'sparse' || heading === null) return [];
+    if (headingIsPhase(heading) || headingIsOther(heading) || headingIsTime(heading)) return [];
+    if (levelUnitIn(heading) === null && detectorInHeading(heading) === null) return [];
+    const filled = values.reduce((count, value) => count + (Number.isNaN(value) ? 0 : 1), 0);
+    if (filled === 0) return [];
+    const text = `Column ${column + 1}, ${heading}, has levels in ${filled} of ${values.length} rows; it is not read.`;
+    return [{ text, line }];
+  });
+}
 
 /** Which of the other columns are levels: no counters, no angles, no corrections, no second axis. */
 export function sortColumns(

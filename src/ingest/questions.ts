@@ -69,9 +69,12 @@ export function questionsFor(
   }
   if (settings.rbwHz === null) {
     const proposal = frequency.offset ? null : bandwidthFor(frequency.firstHz, frequency.lastHz);
+    const differs = table.declared.settings.rbwHz !== null;
     ask(
       'rbwHz',
-      'No line states the resolution bandwidth. What was it, in Hz?',
+      differs
+        ? 'The sweeps of this file state different resolution bandwidths. What was it for this one, in Hz?'
+        : 'No line states the resolution bandwidth. What was it, in Hz?',
       proposal === null ? null : String(proposal),
     );
   }

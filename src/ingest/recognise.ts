@@ -16,7 +16,7 @@ import { axisOf } from './series';
 import { tableFor, tableSteps, type Table } from './table';
 import { commaIsBoth } from './template';
 import { tracesOf } from './traces';
-import type { Recognition, RecognisedTrace } from './types';
+import type { Recognition, RecognisedSettings, RecognisedTrace } from './types';
 import { TO_HZ } from './units';
 
 const MOST_SWEEPS = 2000;
@@ -65,18 +65,41 @@ function refused(prepared: Prepared, refusal: Refusal, table: Table | null): Rec
   };
 }
 
-/** Sweeps with a preamble each may name different detectors or units; what differs is left open until one is chosen. */
-function settleAcross(prepared: Prepared, table: Table, traces: RecognisedTrace[], chosen: Piece): RecognisedTrace[] {
+/** What the lines before the rows say of a sweep. */
+type Said = Pick<Recognition, 'traces' | 'settings' | 'correctedFor'>;
+
+/**
+ * Sweeps with a preamble each may name different detectors, units and settings: what differs is left open until one is
+ * chosen. What any of them says its values hold already is named, so that nothing is added twice.
+ */
+function settleAcross(prepared: Prepared, table: Table, said: Said, chosen: Piece): Said {
+  const { traces } = said;
   const others = table.pieces.filter(({ block }) => block !== chosen.block).slice(0, 50);
-  if (others.length === 0 || table.layout !== 'pairs') return traces;
-  const each = others.map((piece) => tracesOf(tableFor(prepared, table, piece), piece, axisOf(table, piece), 0));
-  return traces.map((trace, i) => {
+  if (others.length === 0 || table.layout !== 'pairs') return said;
+  const tables = others.map((piece) => ({ piece, own: tableFor(prepared, table, piece) }));
+  const each = tables.map(({ piece, own }) => tracesOf(own, piece, axisOf(table, piece), 0));
+  const settled = traces.map((trace, i) => {
     const agree = (same: (other: RecognisedTrace) => boolean) =>
       each.every((list) => list[i] !== undefined && same(list[i]));
     const detector = agree((other) => other.detector === trace.detector) ? trace.detector : null;
     const unit = agree((other) => other.unit === trace.unit) ? trace.unit : null;
     return { ...trace, detector, unit, detectorAsWritten: detector === null ? null : trace.detectorAsWritten };
   });
+  const settings = { ...said.settings };
+  for (const { own } of tables) Object.assign(settings, differing(settings, own.declared.settings));
+  const corrections = new Map(said.correctedFor.map((one) => [`${one.line} ${one.what}`, one]));
+  for (const { own } of tables) {
+    for (const one of correctionsOf(own.preamble, own.entries)) corrections.set(`${one.line} ${one.what}`, one);
+  }
+  const correctedFor = [...corrections.values()].sort((a, b) => a.line - b.line);
+  return { traces: settled, settings, correctedFor };
+}
+
+/** Null for each setting of how a sweep was read in which another differs; its range and points are its own. */
+function differing(settings: RecognisedSettings, other: RecognisedSettings): Partial<RecognisedSettings> {
+  const { startHz: _start, stopHz: _stop, declaredPoints: _points, ...readWith } = settings;
+  const keys = Object.keys(readWith) as (keyof typeof readWith)[];
+  return Object.fromEntries(keys.filter((key) => settings[key] !== other[key]).map((key) => [key, null]));
 }
 
 /**
@@ -124,7 +147,12 @@ export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?:
     const { line, found, expected, message } = error;
     return refused(prepared, { line, found, expected, message }, table);
   }
-  if (sweepIndex === undefined) traces = settleAcross(prepared, table, traces, piece);
+  let settings: RecognisedSettings = { ...own.declared.settings, ...declaredSpan(own, axis, unit) };
+  let correctedFor = correctionsOf(own.preamble, own.entries);
+  if (sweepIndex === undefined) {
+    const said = { traces, settings, correctedFor };
+    ({ traces, settings, correctedFor } = settleAcross(prepared, table, said, piece));
+  }
   yield;
   if (traces.length === 0) {
     const found = 'no column of levels';
@@ -137,8 +165,6 @@ export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?:
     name: name ?? (pieces.length === 1 ? (fileName ?? 'sweep') : `sweep ${i + 1}`),
     startedAt,
   }));
-  const correctedFor = correctionsOf(own.preamble, own.entries);
-  const settings = { ...own.declared.settings, ...declaredSpan(own, axis, unit) };
   const factor = isFactorTable(own, option);
   const filler = traces.filter(({ blank }) => blank);
   const remarks = [

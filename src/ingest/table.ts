@@ -3,7 +3,7 @@ import { mainBlockOf, resolveBlocks, splitAtLabels, splitAtRestarts, type Piece 
 import { splitCells } from './cells';
 import { contextOf, otherAxis, type Context, type NoAxis } from './context';
 import type { Damage } from './damage';
-import { sortColumns } from './levelColumns';
+import { sortColumns, sparseLevels } from './levelColumns';
 import type { Prepared } from './prepare';
 import { hopRowsIn, timeRowsIn, type HopRows, type TimeRows } from './rowLayouts';
 import { lineEndFrom, textOf } from './sample';
@@ -110,6 +110,9 @@ function* pairsTable(prepared: Prepared, base: Base, settled: Settled | null): G
   const line = headings.line ?? main.firstLine;
   const { levelColumns, secondAxis, remarks: aside } = sortColumns(candidates, axis, template.contents, line);
   yield;
+  const everyRow = candidates.map((one, i) => ({ ...one, values: columnOf(scan, i, 0, scan.rows) }));
+  const beside = sparseLevels(everyRow, template.contents, line);
+  yield;
   const named = axis !== null && headingIsFrequency(candidates[axis]?.heading ?? null);
   const elsewhere = option || settled || named ? null : otherAxis(base);
   const none = { found: choice.notFrequency ?? 'no column that rises or falls steadily', line };
@@ -128,7 +131,7 @@ function* pairsTable(prepared: Prepared, base: Base, settled: Settled | null): G
     levelColumns,
     pieces: stacks ?? splitAtRestarts(resolved.pieces, scan.data[axis ?? 0]!),
     damage: isNoise ? null : resolved.damage,
-    remarks: [...base.remarks, ...aside, ...resolved.remarks],
+    remarks: [...base.remarks, ...aside, ...beside, ...resolved.remarks],
   };
 }
 

@@ -1,4 +1,4 @@
-import { delimiterName, isComment, splitCells } from './cells';
+import { isComment, splitCells } from './cells';
 import { textNumberReader, type NumberStyle, type TextNumberReader } from './numbers';
 import type { Line } from './sample';
 
@@ -153,8 +153,4 @@ export function commaIsBoth(template: Template, sample: readonly Line[], heading
     }
   }
   return zeros || headings === width / 2;
-}
-
-export function describeTemplate({ delimiter, decimal, contents }: Template): string {
-  return `${contents.length} columns, ${delimiterName(delimiter)} between them, decimal mark ${decimal}`;
 }

@@ -157,6 +157,20 @@ describe('traces, detectors and settings', () => {
 });
 
 describe('columns that are no levels', () => {
+  it('levels in some rows only, as finals beside a sweep, are named and not read', () => {
+    const rows = Array.from({ length: 200 }, (_, i) => {
+      const final = i % 5 === 3 ? '18.2' : '';
+      return `${(30 + i * 0.06).toFixed(2)},${(20 + (i % 7) * 1.3).toFixed(1)},${final},${final && '1.5'}`;
+    });
+    const heading = 'Frequency [MHz],PK [dBµV],QP [dBµV],Height';
+    const recognition = recognise(Buffer.from([heading, ...rows].join('\n')));
+    expect(recognition.remarks).toEqual([
+      { text: 'Column 3, QP [dBµV], has levels in 40 of 200 rows; it is not read.', line: 1 },
+    ]);
+    expect(recognition.columns.map(({ role }) => role)).toEqual(['frequency', 'level', 'other', 'other']);
+    expect(recognition.traces).toHaveLength(1);
+  });
+
   it('corrections, limits and margins beside the levels', () => {
     const recognition = recognised('level-and-correction-columns.csv');
     expect(recognition.columns.map(({ role }) => role)).toEqual(['frequency', 'level', 'other', 'other', 'other']);
@@ -211,6 +225,37 @@ describe('several sweeps in one file', () => {
     expect(detectors(recognise(bytes, undefined, 1))).toEqual(['average']);
     const unsaid = readSweep(bytes, recognise(bytes, undefined, 1), { sweepIndex: 1 });
     expect(unsaid.traces).toMatchObject([{ detector: 'average' }]);
+  });
+});
+
+describe('what several preambles say differently', () => {
+  const sweep = (lines: string[], startHz: number) => [
+    ...lines,
+    ...Array.from({ length: 40 }, (_, i) => `${startHz + i * 4500};${(30 + (i % 5) * 1.7).toFixed(2)};`),
+  ];
+  const common = ['x-Unit;Hz;', 'y-Unit;dBuV;', 'Detector;MAX PEAK;'];
+  const fileOf = (first: string[], second: string[]) =>
+    Buffer.from([...sweep([...common, ...first], 150e3), ...sweep([...common, ...second], 150e3)].join('\n'));
+
+  it('a bandwidth that differs is nobody’s and is asked for, until a sweep is chosen', () => {
+    const bytes = fileOf(['RBW;9;kHz;', 'VBW;30;kHz;'], ['RBW;200;Hz;', 'VBW;30;kHz;']);
+    const recognition = recognise(bytes);
+    expect(recognition.sweeps).toHaveLength(2);
+    expect(recognition.settings).toMatchObject({ rbwHz: null, vbwHz: 30e3 });
+    expect(keys(recognition)).toEqual(['sweepIndex', 'rbwHz']);
+    expect(recognition.questions[1]!.text).toMatch(/state different resolution bandwidths/);
+    expect(recognise(bytes, undefined, 0).settings.rbwHz).toBe(9e3);
+    expect(recognise(bytes, undefined, 1).settings.rbwHz).toBe(200);
+    expect(recognise(fileOf(['RBW;9;kHz;'], ['RBW;9;kHz;'])).settings.rbwHz).toBe(9e3);
+  });
+
+  it('what any of them holds already is named', () => {
+    const recognition = recognise(fileOf(['RBW;9;kHz;', 'Ext Att;10;dB;'], ['RBW;9;kHz;', 'Transducer;cable 4;']));
+    expect(recognition.correctedFor.map(({ what }) => what)).toEqual([
+      'external attenuation 10 dB',
+      'transducer factor cable 4',
+    ]);
+    expect(keys(recognition)).toEqual(['sweepIndex', 'alreadyCorrected']);
   });
 });
 
