@@ -83,13 +83,6 @@ function segmentLimit(segment: PreparedSegment, frequencyHz: number, logHz: numb
   return segment.startLimit + segment.slope * ((segment.log ? logHz : frequencyHz) - segment.startX);
 }
 
-/** The lowest and highest frequency the line has a limit for; it may still have holes between its segments. */
-export function lineRange(line: LimitLine): { fromHz: number; toHz: number } {
-  const { edgesHz } = piecesOf(line.segments, line.name);
-  if (edgesHz.length === 0) throw new RangeError(`${line.name} has no segments.`);
-  return { fromHz: edgesHz[0]!, toHz: edgesHz[edgesHz.length - 1]! };
-}
-
 /** A line as `fixtures/published/limits.json` holds it. */
 export interface LimitRecord {
   id: string;
