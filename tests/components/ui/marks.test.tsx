@@ -28,7 +28,7 @@ describe('design, section 6: the verdict glyph', () => {
     expect(svg('not-covered')).toContain('stroke-dasharray="2 2"');
     expect(square(svg('not-covered'))).toBeNull();
   });
-  test('decided is solid, undecided is open', () => {
+  test('over and under are solid, inconclusive and needs a final are open', () => {
     const open = VERDICTS.filter((verdict) => square(svg(verdict))?.fill === 'none');
     expect(open.sort()).toEqual(['inconclusive', 'needs-final']);
   });
