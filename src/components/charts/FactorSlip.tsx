@@ -17,6 +17,8 @@ const RIGHT = 77;
 const UPPER_PX = 44;
 const LOWER_PX = 64;
 const FLOOR_PX = 80;
+/** A longer name leaves no room for more beside `log f`; the figure's name says it all the same. */
+const LONG_NAME = 22;
 
 /**
  * A pasted slip: the two table rows a factor lies between and the point on the straight line over log f. Nothing is
@@ -41,7 +43,7 @@ export function FactorSlip({ table, frequencyHz, factorDb }: Props) {
       <svg width="100%" height="100" aria-hidden="true" className="block text-[12px]">
         <text x="8" y="19" fontWeight="600" className="fill-ink">
           {table.name}
-          {onRow ? '' : ', between table rows'}
+          {onRow || table.name.length > LONG_NAME ? '' : ', between table rows'}
         </text>
         {onRow ? null : (
           <>

@@ -140,7 +140,14 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
                   {problem.title} {problem.detail}
                 </p>
               ) : (
-                <p className="column-quiet">{busy ? 'Adding up.' : 'Click any figure and its working opens here.'}</p>
+                <>
+                  <p className="column-quiet">{busy ? 'Adding up.' : 'Click any figure and its working opens here.'}</p>
+                  {selected && !busy && (
+                    <button type="button" className="text-pen" onClick={() => show(selected)}>
+                      Show {current}
+                    </button>
+                  )}
+                </>
               )}
             </div>
           ),
