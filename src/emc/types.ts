@@ -99,7 +99,7 @@ export interface CoverageGap {
   lineId: string;
   fromHz: number;
   toHz: number;
-  because: 'no-trace' | 'no-factor' | 'no-uncertainty' | 'detector' | 'gap';
+  because: 'no-trace' | 'no-factor' | 'no-uncertainty' | 'gap';
 }
 
 /** One trace judged against one line. */

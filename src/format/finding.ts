@@ -37,8 +37,7 @@ const GAP_WORDS: Record<CoverageGap['because'], string> = {
   'no-trace': 'no trace is judged there',
   'no-factor': 'a factor is missing there',
   'no-uncertainty': 'the uncertainty is not known there',
-  detector: 'no trace there has a detector for the limit',
-  gap: 'the sweep has a hole there',
+  gap: 'the sweep has a hole there, or steps wider than the RBW',
 };
 
 const plain = (text: string): FindingRun => ({ text });

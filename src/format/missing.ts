@@ -7,7 +7,6 @@ const BECAUSE: Record<NonNullable<Missing['because']>, string> = {
   'no-trace': 'not swept',
   'no-factor': 'no factor in the signal path',
   'no-uncertainty': 'no uncertainty stated',
-  detector: 'detector not usable',
   gap: 'a gap in the sweep, or steps wider than the RBW',
 };
 

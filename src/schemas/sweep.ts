@@ -128,7 +128,7 @@ export const gapView = z.strictObject({
   lineId: publicId,
   fromHz: z.number(),
   toHz: z.number(),
-  because: z.enum(['no-trace', 'no-factor', 'no-uncertainty', 'detector', 'gap']),
+  because: z.enum(['no-trace', 'no-factor', 'no-uncertainty', 'gap']),
 });
 
 export const evaluationView = z.strictObject({

@@ -12,14 +12,14 @@ import { Sweep } from '@/models/sweep';
 import { SweepFile } from '@/models/sweepFile';
 import { SweepFilePart } from '@/models/sweepFilePart';
 import { writeTraces } from '@/models/traceStore';
-import { unitOfWork } from '@/models/unitOfWork';
+import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import type { Upload } from '@/models/upload';
 import type { keepSweep as keepSweepBody, SweepView } from '@/schemas/sweep';
 import { recordChange } from './audit';
 import { nextNumber } from './counters';
 import { gather, judge, rangeOf, type Judged } from './judgeFile';
 import { dayIn, labSettings } from './lab';
-import { findSample, stateLabel } from './samples';
+import { findSample, lockOpenJob, stateLabel } from './samples';
 import { findUpload, recognitionOf } from './sweepFiles';
 import { readSweep } from './sweeps';
 
@@ -37,6 +37,7 @@ export async function keepSweep(actor: Actor | null, body: Body, at = new Date()
   authorise(actor, 'sweep.keep');
   return unitOfWork(async () => {
     const state = await findState(actor, body.stateId);
+    refusePlanned(state.row);
     // Locked, so that housekeeping cannot take the file away between reading and copying it.
     const upload = await findUpload(body.fileId, { lock: true });
     const recognition = recognitionOf(upload);
@@ -46,6 +47,9 @@ export async function keepSweep(actor: Actor | null, body: Body, at = new Date()
     }
     const gathered = await gather(recognition, body, measuredAt);
     const judged = await judge(await readUpload(upload.id), recognition, body, gathered);
+    // Judging takes a while; what was looked at before it is decided under its locks.
+    await lockOpenJob(state.jobId);
+    refusePlanned(await state.row.reload({ lock: currentTransaction().LOCK.UPDATE, include: [] }));
     const run = await writeRun(actor, body, { state, upload, judged, at });
     const evaluation = await writeEvaluation(actor, run, judged, at);
     const { zone } = await labSettings();
@@ -77,11 +81,12 @@ async function findState(actor: Actor, publicId: string) {
   if (!state) throw new Invalid([{ pointer: '/stateId', message: 'is not a modification state of this lab' }]);
   const { sample } = state as ModificationState & { sample: { publicId: string } };
   const { job } = await findSample(actor, sample.publicId);
-  if (job.state !== 'open') throw new Conflict(`Job ${job.number} is ${job.state}. Reopen it to keep a run.`);
-  if (state.planned) {
-    throw new Conflict(`${stateLabel(state.position)} is still planned. Mark it as fitted before measuring it.`);
-  }
-  return { id: state.id, jobPublicId: job.publicId };
+  if (job.state !== 'open') throw new Conflict(`Job ${job.number} is ${job.state}. Reopen it first.`);
+  return { id: state.id, row: state, jobId: job.id, jobPublicId: job.publicId };
+}
+
+function refusePlanned({ planned, position }: ModificationState): void {
+  if (planned) throw new Conflict(`${stateLabel(position)} is still planned. Mark it as fitted before measuring it.`);
 }
 
 interface Keeping {
