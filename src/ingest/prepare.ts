@@ -46,6 +46,12 @@ export function optionLineIn({ line, text }: Line): OptionLine | null {
   return option;
 }
 
+/** JSON, XML and HTML open with a bracket; figures stand in them too, but not as rows of a trace. */
+export function isMarkup(sample: readonly { text: string }[]): boolean {
+  const first = sample.find(({ text }) => text.trim() !== '')?.text.trim() ?? '';
+  return /^[{<]|^\[\s*[[{]?\s*$|^\[\s*[{["]/.test(first);
+}
+
 /** Byte level, announcements and row shape: what recognising and reading both start from. */
 export function* prepareSteps(raw: Uint8Array): Generator<void, Prepared> {
   const clean = withoutBlockPrefix(yield* cleanSteps(raw));
@@ -58,7 +64,7 @@ export function* prepareSteps(raw: Uint8Array): Generator<void, Prepared> {
     option = optionLineIn(line);
     if (option) break;
   }
-  const template = clean.controlShare > 0.1 ? null : findTemplate(sample, announced);
+  const template = clean.controlShare > 0.1 || isMarkup(sample) ? null : findTemplate(sample, announced);
   yield;
   return { clean, sample, announced, option, template };
 }

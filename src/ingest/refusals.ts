@@ -1,5 +1,4 @@
-import { moved } from './numbers';
-import type { Prepared } from './prepare';
+import { isMarkup, type Prepared } from './prepare';
 import type { Table } from './table';
 import type { Recognition } from './types';
 import { TO_HZ, type FrequencyUnit } from './units';
@@ -23,6 +22,11 @@ export function noTable({ clean, sample }: Prepared): Refusal {
   if (clean.controlShare > 0.1) {
     const message = 'This is no text file. Export the trace as text: one row per frequency.';
     return { line: null, found: 'binary data', expected, message };
+  }
+  if (isMarkup(sample)) {
+    const message =
+      'This is JSON or markup and holds no rows of a trace. Export the trace as CSV: one row per frequency.';
+    return { line: 1, found: 'JSON or markup', expected, message };
   }
   const single = sample.filter(({ text }) => /^\s*[+-]?\d+(?:[.,]\d+)?(?:[eE][+-]?\d+)?\s*$/.test(text));
   const [first] = single;

@@ -205,7 +205,7 @@ export async function previewSweepFile(actor: Actor | null, fileId: string, choi
       columns: LAYER_COLUMNS,
       traces: input.traces.map((trace, i) => columnsView(trace.index, evaluation.layers[i]!)),
     },
-    traces: traceViews(input),
+    traces: traceViews(input.traces, { firstHz, lastHz }, input),
     lines,
     uncertainty: [...input.uncertainty[input.purpose === 'final' ? 'final' : 'prescan']],
     verdict: evaluation.verdict,

@@ -21,12 +21,16 @@ export function candidateOf(candidate: Candidate, traces: readonly Pick<Trace, '
   return { ...candidate, detector: trace.detector };
 }
 
-export function traceViews(input: EvaluationInput): SweepView['traces'] {
-  return input.traces.map(({ index, name, detector, unit, rbwHz, frequencyHz }) => {
-    const { levelUnit } = preparePath(unit, input.terms);
-    const lowestHz = frequencyHz.reduce((low, f) => Math.min(low, f), Infinity);
-    const highestHz = frequencyHz.reduce((high, f) => Math.max(high, f), 0);
-    const line = ownLine({ index, detector, levelUnit, lowestHz, highestHz }, input.lines);
+/** The traces of a run, each with the line it hangs from. `range` is that of the axis they share. */
+export function traceViews(
+  heads: readonly Omit<SweepView['traces'][number], 'lineId'>[],
+  range: { firstHz: number; lastHz: number },
+  { terms, lines }: Pick<EvaluationInput, 'terms' | 'lines'>,
+): SweepView['traces'] {
+  return heads.map(({ index, name, detector, unit, rbwHz }) => {
+    const { levelUnit } = preparePath(unit, terms);
+    const { firstHz: lowestHz, lastHz: highestHz } = range;
+    const line = ownLine({ index, detector, levelUnit, lowestHz, highestHz }, lines);
     return { index, name, detector, unit, rbwHz, lineId: line?.id ?? null };
   });
 }

@@ -1,8 +1,6 @@
 import { Op } from 'sequelize';
 import type { z } from 'zod';
 import { authorise, visibleOrganisation, type Actor } from '@/auth/actor';
-import { ownLine } from '@/emc/pairing';
-import { preparePath } from '@/emc/correction';
 import { Invalid } from '@/errors';
 import { readSweepFile } from '@/models/blobs';
 import { EvaluationCandidate } from '@/models/evaluationCandidate';
@@ -15,6 +13,7 @@ import { portVerdictOf } from './portVerdict';
 import { contextOf, findRun, runInclude, type Run, type RunContext } from './runs';
 import { findSample, stateLabel } from './samples';
 import { itemView } from './signalPaths';
+import { candidateOf, traceViews } from './sweepViews';
 
 function itemOf(row: Sweep): z.infer<typeof sweepListItem> {
   const { state, user, evaluation } = row as Run;
@@ -120,11 +119,7 @@ async function view(run: Run, context: RunContext): Promise<SweepView> {
     lastHz: run.lastHz,
     stepHz: run.stepHz,
     remarks: run.reading.remarks,
-    traces: run.reading.traces.map((trace) => {
-      const { levelUnit } = preparePath(trace.unit, judged.terms);
-      const own = ownLine({ ...trace, levelUnit, lowestHz: run.firstHz, highestHz: run.lastHz }, judged.lines);
-      return { ...trace, lineId: own?.id ?? null };
-    }),
+    traces: traceViews(run.reading.traces, run, judged),
     evaluation: {
       id: evaluation.publicId,
       engine: evaluation.engine,
@@ -141,26 +136,8 @@ async function view(run: Run, context: RunContext): Promise<SweepView> {
 }
 
 function candidateView(row: EvaluationCandidate, run: Run): CandidateView {
-  const { detector } = run.reading.traces.find((trace) => trace.index === row.traceIndex)!;
-  const { rank, kind, traceIndex, lineId, frequencyHz, fromHz, toHz, reading, level, limit, marginDb } = row;
-  const { uncertaintyDb, verdict, because } = row;
-  return {
-    rank,
-    kind,
-    traceIndex,
-    lineId,
-    detector,
-    frequencyHz,
-    fromHz,
-    toHz,
-    reading,
-    level,
-    limit,
-    marginDb,
-    uncertaintyDb,
-    verdict,
-    because,
-  };
+  const { evaluationId: _, ...candidate } = row.get({ plain: true });
+  return candidateOf(candidate, run.reading.traces);
 }
 
 /** Candidates worst first; the cursor is the rank of the last one shown. */

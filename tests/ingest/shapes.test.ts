@@ -300,6 +300,14 @@ describe('refusals say where, what and the next step', () => {
     expect(() => readSweep(shapeOf('tab.txt').bytes, recognition)).toThrow(/not the one that was recognised/);
   });
 
+  it.each([
+    ['{\n "rows": [\n  [30, 40],\n  [31, 41]\n ]\n}\n'],
+    ['[\n {"f": 30, "l": 40},\n {"f": 31, "l": 41}\n]\n'],
+    ['<table>\n<tr><td>30</td><td>40</td></tr>\n<tr><td>31</td><td>41</td></tr>\n</table>\n'],
+  ])('JSON and markup: %j', (text) => {
+    expect(recognise(new TextEncoder().encode(text)).refusal?.found).toBe('JSON or markup');
+  });
+
   it('an empty and a binary file', () => {
     expect(recognise(new Uint8Array()).refusal?.message).toBe('The file is empty. Export the trace again.');
     expect(recognise(Uint8Array.from({ length: 400 }, (_, i) => (i * 7) % 32)).refusal?.found).toBe('binary data');

@@ -19,6 +19,11 @@ export function LookAtFirst({ file, draft, path }: { file: SweepFileView; draft:
     <section className="mt-5">
       <SectionHeading>Look at first</SectionHeading>
       <div className="mt-2">
+        {recognition.kind === 'factor-table' && (
+          <Message tone="over" lead="This looks like a table of corrections, not a sweep.">
+            Its figures are in dB, which cannot be judged against a limit. Tables are entered with their calibration.
+          </Message>
+        )}
         {recognition.questions
           .filter(({ key }) => ['frequencyUnit', 'centreHz', 'sweepIndex'].includes(key))
           .map((question) => (
