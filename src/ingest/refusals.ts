@@ -1,3 +1,4 @@
+import { moved } from './numbers';
 import { isMarkup, type Prepared } from './prepare';
 import type { Table } from './table';
 import type { Recognition } from './types';
