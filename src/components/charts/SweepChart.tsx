@@ -29,7 +29,10 @@ import { useChartGestures } from './useChartGestures';
 import { useChartView } from './useChartView';
 import { bringIn, sameSpan } from './viewport';
 
-const TraceCanvas = dynamic(() => import('./TraceCanvas'), { ssr: false });
+const loadCanvas = () => import('./TraceCanvas');
+const TraceCanvas = dynamic(loadCanvas, { ssr: false });
+// Fetched while the page hydrates, not after it.
+if (typeof window !== 'undefined') void loadCanvas();
 
 export interface SweepChartProps {
   /** Key the chart by run, so that another run starts at its whole range. */

@@ -10,7 +10,10 @@ import { usePhone } from './useWidths';
 
 export type { CandidateFigure };
 
-const CandidateTable = dynamic(() => import('./CandidateTable'), { ssr: false });
+const loadTable = () => import('./CandidateTable');
+const CandidateTable = dynamic(loadTable, { ssr: false });
+// Fetched while the page hydrates, not after it; a phone has its own list.
+if (typeof window !== 'undefined' && window.innerWidth >= 760) void loadTable();
 
 export interface CandidateGridProps extends CandidateFigures {
   /** The chart points here with `aria-details`. */

@@ -41,7 +41,7 @@ export function SectionNav({ sections, listed = false }: { sections: readonly Se
 function SectionLink({ section, current }: { section: Section; current: boolean }) {
   const { waiting } = section;
   return (
-    <Link className="top-section" href={section.href} aria-current={current ? 'page' : undefined}>
+    <Link className="top-section" prefetch={false} href={section.href} aria-current={current ? 'page' : undefined}>
       <span className="top-section-name" data-word={section.name}>
         {section.name}
       </span>
@@ -62,7 +62,7 @@ export function PhoneSections({ sections }: { sections: readonly Section[] }) {
   const pathname = usePathname();
   const shown = sections.find((section) => section.onPhone && !isIn(section, pathname));
   return shown ? (
-    <Link className="top-quiet" href={shown.href}>
+    <Link className="top-quiet" prefetch={false} href={shown.href}>
       {shown.name}
     </Link>
   ) : null;

@@ -23,14 +23,14 @@ export interface TopLineProps {
 export function TopLine({ sections, person, room, findHref, menu }: TopLineProps) {
   const name = `${person.name}, ${person.part}`;
   const find = findHref && (
-    <Link className="top-quiet" href={findHref} data-key="/" aria-keyshortcuts="/">
+    <Link className="top-quiet" prefetch={false} href={findHref} data-key="/" aria-keyshortcuts="/">
       Find <KeyHint name="/" />
     </Link>
   );
   return (
     <header className="top">
       <SkipLink />
-      <Link className="top-word" href="/">
+      <Link className="top-word" prefetch={false} href="/">
         Stillfield
       </Link>
       <SectionNav sections={sections} />

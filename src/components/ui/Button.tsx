@@ -55,7 +55,8 @@ export interface ButtonLinkProps extends Look, Omit<ComponentProps<typeof Link>,
 /** The same look where pressing goes somewhere. */
 export function ButtonLink({ kind = 'plain', size, keyName, className, children, ...rest }: ButtonLinkProps) {
   return (
-    <Link className={look(kind, size, className)} {...pressedBy(keyName)} {...rest}>
+    // A page costs the bench's small server a render; it is made when it is asked for.
+    <Link prefetch={false} className={look(kind, size, className)} {...pressedBy(keyName)} {...rest}>
       {children}
       {keyName && <KeyHint name={keyName} />}
     </Link>
