@@ -1,7 +1,7 @@
 'use client';
 
-import { useRouter } from 'next/navigation';
-import { useState } from 'react';
+import { useRouter, useSearchParams } from 'next/navigation';
+import { useEffect, useState } from 'react';
 import type { SweepFileView } from '@/schemas/sweepFile';
 import { DropSheet } from './DropSheet';
 import { RecogniseSheet } from './RecogniseSheet';
@@ -15,17 +15,29 @@ interface Props extends UploadLists {
 
 /** A file on its way in: dropped, then either refused with its line or recognised and kept. */
 export function UploadSheet({ held, stateId, ...lists }: Props) {
-  const [file, setFile] = useState(held);
+  const [known, setKnown] = useState(held);
   const router = useRouter();
+  const named = useSearchParams().get('file');
+  // The address decides, so that back, forward and reload show what it names.
+  const file = known?.id === named ? known : null;
+
+  useEffect(() => {
+    if (named === null || known?.id === named) return;
+    const stop = new AbortController();
+    fetch(`/api/sweep-files/${encodeURIComponent(named)}`, { signal: stop.signal })
+      .then(async (answer) => answer.ok && setKnown((await answer.json()) as SweepFileView))
+      // A file that is held no longer, or no network: the sheet to drop it again is what is shown.
+      .catch(() => undefined);
+    return () => stop.abort();
+  }, [named, known]);
+
   const query = stateId ? `&state=${stateId}` : '';
 
   function take(next: SweepFileView) {
-    setFile(next);
-    // The address names the held file, so that reloading or coming back finds it again.
+    setKnown(next);
     window.history.pushState(null, '', `/sweeps/new?file=${next.id}${query}`);
   }
   function discard() {
-    setFile(null);
     router.replace(stateId ? `/sweeps/new?state=${stateId}` : '/sweeps/new');
   }
 
