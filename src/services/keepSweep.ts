@@ -50,7 +50,7 @@ export async function keepSweep(actor: Actor | null, body: Body, at = new Date()
     // Judging takes a while; what was looked at before it is decided under its locks.
     await lockOpenJob(state.jobId);
     refusePlanned(await state.row.reload({ lock: currentTransaction().LOCK.UPDATE, include: [] }));
-    const run = await writeRun(actor, body, { state, upload, judged, at });
+    const run = await writeRun(actor, body, { state: state.row, upload, judged, at });
     const evaluation = await writeEvaluation(actor, run, judged, at);
     const { zone } = await labSettings();
     const year = dayIn(zone, at).slice(0, 4);
@@ -82,7 +82,7 @@ async function findState(actor: Actor, publicId: string) {
   const { sample } = state as ModificationState & { sample: { publicId: string } };
   const { job } = await findSample(actor, sample.publicId);
   if (job.state !== 'open') throw new Conflict(`Job ${job.number} is ${job.state}. Reopen it first.`);
-  return { id: state.id, row: state, jobId: job.id, jobPublicId: job.publicId };
+  return { row: state, jobId: job.id, jobPublicId: job.publicId };
 }
 
 function refusePlanned({ planned, position }: ModificationState): void {
@@ -90,7 +90,7 @@ function refusePlanned({ planned, position }: ModificationState): void {
 }
 
 interface Keeping {
-  state: { id: number };
+  state: ModificationState;
   upload: Upload;
   judged: Judged;
   at: Date;

@@ -26,7 +26,8 @@ function joined(pieces: StoredPiece[], index: number): { frequencyHz: Float64Arr
 
 /** Segments around a frequency; the whole run when it falls between segments or outside them. */
 async function piecesNear(run: Run, frequencyHz: number): Promise<StoredPiece[]> {
-  const slack = run.stepHz ?? 0;
+  // an axis may fall
+  const slack = Math.abs(run.stepHz ?? 0);
   const near = await readPieces(run.id, { fromHz: frequencyHz - slack, toHz: frequencyHz + slack });
   return near.length ? near : readPieces(run.id);
 }
