@@ -45,6 +45,7 @@ export function associate(): void {
   Sweep.belongsTo(SignalPathRevision, { as: 'pathRevision', foreignKey: 'pathRevisionId' });
   Sweep.belongsTo(LimitSet, { as: 'limitSet', foreignKey: 'limitSetId' });
   Sweep.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  Sweep.belongsTo(User, { as: 'voider', foreignKey: 'voidedBy' });
   Sweep.belongsTo(Evaluation, { as: 'evaluation', foreignKey: 'evaluationId', constraints: false });
   Evaluation.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
 }

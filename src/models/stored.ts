@@ -32,6 +32,16 @@ export interface StoredReading {
   rbwShape?: '6 dB' | '3 dB' | null;
 }
 
+/** Where a file that ends or breaks early was cut, kept on purpose: everything before that line was read. */
+export interface StoredPartial {
+  /** Line of the file that is not whole. */
+  line: number;
+  /** What was found there and what was expected, as the refusal said it. */
+  message: string;
+  /** Highest frequency that was read. */
+  readToHz: number;
+}
+
 /** The revisions an evaluation used, by public id. */
 export interface StoredInputs {
   pathRevision: string | null;

@@ -6,7 +6,7 @@ import {
   Model,
   type Sequelize,
 } from 'sequelize';
-import type { StoredReading } from './stored';
+import type { StoredPartial, StoredReading } from './stored';
 
 export class Sweep extends Model<InferAttributes<Sweep>, InferCreationAttributes<Sweep>> {
   declare id: CreationOptional<number>;
@@ -24,6 +24,12 @@ export class Sweep extends Model<InferAttributes<Sweep>, InferCreationAttributes
   declare azimuthDeg: CreationOptional<number | null>;
   declare distanceM: CreationOptional<number | null>;
   declare operatingMode: string;
+  /** A quick trial under its state, in words; it never speaks for the state. */
+  declare trial: CreationOptional<string | null>;
+  declare partial: CreationOptional<StoredPartial | null>;
+  declare voidedAt: CreationOptional<Date | null>;
+  declare voidReason: CreationOptional<string | null>;
+  declare voidedBy: CreationOptional<number | null>;
   declare pathRevisionId: CreationOptional<number | null>;
   declare limitSetId: number;
   declare valuesHold: 'receiver-input' | 'field';
@@ -58,6 +64,11 @@ export function defineSweep(sequelize: Sequelize): void {
       azimuthDeg: { type: DataTypes.DOUBLE, field: 'azimuth_deg', allowNull: true },
       distanceM: { type: DataTypes.DOUBLE, field: 'distance_m', allowNull: true },
       operatingMode: { type: DataTypes.STRING(120), field: 'operating_mode', allowNull: false },
+      trial: { type: DataTypes.STRING(120), allowNull: true },
+      partial: { type: DataTypes.JSON, allowNull: true },
+      voidedAt: { type: DataTypes.DATE(3), field: 'voided_at', allowNull: true },
+      voidReason: { type: DataTypes.STRING(300), field: 'void_reason', allowNull: true },
+      voidedBy: { type: DataTypes.BIGINT.UNSIGNED, field: 'voided_by', allowNull: true },
       pathRevisionId: { type: DataTypes.BIGINT.UNSIGNED, field: 'path_revision_id', allowNull: true },
       limitSetId: { type: DataTypes.BIGINT.UNSIGNED, field: 'limit_set_id', allowNull: false },
       valuesHold: { type: DataTypes.ENUM('receiver-input', 'field'), field: 'values_hold', allowNull: false },

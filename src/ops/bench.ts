@@ -94,6 +94,7 @@ async function enterLab(): Promise<Lab> {
         frequencyUnit: 'Hz',
         centreHz: null,
         sweepIndex: 0,
+        keepPartial: false,
         traces: [trace(0, 'Peak', 'peak'), trace(1, 'Average', 'average')],
       },
     };
@@ -110,6 +111,7 @@ async function benchImport({ actor, choice, stateId }: Lab): Promise<string> {
     heightSwept: false,
     azimuthDeg: null,
     measuredAt: null,
+    trial: null,
   };
   let runId = '';
   const whole = await median(async () => {

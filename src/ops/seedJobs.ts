@@ -62,9 +62,7 @@ export async function seedRuns(
   seedDay: string,
 ): Promise<number> {
   const paths = new Map((await SignalPath.findAll()).map((path) => [path.code, path.publicId]));
-  // Quick trials come with their own record; kept as runs they would speak for the state itself.
-  const kept = demoRuns.filter((run) => run.trial === null);
-  for (const run of kept) {
+  for (const run of demoRuns) {
     const actor = people.actor(run.by);
     const { measuredAt, keptAt } = timesOf(run, seedDay);
     const file = await createSweepFile(actor, generateFile(run, seedDay));
@@ -102,14 +100,16 @@ export async function seedRuns(
         frequencyUnit,
         centreHz: null,
         sweepIndex: null,
+        keepPartial: false,
         traces,
         measuredAt,
+        trial: run.trial,
       },
       new Date(keptAt),
     );
   }
   await endJobs(people, seedDay);
-  return kept.length;
+  return demoRuns.length;
 }
 
 async function endJobs(people: SeededPeople, seedDay: string): Promise<void> {

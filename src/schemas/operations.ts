@@ -1,15 +1,35 @@
 import * as bench from './bench';
+import * as booking from './booking';
+import * as comparison from './comparison';
 import * as job from './job';
 import type { Operation } from './operation';
+import * as people from './people';
+import * as resultMail from './resultMail';
+import * as retest from './retest';
+import * as runActs from './runActs';
 import * as session from './session';
+import * as setup from './setup';
 import * as sweep from './sweep';
 import * as sweepFile from './sweepFile';
+import * as tables from './tables';
 
 function isOperation(value: unknown): value is Operation {
   return typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'permission' in value;
 }
 
 /** Every operation of the API, in the order of their declarations. */
-export const OPERATIONS: readonly Operation[] = [session, job, bench, sweepFile, sweep].flatMap((module) =>
-  Object.values(module as Record<string, unknown>).filter(isOperation),
-);
+export const OPERATIONS: readonly Operation[] = [
+  session,
+  people,
+  job,
+  bench,
+  tables,
+  sweepFile,
+  sweep,
+  runActs,
+  comparison,
+  setup,
+  retest,
+  booking,
+  resultMail,
+].flatMap((module) => Object.values(module as Record<string, unknown>).filter(isOperation));

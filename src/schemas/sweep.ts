@@ -37,6 +37,8 @@ export const sweepChoice = z.strictObject({
   centreHz: z.number().nullable().default(null),
   /** Which sweep of the file; null only where it holds one. */
   sweepIndex: z.int().min(0).nullable().default(null),
+  /** A truncated file is read up to its broken line on purpose; nothing read so is ever under. */
+  keepPartial: z.boolean().default(false),
   traces: z
     .array(
       z.strictObject({
@@ -63,6 +65,8 @@ export const keepSweep = z.strictObject({
   heightSwept: z.boolean().default(false),
   azimuthDeg: z.number().min(0).max(360).nullable().default(null),
   measuredAt: instant.nullable().default(null),
+  /** What was tried, such as `foil on lid`: a quick trial under its state, which never speaks for the state. */
+  trial: z.string().trim().min(1).max(120).nullable().default(null),
 });
 
 export const limitSegment = z.strictObject({
@@ -144,6 +148,9 @@ export const evaluationView = z.strictObject({
   decisionRule: z.string(),
 });
 
+/** Kept up to a broken line of its file, on purpose. */
+export const partialView = z.strictObject({ line: z.int(), message: z.string(), readToHz: z.number() });
+
 export const sweepView = z.strictObject({
   id: publicId,
   version,
@@ -157,6 +164,9 @@ export const sweepView = z.strictObject({
   azimuthDeg: z.number().nullable(),
   distanceM: z.number().nullable(),
   operatingMode: z.string(),
+  trial: z.string().nullable(),
+  partial: partialView.nullable(),
+  voided: z.strictObject({ at: instant, by: person, reason: z.string() }).nullable(),
   keptAt: instant,
   measuredAt: instant.nullable(),
   by: person,
@@ -284,6 +294,7 @@ export const sweepListItem = z.strictObject({
   jobNumber: z.string(),
   product: z.string(),
   state: z.string(),
+  sample: z.strictObject({ id: publicId, code: z.string() }),
   port,
   purpose,
   line: mainsLine.nullable(),
@@ -292,6 +303,9 @@ export const sweepListItem = z.strictObject({
   by: z.string(),
   organisation: organisationRef,
   verdict,
+  trial: z.string().nullable(),
+  partial: z.boolean(),
+  voided: z.boolean(),
   worst: z.strictObject({ frequencyHz: z.number(), marginDb: z.number() }).nullable(),
   points: z.int(),
 });

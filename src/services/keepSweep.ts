@@ -17,9 +17,11 @@ import type { Upload } from '@/models/upload';
 import type { keepSweep as keepSweepBody, SweepView } from '@/schemas/sweep';
 import { recordChange } from './audit';
 import { nextNumber } from './counters';
+import { rememberShape } from './fileShapes';
 import { gather, judge, rangeOf, type Judged } from './judgeFile';
 import { dayIn, labSettings } from './lab';
 import { findSample, lockOpenJob, stateLabel } from './samples';
+import { settleRetests } from './settleRetests';
 import { findUpload, recognitionOf } from './sweepFiles';
 import { readSweep } from './sweeps';
 
@@ -56,6 +58,8 @@ export async function keepSweep(actor: Actor | null, body: Body, at = new Date()
     const year = dayIn(zone, at).slice(0, 4);
     const number = `R-${year.slice(2)}-${String(await nextNumber(`run-${year}`)).padStart(3, '0')}`;
     await Sweep.update({ number, evaluationId: evaluation.id }, { where: { id: run.id } });
+    await rememberShape(actor, upload, body, at);
+    await settleRetests(actor, { stateId: state.row.id, port: body.port, because: `run ${number} kept`, at });
     recordChange(actor, {
       scope: `job-${state.jobPublicId}`,
       action: `run ${number} kept`,
@@ -111,7 +115,7 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
   if ((await SweepFilePart.count({ where: { sweepFileId: file.id } })) === 0) throw new NotFound('uploaded file');
   const axis = judged.input.traces[0]!.frequencyHz;
   const { purpose, port, line, polarisation, heightM, heightSwept, azimuthDeg, distanceM } = body;
-  const { operatingMode, valuesHold } = body;
+  const { operatingMode, valuesHold, trial } = body;
   const { frequencyUnit, centreHz, traces, sweepIndex, measuredAt } = body;
   const { vbwHz = null, rbwShape = null } = judged.input.traces[0]!;
   const alreadyCorrected = body.alreadyCorrected ?? [];
@@ -133,6 +137,7 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
     azimuthDeg,
     distanceM,
     operatingMode,
+    trial,
     valuesHold,
     pathRevisionId: judged.path?.revision.id ?? null,
     limitSetId: judged.limitSet.id,

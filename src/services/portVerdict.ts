@@ -9,7 +9,7 @@ import { linesOf } from './limitSets';
 /** The verdict of a run's port over every run of the same sample state. The caller has shown that it may see the run. */
 export async function portVerdictOf(run: Pick<Sweep, 'stateId' | 'port'>): Promise<SweepView['portVerdict']> {
   const rows = (await Sweep.findAll({
-    where: { stateId: run.stateId, port: run.port, evaluationId: { [Op.not]: null } },
+    where: { stateId: run.stateId, port: run.port, evaluationId: { [Op.not]: null }, trial: null, voidedAt: null },
     include: ['evaluation'],
     order: [['id', 'ASC']],
   })) as (Sweep & { evaluation: Evaluation })[];

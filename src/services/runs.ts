@@ -26,6 +26,7 @@ export type WholeState = ModificationState & {
 export type Run = Sweep & {
   state: WholeState;
   user: User;
+  voider: User | null;
   evaluation: Evaluation;
   limitSet: LimitSet;
   file: SweepFile;
@@ -43,6 +44,7 @@ export function runInclude(own: number | null): IncludeOptions[] {
   return [
     { association: 'state', required: true, include: [sample] },
     { association: 'user' },
+    { association: 'voider' },
     { association: 'evaluation' },
   ];
 }

@@ -32,7 +32,11 @@ function itemOf(row: Sweep): z.infer<typeof sweepListItem> {
     keptAt: row.createdAt.toISOString(),
     by: user.name,
     organisation: { id: job.organisation.publicId, name: job.organisation.name },
+    sample: { id: state.sample.publicId, code: state.sample.code },
     verdict: evaluation.verdict,
+    trial: row.trial,
+    partial: row.partial !== null,
+    voided: row.voidedAt !== null,
     worst:
       worstFrequencyHz === null || worstMarginDb === null
         ? null
@@ -92,6 +96,13 @@ async function view(run: Run, context: RunContext): Promise<SweepView> {
     azimuthDeg: run.azimuthDeg,
     distanceM: run.distanceM,
     operatingMode: run.operatingMode,
+    trial: run.trial,
+    partial: run.partial,
+    voided: run.voidedAt && {
+      at: run.voidedAt.toISOString(),
+      by: { id: run.voider!.publicId, name: run.voider!.name },
+      reason: run.voidReason!,
+    },
     keptAt: run.createdAt.toISOString(),
     measuredAt: run.measuredAt?.toISOString() ?? null,
     by: { id: user.publicId, name: user.name },

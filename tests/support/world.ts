@@ -137,6 +137,7 @@ export async function enterWorld() {
     frequencyUnit: 'MHz',
     centreHz: null,
     sweepIndex: null,
+    keepPartial: false,
     traces: [{ index: 0, name: 'Peak', unit: 'dBuV', detector: 'peak', rbwHz: 120e3 }],
   };
   const about = {
@@ -146,6 +147,7 @@ export async function enterWorld() {
     heightSwept: true,
     azimuthDeg: 0,
     measuredAt: null,
+    trial: null,
   };
   const file = await createSweepFile(technician.actor, sweepFile());
   const run = await keepSweep(technician.actor, { ...choice, ...about, fileId: file.id });

@@ -23,6 +23,10 @@ function run(number: string, more: Partial<Run>): Run {
     verdict: 'under',
     worst: { frequencyHz: 144.018e6, marginDb: 9 },
     points: 12934,
+    sample: { id: 's'.repeat(16), code: 'S-047' },
+    trial: null,
+    partial: false,
+    voided: false,
     ...more,
   };
 }

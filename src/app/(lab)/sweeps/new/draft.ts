@@ -182,6 +182,7 @@ export function choiceOf(draft: Draft, file: SweepFileView): SweepChoice | null 
     frequencyUnit,
     centreHz: file.recognition.frequency.offset && centreMhz !== null ? centreMhz * 1e6 : null,
     sweepIndex: draft.sweepIndex === '' ? null : draft.sweepIndex,
+    keepPartial: false,
     traces: draft.traces
       .filter((trace) => trace.use)
       .map(({ index, name, unit, detector, rbwKhz }) => ({
