@@ -9,8 +9,12 @@ export interface BrowserWorld {
   drop(): Promise<void>;
 }
 
-/** Before the browser tests: one schema with the demo lab, one built server on it; STILLFIELD_TEST_ORIGIN names it. */
+/**
+ * Before the browser tests: one schema with the demo lab, one built server on it; STILLFIELD_TEST_ORIGIN names it. Set
+ * beforehand, it names a demo lab that runs already (`npm run dev`), and that one is used as it is.
+ */
 export default async function setup(): Promise<void> {
+  if (process.env.STILLFIELD_TEST_ORIGIN) return;
   await setupDatabase();
   const server = {
     databaseUrl: process.env.STILLFIELD_TEST_DATABASE_URL!,
