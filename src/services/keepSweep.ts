@@ -1,11 +1,7 @@
 import type { z } from 'zod';
 import { authorise, type Actor } from '@/auth/actor';
-import { ENGINE } from '@/emc/evaluate';
 import { Conflict, Invalid, NotFound } from '@/errors';
 import { keepUpload, readUpload } from '@/models/blobs';
-import { Evaluation } from '@/models/evaluation';
-import { EvaluationCandidate } from '@/models/evaluationCandidate';
-import { writeLayers } from '@/models/layerStore';
 import { ModificationState } from '@/models/modificationState';
 import { newPublicId } from '@/models/publicId';
 import { Sweep } from '@/models/sweep';
@@ -17,6 +13,7 @@ import type { Upload } from '@/models/upload';
 import type { keepSweep as keepSweepBody, SweepView } from '@/schemas/sweep';
 import { recordChange } from './audit';
 import { nextNumber } from './counters';
+import { writeEvaluation } from './evaluations';
 import { rememberShape } from './fileShapes';
 import { gather, judge, rangeOf, type Judged } from './judgeFile';
 import { dayIn, labSettings } from './lab';
@@ -199,38 +196,4 @@ function remarksOn(upload: Upload, body: Body): string[] {
     }
   }
   return remarks;
-}
-
-async function writeEvaluation(actor: Actor, run: Sweep, judged: Judged, at: Date): Promise<Evaluation> {
-  const { evaluation, path, terms, lines } = judged;
-  const worst = evaluation.candidates[0];
-  const row = await Evaluation.create({
-    publicId: newPublicId(),
-    sweepId: run.id,
-    engine: ENGINE,
-    decisionRule: judged.input.rule,
-    inputs: {
-      pathRevision: path?.revision.publicId ?? null,
-      factorTables: terms.map(({ term, table }) => ({ term: term.id, table: table.publicId, applied: term.applied })),
-      limitLines: lines.map((line) => line.id),
-      uncertaintyOf: path?.revision.publicId ?? null,
-    },
-    verdict: evaluation.verdict,
-    worstFrequencyHz: worst?.frequencyHz ?? null,
-    worstMarginDb: worst?.marginDb ?? null,
-    counts: evaluation.counts,
-    pairs: evaluation.pairs,
-    gaps: evaluation.gaps,
-    candidates: evaluation.candidates.length,
-    userId: actor.userId,
-    createdAt: at,
-  });
-  await EvaluationCandidate.bulkCreate(
-    evaluation.candidates.map((candidate) => ({ evaluationId: row.id, ...candidate })),
-  );
-  await writeLayers(
-    row.id,
-    judged.input.traces.map(({ index }, i) => ({ index, layer: evaluation.layers[i]! })),
-  );
-  return row;
 }
