@@ -60,6 +60,9 @@ export const PERMISSIONS = {
   'booking.write': { roles: manager, token: null },
   'result-mail.list': { roles: lab, token: 'read' },
   'result-mail.send': { roles: manager, token: null },
+  'note.list': { roles: everyone, token: 'read' },
+  'note.write': { roles: everyone, token: null },
+  'find.everywhere': { roles: everyone, token: 'read' },
   'audit.read': { roles: lab, token: 'read' },
 } as const satisfies Record<string, Rule>;
 

@@ -65,6 +65,7 @@ const RIGHTS = {
   sweep_segments: ['SELECT', 'INSERT'],
   trace_segments: ['SELECT', 'INSERT'],
   evaluations: ['SELECT', 'INSERT'],
+  notes: ['SELECT', 'INSERT'],
   evaluation_candidates: ['SELECT', 'INSERT'],
   evaluation_layers: ['SELECT', 'INSERT'],
 };

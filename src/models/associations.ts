@@ -7,6 +7,7 @@ import { FactorTableRevision } from './factorTableRevision';
 import { Job } from './job';
 import { LimitSet } from './limitSet';
 import { ModificationState } from './modificationState';
+import { Note } from './note';
 import { Organisation } from './organisation';
 import { Product } from './product';
 import { Sample } from './sample';
@@ -31,6 +32,8 @@ export function associate(): void {
   Sample.belongsTo(Job, { as: 'job', foreignKey: 'jobId' });
   Sample.hasMany(ModificationState, { as: 'states', foreignKey: 'sampleId' });
   ModificationState.belongsTo(Sample, { as: 'sample', foreignKey: 'sampleId' });
+
+  Note.belongsTo(User, { as: 'user', foreignKey: 'userId' });
 
   Equipment.hasMany(Calibration, { as: 'calibrations', foreignKey: 'equipmentId' });
   Equipment.hasMany(FactorTableRevision, { as: 'tables', foreignKey: 'equipmentId' });

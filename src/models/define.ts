@@ -15,6 +15,7 @@ import { defineJob } from './job';
 import { defineLimitLineRevision } from './limitLineRevision';
 import { defineLimitSet } from './limitSet';
 import { defineModificationState } from './modificationState';
+import { defineNote } from './note';
 import { defineOrganisation } from './organisation';
 import { defineOutboxMessage } from './outboxMessage';
 import { defineProduct } from './product';
@@ -58,6 +59,7 @@ export function defineModels(sequelize: Sequelize): void {
   defineSignalPathRevision(sequelize);
   defineLimitLineRevision(sequelize);
   defineLimitSet(sequelize);
+  defineNote(sequelize);
   defineUpload(sequelize);
   defineUploadPart(sequelize);
   defineSweepFile(sequelize);

@@ -3,6 +3,8 @@ import * as booking from './booking';
 import * as comparison from './comparison';
 import * as job from './job';
 import type { Operation } from './operation';
+import * as find from './find';
+import * as note from './note';
 import * as people from './people';
 import * as resultMail from './resultMail';
 import * as retest from './retest';
@@ -30,6 +32,8 @@ export const OPERATIONS: readonly Operation[] = [
   comparison,
   setup,
   retest,
+  note,
+  find,
   booking,
   resultMail,
 ].flatMap((module) => Object.values(module as Record<string, unknown>).filter(isOperation));

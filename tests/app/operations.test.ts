@@ -35,7 +35,7 @@ afterAll(async () => {
 
 interface Sample {
   params?: (w: World) => string;
-  query?: string;
+  query?: string | ((w: World) => string);
   body?: (w: World) => unknown;
 }
 
@@ -70,6 +70,9 @@ const SAMPLES: Record<string, Sample> = {
   readSweepFile: { params: (w) => w.file.id },
   previewSweepFile: { params: (w) => w.file.id, body: (w) => w.choice },
   keepSweep: { body: (w) => ({ ...w.choice, ...w.about, fileId: w.file.id }) },
+  findEverywhere: { query: '?q=LD-40' },
+  listNotes: { query: (w) => `?sampleId=${w.sample.id}` },
+  createNote: { body: (w) => ({ sampleId: w.sample.id, text: 'the lid rattles', audience: 'client' }) },
   listSweeps: {},
   readSweep: { params: (w) => w.run.id },
   readWindow: { params: (w) => w.run.id, query: '?fromHz=100e6&toHz=200e6&columns=64' },
@@ -101,7 +104,7 @@ async function ask(op: Operation, who: Somebody | null): Promise<Response> {
   if (who) headers.set('cookie', who.cookie);
   if (op.ifMatch) headers.set('if-match', await versionFor(op));
   const id = sample.params?.(world);
-  const url = ORIGIN + op.path.replace('{id}', id ?? '') + (sample.query ?? '');
+  const url = ORIGIN + op.path.replace('{id}', id ?? '') + (typeof sample.query === 'function' ? sample.query(world) : (sample.query ?? ''));
   let body: BodyInit | null = null;
   if (op.upload) {
     const { name, bytes } = sweepFile();

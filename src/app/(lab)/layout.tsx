@@ -37,6 +37,7 @@ export default async function LabLayout({ children }: { children: ReactNode }) {
       <TopLine
         sections={await sectionsOf(actor)}
         person={{ name: actor.name, part }}
+        findHref="/find"
         room={room}
         menu={
           <>

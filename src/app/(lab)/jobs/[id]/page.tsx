@@ -3,6 +3,7 @@ import Link from 'next/link';
 import { found } from '@/app/found';
 import { requireActor } from '@/app/requireActor';
 import { mayRole } from '@/auth/permissions';
+import { notesSection } from '@/app/(lab)/notes/notesSection';
 import { sampleFinding } from '@/app/(lab)/samples/sampleFinding';
 import { latestStandings, runsOf, standingReader, type Standing } from '@/app/(lab)/samples/standing';
 import { Sheet } from '@/components/shell/Sheet';
@@ -15,6 +16,7 @@ import { formatCount } from '@/format/quantities';
 import type { HistoryEntry } from '@/services/audit';
 import { readJob } from '@/services/jobs';
 import { labZone } from '@/services/lab';
+import { listNotes } from '@/services/notes';
 import { historiesOf } from '../history';
 import { historySection } from '../HistoryLines';
 import { samplesOf } from '../jobStands';
@@ -47,6 +49,7 @@ export default async function JobPage({ params }: Props) {
   }
   const history = await historiesOf(actor, [['job', job.id], ...samples.map(({ id }) => ['sample', id] as const)]);
   const zone = await labZone();
+  const notes = await listNotes(actor, { limit: 10, jobId: job.id });
   const finding =
     job.state === 'declined'
       ? {
@@ -75,7 +78,10 @@ export default async function JobPage({ params }: Props) {
           finding={finding}
         />
       }
-      margin={history.length > 0 ? [historySection(history, zone, true)] : undefined}
+      margin={[
+        notesSection({ jobId: job.id }, notes, zone, actor.role !== 'designer'),
+        ...(history.length > 0 ? [historySection(history, zone, true)] : []),
+      ]}
       marginLine={history[0]?.action}
     >
       <SectionHeading className="mt-5" remark={samples.length > 0 && `${formatCount(samples.length)}, newest first`}>

@@ -4,6 +4,7 @@ import { found } from '@/app/found';
 import { requireActor } from '@/app/requireActor';
 import { mayRole } from '@/auth/permissions';
 import { historiesOf } from '@/app/(lab)/jobs/history';
+import { notesSection } from '@/app/(lab)/notes/notesSection';
 import { historySection } from '@/app/(lab)/jobs/HistoryLines';
 import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
@@ -12,6 +13,7 @@ import { Id } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { formatCount } from '@/format/quantities';
 import { labZone } from '@/services/lab';
+import { listNotes } from '@/services/notes';
 import { readSample } from '@/services/samples';
 import { missingLine, missingSection } from '../missingSection';
 import { sampleRecord } from '../sampleRecord';
@@ -38,6 +40,7 @@ export default async function SamplePage({ params }: Props) {
     ['sample', sample.id],
     ...sample.states.map(({ id }) => ['state', id] as const),
   ]);
+  const notes = await listNotes(actor, { limit: 10, sampleId: sample.id });
   const upload = mayRole(actor.role, 'sweep.keep');
   const change = mayRole(actor.role, 'state.change');
   const newest = sample.states.filter(({ planned }) => !planned).at(-1);
@@ -125,7 +128,11 @@ export default async function SamplePage({ params }: Props) {
   );
 
   function margin() {
-    const sections = [...missingSection(latest), ...(history.length > 0 ? [historySection(history, zone, true)] : [])];
+    const sections = [
+      ...missingSection(latest),
+      notesSection({ sampleId: sample.id }, notes, zone, actor.role !== 'designer'),
+      ...(history.length > 0 ? [historySection(history, zone, true)] : []),
+    ];
     return sections.length > 0 ? sections : undefined;
   }
 }

@@ -1,6 +1,7 @@
 'use client';
 
 import { useCallback, useId, useMemo, useRef, useState } from 'react';
+import { notesSection, type NotesPage } from '@/app/(lab)/notes/notesSection';
 import { ChartLegend } from '@/components/charts/ChartLegend';
 import { chartSubject } from '@/components/charts/chartSubject';
 import type { ChartMode } from '@/components/charts/marginSeries';
@@ -34,6 +35,7 @@ interface Props {
   first: CandidatePage;
   /** null for a reader who does not see it. */
   history: HistoryEntry[] | null;
+  notes: NotesPage;
   zone: string;
   /** Whether the reader is one of the lab's people. */
   lab: boolean;
@@ -46,7 +48,7 @@ interface Open {
 }
 
 /** The sheet of one run: finding, chart, candidates, and beside them how each figure came about. */
-export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props) {
+export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }: Props) {
   const tableId = useId();
   const legend = useRef<HTMLDivElement>(null);
   const [mode, setMode] = useState<ChartMode>('margin');
@@ -158,6 +160,7 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
           summary: <Coverage.Summary sweep={sweep} />,
           children: <Coverage sweep={sweep} />,
         },
+        notesSection({ sweepId: sweep.id }, notes, zone, lab),
         {
           id: 'record',
           title: 'Record',
@@ -180,6 +183,7 @@ export function SweepSheet({ sweep, overview, first, history, zone, lab }: Props
         { keys: ['ArrowUp', 'ArrowDown'], does: 'rows' },
         { keys: ['W'], does: 'working' },
         { keys: ['L'], does: 'level' },
+        { keys: ['N'], does: 'note' },
         { keys: ['?'], does: 'all keys' },
       ]}
     >

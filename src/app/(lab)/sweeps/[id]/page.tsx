@@ -5,6 +5,7 @@ import { requireActor } from '@/app/requireActor';
 import type { Actor } from '@/auth/actor';
 import { labZone } from '@/services/lab';
 import { historyOf } from '@/services/audit';
+import { listNotes } from '@/services/notes';
 import { listCandidates, readSweep } from '@/services/sweeps';
 import { readOverview } from '@/services/sweepWindow';
 import { SweepSheet } from './SweepSheet';
@@ -27,10 +28,11 @@ export default async function SweepPage({ params }: Props) {
   const actor = await requireActor();
   const { id } = await params;
   const sweep = await readOnce(actor, id);
-  const [window, candidates, zone] = await Promise.all([
+  const [window, candidates, zone, notes] = await Promise.all([
     readOverview(actor, id),
     listCandidates(actor, id, { limit: FIRST_CANDIDATES }),
     labZone(),
+    listNotes(actor, { limit: 10, sweepId: id }),
   ]);
   const history = actor.role === 'designer' ? null : await historyOf(actor, 'sweep', id);
   return (
@@ -40,6 +42,7 @@ export default async function SweepPage({ params }: Props) {
       overview={window}
       first={candidates}
       history={history}
+      notes={notes}
       zone={zone}
       lab={actor.role !== 'designer'}
     />
