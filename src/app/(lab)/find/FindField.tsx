@@ -25,7 +25,7 @@ export function FindField({ q, lab }: { q: string; lab: boolean }) {
       action="/find"
       role="search"
       onSubmit={look}
-      className="mt-4 flex flex-wrap items-end gap-2"
+      className="mt-4 flex flex-wrap items-start gap-2"
       onKeyDown={(event) => {
         if (event.key !== 'ArrowDown') return;
         event.preventDefault();
