@@ -50,6 +50,8 @@ const RIGHTS = {
   signal_paths: ['SELECT', 'INSERT', 'UPDATE'],
   limit_sets: ['SELECT', 'INSERT', 'UPDATE'],
   sweeps: ['SELECT', 'INSERT', 'UPDATE'],
+  // captions are corrected and pictures withdrawn; their bytes are facts
+  photos: ['SELECT', 'INSERT', 'UPDATE'],
   // files that nobody has kept yet; housekeeping removes them
   uploads: ['SELECT', 'INSERT', 'DELETE'],
   upload_parts: ['SELECT', 'INSERT', 'DELETE'],
@@ -64,6 +66,8 @@ const RIGHTS = {
   sweep_file_parts: ['SELECT', 'INSERT'],
   sweep_segments: ['SELECT', 'INSERT'],
   trace_segments: ['SELECT', 'INSERT'],
+  setup_records: ['SELECT', 'INSERT'],
+  photo_parts: ['SELECT', 'INSERT'],
   evaluations: ['SELECT', 'INSERT'],
   notes: ['SELECT', 'INSERT'],
   evaluation_candidates: ['SELECT', 'INSERT'],

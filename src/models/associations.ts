@@ -9,9 +9,11 @@ import { LimitSet } from './limitSet';
 import { ModificationState } from './modificationState';
 import { Note } from './note';
 import { Organisation } from './organisation';
+import { Photo } from './photo';
 import { Product } from './product';
 import { Sample } from './sample';
 import { Session } from './session';
+import { SetupRecord } from './setupRecord';
 import { SignalPath } from './signalPath';
 import { SignalPathRevision } from './signalPathRevision';
 import { Sweep } from './sweep';
@@ -51,4 +53,10 @@ export function associate(): void {
   Sweep.belongsTo(User, { as: 'voider', foreignKey: 'voidedBy' });
   Sweep.belongsTo(Evaluation, { as: 'evaluation', foreignKey: 'evaluationId', constraints: false });
   Evaluation.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
+
+  SetupRecord.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
+  SetupRecord.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  Photo.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
+  Photo.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  Photo.belongsTo(User, { as: 'withdrawer', foreignKey: 'withdrawnBy' });
 }

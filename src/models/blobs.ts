@@ -2,6 +2,7 @@ import { promisify } from 'node:util';
 import { gunzip, gzip } from 'node:zlib';
 import { QueryTypes } from 'sequelize';
 import { database } from './database';
+import { PhotoPart } from './photoPart';
 import { SweepFilePart } from './sweepFilePart';
 import { UploadPart } from './uploadPart';
 
@@ -35,4 +36,17 @@ export async function readUpload(uploadId: number): Promise<Buffer> {
 export async function readSweepFile(sweepFileId: number): Promise<Buffer> {
   const parts = await SweepFilePart.findAll({ where: { sweepFileId }, order: [['seq', 'ASC']] });
   return expand(Buffer.concat(parts.map((row) => row.part)));
+}
+
+/** A picture is compressed already; it is only cut. */
+export async function writePhoto(photoId: number, size: PhotoPart['size'], bytes: Uint8Array): Promise<void> {
+  for (let seq = 0; seq * PART_BYTES < bytes.length; seq++) {
+    const part = Buffer.from(bytes.subarray(seq * PART_BYTES, (seq + 1) * PART_BYTES));
+    await PhotoPart.create({ photoId, size, seq, part });
+  }
+}
+
+export async function readPhoto(photoId: number, size: PhotoPart['size']): Promise<Buffer> {
+  const parts = await PhotoPart.findAll({ where: { photoId, size }, order: [['seq', 'ASC']] });
+  return Buffer.concat(parts.map((row) => row.part));
 }

@@ -18,10 +18,13 @@ import { defineModificationState } from './modificationState';
 import { defineNote } from './note';
 import { defineOrganisation } from './organisation';
 import { defineOutboxMessage } from './outboxMessage';
+import { definePhoto } from './photo';
+import { definePhotoPart } from './photoPart';
 import { defineProduct } from './product';
 import { defineSample } from './sample';
 import { defineSession } from './session';
 import { defineSetting } from './setting';
+import { defineSetupRecord } from './setupRecord';
 import { defineSignalPath } from './signalPath';
 import { defineSignalPathRevision } from './signalPathRevision';
 import { defineSweep } from './sweep';
@@ -70,4 +73,7 @@ export function defineModels(sequelize: Sequelize): void {
   defineEvaluation(sequelize);
   defineEvaluationCandidate(sequelize);
   defineEvaluationLayer(sequelize);
+  defineSetupRecord(sequelize);
+  definePhoto(sequelize);
+  definePhotoPart(sequelize);
 }
