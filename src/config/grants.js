@@ -40,6 +40,9 @@ const RIGHTS = {
   idempotency_keys: ['SELECT', 'INSERT', 'DELETE'],
   audit_chains: ['SELECT', 'INSERT', 'UPDATE'],
   outbox: ['SELECT', 'INSERT', 'UPDATE', 'DELETE'],
+  one_time_links: ['SELECT', 'INSERT', 'UPDATE', 'DELETE'],
+  // the demo's letters; housekeeping removes them
+  caught_mails: ['SELECT', 'INSERT', 'DELETE'],
   counters: ['SELECT', 'INSERT', 'UPDATE'],
   settings: ['SELECT', 'INSERT', 'UPDATE'],
   products: ['SELECT', 'INSERT', 'UPDATE'],
@@ -50,6 +53,9 @@ const RIGHTS = {
   signal_paths: ['SELECT', 'INSERT', 'UPDATE'],
   limit_sets: ['SELECT', 'INSERT', 'UPDATE'],
   sweeps: ['SELECT', 'INSERT', 'UPDATE'],
+  test_positions: ['SELECT', 'INSERT', 'UPDATE'],
+  bookings: ['SELECT', 'INSERT', 'UPDATE'],
+  booking_guards: ['SELECT', 'INSERT', 'UPDATE'],
   // captions are corrected and pictures withdrawn; their bytes are facts
   photos: ['SELECT', 'INSERT', 'UPDATE'],
   // files that nobody has kept yet; housekeeping removes them
@@ -72,6 +78,7 @@ const RIGHTS = {
   notes: ['SELECT', 'INSERT'],
   evaluation_candidates: ['SELECT', 'INSERT'],
   evaluation_layers: ['SELECT', 'INSERT'],
+  result_mails: ['SELECT', 'INSERT'],
 };
 
 /** No such grant (1141, 1147); or the owner may not revoke on the whole schema (1044), which `tooWide` then finds. */

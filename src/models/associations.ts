@@ -1,5 +1,6 @@
 import { ApiToken } from './apiToken';
 import { AuditEntry } from './auditEntry';
+import { Booking } from './booking';
 import { Calibration } from './calibration';
 import { Equipment } from './equipment';
 import { Evaluation } from './evaluation';
@@ -8,9 +9,11 @@ import { Job } from './job';
 import { LimitSet } from './limitSet';
 import { ModificationState } from './modificationState';
 import { Note } from './note';
+import { OneTimeLink } from './oneTimeLink';
 import { Organisation } from './organisation';
 import { Photo } from './photo';
 import { Product } from './product';
+import { ResultMail } from './resultMail';
 import { Sample } from './sample';
 import { Session } from './session';
 import { SetupRecord } from './setupRecord';
@@ -18,12 +21,14 @@ import { SignalPath } from './signalPath';
 import { SignalPathRevision } from './signalPathRevision';
 import { Sweep } from './sweep';
 import { SweepFile } from './sweepFile';
+import { TestPosition } from './testPosition';
 import { User } from './user';
 
 /** Wires the models to one another; they never import each other. */
 export function associate(): void {
   User.belongsTo(Organisation, { as: 'organisation', foreignKey: 'organisationId' });
   Session.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  OneTimeLink.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   ApiToken.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   AuditEntry.belongsTo(User, { as: 'actor', foreignKey: 'actorId' });
 
@@ -51,6 +56,7 @@ export function associate(): void {
   Sweep.belongsTo(LimitSet, { as: 'limitSet', foreignKey: 'limitSetId' });
   Sweep.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   Sweep.belongsTo(User, { as: 'voider', foreignKey: 'voidedBy' });
+  Evaluation.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   Sweep.belongsTo(Evaluation, { as: 'evaluation', foreignKey: 'evaluationId', constraints: false });
   Evaluation.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
 
@@ -59,4 +65,14 @@ export function associate(): void {
   Photo.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
   Photo.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   Photo.belongsTo(User, { as: 'withdrawer', foreignKey: 'withdrawnBy' });
+
+  Booking.belongsTo(TestPosition, { as: 'position', foreignKey: 'positionId' });
+  Booking.belongsTo(User, { as: 'technician', foreignKey: 'technicianId' });
+  Booking.belongsTo(Sample, { as: 'sample', foreignKey: 'sampleId' });
+  Booking.belongsTo(ModificationState, { as: 'modification', foreignKey: 'stateId' });
+
+  ResultMail.belongsTo(Sample, { as: 'sample', foreignKey: 'sampleId' });
+  ResultMail.belongsTo(ModificationState, { as: 'state', foreignKey: 'stateId' });
+  ResultMail.belongsTo(User, { as: 'recipient', foreignKey: 'recipientId' });
+  ResultMail.belongsTo(User, { as: 'sender', foreignKey: 'senderId' });
 }
