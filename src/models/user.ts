@@ -16,6 +16,8 @@ export class User extends Model<InferAttributes<User>, InferCreationAttributes<U
   declare email: string;
   declare passwordHash: CreationOptional<string | null>;
   declare disabledAt: CreationOptional<Date | null>;
+  declare disabledReason: CreationOptional<string | null>;
+  declare lastSignInAt: CreationOptional<Date | null>;
   declare version: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
@@ -32,6 +34,8 @@ export function defineUser(sequelize: Sequelize): void {
       email: { type: DataTypes.STRING(254), allowNull: false },
       passwordHash: { type: DataTypes.STRING(200), field: 'password_hash', allowNull: true },
       disabledAt: { type: DataTypes.DATE(3), field: 'disabled_at', allowNull: true },
+      disabledReason: { type: DataTypes.STRING(300), field: 'disabled_reason', allowNull: true },
+      lastSignInAt: { type: DataTypes.DATE(3), field: 'last_sign_in_at', allowNull: true },
       version: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false, defaultValue: 1 },
       createdAt: { type: DataTypes.DATE(3), field: 'created_at', allowNull: false },
       updatedAt: { type: DataTypes.DATE(3), field: 'updated_at', allowNull: false },
