@@ -6,12 +6,15 @@ import { ProblemMessage } from '@/components/forms/ProblemMessage';
 import { send } from '@/components/forms/send';
 import { useSubmit } from '@/components/forms/useSubmit';
 import { useKey } from '@/components/shell/keys';
+import { useSheet } from '@/components/shell/sheetState';
 import { Button } from '@/components/ui/Button';
+import { KeyHint } from '@/components/ui/KeyHint';
 import { CheckField } from '@/components/ui/CheckField';
 import { AreaField } from '@/components/ui/Field';
 import { formatDayTime } from '@/format/dates';
 import type { NoteView } from '@/schemas/note';
 import type { NotesPage } from './notesSection';
+import './notes.css';
 
 export type About = { jobId: string } | { sampleId: string } | { sweepId: string };
 
@@ -26,6 +29,16 @@ export function Notes({ about, first, zone, lab }: { about: About; first: NotesP
   const [shared, setShared] = useState(false);
   const [older, setOlder] = useState<NotesPage>({ items: [], next: first.next });
   const opener = useRef<HTMLButtonElement>(null);
+  const sheet = useSheet();
+  // The part may be folded, or in a drawer that is put away.
+  useKey(
+    'N',
+    () => {
+      sheet.open('notes');
+      setWriting(true);
+    },
+    { says: 'write a note' },
+  );
   useKey('Escape', () => stop(), { when: writing });
 
   function stop() {
@@ -78,9 +91,9 @@ export function Notes({ about, first, zone, lab }: { about: About; first: NotesP
           </div>
         </form>
       ) : (
-        <Button ref={opener} kind="quiet" size="table" keyName="N" onClick={() => setWriting(true)}>
-          Write a note
-        </Button>
+        <button ref={opener} type="button" className="note-opener" onClick={() => setWriting(true)}>
+          Write a note <KeyHint name="N" />
+        </button>
       )}
       <ol>
         {[...first.items, ...older.items].map((note) => (
