@@ -19,7 +19,7 @@ export function candidatesOf(
   hung: HungTrace,
   prepared: PreparedLine,
   pair: PairPoints,
-  purpose: Purpose,
+  { purpose, partial }: { purpose: Purpose; partial?: boolean },
 ): { open: Unranked[]; others: Unranked[] } {
   const { line } = prepared;
   const peak = (point: number) => ({ kind: 'peak' as const, point, from: point, to: point });
@@ -52,6 +52,7 @@ export function candidatesOf(
       lineDetector: line.detector,
       requiredBandwidthHz: line.bandwidthHz,
       purpose,
+      partial,
     });
     return {
       kind,

@@ -53,11 +53,18 @@ export function* spansOf(pair: PairPoints, rbwHz: number | null): Generator<void
   return spans;
 }
 
-/** The gaps of a line under every trace it is judged by: covered by one of them is covered. Ascending in frequency. */
-export function gapsOf(line: LimitLine, spans: readonly Span[]): CoverageGap[] {
+/**
+ * The gaps of a line under every trace it is judged by: covered by one of them is covered, except where the run is
+ * partial: that covers nothing. Ascending in frequency.
+ */
+export function gapsOf(line: LimitLine, spans: readonly Span[], partial = false): CoverageGap[] {
   const of = (what: Span['what']) => spans.filter((span) => span.what === what);
   const gaps: CoverageGap[] = [];
-  let missing = without(askedRanges(line), of('covered'));
+  const asked = askedRanges(line);
+  let missing = without(asked, of('covered'));
+  if (partial) {
+    for (const range of intersected(asked, of('covered'))) gaps.push({ lineId: line.id, ...range, because: 'partial' });
+  }
   for (const because of ['no-factor', 'no-uncertainty', 'gap'] as const) {
     const found = intersected(missing, of(because));
     for (const range of found) gaps.push({ lineId: line.id, ...range, because });

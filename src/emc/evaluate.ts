@@ -22,7 +22,7 @@ export const ENGINE = 'stillfield-emc 2';
  * about every 16384 points and returns the evaluation; the same input gives the same bits however it is paced.
  *
  * The verdict is the worst of the candidates and of the gaps (not covered); an ambient run, or one without a limit
- * line, is not covered. `counts` counts candidates by verdict, and every gap as not covered.
+ * line, is not covered. A partial run is never under and leaves all of its lines open. `counts` counts candidates by verdict, and every gap as not covered.
  * What a file can hold never throws: a reading that is no finite figure, and a point at 0 Hz, below or at none, is not
  * read. Throws RangeError on tables, lines, paths or uncertainties that cannot be used.
  */
@@ -36,7 +36,7 @@ export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
   const layers: Columns[] = [];
   for (const sweep of sweeps) {
     const lines = asked.filter(({ by }) => by.includes(sweep)).map(({ line }) => line);
-    layers.push(yield* judgeSweep(sweep, lines, uncertainty, input.purpose, judgements));
+    layers.push(yield* judgeSweep(sweep, lines, uncertainty, input, judgements));
   }
 
   const of = (line: LimitLine) => judgements.filter((judgement) => judgement.line === line);
@@ -44,6 +44,7 @@ export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
     gapsOf(
       line,
       of(line).flatMap(({ spans }) => spans),
+      input.partial,
     ),
   );
   const pairs = input.lines.flatMap((line) => of(line).map(({ pair }) => pair));
@@ -55,7 +56,9 @@ export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
   for (const { verdict } of candidates) counts[verdict]++;
   counts['not-covered'] += gaps.length;
   const uncovered: Verdict[] = gaps.length > 0 ? ['not-covered'] : [];
-  const verdict = worstVerdict([...candidates.map((candidate) => candidate.verdict), ...uncovered]) ?? 'not-covered';
+  const worst = worstVerdict([...candidates.map((candidate) => candidate.verdict), ...uncovered]) ?? 'not-covered';
+  // Of a partial run no candidate is under; this holds where it has neither candidate nor gap to say so.
+  const verdict = input.partial && worst === 'under' ? 'not-covered' : worst;
   return { engine: ENGINE, verdict, counts, pairs, candidates, gaps, layers };
 }
 
@@ -95,7 +98,7 @@ function* judgeSweep(
   { trace, hung, lowestHz, highestHz }: Sweep,
   lines: readonly PreparedLine[],
   uncertainty: PreparedUncertainty,
-  purpose: Purpose,
+  kind: { purpose: Purpose; partial?: boolean },
   judgements: PairJudgement[],
 ): Generator<void, Columns> {
   const { frequencyHz, reading } = trace;
@@ -114,10 +117,10 @@ function* judgeSweep(
   }
   for (const pair of pairs) {
     const { line } = pair.line;
-    const reach = reachOf(trace, line, purpose);
+    const reach = reachOf(trace, line, kind.purpose);
     const places = yield* findCandidates(pair.points, reach, pair.bandwidthHz, LISTED_AT_LEAST);
     const found = yield* governed(pair.points, places);
-    const { open, others } = candidatesOf(found, trace, hung, pair.line, pair.points, purpose);
+    const { open, others } = candidatesOf(found, trace, hung, pair.line, pair.points, kind);
     yield;
     const spans = yield* spansOf(pair.points, trace.rbwHz);
     const judged = { traceIndex: trace.index, lineId: line.id, ...worstOf(pair.points) };

@@ -16,11 +16,14 @@ export interface PortRun {
   gaps: readonly CoverageGap[];
   /** The limit lines the run was judged against, whether or not a trace was there for each. */
   lines: readonly { id: string; name: string }[];
+  /** Kept from a file that breaks off: it speaks where it is over or needs more, and covers nothing. */
+  partial?: boolean;
 }
 
 /** Something that is missing for a verdict on the port; `@/format/missing` says it in a sentence. */
 export interface Missing {
-  what: 'position' | 'height' | 'no-line' | 'comparison' | 'range';
+  /** `partial`: the position was measured, but only in part. */
+  what: 'position' | 'partial' | 'height' | 'no-line' | 'comparison' | 'range';
   /** Null where the port has only one position. */
   position: Polarisation | MainsLine | null;
   lineName: string | null;
@@ -42,7 +45,8 @@ export interface PortVerdict {
  * while a position is missing (both polarisations for the enclosure; L and N on single-phase mains; L1, L2, L3 and N
  * once any of L1 to L3 was measured), a polarisation was measured at one height only, or a position has a part of a
  * limit line that none of its runs covers. Then the worst of the runs: needs a final, inconclusive, under.
- * Ambient runs do not count: they are without the sample. Where a final covers all that a prescan of the same position
+ * Ambient runs do not count: they are without the sample. A partial run counts where it is over, inconclusive or needs a
+ * final; it measures no position or height, covers nothing and settles nothing. Where a final covers all that a prescan of the same position
  * was compared with, the prescan has been settled by it and counts no more.
  * A run's gaps alone do not speak against the port: another run of the same position may fill them.
  */
@@ -53,8 +57,10 @@ export function portVerdict(port: Port, runs: readonly PortRun[]): PortVerdict {
   const positions = positionsOf(port, counted);
   for (const position of positions) {
     const there = counted.filter(position.holds);
+    const whole = there.filter((run) => !run.partial);
     if (there.length === 0) missing.push(lacking('position', position.key));
-    else missing.push(...heightMissing(port, position.key, there), ...missingAt(there, counted, position.key));
+    else if (whole.length === 0) missing.push(lacking('partial', position.key));
+    else missing.push(...heightMissing(port, position.key, whole), ...missingAt(whole, counted, position.key));
     verdicts.push(...there.filter((run) => !isSettled(run, there)).map((run) => run.verdict));
   }
   // A run that stands at no known position still speaks when it is over.
@@ -73,6 +79,7 @@ function isSettled(prescan: PortRun, there: readonly PortRun[]): boolean {
   return there.some(
     (run) =>
       run.purpose === 'final' &&
+      !run.partial &&
       decided.includes(run.verdict) &&
       run.gaps.length === 0 &&
       prescan.lines.every(({ id }) => run.lines.some((line) => line.id === id)),

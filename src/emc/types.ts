@@ -73,6 +73,8 @@ export interface EvaluationInput {
   purpose: Purpose;
   port: Port;
   rule: 'guarded-by-u';
+  /** Read from a file that breaks off, kept so on purpose: nothing of it is under, and it covers nothing. */
+  partial?: boolean;
 }
 
 export interface Candidate {
@@ -99,7 +101,8 @@ export interface CoverageGap {
   lineId: string;
   fromHz: number;
   toHz: number;
-  because: 'no-trace' | 'no-factor' | 'no-uncertainty' | 'gap';
+  /** `partial`: levels stand there, but in a file that breaks off. */
+  because: 'no-trace' | 'no-factor' | 'no-uncertainty' | 'gap' | 'partial';
 }
 
 /** One trace judged against one line. */

@@ -9,6 +9,9 @@ import {
 import { detectorOrder, provesOver, provesUnder, readAsAsked, type AskedFor, type ReadWith } from './detectors';
 import { VERDICTS, type Detector, type LineDetector, type Purpose, type Verdict } from './kinds';
 
+/** A file that broke off may have broken before it did: what is left of it is searched for what is over, no more. */
+const PARTIAL = 'The file breaks off and was kept in part; nothing of it is shown to be under.';
+
 /** One reading beside the line it is judged against. Null where there is no limit, no level or no uncertainty. */
 export interface ReadingFacts {
   marginDb: number | null;
@@ -20,6 +23,8 @@ export interface ReadingFacts {
   lineDetector: LineDetector;
   requiredBandwidthHz: number;
   purpose: Purpose;
+  /** The reading comes from a file that breaks off. */
+  partial?: boolean;
 }
 
 export interface ReadingVerdict {
@@ -73,6 +78,7 @@ export function readingVerdict(facts: ReadingFacts): ReadingVerdict {
   }
   const line = { detector: facts.lineDetector, bandwidthHz: facts.requiredBandwidthHz };
   const verdict = decide(reachOf(facts, line, purpose), marginDb, uncertaintyDb);
+  if (facts.partial && verdict === 'under') return { verdict: 'not-covered', because: PARTIAL };
   return { verdict, because: becauseOf(verdict, facts, marginDb, uncertaintyDb) };
 }
 

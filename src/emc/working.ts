@@ -104,6 +104,7 @@ function judgement(
     lineDetector: line.detector,
     requiredBandwidthHz: line.bandwidthHz,
     purpose: input.purpose,
+    partial: input.partial,
   });
 }
 

@@ -37,6 +37,7 @@ const GAP_WORDS: Record<CoverageGap['because'], string> = {
   'no-trace': 'no trace is judged there',
   'no-factor': 'a factor is missing there',
   'no-uncertainty': 'the uncertainty is not known there',
+  partial: 'the file breaks off and was kept in part',
   gap: 'the sweep has a hole there, or steps wider than the RBW',
 };
 

@@ -7,6 +7,7 @@ const BECAUSE: Record<NonNullable<Missing['because']>, string> = {
   'no-trace': 'not swept',
   'no-factor': 'no factor in the signal path',
   'no-uncertainty': 'no uncertainty stated',
+  partial: 'read from a partial run only',
   gap: 'a gap in the sweep, or steps wider than the RBW',
 };
 
@@ -22,6 +23,8 @@ export function missingText(missing: Missing): string {
   switch (missing.what) {
     case 'position':
       return `${where} is not measured.`;
+    case 'partial':
+      return `${where} is measured only in part: its file breaks off. Measure it again.`;
     case 'height':
       return missing.heightM === null
         ? `${where}: no other antenna height is stated.`

@@ -132,7 +132,7 @@ export const gapView = z.strictObject({
   lineId: publicId,
   fromHz: z.number(),
   toHz: z.number(),
-  because: z.enum(['no-trace', 'no-factor', 'no-uncertainty', 'gap']),
+  because: z.enum(['no-trace', 'no-factor', 'no-uncertainty', 'gap', 'partial']),
 });
 
 export const evaluationView = z.strictObject({
@@ -192,7 +192,7 @@ export const sweepView = z.strictObject({
     verdict,
     missing: z.array(
       z.strictObject({
-        what: z.enum(['position', 'height', 'no-line', 'comparison', 'range']),
+        what: z.enum(['position', 'partial', 'height', 'no-line', 'comparison', 'range']),
         position: z.union([polarisation, mainsLine]).nullable(),
         lineName: z.string().nullable(),
         fromHz: z.number().nullable(),

@@ -25,6 +25,7 @@ export async function portVerdictOf(run: Pick<Sweep, 'stateId' | 'port'>): Promi
       heightSwept: row.heightSwept,
       verdict: row.evaluation.verdict,
       gaps: row.evaluation.gaps,
+      partial: row.partial !== null,
       lines: lines.get(row.limitSetId)!.map(({ id, name }) => ({ id, name })),
     })),
   );

@@ -68,12 +68,21 @@ export interface RunContext {
   judged: Omit<EvaluationInput, 'traces'>;
 }
 
-/** What a run was judged with: the revisions pinned when it was kept. */
+/** What a run is judged with: the revisions its current evaluation used. */
 export async function contextOf(run: Run): Promise<RunContext> {
-  const day = dayIn((await labSettings()).zone, run.measuredAt ?? run.createdAt);
   const revision = run.pathRevisionId === null ? null : await SignalPathRevision.findByPk(run.pathRevisionId);
+  return contextWith(run, revision, run.limitSet);
+}
+
+/** The same with any revision of its path and any limit set. Throws Invalid where the path cannot serve this run. */
+export async function contextWith(
+  run: Run,
+  revision: SignalPathRevision | null,
+  limitSet: LimitSet,
+): Promise<RunContext> {
+  const day = dayIn((await labSettings()).zone, run.measuredAt ?? run.createdAt);
   const path = revision ? (await loadPaths([revision], day))[0]! : null;
-  const lines = (await linesOf([run.limitSet])).get(run.limitSet.id)!;
+  const lines = (await linesOf([limitSet])).get(limitSet.id)!;
   const { valuesHold, purpose, port, polarisation, distanceM, reading } = run;
   const { alreadyCorrected, traces, vbwHz = null, rbwShape = null } = reading;
   const setup = { polarisation, distanceM };
@@ -91,6 +100,7 @@ export async function contextOf(run: Run): Promise<RunContext> {
       purpose,
       port,
       rule: 'guarded-by-u',
+      partial: run.partial !== null,
     },
   };
 }
