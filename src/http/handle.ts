@@ -11,11 +11,13 @@ import { issuesOf, problemOf, problemResponse } from './problem';
 import { withApiHeaders } from './securityHeaders';
 import { securityLog } from './securityLog';
 
-export interface Context<P, Q, B> {
+export interface Context<P, Q, B, F = undefined> {
   actor: Actor | null;
   params: P;
   query: Q;
   body: B;
+  /** What `receive` made of an upload. */
+  file: F;
   /** The version named in If-Match; set whenever the operation asks for it. */
   version: number;
   request: Request;
@@ -26,15 +28,31 @@ export interface Context<P, Q, B> {
 }
 
 type Out<T> = T extends z.ZodType ? z.output<T> : undefined;
+/** A file that came with a request, and the other fields of its form; they are the body. */
+export interface Received {
+  /** Hex, of the bytes that came: with the body it tells one upload from another under the same Idempotency-Key. */
+  sha256: string;
+  fields: Record<string, string>;
+}
 type Extra = { params?: Promise<Record<string, string | string[] | undefined>> };
 export type RouteHandler = ((request: Request, extra?: Extra) => Promise<Response>) & { operation: Operation };
 
 const MAX_JSON_BYTES = 1024 * 1024;
 
-/** Turns a declared operation and the use-case it calls into a Next.js route handler. */
-export function handle<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType, R extends z.ZodType>(
+/**
+ * Turns a declared operation and the use-case it calls into a Next.js route handler. An upload is taken in by `receive`
+ * before the work begins, since a stream cannot be read again when the unit is.
+ */
+export function handle<
+  P extends z.ZodType,
+  Q extends z.ZodType,
+  B extends z.ZodType,
+  R extends z.ZodType,
+  F extends Received | undefined = undefined,
+>(
   op: Operation<P, Q, B, R>,
-  run: (context: Context<Out<P>, Out<Q>, Out<B>>) => Promise<unknown>,
+  run: (context: Context<Out<P>, Out<Q>, Out<B>, F>) => Promise<unknown>,
+  receive?: (request: Request) => Promise<F>,
 ): RouteHandler {
   const route = async (request: Request, extra?: Extra): Promise<Response> => {
     const address = request.headers.get('x-forwarded-for')?.split(',')[0]?.trim() || '127.0.0.1';
@@ -48,20 +66,22 @@ export function handle<P extends z.ZodType, Q extends z.ZodType, B extends z.Zod
         if (!actor) throw new Unauthenticated();
         if (!mayRole(actor.role, op.permission)) throw new Forbidden();
       }
-      const context: Context<Out<P>, Out<Q>, Out<B>> = {
+      const file = (await receive?.(request)) as F;
+      const context: Context<Out<P>, Out<Q>, Out<B>, F> = {
         actor,
-        ...(await readInput(op, request, extra)),
+        file,
+        ...(await readInput(op, request, extra, file)),
         request,
         address,
         agent: (request.headers.get('user-agent') ?? '').slice(0, 200),
         headers: new Headers({ 'cache-control': 'no-store' }),
       };
-      const key = op.idempotent ? readKey(request) : null;
+      const key = op.idempotent || (op.ifMatch && op.method === 'POST') ? readKey(request) : null;
       const work = async () => checkReply(op, await run(context));
       let reply: unknown;
       if (key && actor) {
         reached = 'keyed work';
-        const done = await once(actor, key, op.id, [context.params, context.body], op.status, work);
+        const done = await once(actor, key, op.id, asked(context), op.status, work);
         if (done.repeated) context.headers.set('idempotency-replayed', 'true');
         reply = done.reply;
       } else {
@@ -74,6 +94,11 @@ export function handle<P extends z.ZodType, Q extends z.ZodType, B extends z.Zod
     }
   };
   return Object.assign(route, { operation: op as unknown as Operation });
+}
+
+/** What a repeat under the same Idempotency-Key has to ask again. */
+function asked({ params, body, file }: { params: unknown; body: unknown; file?: Received }): unknown[] {
+  return file ? [params, body, file.sha256] : [params, body];
 }
 
 /** The reply as declared. Under an Idempotency-Key this runs inside the unit, so a wrong reply undoes the work. */
@@ -105,6 +130,7 @@ async function readInput<P extends z.ZodType, Q extends z.ZodType, B extends z.Z
   op: Operation<P, Q, B>,
   request: Request,
   extra?: Extra,
+  file?: Received,
 ): Promise<{ params: Out<P>; query: Out<Q>; body: Out<B>; version: number }> {
   const issues: Issue[] = [];
   const check = <T extends z.ZodType>(schema: T | undefined, value: unknown, at: string): Out<T> => {
@@ -116,7 +142,7 @@ async function readInput<P extends z.ZodType, Q extends z.ZodType, B extends z.Z
   };
   const params = check(op.params, (await extra?.params) ?? {}, '/path');
   const query = check(op.query, Object.fromEntries(new URL(request.url).searchParams), '/query');
-  const body = op.body ? check(op.body, await readJson(request), '') : (undefined as Out<B>);
+  const body = op.body ? check(op.body, file ? file.fields : await readJson(request), '') : (undefined as Out<B>);
   if (issues.length) throw new Invalid(issues);
   return { params, query, body, version: op.ifMatch ? readVersion(request) : 0 };
 }

@@ -11,7 +11,20 @@ export interface ReceivedFile {
   bytes: Uint8Array;
   /** Hex, of `bytes`. */
   sha256: string;
+  /** The form's other fields; the first of each name. */
+  fields: Record<string, string>;
 }
+
+export interface FileLimit {
+  maxBytes: number;
+  /** Said of a file that is larger: how large it may be and what to do. */
+  tooLarge: string;
+}
+
+const SWEEP_FILE: FileLimit = {
+  maxBytes: MAX_FILE_BYTES,
+  tooLarge: 'A sweep file takes at most 100 MB. Export a shorter range or fewer traces.',
+};
 
 /** Each may hold 100 MB of memory; a bench that meets more waits a few seconds. */
 export const MAX_UPLOADS_AT_ONCE = 4;
@@ -19,28 +32,28 @@ const RETRY_AFTER_S = 5;
 let receiving = 0;
 
 /**
- * Streams the one `file` of a multipart/form-data request into memory, at most 100 MB (TooLarge as soon as there is more;
+ * Streams the one `file` of a multipart/form-data request into memory, at most `limit` (TooLarge as soon as there is more;
  * what still comes is thrown away, since a browser reads no answer before it has sent everything). Nothing touches a local disk, so any web process can serve the next request.
  * @throws {Throttled} when as many uploads as this process takes at once are under way
  */
-export async function receiveFile(request: Request): Promise<ReceivedFile> {
+export async function receiveFile(request: Request, limit: FileLimit = SWEEP_FILE): Promise<ReceivedFile> {
   if (receiving >= MAX_UPLOADS_AT_ONCE) {
     throw new Throttled(RETRY_AFTER_S, 'Several files are being received at this moment. Send this one again shortly.');
   }
   receiving += 1;
   try {
-    return await receive(request);
+    return await receive(request, limit);
   } finally {
     receiving -= 1;
   }
 }
 
-async function receive(request: Request): Promise<ReceivedFile> {
+async function receive(request: Request, { maxBytes, tooLarge }: FileLimit): Promise<ReceivedFile> {
   const type = request.headers.get('content-type') ?? '';
   if (!/^multipart\/form-data\b/i.test(type) || !request.body) {
     throw new Invalid([{ pointer: '/file', message: 'is sent as multipart/form-data' }]);
   }
-  if (Number(request.headers.get('content-length') ?? 0) > MAX_FILE_BYTES + 1024 * 1024) throw tooLarge();
+  if (Number(request.headers.get('content-length') ?? 0) > maxBytes + 1024 * 1024) throw new TooLarge(tooLarge);
   const parts: Buffer[] = [];
   const hash = createHash('sha256');
   let length = 0;
@@ -48,8 +61,8 @@ async function receive(request: Request): Promise<ReceivedFile> {
     maxFiles: 1,
     maxFields: 10,
     maxFieldsSize: 64 * 1024,
-    maxFileSize: MAX_FILE_BYTES,
-    maxTotalFileSize: MAX_FILE_BYTES,
+    maxFileSize: maxBytes,
+    maxTotalFileSize: maxBytes,
     allowEmptyFiles: true,
     minFileSize: 0,
     fileWriteStreamHandler: () =>
@@ -74,22 +87,25 @@ async function receive(request: Request): Promise<ReceivedFile> {
     url: request.url,
   });
   try {
-    const [, files] = await form.parse(stream as never);
+    const [fields, files] = await form.parse(stream as never);
     const file = files.file?.[0];
     if (!file) throw new Invalid([{ pointer: '/file', message: 'is missing' }]);
     if (length === 0) throw new Invalid([{ pointer: '/file', message: 'is empty' }]);
     const name = safeName(file.originalFilename ?? 'sweep');
-    return { name, bytes: Buffer.concat(parts, length), sha256: hash.digest('hex') };
+    return { name, bytes: Buffer.concat(parts, length), sha256: hash.digest('hex'), fields: firstOf(fields) };
   } catch (error) {
     const code = (error as { code?: number }).code;
-    if (code === errors.biggerThanMaxFileSize || code === errors.biggerThanTotalMaxFileSize) throw tooLarge();
+    if (code === errors.biggerThanMaxFileSize || code === errors.biggerThanTotalMaxFileSize)
+      throw new TooLarge(tooLarge);
     if (error instanceof Invalid) throw error;
     throw new Invalid([{ pointer: '/file', message: 'could not be received whole; send it again' }]);
   }
 }
 
-function tooLarge(): TooLarge {
-  return new TooLarge('A sweep file takes at most 100 MB. Export a shorter range or fewer traces.');
+function firstOf(fields: Partial<Record<string, string[]>>): Record<string, string> {
+  const first: Record<string, string> = {};
+  for (const [name, values] of Object.entries(fields)) if (values?.[0] !== undefined) first[name] = values[0];
+  return first;
 }
 
 /** The last part of a path, without control characters, at most 200 characters. */

@@ -24,7 +24,7 @@ function parameters(op: Operation): Json[] {
   add(op.query, 'query');
   const header = (name: string, required: boolean, description: string) =>
     list.push({ name, in: 'header', required, description, schema: { type: 'string' } });
-  if (op.idempotent)
+  if (op.idempotent || (op.ifMatch && op.method === 'POST'))
     header('Idempotency-Key', false, '8 to 80 visible ASCII characters; a repeat answers the first reply');
   if (op.ifMatch) header('If-Match', true, 'The version of the record as your last read showed it');
   return list;
@@ -32,7 +32,12 @@ function parameters(op: Operation): Json[] {
 
 function body(op: Operation): Json | undefined {
   if (op.upload) {
-    const schema = { type: 'object', required: ['file'], properties: { file: { type: 'string', format: 'binary' } } };
+    const fields = op.body ? (jsonSchema(op.body, 'input') as { properties?: Json }).properties : {};
+    const schema = {
+      type: 'object',
+      required: ['file'],
+      properties: { file: { type: 'string', format: 'binary' }, ...fields },
+    };
     return { required: true, content: { 'multipart/form-data': { schema } } };
   }
   return op.body && { required: true, content: { 'application/json': { schema: jsonSchema(op.body, 'input') } } };

@@ -136,6 +136,7 @@ export const createSweepFile = operation({
   permission: 'sweep-file.create',
   status: 201,
   reply: sweepFileView,
+  idempotent: true,
   upload: true,
 });
 const fileParams = z.strictObject({ id: publicId });

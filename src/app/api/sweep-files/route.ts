@@ -3,4 +3,4 @@ import { receiveFile } from '@/http/multipart';
 import { createSweepFile as operation } from '@/schemas/sweepFile';
 import { createSweepFile } from '@/services/sweepFiles';
 
-export const POST = handle(operation, async ({ actor, request }) => createSweepFile(actor, await receiveFile(request)));
+export const POST = handle(operation, ({ actor, file }) => createSweepFile(actor, file), receiveFile);
