@@ -6,6 +6,7 @@ import { Equipment } from './equipment';
 import { Evaluation } from './evaluation';
 import { FactorTableRevision } from './factorTableRevision';
 import { Job } from './job';
+import { LimitLineRevision } from './limitLineRevision';
 import { LimitSet } from './limitSet';
 import { ModificationState } from './modificationState';
 import { Note } from './note';
@@ -14,6 +15,8 @@ import { Organisation } from './organisation';
 import { Photo } from './photo';
 import { Product } from './product';
 import { ResultMail } from './resultMail';
+import { Retest } from './retest';
+import { RetestChange } from './retestChange';
 import { Sample } from './sample';
 import { Session } from './session';
 import { SetupRecord } from './setupRecord';
@@ -59,6 +62,15 @@ export function associate(): void {
   Evaluation.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   Sweep.belongsTo(Evaluation, { as: 'evaluation', foreignKey: 'evaluationId', constraints: false });
   Evaluation.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
+
+  Retest.belongsTo(ModificationState, { as: 'state', foreignKey: 'stateId' });
+  Retest.belongsTo(ModificationState, { as: 'carried', foreignKey: 'carriedTo' });
+  Retest.belongsTo(LimitLineRevision, { as: 'limitLine', foreignKey: 'lineRevisionId' });
+  Retest.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
+  Retest.belongsTo(Retest, { as: 'origin', foreignKey: 'originId' });
+  RetestChange.belongsTo(Retest, { as: 'retest', foreignKey: 'retestId' });
+  RetestChange.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  RetestChange.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
 
   SetupRecord.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
   SetupRecord.belongsTo(User, { as: 'user', foreignKey: 'userId' });

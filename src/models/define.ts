@@ -26,6 +26,8 @@ import { definePhoto } from './photo';
 import { definePhotoPart } from './photoPart';
 import { defineProduct } from './product';
 import { defineResultMail } from './resultMail';
+import { defineRetest } from './retest';
+import { defineRetestChange } from './retestChange';
 import { defineSample } from './sample';
 import { defineSession } from './session';
 import { defineSetting } from './setting';
@@ -81,6 +83,8 @@ export function defineModels(sequelize: Sequelize): void {
   defineEvaluation(sequelize);
   defineEvaluationCandidate(sequelize);
   defineEvaluationLayer(sequelize);
+  defineRetest(sequelize);
+  defineRetestChange(sequelize);
   defineSetupRecord(sequelize);
   definePhoto(sequelize);
   definePhotoPart(sequelize);
