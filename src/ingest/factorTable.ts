@@ -6,11 +6,11 @@ import { signOf, type Sign } from './lossOrGain';
 import { networkTraces } from './network';
 import { moved } from './numbers';
 import { prepareSteps } from './prepare';
-import { scanSteps } from './scan';
+import { lineOfRow, scanSteps } from './scan';
 import { axisOf, levelsOf } from './series';
 import { tableSteps } from './table';
 import type { Recognition } from './types';
-import { TO_HZ, type FrequencyUnit } from './units';
+import { levelUnitIn, TO_HZ, type FrequencyUnit } from './units';
 
 /** A person's answers for a table of corrections. */
 export interface FactorChoice {
@@ -20,8 +20,22 @@ export interface FactorChoice {
   lossOrGain?: 'loss' | 'gain';
 }
 
-export interface ReadFactorTable {
+/** One table of a file as it is written there, before it is settled what its figures are. */
+export interface FactorColumn {
   /** Heading or table name as written. */
+  name: string;
+  /** Ascending, in hertz. */
+  frequencyHz: number[];
+  /** As written: a loss may still stand there as a negative difference. */
+  writtenDb: number[];
+  said: Sign;
+  unit: 'dB' | 'dB/m';
+  unitStated: boolean;
+  /** The frequencies fall in the file and were turned round. */
+  turned: boolean;
+}
+
+export interface ReadFactorTable {
   name: string;
   quantity: FactorQuantity;
   /** Ascending, in hertz. */
@@ -32,47 +46,78 @@ export interface ReadFactorTable {
   unitStated: boolean;
 }
 
-/** What was chosen, else what the table says; a loss given all in negative figures is turned over. */
-function settle(
-  name: string,
-  said: Sign,
-  values: ArrayLike<number>,
-  choice: FactorChoice,
-): Sign & { quantity: FactorQuantity } {
+/** What was chosen, else what the table says; a loss given all in negative figures is turned over. Null: nobody says. */
+export function settleFactor(
+  { said, writtenDb }: Pick<FactorColumn, 'said' | 'writtenDb'>,
+  choice: FactorChoice = {},
+): { quantity: FactorQuantity; negated: boolean; valueDb: number[] } | null {
   const quantity = choice.quantity ?? choice.lossOrGain ?? said.quantity;
-  if (!quantity) {
-    const message = `“${name}” does not say whether its figures are lost or gained. Say which before it is read.`;
-    throw new IngestError(null, 'no word on loss or gain', 'loss or gain', message);
-  }
-  if (quantity === said.quantity) return { quantity, negate: said.negate };
-  const allBelow = Array.from(values).every((value) => value <= 0) && Array.from(values).some((value) => value < 0);
-  return { quantity, negate: quantity === 'loss' && allBelow };
+  if (!quantity) return null;
+  const allBelow = writtenDb.every((value) => value <= 0) && writtenDb.some((value) => value < 0);
+  const negated = quantity === said.quantity ? said.negate : quantity === 'loss' && allBelow;
+  // From zero, so that 0 turned over is no negative zero.
+  return { quantity, negated, valueDb: negated ? writtenDb.map((value) => 0 - value) : [...writtenDb] };
 }
 
-/** Rows of a table of corrections rise; falling ones are turned round, anything else is refused. */
-function rising(name: string, frequencyHz: number[], valueDb: number[]): [number[], number[]] {
-  const falls = frequencyHz.length > 1 && frequencyHz[0]! > frequencyHz.at(-1)!;
-  const [f, v] = falls ? [frequencyHz.toReversed(), valueDb.toReversed()] : [frequencyHz, valueDb];
-  const bad = f.findIndex((value, i) => i > 0 && value <= f[i - 1]!);
-  if (bad < 0) return [f, v];
-  const message = `“${name}”: ${f[bad]} Hz follows ${f[bad - 1]} Hz. The frequencies of one table must rise; split the file.`;
-  throw new IngestError(null, `${f[bad]} Hz after ${f[bad - 1]} Hz`, 'rising frequencies', message);
+/** Rows of a table of corrections rise; falling ones are turned round, anything else is refused with its line. */
+function rising(name: string, frequencyHz: number[], writtenDb: number[], lineOf: (row: number) => number) {
+  const turned = frequencyHz.length > 1 && frequencyHz[0]! > frequencyHz.at(-1)!;
+  const sense = turned ? -1 : 1;
+  const bad = frequencyHz.findIndex((hz, i) => (i > 0 && (hz - frequencyHz[i - 1]!) * sense <= 0) || hz <= 0);
+  if (bad >= 0) {
+    const line = lineOf(bad);
+    const [hz, before] = [frequencyHz[bad]!, frequencyHz[bad - 1]];
+    if (hz <= 0) {
+      const message = `Line ${line}: ${hz} Hz in “${name}” is no frequency. Take the row out.`;
+      throw new IngestError(line, `${hz} Hz`, 'a frequency above 0 Hz', message);
+    }
+    if (hz === before) {
+      const message = `Line ${line}: ${hz} Hz stands twice in “${name}”. A frequency has one factor; take one of the rows out.`;
+      throw new IngestError(line, `${hz} Hz twice`, 'each frequency once', message);
+    }
+    const message = `Line ${line}: ${hz} Hz follows ${before} Hz in “${name}”. The frequencies of one table must rise; split the file.`;
+    throw new IngestError(line, `${hz} Hz after ${before} Hz`, 'rising frequencies', message);
+  }
+  return turned
+    ? { turned, frequencyHz: frequencyHz.toReversed(), writtenDb: writtenDb.toReversed() }
+    : { turned, frequencyHz, writtenDb };
+}
+
+function refuseImpedance(heading: string, line: number | null): void {
+  if (!/ohm|\u03a9|\u2126|transfer ?imp|\bz ?t\b/i.test(heading)) return;
+  const message = `“${heading}” is a transfer impedance. The lab holds antenna factors, losses and gains; a current in dBµA needs a quantity of its own, which is not held yet.`;
+  throw new IngestError(line, 'a transfer impedance', 'an antenna factor, a loss or a gain', message);
+}
+
+/** Headings that name something else than a factor in dB or dB/m. */
+function refuseOther(heading: string, line: number | null): void {
+  const unit = levelUnitIn(heading);
+  if (unit === null || unit.unit === 'dB' || unit.unit === 'dB/m') return;
+  const message = `“${heading}” is in ${unit.written}, which is a level or another quantity and no correction. Upload a table in dB or dB/m.`;
+  throw new IngestError(line, unit.written, 'dB or dB/m', message);
+}
+
+/** @throws IngestError when the file was refused or lies otherwise than a table of corrections does */
+function refuseRecognised({ refusal, layout, firstDataLine, columns, headerLine }: Recognition): void {
+  for (const { heading } of columns) if (heading !== null) refuseImpedance(heading, headerLine);
+  if (refusal) throw new IngestError(refusal.line, refusal.found, refusal.expected, refusal.message);
+  if (layout === 'pairs') return;
+  const message = `Line ${firstDataLine}: a row holds a whole sweep. A table of corrections has a row per frequency.`;
+  throw new IngestError(firstDataLine, 'a sweep per row', 'a row per frequency', message);
 }
 
 /**
- * Every table of corrections in a file: one per column of decibels, one per named stack, S21 of a two-port file.
- * @throws IngestError when the file was refused or an answer that it needs is missing
+ * Every table of corrections in a file as written: one per column of decibels, one per named stack, S21 of a two-port
+ * file.
+ * @throws IngestError when the file was refused, its frequency unit is not settled or its rows are no table
  */
-export function readFactorTable(
+export function factorColumns(
   raw: Uint8Array,
   recognition: Recognition,
-  choice: FactorChoice = {},
-): ReadFactorTable[] {
-  if (recognition.refusal) {
-    const { line, found, expected, message } = recognition.refusal;
-    throw new IngestError(line, found, expected, message);
-  }
-  const unit = choice.frequencyUnit ?? recognition.frequency.unit;
+  frequencyUnit?: FrequencyUnit,
+): FactorColumn[] {
+  refuseRecognised(recognition);
+  const unit = frequencyUnit ?? recognition.frequency.unit;
   if (unit === null) {
     const message = 'The unit of the frequencies is not settled. Say which before the table is read.';
     throw new IngestError(null, 'no frequency unit', 'Hz, kHz, MHz or GHz', message);
@@ -87,23 +132,44 @@ export function readFactorTable(
   const inHz = (axis: Float64Array) => Array.from(axis, (value) => moved(value, TO_HZ[unit]));
 
   if (option) {
+    const piece = table.pieces[0]!;
     const trace = networkTraces(clean, table, option).find(({ name }) => name === 'S21')!;
-    const [frequencyHz, values] = rising('S21', inHz(axisOf(table, table.pieces[0]!)), [...trace.valueDb]);
-    const { quantity, negate } = settle('S21', signOf('S21', 'dB', values), values, choice);
-    const valueDb = negate ? values.map((value) => 0 - value) : values;
-    return [{ name: 'S21', quantity, frequencyHz, valueDb, unit: 'dB', unitStated: true }];
+    const line = (row: number) => lineOfRow(clean, scan, piece.firstRow + row);
+    const rows = rising('S21', inHz(axisOf(table, piece)), [...trace.valueDb], line);
+    return [{ name: 'S21', ...rows, said: signOf('S21', 'dB', rows.writtenDb), unit: 'dB', unitStated: true }];
   }
   return table.pieces.flatMap((piece) =>
     table.levelColumns.map((column) => {
       const heading = table.headings.cells[column] ?? `column ${column + 1}`;
+      refuseOther(heading, table.headings.line);
       const several = table.levelColumns.length > 1;
       const name = piece.name === null ? heading : several ? `${piece.name}, ${heading}` : piece.name;
       const { unit: unitDb, stated } = factorUnit(table, column);
-      const [frequencyHz, values] = rising(name, inHz(axisOf(table, piece)), [...levelsOf(table, piece, column)]);
+      const line = (row: number) => lineOfRow(clean, scan, piece.firstRow + row);
+      const rows = rising(name, inHz(axisOf(table, piece)), [...levelsOf(table, piece, column)], line);
       const all = table.pieces.flatMap((one) => [...levelsOf(table, one, column)]);
-      const { quantity, negate } = settle(name, signOf(heading, unitDb, all), values, choice);
-      const valueDb = negate ? values.map((value) => 0 - value) : values;
-      return { name, quantity, frequencyHz, valueDb, unit: unitDb, unitStated: stated };
+      return { name, ...rows, said: signOf(heading, unitDb, all), unit: unitDb, unitStated: stated };
     }),
   );
+}
+
+/**
+ * The tables of `factorColumns`, settled.
+ * @throws IngestError as it does, and when an answer on loss or gain is missing
+ */
+export function readFactorTable(
+  raw: Uint8Array,
+  recognition: Recognition,
+  choice: FactorChoice = {},
+): ReadFactorTable[] {
+  return factorColumns(raw, recognition, choice.frequencyUnit).map((column) => {
+    const { name, frequencyHz, unit, unitStated } = column;
+    const settled = settleFactor(column, choice);
+    if (!settled) {
+      const message = `“${name}” does not say whether its figures are lost or gained. Say which before it is read.`;
+      throw new IngestError(null, 'no word on loss or gain', 'loss or gain', message);
+    }
+    const { quantity, valueDb } = settled;
+    return { name, quantity, frequencyHz, valueDb, unit, unitStated };
+  });
 }
