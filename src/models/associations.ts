@@ -7,6 +7,7 @@ import { Evaluation } from './evaluation';
 import { FactorTableRevision } from './factorTableRevision';
 import { Job } from './job';
 import { LimitLineRevision } from './limitLineRevision';
+import { LimitLineRevision } from './limitLineRevision';
 import { LimitSet } from './limitSet';
 import { ModificationState } from './modificationState';
 import { Note } from './note';
@@ -49,6 +50,8 @@ export function associate(): void {
   Equipment.hasMany(FactorTableRevision, { as: 'tables', foreignKey: 'equipmentId' });
   FactorTableRevision.belongsTo(Equipment, { as: 'equipment', foreignKey: 'equipmentId' });
   FactorTableRevision.belongsTo(Calibration, { as: 'calibration', foreignKey: 'calibrationId' });
+  FactorTableRevision.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  LimitLineRevision.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   SignalPath.hasMany(SignalPathRevision, { as: 'revisions', foreignKey: 'signalPathId' });
   SignalPathRevision.belongsTo(SignalPath, { as: 'path', foreignKey: 'signalPathId' });
 

@@ -27,6 +27,11 @@ export class LimitLineRevision extends Model<
   declare segments: LimitSegment[];
   declare source: string;
   declare basis: string;
+  /** Why it was entered, from which file and by whom; null for what came with the bench file. */
+  declare reason: CreationOptional<string | null>;
+  declare fileName: CreationOptional<string | null>;
+  declare fileSha256: CreationOptional<string | null>;
+  declare userId: CreationOptional<number | null>;
   declare createdAt: CreationOptional<Date>;
 }
 
@@ -48,6 +53,10 @@ export function defineLimitLineRevision(sequelize: Sequelize): void {
       segments: { type: DataTypes.JSON, allowNull: false },
       source: { type: DataTypes.STRING(300), allowNull: false },
       basis: { type: DataTypes.STRING(80), allowNull: false },
+      reason: { type: DataTypes.STRING(300), allowNull: true },
+      fileName: { type: DataTypes.STRING(200), field: 'file_name', allowNull: true },
+      fileSha256: { type: DataTypes.CHAR(64), field: 'file_sha256', allowNull: true },
+      userId: { type: DataTypes.BIGINT.UNSIGNED, field: 'user_id', allowNull: true },
       createdAt: { type: DataTypes.DATE(3), field: 'created_at', allowNull: false },
     },
     {
