@@ -24,6 +24,10 @@ export class Evaluation extends Model<InferAttributes<Evaluation>, InferCreation
   declare pairs: JudgedPair[];
   declare gaps: CoverageGap[];
   declare candidates: number;
+  /** Why a kept run was judged again; null for the evaluation it was kept with. */
+  declare reason: CreationOptional<string | null>;
+  /** Row id of the evaluation before it, when this one repeats its figures bit for bit. */
+  declare repeatsId: CreationOptional<number | null>;
   declare userId: number;
   declare createdAt: CreationOptional<Date>;
 }
@@ -47,6 +51,8 @@ export function defineEvaluation(sequelize: Sequelize): void {
       pairs: { type: DataTypes.JSON, allowNull: false },
       gaps: { type: DataTypes.JSON, allowNull: false },
       candidates: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
+      reason: { type: DataTypes.STRING(300), allowNull: true },
+      repeatsId: { type: DataTypes.BIGINT.UNSIGNED, field: 'repeats_id', allowNull: true },
       userId: { type: DataTypes.BIGINT.UNSIGNED, field: 'user_id', allowNull: false },
       createdAt: { type: DataTypes.DATE(3), field: 'created_at', allowNull: false },
     },

@@ -46,6 +46,8 @@ export interface StoredPartial {
 export interface StoredInputs {
   pathRevision: string | null;
   factorTables: { term: string; table: string; applied: boolean }[];
+  /** Absent from what was written before it was named; its lines say the same. */
+  limitSet?: string;
   limitLines: string[];
   uncertaintyOf: string | null;
 }

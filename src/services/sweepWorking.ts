@@ -11,7 +11,7 @@ import { contextOf, findRun, type Run, type RunContext } from './runs';
 import type { LoadedTerm } from './signalPaths';
 
 /** The points of a few neighbouring segments as one array per trace. */
-function joined(pieces: StoredPiece[], index: number): { frequencyHz: Float64Array; reading: Float32Array } {
+export function joined(pieces: StoredPiece[], index: number): { frequencyHz: Float64Array; reading: Float32Array } {
   const total = pieces.reduce((sum, piece) => sum + piece.frequencyHz.length, 0);
   const frequencyHz = new Float64Array(total);
   const reading = new Float32Array(total);

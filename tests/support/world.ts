@@ -6,12 +6,14 @@ import { User } from '@/models/user';
 import { hashPassword } from '@/auth/password';
 import { type Actor, SERVER } from '@/auth/actor';
 import type { Role } from '@/auth/permissions';
-import type { SweepChoice } from '@/schemas/sweep';
+import type { SweepChoice, SweepView } from '@/schemas/sweep';
 import { enterCalibration, enterEquipment } from '@/services/enterEquipment';
 import { enterLimitLine, enterLimitSet } from '@/services/enterLimits';
 import { enterSignalPath } from '@/services/enterSignalPath';
+import { createBooking } from '@/services/bookings';
 import { createJob } from '@/services/jobs';
 import { keepSweep } from '@/services/keepSweep';
+import { enterPosition } from '@/services/positions';
 import { createProduct } from '@/services/products';
 import { createSample } from '@/services/samples';
 import { signIn } from '@/services/sessions';
@@ -151,8 +153,37 @@ export async function enterWorld() {
   };
   const file = await createSweepFile(technician.actor, sweepFile());
   const run = await keepSweep(technician.actor, { ...choice, ...about, fileId: file.id });
+  // A second sample of the same client, whose two runs are moved, voided and judged again.
+  const other = await createSample(technician.actor, job.id, { serial: 'P2-0194', firmware: '', description: '' });
+  const spares: SweepView[] = [];
+  for (const name of ['spare-1.csv', 'spare-2.csv']) {
+    const spare = await createSweepFile(technician.actor, sweepFile({ 144: 55, 300: 50 }, name));
+    const place = { ...about, stateId: other.states[0]!.id };
+    spares.push(await keepSweep(technician.actor, { ...choice, ...place, fileId: spare.id }));
+  }
+  const position = await enterPosition(boss, {
+    code: 'A',
+    name: '3 m chamber',
+    description: '',
+    capabilities: ['radiated', 'shielded-room'],
+  });
+  const slot = {
+    positionId: position.id,
+    technicianId: technician.actor.publicId,
+    sampleId: sample.id,
+    stateId: sample.states[0]!.id,
+    work: 'radiated prescan',
+  };
+  const booking = await createBooking(boss, {
+    ...slot,
+    startsAt: '2031-01-07T09:00:00Z',
+    endsAt: '2031-01-07T11:00:00Z',
+  });
   return {
     lab,
+    position,
+    slot,
+    booking,
     client,
     stranger,
     manager,
@@ -167,6 +198,8 @@ export async function enterWorld() {
     about,
     file,
     run,
+    other,
+    spares,
   };
 }
 
