@@ -86,12 +86,13 @@ function isSettled(prescan: PortRun, there: readonly PortRun[]): boolean {
   );
 }
 
-interface Position {
+export interface Position {
   key: Polarisation | MainsLine | null;
   holds: (run: PortRun) => boolean;
 }
 
-function positionsOf(port: Port, runs: readonly PortRun[]): Position[] {
+/** Where a port is measured; what of the runs counts is whether a mains port turned out to have three phases. */
+export function positionsOf(port: Port, runs: readonly PortRun[]): Position[] {
   if (port === 'enclosure') {
     return (['horizontal', 'vertical'] as const).map((key) => ({ key, holds: (run) => run.polarisation === key }));
   }
@@ -108,7 +109,7 @@ function lacking(what: Missing['what'], position: Missing['position'], more: Par
 }
 
 /** The field of an emission has its maximum at some height; one height alone proves nothing about the others. */
-function heightMissing(port: Port, position: Missing['position'], there: readonly PortRun[]): Missing[] {
+export function heightMissing(port: Port, position: Missing['position'], there: readonly PortRun[]): Missing[] {
   if (port !== 'enclosure' || there.some((run) => run.heightSwept)) return [];
   const heights = new Set(there.map((run) => run.heightM));
   if (heights.size > 1 && ![...heights].includes(null)) return [];
@@ -131,7 +132,7 @@ function missingAt(runs: readonly PortRun[], all: readonly PortRun[], position: 
 }
 
 /** The parts of a line that every run leaves open, with the reasons the first run gives. */
-function leftOpen(runs: readonly PortRun[], lineId: string): CoverageGap[] {
+export function leftOpen(runs: readonly PortRun[], lineId: string): CoverageGap[] {
   const gapsIn = (run: PortRun) => run.gaps.filter((gap) => gap.lineId === lineId);
   const [first, ...rest] = runs;
   if (!first) return [];
