@@ -41,6 +41,10 @@ interface Sample {
 
 const stateOf = (w: World) => w.sample.states[0]!;
 
+let turn = 0;
+/** The two spare runs by turns: what the manager did to one, the technician does to the other. */
+const spareOf = (w: World) => w.spares[turn++ % 2]!.id;
+
 /** What makes each operation do something when the asker may; a missing row fails the test below. */
 const SAMPLES: Record<string, Sample> = {
   signIn: { body: () => ({ email: 'nobody@harrowlane.example', password: 'wrong' }) },
@@ -48,6 +52,25 @@ const SAMPLES: Record<string, Sample> = {
   readMe: {},
   listSessions: {},
   endSession: { params: () => '0000000000000000' },
+  requestPasswordReset: { body: () => ({ email: 'nobody@harrowlane.example' }) },
+  resetPassword: { body: () => ({ token: 'x'.repeat(43), password: 'another tidal copper mast' }) },
+  readLink: { body: () => ({ kind: 'reset', token: 'x'.repeat(43) }) },
+  acceptInvitation: { body: () => ({ token: 'x'.repeat(43), password: 'another tidal copper mast' }) },
+  changeOwnPassword: { body: (w) => ({ current: PASSWORD, password: nextPassword(w) }) },
+  listPeople: {},
+  readPerson: { params: (w) => w.invited.id },
+  invitePerson: {
+    body: (w) => ({
+      name: 'Ilse Marrow',
+      email: `ilse${Math.random()}@pellorrin.example`,
+      role: 'designer',
+      organisationId: w.client.publicId,
+    }),
+  },
+  inviteAgain: { params: (w) => w.invited.id },
+  changePerson: { params: (w) => w.invited.id, body: () => ({ name: 'Odo Fenn' }) },
+  disablePerson: { params: (w) => w.invited.id, body: () => ({ reason: 'left the client' }) },
+  enablePerson: { params: (w) => w.invited.id, body: () => ({ reason: 'came back' }) },
   listOrganisations: {},
   listProducts: {},
   readProduct: { params: (w) => w.product.id },
@@ -73,24 +96,45 @@ const SAMPLES: Record<string, Sample> = {
   findEverywhere: { query: '?q=LD-40' },
   listNotes: { query: (w) => `?sampleId=${w.sample.id}` },
   createNote: { body: (w) => ({ sampleId: w.sample.id, text: 'the lid rattles', audience: 'client' }) },
+  listPositions: {},
+  readPosition: { params: (w) => w.position.id },
+  enterPosition: { body: () => ({ code: `X${Math.floor(Math.random() * 1e6)}`, name: 'another' }) },
+  changePosition: { params: (w) => w.position.id, body: () => ({ name: '3 m chamber, north' }) },
+  listBookings: { query: '?from=2031-01-01T00:00:00Z' },
+  readBooking: { params: (w) => w.booking.id },
+  createBooking: { body: (w) => ({ ...w.slot, startsAt: '2031-01-08T09:00:00Z', endsAt: '2031-01-08T10:00:00Z' }) },
+  changeBooking: { params: (w) => w.booking.id, body: () => ({ endsAt: '2031-01-07T12:00:00Z' }) },
+  cancelBooking: { params: (w) => w.booking.id, body: () => ({ reason: 'the sample comes later' }) },
   listSweeps: {},
   readSweep: { params: (w) => w.run.id },
   readWindow: { params: (w) => w.run.id, query: '?fromHz=100e6&toHz=200e6&columns=64' },
   listCandidates: { params: (w) => w.run.id },
   readWorking: { params: (w) => w.run.id, query: '?frequencyHz=144e6&trace=0' },
   downloadSweepFile: { params: (w) => w.run.id },
+  refileSweep: { params: spareOf, body: (w) => ({ stateId: stateOf(w).id, reason: 'dropped on the wrong sample' }) },
+  voidSweep: { params: spareOf, body: () => ({ reason: 'the mast stood still' }) },
+  restoreSweep: { params: spareOf, body: () => ({ reason: 'the log says it moved' }) },
+  listEvaluations: { params: (w) => w.run.id },
+  evaluateSweep: { params: spareOf, body: () => ({ reason: 'asked by the client' }) },
+  compareSweeps: { query: (w) => `?a=${w.run.id}&b=${w.run.id}` },
 };
 
 /** A change names the version that is current now; two allowed roles may have changed it before. */
-async function versionFor(op: Operation): Promise<string> {
+async function versionFor(op: Operation, id: string | undefined): Promise<string> {
   const reader: Record<string, [string, string]> = {
     changeProduct: ['readProduct', world.product.id],
     changeJob: ['readJob', world.job.id],
     changeSample: ['readSample', world.sample.id],
     changeState: ['readSample', world.sample.id],
+    changePosition: ['readPosition', world.position.id],
+    changeBooking: ['readBooking', world.booking.id],
+    cancelBooking: ['readBooking', world.booking.id],
+    refileSweep: ['readSweep', id!],
+    voidSweep: ['readSweep', id!],
+    restoreSweep: ['readSweep', id!],
   };
-  const [id, record] = reader[op.id]!;
-  const answer = await handlers.get(id)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
+  const [read, record] = reader[op.id]!;
+  const answer = await handlers.get(read)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
     params: Promise.resolve({ id: record }),
   });
   const view = (await answer.json()) as { version: number; states?: { id: string; version: number }[] };
@@ -102,8 +146,8 @@ async function ask(op: Operation, who: Somebody | null): Promise<Response> {
   const sample = SAMPLES[op.id]!;
   const headers = new Headers({ origin: ORIGIN });
   if (who) headers.set('cookie', who.cookie);
-  if (op.ifMatch) headers.set('if-match', await versionFor(op));
   const id = sample.params?.(world);
+  if (op.ifMatch) headers.set('if-match', await versionFor(op, id));
   const url = ORIGIN + op.path.replace('{id}', id ?? '') + (typeof sample.query === 'function' ? sample.query(world) : (sample.query ?? ''));
   let body: BodyInit | null = null;
   if (op.upload) {
