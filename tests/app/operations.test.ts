@@ -5,8 +5,9 @@ import { mayRole } from '@/auth/permissions';
 import type { RouteHandler } from '@/http/handle';
 import type { Operation } from '@/schemas/operation';
 import { OPERATIONS } from '@/schemas/operations';
+import { PASSWORD } from '../auth/people';
 import { freshDatabase, type TestDatabase } from '../support/database';
-import { enterWorld, sweepFile, type Somebody, type World } from '../support/world';
+import { enterWorld, pixel, sweepFile, type Somebody, type World } from '../support/world';
 
 /* Every operation of the API × who asks: nobody, each role, the own and another organisation. */
 
@@ -37,6 +38,8 @@ interface Sample {
   params?: (w: World) => string;
   query?: string | ((w: World) => string);
   body?: (w: World) => unknown;
+  /** What is uploaded instead of a sweep file. */
+  file?: () => { name: string; bytes: Uint8Array<ArrayBuffer> };
 }
 
 const stateOf = (w: World) => w.sample.states[0]!;
@@ -56,7 +59,7 @@ const SAMPLES: Record<string, Sample> = {
   resetPassword: { body: () => ({ token: 'x'.repeat(43), password: 'another tidal copper mast' }) },
   readLink: { body: () => ({ kind: 'reset', token: 'x'.repeat(43) }) },
   acceptInvitation: { body: () => ({ token: 'x'.repeat(43), password: 'another tidal copper mast' }) },
-  changeOwnPassword: { body: (w) => ({ current: PASSWORD, password: nextPassword(w) }) },
+  changeOwnPassword: { body: () => ({ current: PASSWORD, password: 'another tidal copper mast' }) },
   listPeople: {},
   readPerson: { params: (w) => w.invited.id },
   invitePerson: {
@@ -104,7 +107,7 @@ const SAMPLES: Record<string, Sample> = {
   readBooking: { params: (w) => w.booking.id },
   createBooking: { body: (w) => ({ ...w.slot, startsAt: '2031-01-08T09:00:00Z', endsAt: '2031-01-08T10:00:00Z' }) },
   changeBooking: { params: (w) => w.booking.id, body: () => ({ endsAt: '2031-01-07T12:00:00Z' }) },
-  cancelBooking: { params: (w) => w.booking.id, body: () => ({ reason: 'the sample comes later' }) },
+  cancelBooking: { params: (w) => w.spareBooking.id, body: () => ({ reason: 'the sample comes later' }) },
   listSweeps: {},
   readSweep: { params: (w) => w.run.id },
   readWindow: { params: (w) => w.run.id, query: '?fromHz=100e6&toHz=200e6&columns=64' },
@@ -117,21 +120,35 @@ const SAMPLES: Record<string, Sample> = {
   listEvaluations: { params: (w) => w.run.id },
   evaluateSweep: { params: spareOf, body: () => ({ reason: 'asked by the client' }) },
   compareSweeps: { query: (w) => `?a=${w.run.id}&b=${w.run.id}` },
+  readSetup: { params: (w) => w.run.id },
+  writeSetup: { params: spareOf, body: () => ({ temperatureC: 21, eutStayed: 'yes' }) },
+  listSetupRevisions: { params: (w) => w.run.id },
+  addPhoto: { params: (w) => w.run.id, file: pixel },
+  listPhotos: { params: (w) => w.run.id },
+  readPhoto: { params: (w) => w.photos[0]!.id },
+  changePhoto: { params: (w) => w.photos[0]!.id, body: () => ({ caption: 'the table from the door' }) },
+  withdrawPhoto: { params: (w) => w.photos[1 + (turn++ % 2)]!.id, body: () => ({ reason: 'another sample is in it' }) },
+  downloadPhoto: { params: (w) => w.photos[0]!.id },
 };
 
 /** A change names the version that is current now; two allowed roles may have changed it before. */
 async function versionFor(op: Operation, id: string | undefined): Promise<string> {
   const reader: Record<string, [string, string]> = {
+    changePerson: ['readPerson', world.invited.id],
+    disablePerson: ['readPerson', world.invited.id],
+    enablePerson: ['readPerson', world.invited.id],
     changeProduct: ['readProduct', world.product.id],
     changeJob: ['readJob', world.job.id],
     changeSample: ['readSample', world.sample.id],
     changeState: ['readSample', world.sample.id],
     changePosition: ['readPosition', world.position.id],
     changeBooking: ['readBooking', world.booking.id],
-    cancelBooking: ['readBooking', world.booking.id],
+    cancelBooking: ['readBooking', world.spareBooking.id],
     refileSweep: ['readSweep', id!],
     voidSweep: ['readSweep', id!],
     restoreSweep: ['readSweep', id!],
+    changePhoto: ['readPhoto', id!],
+    withdrawPhoto: ['readPhoto', id!],
   };
   const [read, record] = reader[op.id]!;
   const answer = await handlers.get(read)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
@@ -148,10 +165,13 @@ async function ask(op: Operation, who: Somebody | null): Promise<Response> {
   if (who) headers.set('cookie', who.cookie);
   const id = sample.params?.(world);
   if (op.ifMatch) headers.set('if-match', await versionFor(op, id));
-  const url = ORIGIN + op.path.replace('{id}', id ?? '') + (typeof sample.query === 'function' ? sample.query(world) : (sample.query ?? ''));
+  const url =
+    ORIGIN +
+    op.path.replace('{id}', id ?? '') +
+    (typeof sample.query === 'function' ? sample.query(world) : (sample.query ?? ''));
   let body: BodyInit | null = null;
   if (op.upload) {
-    const { name, bytes } = sweepFile();
+    const { name, bytes } = (sample.file ?? sweepFile)();
     const form = new FormData();
     form.append('file', new File([bytes], name));
     body = form;

@@ -13,7 +13,9 @@ import { enterSignalPath } from '@/services/enterSignalPath';
 import { createBooking } from '@/services/bookings';
 import { createJob } from '@/services/jobs';
 import { keepSweep } from '@/services/keepSweep';
+import { addPhoto } from '@/services/photos';
 import { enterPosition } from '@/services/positions';
+import { invitePerson } from '@/services/people';
 import { createProduct } from '@/services/products';
 import { createSample } from '@/services/samples';
 import { signIn } from '@/services/sessions';
@@ -53,6 +55,13 @@ export async function enterWorld() {
   const technician = await person('technician', lab, 'technician@harrowlane.example');
   const designer = await person('designer', client, 'designer@pellorrin.example');
   const outsider = await person('designer', stranger, 'designer@tidewater.example');
+
+  const invited = await invitePerson(manager.actor, {
+    name: 'Odo Fen',
+    email: 'odo@pellorrin.example',
+    role: 'designer',
+    organisationId: client.publicId,
+  });
 
   const boss = manager.actor;
   const limitLine = await enterLimitLine(boss, {
@@ -179,17 +188,29 @@ export async function enterWorld() {
     startsAt: '2031-01-07T09:00:00Z',
     endsAt: '2031-01-07T11:00:00Z',
   });
+  const spareBooking = await createBooking(boss, {
+    ...slot,
+    startsAt: '2031-01-09T09:00:00Z',
+    endsAt: '2031-01-09T11:00:00Z',
+  });
+  const pictures = ['the table', 'the cables', 'the antenna'];
+  const photos = [];
+  for (const caption of pictures)
+    photos.push(await addPhoto(technician.actor, run.id, preparedPhoto(caption), caption));
+
   return {
     lab,
     position,
     slot,
     booking,
+    spareBooking,
     client,
     stranger,
     manager,
     technician,
     designer,
     outsider,
+    invited,
     limitSet,
     product,
     job,
@@ -198,6 +219,7 @@ export async function enterWorld() {
     about,
     file,
     run,
+    photos,
     other,
     spares,
   };
@@ -213,4 +235,17 @@ export function sweepFile(readings: Record<number, number> = { 144: 60.2 }, name
   });
   const text = ['RBW,120 kHz', 'Detector,Peak', 'Frequency (MHz),Level (dBuV)', ...rows, ''].join('\n');
   return { name, bytes: new TextEncoder().encode(text) };
+}
+
+/** What the service is given of a photograph that was opened; its bytes are words here. */
+export function preparedPhoto(words: string) {
+  const bytes = new TextEncoder().encode(words);
+  const picture = { bytes, width: 3, height: 2 };
+  return { sha256: '0'.repeat(64), sentBytes: bytes.length, whole: picture, small: picture };
+}
+
+/** A PNG of one pixel. */
+export function pixel() {
+  const base64 = 'iVBORw0KGgoAAAANSUhEUgAAAAEAAAABCAYAAAAfFcSJAAAADUlEQVR42mNk+M9QDwADhgGAWjR9awAAAABJRU5ErkJggg==';
+  return { name: 'table.png', bytes: new Uint8Array(Buffer.from(base64, 'base64')) };
 }
