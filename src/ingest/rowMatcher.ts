@@ -1,5 +1,6 @@
 import { afterLineEnd } from './bytes';
 import { EXACT_MANTISSA, EXACT_POWERS, numberFromBytes } from './numbers';
+import { plainRowReader } from './plainRows';
 import type { Template } from './template';
 import { wideDecimal } from './wideDecimal';
 
@@ -15,7 +16,12 @@ export interface RowMatcher {
   one(at: number, data: readonly Float64Array[], row: number): number;
   /** Rows that follow one another, at most `most`. Keeps their byte offsets where `rowFrom` is given. */
   many(at: number, data: readonly Float64Array[], row: number, most: number, rowFrom: Uint32Array | null): Stretch;
+  /** Per column of `data`: digits after the mark at most, above 15 where numbers were written in any other way. */
+  decimals: Int32Array;
 }
+
+/** In place of a count of decimals: the numbers of this column are not all up to 15 digits around a mark. */
+export const NO_PLAIN_DECIMALS = 99;
 
 /**
  * The fast reader: takes rows of plain numbers straight from the bytes.
@@ -29,12 +35,16 @@ export function rowMatcher(bytes: Uint8Array, template: Template, shifts: readon
   /** 0 number, 1 empty, 2 text, 3 sparse */
   const kinds = Uint8Array.from(template.contents, (c) => ['number', 'empty', 'text', 'sparse'].indexOf(c));
   const shift = Int32Array.from({ length: width }, (_, i) => shifts[i] ?? 0);
+  /** From this column on a row may end early: nothing but sparse columns follows. */
+  const mayEndAt = kinds.findLastIndex((kind) => kind !== 3 && kind !== 1) + 1;
   const spaced = template.delimiter === ' ';
   const delimiter = spaced ? 32 : template.delimiter.charCodeAt(0);
   const mark = template.decimal === ',' ? 44 : 46;
   const comma = mark === 44;
   const tabDelimits = delimiter === 9;
   const end = bytes.length;
+  const decimals = new Int32Array(template.contents.length);
+  const plainRow = plainRowReader(bytes, template, shifts, decimals);
 
   const one = (start: number, data: readonly Float64Array[], row: number): number => {
     let p = start;
@@ -96,6 +106,8 @@ export function rowMatcher(bytes: Uint8Array, template: Template, shifts: readon
           } else if (backDigits <= 7 && power < 0 && power >= -22) {
             value = wideDecimal(mantissa, back, backDigits, -power);
           }
+          if (digits > 15 || p - digitsFrom > digits + 1) decimals[o] = NO_PLAIN_DECIMALS;
+          else if (shift[c]! - power > decimals[o]!) decimals[o] = shift[c]! - power;
           if (value === value) data[o++]![row] = negative ? -value : value;
           else {
             value = numberFromBytes(bytes, from, p, comma, shift[c]!);
@@ -118,7 +130,11 @@ export function rowMatcher(bytes: Uint8Array, template: Template, shifts: readon
           if (p >= end || (bytes[p] !== 32 && bytes[p] !== 9)) return -1;
         } else {
           while (p < end && (bytes[p] === 32 || (bytes[p] === 9 && !tabDelimits))) p++;
-          if (p >= end || bytes[p] !== delimiter) return -1;
+          if (p >= end || bytes[p] !== delimiter) {
+            if (c + 1 < mayEndAt || (p < end && bytes[p] !== 10 && bytes[p] !== 13)) return -1;
+            for (let rest = c + 1; rest < width; rest++) if (kinds[rest] === 3) data[o++]![row] = NaN;
+            break;
+          }
           p++;
         }
       }
@@ -133,7 +149,8 @@ export function rowMatcher(bytes: Uint8Array, template: Template, shifts: readon
     let rows = 0;
     let lastFrom = start;
     while (rows < most && at < end) {
-      const next = one(at, data, row + rows);
+      let next = plainRow === null ? -1 : plainRow(at, data, row + rows);
+      if (next < 0) next = one(at, data, row + rows);
       if (next < 0) break;
       if (rowFrom) rowFrom[row + rows] = at;
       lastFrom = at;
@@ -142,5 +159,5 @@ export function rowMatcher(bytes: Uint8Array, template: Template, shifts: readon
     }
     return { next: at, rows, lastFrom };
   };
-  return { one, many };
+  return { one, many, decimals };
 }

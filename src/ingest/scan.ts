@@ -2,7 +2,7 @@ import { afterLineEnd, type CleanBytes } from './bytes';
 import { splitCells } from './cells';
 import { IngestError } from './ingestError';
 import { textNumberReader } from './numbers';
-import { rowMatcher } from './rowMatcher';
+import { NO_PLAIN_DECIMALS, rowMatcher } from './rowMatcher';
 import { lineEndFrom, LONGEST_LINE, textOf } from './sample';
 import type { Template } from './template';
 
@@ -28,6 +28,8 @@ export interface Scan {
   data: Float64Array[];
   rows: number;
   blocks: Block[];
+  /** Per column of `data`: digits after the mark at most, above 15 where that is not all there is to its numbers. */
+  decimals: Int32Array;
   /** Byte offset of every row, kept only where rows carry text (time stamps, table names). */
   rowFrom: Uint32Array | null;
 }
@@ -133,6 +135,7 @@ export function* scanSteps(clean: CleanBytes, template: Template, shifts: number
     const text = end - at > LONGEST_LINE ? null : end === at ? '' : textOf(bytes, at, end);
     const irregular = text !== null && (!plain || /["\u2212\u00a0\u2009\u202f]/.test(text));
     if (irregular && matchText(text, data, rows)) {
+      match.decimals.fill(NO_PLAIN_DECIMALS);
       if (rowFrom) rowFrom[rows] = at;
       take(at, 1, at, next);
     } else {
@@ -150,7 +153,7 @@ export function* scanSteps(clean: CleanBytes, template: Template, shifts: number
       yield;
     }
   }
-  return { template, columns, data, rows, blocks, rowFrom };
+  return { template, columns, data, rows, blocks, decimals: match.decimals, rowFrom };
 }
 
 /** One column over a stretch of rows; a view, not a copy. */
