@@ -19,7 +19,11 @@ export function describeColumns(
     const heading = headings.cells[index] ?? null;
     const cell = scan.columns.indexOf(index);
     if (content === 'empty') return { role: 'blank', evidence: 'empty in every row' };
-    if (content === 'sparse') return { role: 'other', evidence: 'empty in some rows' };
+    if (content === 'sparse') {
+      const empty = cell >= 0 && scan.data[cell]!.subarray(0, scan.rows).every((value) => Number.isNaN(value));
+      if (empty) return { role: 'blank', evidence: 'empty in every row' };
+      return { role: 'other', evidence: 'empty in some rows' };
+    }
     if (hop && cell >= 0) {
       if (cell === hop.low) return { role: 'frequency', evidence: 'low edge of each hop' };
       if (cell === hop.low + 1) return { role: 'other', evidence: 'high edge of each hop' };

@@ -7,6 +7,8 @@ import type { Block, Scan } from './scan';
 /** A row that is not whole. */
 export interface Damage {
   line: number;
+  /** Byte offset of the line. */
+  from: number;
   text: string;
   cells: string[];
   /** Row of the scan that comes before it. */
@@ -40,12 +42,28 @@ export function damageAt(clean: CleanBytes, scan: Scan, block: Block, gap: NonNu
   const rest = textOf(clean.bytes, end, Math.min(end + 16, clean.bytes.length));
   return {
     line: gap.line,
+    from: gap.from,
     text,
     cells: splitCells(text, scan.template.delimiter),
     rowBefore: block.firstRow + block.rows - 1,
     atEnd: rest.trim() === '' && end + 16 >= clean.bytes.length,
     cut: false,
   };
+}
+
+/** A line and its neighbours as they stand, three before it and two after it; null past the end of the file. */
+export function linesAround(clean: CleanBytes, damage: Damage): { line: number; text: string | null }[] {
+  const reach = Math.max(0, damage.from - 8192);
+  const before = linesFrom(clean, reach, 0, 8192, 8192)
+    .filter(({ from }) => from < damage.from)
+    .slice(reach === 0 ? 0 : 1)
+    .slice(-3);
+  const [own, ...after] = linesFrom(clean, damage.from, damage.line, 3);
+  const texts = [...before, own, after[0], after[1]].map((line) => line?.text.slice(0, 200) ?? null);
+  return texts.map((text, i) => ({
+    line: damage.line - before.length + i,
+    text: i > before.length && !text ? null : text,
+  }));
 }
 
 /** Digits after the decimal mark of the last cell of each of a block's last rows. */

@@ -40,7 +40,7 @@ function settle(recognition: Recognition, answers: Answers) {
 
 /**
  * Reads one sweep as recognised and answered: every point, in file order, nothing sorted, merged or rounded. Yields
- * about every 16,384 rows.
+ * about every 16,384 rows. A refused file is read up to its broken row only where the answers say `partial`.
  * @param file the bytes as they came, or the text decoded from them
  * @throws IngestError when the file was refused, an answer it needs is missing, or it is not the file recognised
  */
@@ -49,7 +49,10 @@ export function* readSweepSteps(
   recognition: Recognition,
   answers: Answers = {},
 ): Generator<void, ReadSweep> {
-  if (recognition.refusal) {
+  if (answers.partial && recognition.partial === null) {
+    throw unanswered('a file that is whole', 'one that breaks off', 'The file is whole; it is not kept as partial.');
+  }
+  if (recognition.refusal && !answers.partial) {
     const { line, found, expected, message } = recognition.refusal;
     throw new IngestError(line, found, expected, message);
   }
@@ -71,7 +74,7 @@ export function* readSweepSteps(
   const scan = yield* scanSteps(clean, template, shifts);
   const table = yield* tableSteps(prepared, scan, { layout: recognition.layout, axisColumn: column });
   const piece = table.pieces[sweepIndex];
-  if (!piece || table.damage || table.layout !== recognition.layout) {
+  if (!piece || (table.damage !== null) !== (answers.partial === true) || table.layout !== recognition.layout) {
     const message = 'The file is not the one that was recognised. Drop it again.';
     throw unanswered('other rows', 'the rows recognised', message);
   }

@@ -8,8 +8,10 @@ import { axisRemarks, axisUnit, declaredSpan, describeAxis } from './frequency';
 import { IngestError } from './ingestError';
 import { prepareSteps, type Prepared } from './prepare';
 import { bareLines, previewOf } from './preview';
+import { linesAround } from './damage';
+import { shapeOf } from './shape';
 import { questionsFor } from './questions';
-import { brokenRow, commaTwice, notOverFrequency, noTable, type Refusal } from './refusals';
+import { brokenRow, commaTwice, missingIn, notOverFrequency, noTable, type Refusal } from './refusals';
 import { scanSteps } from './scan';
 import { settingsOf } from './settings';
 import { axisOf } from './series';
@@ -43,6 +45,9 @@ function refused(prepared: Prepared, refusal: Refusal, table: Table | null): Rec
   return {
     kind: 'refused',
     refusal,
+    broken: table?.damage ? brokenOf(prepared, table) : null,
+    partial: null,
+    shape: table && shapeOf(table),
     encoding: clean.encoding,
     lineEnds: clean.lineEnds,
     delimiter: delimiterName(style.delimiter),
@@ -172,6 +177,7 @@ export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?:
     ...unit.remarks,
     ...axisRemarks(own, frequency),
     ...filler.map(({ name, min }) => ({ text: `“${name}” holds ${min} in every row; it is left out.`, line: null })),
+    ...severalSweeps(table),
     ...(table.pieces.length > MOST_SWEEPS
       ? [{ text: `The file holds ${table.pieces.length} sweeps; the first ${MOST_SWEEPS} are offered.`, line: null }]
       : []),
@@ -180,6 +186,9 @@ export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?:
   const recognition: Recognition = {
     kind: factor ? 'factor-table' : 'sweep',
     refusal: null,
+    broken: null,
+    partial: null,
+    shape: shapeOf(own),
     encoding: clean.encoding,
     lineEnds: clean.lineEnds,
     delimiter: delimiterName(template.delimiter),
@@ -197,7 +206,37 @@ export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?:
     preview: previewOf(prepared, own),
   };
   if (table.damage === null) return recognition;
-  return { ...recognition, kind: 'refused', refusal: brokenRow(table, unit.unit), questions: [] };
+  const partial = factor || frequency.points < 2 ? null : partialOf(table, frequency, settings);
+  const questions = partial === null ? [] : recognition.questions;
+  const refusal = brokenRow(table, unit.unit);
+  return { ...recognition, kind: 'refused', refusal, broken: brokenOf(prepared, table), partial, questions };
+}
+
+/** Blocks of rows under one another are sweeps of their own, also where one goes on from where the other ends. */
+function severalSweeps(table: Table): Recognition['remarks'] {
+  const { pieces, layout, scan, axisColumn } = table;
+  if (layout !== 'pairs' || pieces.length < 2) return [];
+  const along = scan.data[scan.columns.indexOf(axisColumn!)]!;
+  const last = ({ firstRow, rows }: (typeof pieces)[number]) => along[firstRow + rows - 1]!;
+  const onward = pieces.every((piece, i) => i === 0 || along[piece.firstRow]! >= last(pieces[i - 1]!));
+  const how = onward ? ', each from where the one before ends' : ' under one another';
+  const text = `The file holds ${pieces.length} sweeps${how}. Each is kept as a run of its own.`;
+  const second = scan.blocks[pieces[1]!.block]!;
+  return [{ text, line: second.firstRow === pieces[1]!.firstRow ? second.firstLine : null }];
+}
+
+function brokenOf({ clean }: Prepared, table: Table): Recognition['broken'] {
+  return { lines: linesAround(clean, table.damage!), ...missingIn(table) };
+}
+
+/** What can be kept of a file that breaks off. */
+function partialOf(
+  table: Table,
+  frequency: Recognition['frequency'],
+  { stopHz, declaredPoints }: RecognisedSettings,
+): Recognition['partial'] {
+  const { points, lastHz } = frequency;
+  return { line: table.damage!.line, points, readToHz: lastHz, declaredStopHz: stopHz, declaredPoints };
 }
 
 /** `recogniseSteps` in one go. */

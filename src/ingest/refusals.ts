@@ -1,4 +1,4 @@
-import { moved } from './numbers';
+import { moved, textNumberReader } from './numbers';
 import { isMarkup, type Prepared } from './prepare';
 import type { Table } from './table';
 import type { Recognition } from './types';
@@ -58,6 +58,39 @@ export function notOverFrequency({ noAxis }: Table): Refusal {
     expected: 'a column of frequencies',
     message: `Line ${line}: ${found}. A sweep needs levels over frequency. Export the trace over frequency.`,
   };
+}
+
+/** What a broken row lacks, in words, and after how many characters of it that belongs. */
+export function missingIn(table: Table): { missing: string; after: number } {
+  const damage = table.damage!;
+  const { delimiter, contents } = table.scan.template;
+  const width = contents.length;
+  const text = damage.text.trimEnd().slice(0, 200);
+  const name = (column: number) =>
+    table.headings.cells[column]?.replace(/\s*[([][^)\]]*[)\]]\s*$/, '').slice(0, 40) || `column ${column + 1}`;
+  const endOf = (column: number) => {
+    if (delimiter === ' ' || text.includes('"')) return text.length;
+    return Math.min(
+      text.length,
+      text
+        .split(delimiter)
+        .slice(0, column + 1)
+        .join(delimiter).length,
+    );
+  };
+  if (damage.cut) return { missing: 'the rest of this number is missing', after: text.length };
+  const filled = damage.cells.filter((cell) => cell !== '').length;
+  if (filled > width) return { missing: `${columns(width)} expected`, after: text.length };
+  const empty = contents.flatMap((content, i) => (content !== 'sparse' && (damage.cells[i] ?? '') === '' ? [i] : []));
+  const needed = empty.filter((i) => contents[i] !== 'empty');
+  const [first] = needed;
+  if (first !== undefined) {
+    const missing = needed.length === 1 ? `${name(first)} is missing` : `${columns(needed.length)} are missing`;
+    return { missing, after: endOf(first) };
+  }
+  const read = textNumberReader(table.scan.template);
+  const wrong = contents.findIndex((content, i) => content === 'number' && read(damage.cells[i] ?? '') === null);
+  return { missing: 'a number belongs here', after: wrong < 0 ? text.length : endOf(wrong) };
 }
 
 /** A row that is not whole: where, what is there, what belongs there, how far the file was read. */

@@ -28,6 +28,14 @@ export interface Table extends Context {
   remarks: Recognition['remarks'];
 }
 
+/** Without the broken row and what comes after it. */
+function beforeDamage(pieces: readonly Piece[], damage: Damage | null): Piece[] {
+  if (damage === null) return [...pieces];
+  return pieces
+    .map((piece) => ({ ...piece, rows: Math.min(piece.rows, damage.rowBefore - piece.firstRow + 1) }))
+    .filter(({ rows }) => rows > 0);
+}
+
 /** What an earlier recognition settled; reading the same file again keeps to it. */
 export interface Settled {
   layout: Table['layout'];
@@ -62,7 +70,7 @@ function hopTable(prepared: Prepared, base: Base, hop: HopRows): Table {
     layout: 'hop-rows',
     hop,
     levelColumns,
-    pieces: named,
+    pieces: beforeDamage(named, damage),
     damage,
     remarks: [...base.remarks, ...remarks],
   };
@@ -84,7 +92,7 @@ function timeTable(prepared: Prepared, base: Base, time: TimeRows): Table {
     preamble: base.preamble.filter(({ line }) => line < time.line),
     headings: { ...headings, line: time.line, cells: headings.cells.map(() => null) },
     levelColumns: scan.columns.slice(time.firstLevel),
-    pieces,
+    pieces: beforeDamage(pieces, damage),
     damage,
     remarks: [...base.remarks, ...remarks],
   };
@@ -120,6 +128,7 @@ function* pairsTable(prepared: Prepared, base: Base, settled: Settled | null): G
   yield;
   // Noise parameters, five to a row, may follow the network parameters; the published format says so.
   const isNoise = option !== null && resolved.damage?.cells.length === 5;
+  const damage = isNoise ? null : resolved.damage;
   const isLabelled = template.contents[0] === 'text' && scan.rowFrom !== null;
   const stacks = isLabelled ? splitAtLabels(resolved.pieces, (row) => rowText(prepared, scan, row)![0]!) : null;
   return {
@@ -129,8 +138,8 @@ function* pairsTable(prepared: Prepared, base: Base, settled: Settled | null): G
     axisEvidence: choice.evidence,
     noAxis: elsewhere ?? (axis === null ? none : secondAxis),
     levelColumns,
-    pieces: stacks ?? splitAtRestarts(resolved.pieces, scan.data[axis ?? 0]!),
-    damage: isNoise ? null : resolved.damage,
+    pieces: beforeDamage(stacks ?? splitAtRestarts(resolved.pieces, scan.data[axis ?? 0]!), damage),
+    damage,
     remarks: [...base.remarks, ...aside, ...beside, ...resolved.remarks],
   };
 }

@@ -62,8 +62,26 @@ function better(a: Found, b: Found | null): boolean {
   return !a.kinds.includes('T') && b.kinds.includes('T');
 }
 
-/** A column that is often empty is sparse; a single short row is not enough to say so. */
-function contentsOf({ kinds, all, rows }: Found): Content[] {
+/**
+ * File columns that the headings name beyond those the rows fill: finals beside a sweep stand in a few rows only, which
+ * the sample may have missed.
+ */
+function headedBeyond(sample: readonly Line[], { delimiter, style, kinds }: Found): number[] {
+  if (delimiter === ' ') return [];
+  const read = textNumberReader(style);
+  const written = sample.filter(({ text }) => text.trim() !== '');
+  const first = written.findIndex(({ text }) => signature(splitCells(text, delimiter), read) === kinds);
+  for (const { text } of written.slice(Math.max(0, first - 2), Math.max(0, first)).reverse()) {
+    const cells = splitCells(text.replace(/^\s*["']?\s*(?:[#!%;]|\/\/)+\s*/, ''), delimiter);
+    const named = (i: number) => (cells[i] ?? '') !== '' && read(cells[i]!) === null;
+    if (![...kinds].every((kind, i) => kind === 'E' || named(i))) continue;
+    return cells.flatMap((_, i) => ((kinds[i] ?? 'E') === 'E' && named(i) ? [i] : []));
+  }
+  return [];
+}
+
+/** A column that is often empty is sparse, and so is one that only its heading fills; a single short row is not. */
+function contentsOf({ kinds, all, rows }: Found, headed: readonly number[]): Content[] {
   const width = kinds.length;
   const merged = [...all].filter(
     ([other, count]) =>
@@ -76,10 +94,10 @@ function contentsOf({ kinds, all, rows }: Found): Content[] {
         return its === kind || (its !== 'T' && kind !== 'T' && its !== 'X');
       }),
   );
-  const widest = Math.max(width, ...merged.map(([other]) => other.length));
+  const widest = Math.max(width, ...merged.map(([other]) => other.length), ...headed.map((i) => i + 1));
   return Array.from({ length: widest }, (_, i) => {
     const kind = kinds[i] ?? 'E';
-    const other = merged.some(([its]) => (its[i] ?? 'E') !== kind);
+    const other = headed.includes(i) || merged.some(([its]) => (its[i] ?? 'E') !== kind);
     if (kind === 'T') return 'text';
     if (other) return 'sparse';
     return kind === 'N' ? 'number' : 'empty';
@@ -121,7 +139,7 @@ export function findTemplate(sample: readonly Line[], announced: string | null):
     }
   }
   if (best === null) return null;
-  const contents = contentsOf(best);
+  const contents = contentsOf(best, headedBeyond(sample, best));
   return {
     delimiter: best.delimiter,
     decimal: best.style.decimal,

@@ -5,6 +5,27 @@ export interface Recognition {
   kind: 'sweep' | 'factor-table' | 'refused';
   /** Set when refused: where, what was found, what was expected. */
   refusal: { line: number | null; found: string; expected: string; message: string } | null;
+  /** Where a row is not whole: the lines around it as they stand, and what is missing in it. */
+  broken: {
+    /** Three lines before it, itself, and two after it; null past the end of the file. Cut at 200 characters. */
+    lines: { line: number; text: string | null }[];
+    /** In words, such as `average is missing`, and after how many characters of its line it belongs. */
+    missing: string;
+    after: number;
+  } | null;
+  /** What can be read before the broken row and kept as partial on purpose; null when there is nothing to keep. */
+  partial: {
+    /** The line that is not whole. */
+    line: number;
+    points: number;
+    /** The last frequency read, in the order of the file. */
+    readToHz: number;
+    /** Where the file says that the sweep ends. */
+    declaredStopHz: number | null;
+    declaredPoints: number | null;
+  } | null;
+  /** Signature of the layout, without any of its values: files of one export have one. Null where there is no table. */
+  shape: string | null;
   encoding: string;
   lineEnds: string;
   delimiter: ',' | ';' | 'tab' | 'space' | string;
@@ -111,6 +132,8 @@ export interface Answers {
   frequencyUnit?: 'Hz' | 'kHz' | 'MHz' | 'GHz';
   centreHz?: number;
   sweepIndex?: number;
+  /** Read a refused file up to its broken row, on purpose. */
+  partial?: boolean;
   traces?: { index: number; use: boolean; unit?: LevelUnit; detector?: Detector; name?: string }[];
 }
 

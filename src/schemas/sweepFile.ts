@@ -12,6 +12,23 @@ const number = z.number().nullable();
 export const recognitionView = z.strictObject({
   kind: z.enum(['sweep', 'factor-table', 'refused']),
   refusal: z.strictObject({ line, found: z.string(), expected: z.string(), message: z.string() }).nullable(),
+  broken: z
+    .strictObject({
+      lines: z.array(z.strictObject({ line: z.int(), text })),
+      missing: z.string(),
+      after: z.int(),
+    })
+    .nullable(),
+  partial: z
+    .strictObject({
+      line: z.int(),
+      points: z.int(),
+      readToHz: z.number(),
+      declaredStopHz: number,
+      declaredPoints: number,
+    })
+    .nullable(),
+  shape: text,
   encoding: z.string(),
   lineEnds: z.string(),
   delimiter: z.string(),
