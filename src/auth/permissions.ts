@@ -15,6 +15,7 @@ const manager = ['manager'] as const;
 export const PERMISSIONS = {
   'session.end': { roles: everyone, token: null },
   'session.list': { roles: everyone, token: null },
+  'password.change': { roles: everyone, token: null },
   'user.list': { roles: manager, token: null },
   'user.create': { roles: manager, token: null },
   'user.change': { roles: manager, token: null },
@@ -39,6 +40,7 @@ export const PERMISSIONS = {
   'limit.enter': { roles: manager, token: null },
   'path.list': { roles: lab, token: 'read' },
   'limit-set.list': { roles: everyone, token: 'read' },
+  'limit-line.list': { roles: lab, token: 'read' },
   'equipment.list': { roles: lab, token: 'read' },
   'sweep-file.create': { roles: lab, token: 'upload' },
   'sweep-file.read': { roles: lab, token: 'upload' },

@@ -15,7 +15,7 @@ export interface ThrottleState {
   blockedUntil: Date | null;
 }
 
-export type ThrottleKind = 'pair' | 'familiar' | 'account' | 'address';
+export type ThrottleKind = 'pair' | 'familiar' | 'account' | 'address' | 'reset-account' | 'reset-address';
 
 /** The longest wait, in seconds. */
 export const CAP_S = 15 * 60;
@@ -30,6 +30,10 @@ export const RULES: Record<ThrottleKind, ThrottleRule> = {
   account: { free: 20, leakS: CAP_S },
   // One address for all accounts together; a whole lab may share it.
   address: { free: 40, leakS: 120 },
+  // Reset e-mails asked for one account, by whomever: its mailbox is not to be flooded.
+  'reset-account': { free: 3, leakS: CAP_S },
+  // Reset e-mails asked for from one address, for whatever account; a whole lab may share it.
+  'reset-address': { free: 20, leakS: 120 },
 };
 
 /** The row of a throttle: a hash, so that the table tells nobody who failed from where. */
@@ -58,6 +62,12 @@ export function throttleKeys(
   });
   if (familiar) return [one('familiar', email, address), one('address', address)];
   return [one('pair', email, address), one('account', email), one('address', address)];
+}
+
+/** The keys of one request for a reset e-mail. */
+export function resetKeys(email: string, address: string): { kind: ThrottleKind; key: string; rule: ThrottleRule }[] {
+  const one = (kind: ThrottleKind, part: string) => ({ kind, key: throttleKey(kind, part), rule: RULES[kind] });
+  return [one('reset-account', email), one('reset-address', address)];
 }
 
 /** How long the failure number `failures` blocks, in seconds: 0 while free, then 1, 2, 4 … up to CAP_S. */

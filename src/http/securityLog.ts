@@ -1,6 +1,15 @@
 /** One JSON line on standard output per event that matters to whoever watches the lab's server. Never a secret in it. */
 export interface SecurityEvent {
-  event: 'sign-in' | 'sign-in-refused' | 'sign-out' | 'denied' | 'throttled' | 'error' | 'token-refused';
+  event:
+    | 'reset-asked'
+    | 'password-set'
+    | 'sign-in'
+    | 'sign-in-refused'
+    | 'sign-out'
+    | 'denied'
+    | 'throttled'
+    | 'error'
+    | 'token-refused';
   userId?: string | null;
   operation?: string;
   address?: string;

@@ -2,20 +2,28 @@ import { QueryTypes } from 'sequelize';
 import { database } from '@/models/database';
 import { unitOfWork } from '@/models/unitOfWork';
 
-/** Tables whose rows are worthless once `expires_at` has passed. */
-const EXPIRING = ['sessions', 'uploads', 'idempotency_keys'] as const;
+/** Tables whose rows are worthless once `expires_at` has passed, and how many days they are kept after it. */
+const EXPIRING = {
+  sessions: 0,
+  uploads: 0,
+  idempotency_keys: 0,
+  caught_mails: 0,
+  // the people sheet shows for a while what became of an invitation
+  one_time_links: 90,
+} as const;
 const ROWS_AT_ONCE = 200;
 
 /**
  * Deletes expired rows in small transactions, so that no request waits for a long one.
  * @returns rows deleted per table
  */
-export async function purgeExpired(): Promise<Record<(typeof EXPIRING)[number], number>> {
-  const purged = { sessions: 0, uploads: 0, idempotency_keys: 0 };
-  for (const table of EXPIRING) {
+export async function purgeExpired(): Promise<Record<keyof typeof EXPIRING, number>> {
+  const purged = { sessions: 0, uploads: 0, idempotency_keys: 0, caught_mails: 0, one_time_links: 0 };
+  for (const [table, days] of Object.entries(EXPIRING) as [keyof typeof EXPIRING, number][]) {
+    const past = `expires_at < UTC_TIMESTAMP(3) - INTERVAL ${days} DAY`;
     for (let gone = ROWS_AT_ONCE; gone === ROWS_AT_ONCE; purged[table] += gone) {
       gone = await unitOfWork(() =>
-        database().query(`DELETE FROM ${table} WHERE expires_at < UTC_TIMESTAMP(3) LIMIT ${ROWS_AT_ONCE}`, {
+        database().query(`DELETE FROM ${table} WHERE ${past} LIMIT ${ROWS_AT_ONCE}`, {
           type: QueryTypes.BULKDELETE,
         }),
       );

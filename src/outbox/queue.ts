@@ -15,6 +15,8 @@ export interface LeasedMessage {
 
 export const LEASE_SECONDS = 120;
 const LONGEST_DELAY_SECONDS = 3600;
+/** How long a message waits for something that is missing. */
+const WAIT_SECONDS = 60;
 /** With the delays below this is about a day of trying. */
 export const LARGEST_ATTEMPTS = 30;
 
@@ -75,6 +77,13 @@ async function settle(message: LeasedMessage, owner: string, set: string, values
 /** The effect has happened. */
 export function markSent(message: LeasedMessage, owner: string): Promise<boolean> {
   return settle(message, owner, "state = 'sent', done_at = UTC_TIMESTAMP(3), last_error = NULL", {});
+}
+
+/** What the effect needs is not there yet: the message waits a minute, and the try does not count. */
+export function markWaiting(message: LeasedMessage, owner: string, reason: string): Promise<boolean> {
+  const set = `state = 'queued', last_error = :lastError, attempts = GREATEST(attempts, 1) - 1,
+    available_at = UTC_TIMESTAMP(3) + INTERVAL ${WAIT_SECONDS} SECOND`;
+  return settle(message, owner, set, { lastError: reason.slice(0, 500) });
 }
 
 /** The effect did not happen: tried again later, or given up with the reason kept. */

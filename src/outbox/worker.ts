@@ -1,6 +1,7 @@
 import { errorDetails, logLine } from '@/ops/log';
-import { FinalFailure, HANDLERS, type Handler } from './handlers';
-import { leaseNext, markFailed, markSent } from './queue';
+import { FinalFailure, NotYet } from './failures';
+import { HANDLERS, type Handler } from './handlers';
+import { leaseNext, markFailed, markSent, markWaiting } from './queue';
 
 /**
  * Takes one due message, commits the lease, and only then does its effect: an effect inside the transaction could
@@ -19,6 +20,11 @@ export async function workOnce(
     if (!handler) throw new FinalFailure(`no handler for messages of kind ${kind}`);
     await handler(message);
   } catch (error) {
+    if (error instanceof NotYet) {
+      logLine('warn', 'message waits', { id, kind, reason: error.message });
+      await markWaiting(message, owner, error.message);
+      return true;
+    }
     const final = error instanceof FinalFailure;
     logLine('warn', 'message failed', { id, kind, attempts, final, ...errorDetails(error) });
     await markFailed(message, owner, error instanceof Error ? error.message : String(error), final);

@@ -38,7 +38,8 @@ export class SignInRefused extends Unauthenticated {
 
 type WithOrganisation = User & { organisation: Organisation };
 
-function actorFrom(user: WithOrganisation, via: Actor['via']): Actor {
+/** Who a person is to the services. */
+export function actorFrom(user: WithOrganisation, via: Actor['via']): Actor {
   return {
     userId: user.id,
     publicId: user.publicId,
@@ -117,8 +118,7 @@ export async function signIn(
     throw new SignInRefused(user?.publicId ?? null, !user ? 'unknown' : user.disabledAt ? 'disabled' : 'password');
   }
   const rehashed = needsRehash ? await hashPassword(password).catch(() => null) : null;
-  const token = newSessionToken();
-  const actor = await unitOfWork(async () => {
+  const { actor, token } = await unitOfWork(async () => {
     const now = new Date();
     // Locked, so that a new password or a disabling that commits meanwhile is not signed in past.
     const current = (await User.findByPk(user.id, {
@@ -129,23 +129,35 @@ export async function signIn(
     if (current.disabledAt || current.passwordHash !== stored) throw new SignInRefused(user.publicId, 'password');
     if (rehashed) await User.update({ passwordHash: rehashed }, { where: { id: user.id } });
     await settleAttempt(attempt, now);
-    const session = await Session.create({
-      publicId: newPublicId(),
-      tokenHash: sessionTokenHash(token),
-      userId: user.id,
-      authenticatedAt: now,
-      lastSeenAt: now,
-      expiresAt: new Date(now.getTime() + ABSOLUTE_MS),
-      address: address.slice(0, 45),
-      agent: agent.slice(0, 200),
-    });
-    return actorFrom(current, { kind: 'session', sessionId: session.id, assuranceLevel: session.assuranceLevel });
+    return openSession(current, { address, agent }, now);
   });
   if (Date.now() >= purgeDueAt) {
     purgeDueAt = Date.now() + PURGE_MS;
     await purgeThrottles(new Date());
   }
   return { actor, cookie: await sessionCookie(token) };
+}
+
+/** Opens a session for a person whom the caller has identified and locked; call inside a unit of work. */
+export async function openSession(
+  user: WithOrganisation,
+  { address, agent }: { address: string; agent: string },
+  now: Date,
+): Promise<{ actor: Actor; token: string }> {
+  const token = newSessionToken();
+  const session = await Session.create({
+    publicId: newPublicId(),
+    tokenHash: sessionTokenHash(token),
+    userId: user.id,
+    authenticatedAt: now,
+    lastSeenAt: now,
+    expiresAt: new Date(now.getTime() + ABSOLUTE_MS),
+    address: address.slice(0, 45),
+    agent: agent.slice(0, 200),
+  });
+  await User.update({ lastSignInAt: now }, { where: { id: user.id }, silent: true });
+  const { id: sessionId, assuranceLevel } = session;
+  return { actor: actorFrom(user, { kind: 'session', sessionId, assuranceLevel }), token };
 }
 
 /** The signed-in person as the API tells it. */

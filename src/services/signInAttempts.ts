@@ -27,7 +27,23 @@ export async function admitAttempt(email: string, address: string, now: Date): P
   return unitOfWork(async () => {
     const seen = await Throttle.findByPk(throttleKey('familiar', email, address));
     const familiar = seen !== null && now.getTime() - seen.lastFailureAt.getTime() < FAMILIAR_MS;
-    const keys = throttleKeys(email, address, familiar).sort((a, b) => (a.key < b.key ? -1 : 1));
+    const counted = await countAttempt(throttleKeys(email, address, familiar), now, 'try');
+    return { email, address, counted };
+  });
+}
+
+/**
+ * Counts one thing that is limited against each of its keys, unless one of them makes it wait; that is not counted.
+ * @param noun what is told to wait
+ * @throws {Throttled} with the seconds to wait
+ */
+export async function countAttempt(
+  limits: ReturnType<typeof throttleKeys>,
+  now: Date,
+  noun: 'try' | 'request',
+): Promise<Attempt['counted']> {
+  return unitOfWork(async () => {
+    const keys = [...limits].sort((a, b) => (a.key < b.key ? -1 : 1));
     // Locks each row, there or not, in the same order as everybody else does.
     await Throttle.bulkCreate(
       keys.map(({ key }) => ({ keyHash: key, failures: 0, lastFailureAt: now })),
@@ -38,7 +54,7 @@ export async function admitAttempt(email: string, address: string, now: Date): P
       lock: currentTransaction().LOCK.UPDATE,
     });
     const waitS = Math.max(...rows.map((row) => secondsBlocked(row, now)));
-    if (waitS > 0) throw new Throttled(waitS, `The next try is let in after ${inWords(waitS)}.`);
+    if (waitS > 0) throw new Throttled(waitS, `The next ${noun} is let in after ${inWords(waitS)}.`);
     const counted: Attempt['counted'] = [];
     for (const { kind, key, rule } of keys) {
       const state = withFailure(
@@ -49,7 +65,7 @@ export async function admitAttempt(email: string, address: string, now: Date): P
       await Throttle.update(state, { where: { keyHash: key } });
       counted.push({ kind, key, blockedUntil: state.blockedUntil });
     }
-    return { email, address, counted };
+    return counted;
   });
 }
 

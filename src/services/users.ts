@@ -1,5 +1,5 @@
-import { literal, UniqueConstraintError, type WhereOptions } from 'sequelize';
-import { authoriseCommander, type Commander, personOf } from '@/auth/actor';
+import { literal, Op, UniqueConstraintError, type WhereOptions } from 'sequelize';
+import { type Actor, authoriseCommander, type Commander, personOf } from '@/auth/actor';
 import { hashPassword, passwordIssues } from '@/auth/password';
 import type { Role } from '@/auth/permissions';
 import { Conflict, Invalid, type Issue, NotFound } from '@/errors';
@@ -9,6 +9,7 @@ import { Session } from '@/models/session';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import { User } from '@/models/user';
 import { recordChange } from './audit';
+import { endLinks } from './oneTimeLinks';
 import { forgetFailures } from './signInAttempts';
 
 export interface NewUser {
@@ -30,6 +31,13 @@ export async function findUser(publicIdOrEmail: string): Promise<User> {
   return user;
 }
 
+/** The lab's roles see every organisation's records, so they are for the lab's own people only. */
+export function roleIssues(role: Role, organisation: Organisation): Issue[] {
+  if ((role === 'designer') === (organisation.kind === 'client')) return [];
+  const message = organisation.kind === 'client' ? 'of a client is designer' : 'of the lab is manager or technician';
+  return [{ pointer: '/role', message }];
+}
+
 function entryIssues(entry: NewUser, organisation: Organisation | null): Issue[] {
   const issues: Issue[] = [];
   const add = (pointer: string, message: string) => issues.push({ pointer, message });
@@ -38,10 +46,7 @@ function entryIssues(entry: NewUser, organisation: Organisation | null): Issue[]
     add('/email', 'is not an e-mail address');
   }
   if (!organisation) add('/organisationId', 'is not an organisation of this lab');
-  else if ((entry.role === 'designer') !== (organisation.kind === 'client')) {
-    // The lab's roles see every organisation's records.
-    add('/role', organisation.kind === 'client' ? 'of a client is designer' : 'of the lab is manager or technician');
-  }
+  else issues.push(...roleIssues(entry.role, organisation));
   if (entry.password !== null) issues.push(...passwordIssues(entry.password, entry.email));
   return issues;
 }
@@ -60,30 +65,47 @@ export async function createUser(by: Commander | null, entry: NewUser, at = new 
   // Hashing takes a third of a second: never inside a transaction.
   const passwordHash = user.password === null ? null : await hashPassword(user.password);
   return unitOfWork(async () => {
-    const organisation = (await find())!;
-    const row = await User.create({
-      publicId: newPublicId(),
-      organisationId: organisation.id,
-      role: user.role,
-      name: user.name,
-      email: user.email,
-      passwordHash,
-      createdAt: at,
-    }).catch((error: unknown) => {
-      if (!(error instanceof UniqueConstraintError)) throw error;
-      throw new Invalid([{ pointer: '/email', message: 'belongs to somebody already' }]);
-    });
-    recordChange(personOf(by), {
-      scope: 'lab',
-      action: 'person entered',
-      subjectType: 'user',
-      subjectId: row.publicId,
-      before: null,
-      after: { role: row.role, organisation: organisation.publicId },
-      at,
-    });
-    return { publicId: row.publicId };
+    const { publicId } = await writeUser(personOf(by), user, (await find())!, passwordHash, at);
+    return { publicId };
   });
+}
+
+/**
+ * Writes a person whom the caller may enter, in its unit of work; with a password it is the caller who hashed it.
+ * @throws {Invalid} with every wrong entry
+ */
+export async function writeUser(
+  by: Actor | null,
+  entry: NewUser,
+  organisation: Organisation,
+  passwordHash: string | null,
+  at: Date,
+): Promise<User> {
+  const user = { ...entry, name: entry.name.trim(), email: entry.email.trim().toLowerCase() };
+  const issues = entryIssues(user, organisation);
+  if (issues.length) throw new Invalid(issues);
+  const row = await User.create({
+    publicId: newPublicId(),
+    organisationId: organisation.id,
+    role: user.role,
+    name: user.name,
+    email: user.email,
+    passwordHash,
+    createdAt: at,
+  }).catch((error: unknown) => {
+    if (!(error instanceof UniqueConstraintError)) throw error;
+    throw new Invalid([{ pointer: '/email', message: 'belongs to somebody already' }]);
+  });
+  recordChange(by, {
+    scope: 'lab',
+    action: 'person entered',
+    subjectType: 'user',
+    subjectId: row.publicId,
+    before: null,
+    after: { role: row.role, organisation: organisation.publicId },
+    at,
+  });
+  return row;
 }
 
 /** Gives a person a new password and ends all their sessions; what strangers failed at their account is forgotten. */
@@ -95,7 +117,8 @@ export async function setPassword(by: Commander | null, publicIdOrEmail: string,
   const passwordHash = await hashPassword(password);
   await unitOfWork(async () => {
     await User.update({ passwordHash, version: literal('version + 1') }, { where: { id } });
-    const ended = await endAllSessions(id);
+    const ended = await endSessionsOf(id, new Date());
+    await endLinks(id, new Date());
     await forgetFailures(email);
     recordChange(personOf(by), {
       scope: 'lab',
@@ -108,36 +131,55 @@ export async function setPassword(by: Commander | null, publicIdOrEmail: string,
   });
 }
 
-/** Shuts a person out at once: their sessions end and their tokens open nothing. The last manager cannot be. */
+/** Shuts a person out at once: their sessions and links end and their tokens open nothing. The last manager cannot be. */
 export async function disableUser(by: Commander | null, publicIdOrEmail: string): Promise<void> {
   authoriseCommander(by, 'user.change');
   await unitOfWork(async () => {
     const user = await findUser(publicIdOrEmail);
-    // Locked in one order, so that two managers cannot disable each other at the same moment.
-    const managers = await User.findAll({
-      where: { role: 'manager', disabledAt: null },
-      order: [['id', 'ASC']],
-      lock: currentTransaction().LOCK.UPDATE,
-    });
-    if (managers.length === 1 && managers[0]!.id === user.id) {
-      throw new Conflict('This is the lab’s only manager. Enter another one first.');
-    }
-    const change = { disabledAt: new Date(), version: literal('version + 1') };
-    const [disabled] = await User.update(change, { where: { id: user.id, disabledAt: null } });
-    if (disabled === 0) return;
-    const ended = await endAllSessions(user.id);
-    recordChange(personOf(by), {
-      scope: 'lab',
-      action: 'person disabled',
-      subjectType: 'user',
-      subjectId: user.publicId,
-      before: { disabled: false },
-      after: { disabled: true, sessionsEnded: ended },
-    });
+    if (user.disabledAt === null) await shutOut(personOf(by), user, null);
   });
 }
 
-async function endAllSessions(userId: number): Promise<number> {
-  const [ended] = await Session.update({ endedAt: new Date() }, { where: { userId, endedAt: null } });
+/** Disables a person whom the caller may change, in its unit of work. @throws {Conflict} for the last manager */
+export async function shutOut(by: Actor | null, user: User, reason: string | null): Promise<void> {
+  await keepAManager(user);
+  const disabledAt = new Date();
+  const change = { disabledAt, disabledReason: reason, version: literal('version + 1') };
+  const [disabled] = await User.update(change, { where: { id: user.id, disabledAt: null } });
+  if (disabled === 0) return;
+  const ended = await endSessionsOf(user.id, disabledAt);
+  await endLinks(user.id, disabledAt);
+  recordChange(by, {
+    scope: 'lab',
+    action: 'person disabled',
+    subjectType: 'user',
+    subjectId: user.publicId,
+    before: { disabled: false },
+    after: { disabled: true, sessionsEnded: ended, ...(reason !== null && { reason }) },
+  });
+}
+
+/**
+ * That the lab keeps a manager who can sign in when this one goes. Managers are locked in one order, so that two cannot
+ * remove each other at the same moment.
+ * @throws {Conflict}
+ */
+export async function keepAManager(user: User): Promise<void> {
+  const managers = await User.findAll({
+    where: { role: 'manager', disabledAt: null },
+    order: [['id', 'ASC']],
+    lock: currentTransaction().LOCK.UPDATE,
+  });
+  const leaving = managers.find(({ id }) => id === user.id);
+  const left = managers.filter(({ id }) => id !== user.id);
+  if (leaving && !left.some(({ passwordHash }) => passwordHash !== null || leaving.passwordHash === null)) {
+    throw new Conflict('This is the lab’s only manager. Enter another one first.');
+  }
+}
+
+/** Ends a person's sessions at once, except one they keep; call inside a unit of work. @returns how many */
+export async function endSessionsOf(userId: number, now: Date, exceptId?: number): Promise<number> {
+  const where = { userId, endedAt: null, ...(exceptId !== undefined && { id: { [Op.ne]: exceptId } }) };
+  const [ended] = await Session.update({ endedAt: now }, { where });
   return ended;
 }

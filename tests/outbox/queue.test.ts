@@ -1,7 +1,7 @@
 import { QueryTypes } from 'sequelize';
 import { database } from '@/models/database';
 import { unitOfWork } from '@/models/unitOfWork';
-import { FinalFailure } from '@/outbox/handlers';
+import { FinalFailure, NotYet } from '@/outbox/failures';
 import { purgeExpired, scheduleHousekeeping } from '@/outbox/housekeeping';
 import { delaySeconds, LARGEST_ATTEMPTS, leaseNext, markSent } from '@/outbox/queue';
 import { workOnce } from '@/outbox/worker';
@@ -99,6 +99,19 @@ test('a failure waits and is tried again; the reason is kept', async () => {
   expect(await workOnce('a', handlers)).toBe(false);
 });
 
+test('a message whose means are missing waits a minute with its reason, and no try is counted', async () => {
+  const id = await queue('note');
+  const handlers = { note: () => Promise.reject(new NotYet('no mail server is configured')) };
+  for (let round = 0; round < 3; round += 1) {
+    expect(await workOnce('a', handlers)).toBe(true);
+    await run(`UPDATE outbox SET available_at = UTC_TIMESTAMP(3) WHERE id = ${id}`);
+  }
+  await workOnce('a', handlers);
+  const waiting = await row(id);
+  expect(waiting).toMatchObject({ state: 'queued', attempts: 0, last_error: 'no mail server is configured' });
+  expect(waiting.waits).toBeGreaterThanOrEqual(55);
+});
+
 test.each([
   ['a final failure', 'note', "'queued', UTC_TIMESTAMP(3), NULL, 0", 1],
   ['a kind nobody handles', 'unheard', "'queued', UTC_TIMESTAMP(3), NULL, 0", 1],
@@ -147,8 +160,17 @@ test('housekeeping deletes what has expired and nothing else', async () => {
       await write(`INSERT INTO idempotency_keys (user_id, \`key\`, operation, request_hash, status, reply, expires_at,
         created_at) VALUES (1, 'key-${index}', '', ${hash}, 200, '', ${at}, ${now})`);
     }
+    for (const [index, age] of ages.entries()) {
+      const at = `UTC_TIMESTAMP(3) ${age}`;
+      await write(`INSERT INTO caught_mails (public_id, message_id, sender, recipient, subject, text, expires_at,
+        created_at) VALUES ('mail-${index}', '', '', '', '', '', ${at}, ${at})`);
+      // kept 90 days beyond its end
+      await write(`INSERT INTO one_time_links (public_id, kind, user_id, token_hash, expires_at, created_at)
+        VALUES ('link-${index}', 'reset', 1, LPAD(${index}, 64, '0'), ${at}, ${at})`);
+    }
     await write('SET foreign_key_checks = 1');
   });
-  expect(await purgeExpired()).toEqual({ sessions: 2, uploads: 2, idempotency_keys: 2 });
-  expect(await purgeExpired()).toEqual({ sessions: 0, uploads: 0, idempotency_keys: 0 });
+  const two = { sessions: 2, uploads: 2, idempotency_keys: 2, caught_mails: 2, one_time_links: 1 };
+  expect(await purgeExpired()).toEqual(two);
+  expect(Object.values(await purgeExpired()).every((gone) => gone === 0)).toBe(true);
 });
