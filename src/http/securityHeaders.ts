@@ -89,3 +89,18 @@ export function fileHeaders(name: string, contentType = 'application/octet-strea
 
 /** The reply to signing out makes the browser drop what it keeps of this origin besides cookies. */
 export const CLEAR_SITE_DATA = '"cache", "storage"';
+
+/**
+ * The headers of a picture that this server encoded itself: shown in a page, kept by nobody on the way, and asked for
+ * again each time, since it may have been withdrawn or its reader signed out.
+ */
+export function pictureHeaders(contentType: string, etag: string): HeaderList {
+  return [
+    ['content-type', contentType],
+    ['content-disposition', 'inline'],
+    ['cache-control', 'private, no-cache'],
+    ['etag', etag],
+    ['content-security-policy', `default-src 'none'; sandbox`],
+    ['x-content-type-options', 'nosniff'],
+  ];
+}

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { operation } from './operation';
+import { setupBrief } from './setup';
 import {
   detector,
   instant,
@@ -187,6 +188,8 @@ export const sweepView = z.strictObject({
   remarks: z.array(z.string()),
   traces: z.array(traceView),
   evaluation: evaluationView,
+  /** How it was set up, in brief; it changes no verdict. */
+  setup: setupBrief,
   /** The port's verdict over every run of this sample state, and what is missing for it. */
   portVerdict: z.strictObject({
     verdict,
@@ -201,7 +204,7 @@ export const sweepView = z.strictObject({
         heightM: z.number().nullable(),
       }),
     ),
-    runs: z.array(z.strictObject({ id: publicId, number: z.string() })),
+    runs: z.array(z.strictObject({ id: publicId, number: z.string(), setup: setupBrief })),
   }),
 });
 export type SweepView = z.infer<typeof sweepView>;
@@ -306,6 +309,8 @@ export const sweepListItem = z.strictObject({
   trial: z.string().nullable(),
   partial: z.boolean(),
   voided: z.boolean(),
+  /** What the EUT did when it did not stay in its mode; null when it stayed, or nobody has said. */
+  strayed: z.string().nullable(),
   worst: z.strictObject({ frequencyHz: z.number(), marginDb: z.number() }).nullable(),
   points: z.int(),
 });

@@ -5,6 +5,7 @@ import { LimitSet } from '@/models/limitSet';
 import { Sweep } from '@/models/sweep';
 import type { SweepView } from '@/schemas/sweep';
 import { linesOf } from './limitSets';
+import { setupBriefs } from './setupBriefs';
 
 /** The verdict of a run's port over every run of the same sample state. The caller has shown that it may see the run. */
 export async function portVerdictOf(run: Pick<Sweep, 'stateId' | 'port'>): Promise<SweepView['portVerdict']> {
@@ -29,5 +30,9 @@ export async function portVerdictOf(run: Pick<Sweep, 'stateId' | 'port'>): Promi
       lines: lines.get(row.limitSetId)!.map(({ id, name }) => ({ id, name })),
     })),
   );
-  return { ...judged, runs: rows.map((row) => ({ id: row.publicId, number: row.number })) };
+  const setups = await setupBriefs(rows);
+  return {
+    ...judged,
+    runs: rows.map((row) => ({ id: row.publicId, number: row.number, setup: setups.get(row.id)! })),
+  };
 }

@@ -7,15 +7,17 @@ import { EvaluationCandidate } from '@/models/evaluationCandidate';
 import { ModificationState } from '@/models/modificationState';
 import { Sweep } from '@/models/sweep';
 import { unitOfWork } from '@/models/unitOfWork';
+import type { SetupBrief } from '@/schemas/setup';
 import type { CandidateView, sweepListItem, SweepView } from '@/schemas/sweep';
 import { olderThan, pageFrom, type PageRequest } from './paging';
 import { portVerdictOf } from './portVerdict';
 import { contextOf, findRun, runInclude, type Run, type RunContext } from './runs';
 import { findSample, stateLabel } from './samples';
+import { setupBriefs } from './setupBriefs';
 import { itemView } from './signalPaths';
 import { candidateOf, traceViews } from './sweepViews';
 
-function itemOf(row: Sweep): z.infer<typeof sweepListItem> {
+function itemOf(row: Sweep, setup: SetupBrief): z.infer<typeof sweepListItem> {
   const { state, user, evaluation } = row as Run;
   const { job } = state.sample;
   const { worstFrequencyHz, worstMarginDb } = evaluation;
@@ -37,6 +39,7 @@ function itemOf(row: Sweep): z.infer<typeof sweepListItem> {
     trial: row.trial,
     partial: row.partial !== null,
     voided: row.voidedAt !== null,
+    strayed: setup.eutStayed === 'no' ? setup.whatHappened : null,
     worst:
       worstFrequencyHz === null || worstMarginDb === null
         ? null
@@ -65,7 +68,8 @@ export async function listSweeps(actor: Actor | null, page: PageRequest & { samp
       limit: page.limit + 1,
       subQuery: false,
     });
-    return pageFrom(rows, page, itemOf);
+    const setups = await setupBriefs(rows);
+    return pageFrom(rows, page, (row) => itemOf(row, setups.get(row.id)!));
   });
 }
 
@@ -142,6 +146,7 @@ async function view(run: Run, context: RunContext): Promise<SweepView> {
       uncertainty: [...judged.uncertainty[run.purpose === 'final' ? 'final' : 'prescan']],
       decisionRule: evaluation.decisionRule,
     },
+    setup: (await setupBriefs([run])).get(run.id)!,
     portVerdict: await portVerdictOf(run),
   };
 }

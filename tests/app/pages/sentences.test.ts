@@ -27,6 +27,7 @@ function run(number: string, more: Partial<Run>): Run {
     trial: null,
     partial: false,
     voided: false,
+    strayed: null,
     ...more,
   };
 }
