@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { addDays, dayBounds, instantsAt, utcDays, wallMs, wallOf } from '@/schemas/labTime';
 
 /* Summer time in the United Kingdom begins on the last Sunday of March and ends on the last Sunday of October, at
- * 01:00 UTC (The Summer Time Order 2002, SI 2002/262): 2026-03-29 and 2026-10-25. */
+ * 01:00 UTC (The Summer Time Order 2002, SI 2002/262; from memory): 2026-03-29 and 2026-10-25. */
 const LONDON = 'Europe/London';
 const at = (day: string, time: string, zone = LONDON) =>
   instantsAt({ day, time }, zone).map((one) => one.toISOString());
