@@ -13,7 +13,7 @@ const { buildIsFresh, hashInputs, noteBuild } = require('./buildInputs');
 const { ended, runTypescript, startTypescript, stopChild } = require('./children');
 const { ROOT, checkNode, ensurePackages } = require('./nodePackages');
 const { Refusal, run, say } = require('./say');
-const { STATE, openDatabase } = require('./settings');
+const { STATE, given, openDatabase } = require('./settings');
 
 const READY_LIMIT_MS = 60_000;
 /** Longer than the children's own draining. */
@@ -97,15 +97,37 @@ async function waitUntilReady(web, host, port) {
   throw new Refusal('The web process ended before it was ready; its words are above.');
 }
 
-/** Starts the outbox and starts it again when it ends by itself, with a growing pause. */
-function keepOutbox(environment, isStopping) {
+/** A port of 127.0.0.1 that nobody listens on at this moment. */
+function freePort() {
+  return new Promise((resolve, reject) => {
+    const probe = net.createServer();
+    probe.once('error', reject);
+    probe.listen({ host: '127.0.0.1', port: 0 }, () => {
+      const { port } = probe.address();
+      probe.close(() => resolve(port));
+    });
+  });
+}
+
+/**
+ * In the demo without a mail server, where the outbox finds the catcher of this machine: the same port for both, chosen
+ * here so that a catcher started again is found again. Otherwise e-mail goes to SMTP_URL, or waits.
+ */
+async function chooseCatcher(environment) {
+  delete environment.MAIL_CATCHER_PORT;
+  if (environment.STILLFIELD_DEMO === '1' && !given('SMTP_URL'))
+    environment.MAIL_CATCHER_PORT = String(await freePort());
+}
+
+/** Starts a process beside the web process and starts it again when it ends by itself, with a growing pause. */
+function keepRunning(name, file, environment, isStopping) {
   const kept = { child: null };
   const start = (pauseMs) => {
     const begun = Date.now();
-    kept.child = startTypescript('src/outbox/main.ts', [], environment);
+    kept.child = startTypescript(file, [], environment);
     void ended(kept.child).then((code) => {
       if (isStopping()) return;
-      say(`the outbox process ended (${code}); starting it again`);
+      say(`the ${name} process ended (${code}); starting it again`);
       const pause = Date.now() - begun > 60_000 ? 1000 : pauseMs;
       setTimeout(() => !isStopping() && start(Math.min(pause * 2, 30_000)), pause).unref();
     });
@@ -125,10 +147,13 @@ async function main() {
   let stopping = false;
   let web = null;
   let outbox = null;
+  let catcher = null;
   let database = null;
   const stopAll = async () => {
     stopping = true;
     await Promise.all([web, outbox?.child].filter(Boolean).map((child) => stopChild(child, STOP_LIMIT_MS)));
+    // last, so that what the outbox still sends is caught
+    if (catcher) await stopChild(catcher.child, STOP_LIMIT_MS);
     await database?.stop();
   };
   const onSignal = (signal) => {
@@ -159,8 +184,12 @@ async function main() {
     // the owner of the schema is for migrations; the processes that serve never hold it
     delete environment.DATABASE_MIGRATE_URL;
     delete environment.DATABASE_MIGRATE_URL_FILE;
+    await chooseCatcher(environment);
+    if (environment.MAIL_CATCHER_PORT) {
+      catcher = keepRunning('mail catcher', 'src/ops/mailCatcher.ts', environment, () => stopping);
+    }
     web = startTypescript('src/ops/server.ts', dev ? ['--dev'] : [], environment);
-    outbox = keepOutbox(environment, () => stopping);
+    outbox = keepRunning('outbox', 'src/outbox/main.ts', environment, () => stopping);
     await waitUntilReady(web, host, port);
     const signIns = path.join(STATE, 'demo-sign-ins.txt');
     say(`Stillfield answers at ${environment.APP_ORIGIN || `http://localhost:${port}`}`);
