@@ -1,8 +1,9 @@
 import { createHash } from 'node:crypto';
 import { authorise, type Actor } from '@/auth/actor';
 import { Conflict, NotFound } from '@/errors';
-import { readPhoto as readPhotoBytes, writePhoto } from '@/models/blobs';
+
 import { Photo } from '@/models/photo';
+import { readPhotoBytes, writePhoto } from '@/models/photoStore';
 import { newPublicId } from '@/models/publicId';
 import { Sweep } from '@/models/sweep';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
