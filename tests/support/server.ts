@@ -19,7 +19,7 @@ export interface RunningServer {
   stop(): Promise<number | null>;
 }
 
-function freePort(): Promise<number> {
+export function freePort(): Promise<number> {
   return new Promise((resolve, reject) => {
     const probe = createServer();
     probe.once('error', reject);
