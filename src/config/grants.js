@@ -52,13 +52,18 @@ const RIGHTS = {
   equipment: ['SELECT', 'INSERT', 'UPDATE'],
   signal_paths: ['SELECT', 'INSERT', 'UPDATE'],
   limit_sets: ['SELECT', 'INSERT', 'UPDATE'],
-  sweeps: ['SELECT', 'INSERT', 'UPDATE'],
+  // Housekeeping deletes runs that never became whole, and with them their segments and file parts (ON DELETE CASCADE).
+  // A run that did has an evaluation and a file that a run names cannot go: their foreign keys refuse.
+  sweeps: ['SELECT', 'INSERT', 'UPDATE', 'DELETE'],
   retests: ['SELECT', 'INSERT', 'UPDATE'],
   test_positions: ['SELECT', 'INSERT', 'UPDATE'],
   bookings: ['SELECT', 'INSERT', 'UPDATE'],
   booking_guards: ['SELECT', 'INSERT', 'UPDATE'],
   // captions are corrected and pictures withdrawn; their bytes are facts
   photos: ['SELECT', 'INSERT', 'UPDATE'],
+  file_shapes: ['SELECT', 'INSERT', 'UPDATE'],
+  sweep_files: ['SELECT', 'INSERT', 'DELETE'],
+  import_turns: ['SELECT', 'INSERT', 'UPDATE'],
   // files that nobody has kept yet; housekeeping removes them
   uploads: ['SELECT', 'INSERT', 'DELETE'],
   upload_parts: ['SELECT', 'INSERT', 'DELETE'],
@@ -69,7 +74,6 @@ const RIGHTS = {
   factor_table_revisions: ['SELECT', 'INSERT'],
   signal_path_revisions: ['SELECT', 'INSERT'],
   limit_line_revisions: ['SELECT', 'INSERT'],
-  sweep_files: ['SELECT', 'INSERT'],
   sweep_file_parts: ['SELECT', 'INSERT'],
   sweep_segments: ['SELECT', 'INSERT'],
   trace_segments: ['SELECT', 'INSERT'],

@@ -5,8 +5,8 @@ import { Calibration } from './calibration';
 import { Equipment } from './equipment';
 import { Evaluation } from './evaluation';
 import { FactorTableRevision } from './factorTableRevision';
+import { FileShape } from './fileShape';
 import { Job } from './job';
-import { LimitLineRevision } from './limitLineRevision';
 import { LimitLineRevision } from './limitLineRevision';
 import { LimitSet } from './limitSet';
 import { ModificationState } from './modificationState';
@@ -64,6 +64,7 @@ export function associate(): void {
   Sweep.belongsTo(User, { as: 'voider', foreignKey: 'voidedBy' });
   Evaluation.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   Sweep.belongsTo(Evaluation, { as: 'evaluation', foreignKey: 'evaluationId', constraints: false });
+  FileShape.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
   Evaluation.belongsTo(Sweep, { as: 'sweep', foreignKey: 'sweepId' });
 
   Retest.belongsTo(ModificationState, { as: 'state', foreignKey: 'stateId' });

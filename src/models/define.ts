@@ -13,7 +13,9 @@ import { defineEvaluation } from './evaluation';
 import { defineEvaluationCandidate } from './evaluationCandidate';
 import { defineEvaluationLayer } from './evaluationLayer';
 import { defineFactorTableRevision } from './factorTableRevision';
+import { defineFileShape } from './fileShape';
 import { defineIdempotencyKey } from './idempotencyKey';
+import { defineImportTurn } from './importTurn';
 import { defineJob } from './job';
 import { defineLimitLineRevision } from './limitLineRevision';
 import { defineLimitSet } from './limitSet';
@@ -62,6 +64,7 @@ export function defineModels(sequelize: Sequelize): void {
   defineCounter(sequelize);
   defineSetting(sequelize);
   defineProduct(sequelize);
+  defineImportTurn(sequelize);
   defineJob(sequelize);
   defineSample(sequelize);
   defineModificationState(sequelize);
@@ -78,6 +81,7 @@ export function defineModels(sequelize: Sequelize): void {
   defineSweepFile(sequelize);
   defineSweepFilePart(sequelize);
   defineSweep(sequelize);
+  defineFileShape(sequelize);
   defineSweepSegment(sequelize);
   defineTraceSegment(sequelize);
   defineEvaluation(sequelize);

@@ -32,13 +32,27 @@ export interface StoredReading {
   rbwShape?: '6 dB' | '3 dB' | null;
 }
 
+/** What was said of a file of one shape when it was kept; nothing of it depends on the file's values. */
+export interface StoredShapeAnswers {
+  port: 'enclosure' | 'ac-mains' | 'wired-network';
+  pathId: string | null;
+  limitSetId: string;
+  distanceM: number | null;
+  heightSwept: boolean;
+  valuesHold: 'receiver-input' | 'field';
+  alreadyCorrected: string[];
+  frequencyUnit: 'Hz' | 'kHz' | 'MHz' | 'GHz';
+  centreHz: number | null;
+  traces: { index: number; unit: LevelUnit; detector: Detector; rbwHz: number | null }[];
+}
+
 /** Where a file that ends or breaks early was cut, kept on purpose: everything before that line was read. */
 export interface StoredPartial {
   /** Line of the file that is not whole. */
   line: number;
   /** What was found there and what was expected, as the refusal said it. */
   message: string;
-  /** Highest frequency that was read. */
+  /** The last frequency read, in the order of the file. */
   readToHz: number;
 }
 

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { detector, levelUnit, mainsLine, polarisation, publicId, purpose } from './common';
+import { detector, levelUnit, mainsLine, polarisation, port, publicId, purpose } from './common';
 import { operation } from './operation';
 
 /* What was recognised in a file, as src/ingest answers it; the upload sheet shows all of it. */
@@ -126,6 +126,22 @@ export const recognitionView = z.strictObject({
 });
 export type RecognitionView = z.infer<typeof recognitionView>;
 
+/** How the last file of this shape was read; proposals only, each to be shown as such. */
+const shapeProposal = z.strictObject({
+  run: z.strictObject({ id: publicId, number: z.string() }),
+  port,
+  /** A path or limit set of the lab that may be withdrawn by now. */
+  pathId: publicId.nullable(),
+  limitSetId: publicId,
+  distanceM: number,
+  heightSwept: z.boolean(),
+  valuesHold: z.enum(['receiver-input', 'field']),
+  alreadyCorrected: z.array(z.string()),
+  frequencyUnit,
+  centreHz: number,
+  traces: z.array(z.strictObject({ index: z.int(), unit: levelUnit, detector, rbwHz: number })),
+});
+
 export const sweepFileView = z.strictObject({
   id: publicId,
   name: z.string(),
@@ -142,6 +158,8 @@ export const sweepFileView = z.strictObject({
     state: text,
     purpose: purpose.nullable(),
   }),
+  /** Null where no file of this shape was kept, or the run it was kept as was voided. */
+  asBefore: shapeProposal.nullable(),
 });
 export type SweepFileView = z.infer<typeof sweepFileView>;
 
@@ -161,9 +179,10 @@ export const readSweepFile = operation({
   id: 'readSweepFile',
   method: 'GET',
   path: '/api/sweep-files/{id}',
-  summary: 'What was recognised in an uploaded file',
+  summary: 'What was recognised in an uploaded file; `sweep` describes one of several by its own preamble',
   permission: 'sweep-file.read',
   status: 200,
   params: fileParams,
+  query: z.strictObject({ sweep: z.coerce.number().int().min(0).optional() }),
   reply: sweepFileView,
 });

@@ -5,6 +5,7 @@ import { evaluate } from '@/emc/evaluate';
 import type { Evaluation, EvaluationInput, Trace } from '@/emc/types';
 import { isReceiverInput } from '@/emc/units';
 import { Conflict, Invalid, type Issue } from '@/errors';
+import { recogniseSteps } from '@/ingest/recognise';
 import type { Recognition } from '@/ingest/types';
 import { readUpload } from '@/models/blobs';
 import { LimitSet } from '@/models/limitSet';
@@ -80,6 +81,10 @@ function check(
   }
   const sweeps = recognition.sweeps.length;
   if (choice.sweepIndex === null && sweeps > 1) say('/sweepIndex', `is needed: the file holds ${sweeps} sweeps`);
+  if (choice.keepPartial && !recognition.partial) {
+    const why = recognition.refusal ? 'holds nothing before it that could be kept' : 'is whole';
+    say('/keepPartial', `is for a file that breaks off; this one ${why}`);
+  }
   if (choice.sweepIndex !== null && choice.sweepIndex >= Math.max(1, sweeps)) say('/sweepIndex', 'is not in this file');
   if (new Set(choice.traces.map((trace) => trace.index)).size !== choice.traces.length) {
     say('/traces', 'names a trace twice');
@@ -144,6 +149,7 @@ export async function judge(
   const read = await readAsAnswered(bytes, recognition, {
     frequencyUnit,
     sweepIndex: sweepIndex ?? 0,
+    partial: choice.keepPartial,
     ...(centreHz !== null && { centreHz }),
     traces: recognition.traces.map(({ index }) => {
       const chosen = choice.traces.find((trace) => trace.index === index);
@@ -154,7 +160,10 @@ export async function judge(
     const pointer = centreHz === null ? '/frequencyUnit' : '/centreHz';
     throw new Invalid([{ pointer, message: 'leaves no frequency above 0 Hz' }]);
   }
-  const { rbwShape, vbwHz, vbwEnabled } = recognition.settings;
+  // Of several sweeps each may state its own filters.
+  const several = recognition.sweeps.length > 1;
+  const own = several ? await inTurns(recogniseSteps(bytes, undefined, sweepIndex ?? 0)) : recognition;
+  const { rbwShape, vbwHz, vbwEnabled } = own.settings;
   const filter = { rbwShape, vbwHz: vbwEnabled === false ? null : vbwHz };
   const input: EvaluationInput = {
     traces: choice.traces.map((chosen): Trace => {
@@ -167,6 +176,7 @@ export async function judge(
     purpose: choice.purpose,
     port: choice.port,
     rule: 'guarded-by-u',
+    partial: choice.keepPartial,
   };
   return { ...gathered, input, evaluation: await inTurns(evaluate(input)) };
 }

@@ -4,6 +4,7 @@ import { Conflict, Invalid, NotFound } from '@/errors';
 import { keepUpload, readUpload } from '@/models/blobs';
 import { ModificationState } from '@/models/modificationState';
 import { newPublicId } from '@/models/publicId';
+import type { StoredPartial } from '@/models/stored';
 import { Sweep } from '@/models/sweep';
 import { SweepFile } from '@/models/sweepFile';
 import { SweepFilePart } from '@/models/sweepFilePart';
@@ -55,7 +56,7 @@ export async function keepSweep(actor: Actor | null, body: Body, at = new Date()
     const year = dayIn(zone, at).slice(0, 4);
     const number = `R-${year.slice(2)}-${String(await nextNumber(`run-${year}`)).padStart(3, '0')}`;
     await Sweep.update({ number, evaluationId: evaluation.id }, { where: { id: run.id } });
-    await rememberShape(actor, upload, body, at);
+    await rememberShape(actor, upload, run, body, at);
     await settleRetests(actor, { stateId: state.row.id, port: body.port, because: `run ${number} kept`, at });
     recordChange(actor, {
       scope: `job-${state.jobPublicId}`,
@@ -135,6 +136,7 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
     distanceM,
     operatingMode,
     trial,
+    partial: body.keepPartial ? partialOf(upload, axis) : null,
     valuesHold,
     pathRevisionId: judged.path?.revision.id ?? null,
     limitSetId: judged.limitSet.id,
@@ -152,6 +154,13 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
     judged.input.traces.map(({ index, reading }) => ({ index, levels: reading })),
   );
   return run;
+}
+
+/** Where the file was cut, as its refusal said it. */
+function partialOf(upload: Upload, axis: Float64Array): StoredPartial {
+  const { refusal, partial } = recognitionOf(upload);
+  const message = refusal!.message.replace(/ Export [^.]*\.$/, '');
+  return { line: partial!.line, message, readToHz: axis.at(-1)! };
 }
 
 /** The distance between neighbours when all are equal to a millionth of it, else null. */

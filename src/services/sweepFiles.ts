@@ -1,18 +1,19 @@
 import { createHash } from 'node:crypto';
 import { authorise, type Actor } from '@/auth/actor';
-import { NotFound, Unreadable } from '@/errors';
+import { Invalid, NotFound, Unreadable } from '@/errors';
 import { IngestError } from '@/ingest/ingestError';
 import { proposeFromName } from '@/ingest/proposals';
 import { readSweepSteps } from '@/ingest/read';
 import { recogniseSteps } from '@/ingest/recognise';
 import type { Answers, ReadSweep, Recognition } from '@/ingest/types';
-import { writeUpload } from '@/models/blobs';
+import { readUpload, writeUpload } from '@/models/blobs';
 import { newPublicId } from '@/models/publicId';
 import { Sweep } from '@/models/sweep';
 import { SweepFile } from '@/models/sweepFile';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import { Upload } from '@/models/upload';
 import type { RecognitionView, SweepFileView } from '@/schemas/sweepFile';
+import { proposedByShape } from './fileShapes';
 import { inTurns } from './inTurns';
 
 const HELD_MS = 24 * 3600 * 1000;
@@ -40,9 +41,18 @@ export async function createSweepFile(
   });
 }
 
-export async function readSweepFile(actor: Actor | null, publicId: string): Promise<SweepFileView> {
+/** What was recognised; with `sweep`, the file is read again and that sweep described by its own preamble. */
+export async function readSweepFile(actor: Actor | null, publicId: string, sweep?: number): Promise<SweepFileView> {
   authorise(actor, 'sweep-file.read');
-  return unitOfWork(async () => view(await findUpload(publicId)));
+  const upload = await unitOfWork(() => findUpload(publicId));
+  const whole = recognitionOf(upload);
+  if (sweep === undefined || whole.sweeps.length < 2) return unitOfWork(() => view(upload));
+  if (sweep >= whole.sweeps.length) {
+    throw new Invalid([{ pointer: '/query/sweep', message: `is not in this file; it holds ${whole.sweeps.length}` }]);
+  }
+  const bytes = await unitOfWork(() => readUpload(upload.id));
+  const recognition = await inTurns(recogniseSteps(bytes, upload.name, sweep));
+  return unitOfWork(() => view(upload, recognition));
 }
 
 /** An upload that is still held, or NotFound. Uploads belong to the lab; only its people reach this. */
@@ -52,7 +62,11 @@ export async function findUpload(publicId: string, { lock = false } = {}): Promi
   return row;
 }
 
-export const recognitionOf = (row: Upload | SweepFile): Recognition => row.recognition as unknown as Recognition;
+/** What was recognised; a file recognised by an earlier build lacks what that build did not know. */
+export const recognitionOf = (row: Upload | SweepFile): Recognition => ({
+  ...{ broken: null, partial: null, shape: null },
+  ...(row.recognition as unknown as Recognition),
+});
 
 /** Reads the whole file in turns; what the reader refuses becomes an Unreadable with its line. */
 export async function readAsAnswered(
@@ -60,7 +74,7 @@ export async function readAsAnswered(
   recognition: Recognition,
   answers: Answers,
 ): Promise<ReadSweep> {
-  if (recognition.refusal) {
+  if (recognition.refusal && !answers.partial) {
     const { message, line, found, expected } = recognition.refusal;
     throw new Unreadable(message, line, found, expected);
   }
@@ -72,14 +86,14 @@ export async function readAsAnswered(
   }
 }
 
-async function view(upload: Upload): Promise<SweepFileView> {
+async function view(upload: Upload, recognised = recognitionOf(upload)): Promise<SweepFileView> {
   const files = await SweepFile.findAll({ where: { sha256: upload.sha256 }, attributes: ['id'], limit: 20 });
   const runs = files.length
     ? await Sweep.findAll({ where: { sweepFileId: files.map((file) => file.id) }, order: [['id', 'DESC']], limit: 20 })
     : [];
   const proposed = proposeFromName(upload.name);
   // Recognition and its zod schema are the same shape; the compiler checks it here.
-  const recognition: RecognitionView = recognitionOf(upload);
+  const recognition: RecognitionView = recognised;
   return {
     id: upload.publicId,
     name: upload.name,
@@ -94,5 +108,6 @@ async function view(upload: Upload): Promise<SweepFileView> {
       state: proposed.state ?? null,
       purpose: proposed.purpose ?? null,
     },
+    asBefore: recognition.shape === null ? null : await proposedByShape(recognition.shape),
   };
 }
