@@ -1,41 +1,56 @@
-import { promisify } from 'node:util';
-import { gunzip, gzip } from 'node:zlib';
 import { QueryTypes } from 'sequelize';
 import { database } from './database';
+import { packFile, unpackFile } from './filePacking';
 import { PhotoPart } from './photoPart';
 import { SweepFilePart } from './sweepFilePart';
 import { UploadPart } from './uploadPart';
 
-const squeeze = promisify(gzip);
-const expand = promisify(gunzip);
-
 /** Rows of blob tables stay below this, so that one never needs a larger packet than a server's default. */
 export const PART_BYTES = 512 * 1024;
 
-/** The one writer of file bytes: compressed whole (level 6), then cut into rows of at most 512 KiB. */
-export async function writeUpload(uploadId: number, bytes: Uint8Array): Promise<void> {
-  const packed = await squeeze(bytes);
-  for (let seq = 0; seq * PART_BYTES < packed.length; seq++) {
-    await UploadPart.create({ uploadId, seq, part: packed.subarray(seq * PART_BYTES, (seq + 1) * PART_BYTES) });
+/** Writes parts of a file that was packed, the first of them with number `firstSeq`. */
+export async function writeUploadParts(
+  uploadId: number,
+  parts: readonly Uint8Array<ArrayBuffer>[],
+  firstSeq: number,
+): Promise<void> {
+  for (const [i, part] of parts.entries()) {
+    await UploadPart.create({ uploadId, seq: firstSeq + i, part: Buffer.from(part.buffer, 0, part.length) });
   }
 }
 
-/** Copies the parts of an upload into the insert-only table inside the server; the bytes do not travel. */
-export async function keepUpload(uploadId: number, sweepFileId: number): Promise<void> {
-  await database().query(
-    'INSERT INTO sweep_file_parts (sweep_file_id, seq, part) SELECT ?, seq, part FROM upload_parts WHERE upload_id = ?',
-    { replacements: [sweepFileId, uploadId], type: QueryTypes.INSERT },
+/**
+ * Copies up to `most` parts of an upload, from number `firstSeq` on, into the insert-only table inside the server; the
+ * bytes do not travel.
+ * @returns how many there were
+ */
+export async function keepUploadParts(
+  uploadId: number,
+  sweepFileId: number,
+  firstSeq: number,
+  most: number,
+): Promise<number> {
+  const [, copied] = await database().query(
+    `INSERT INTO sweep_file_parts (sweep_file_id, seq, part)
+      SELECT ?, seq, part FROM upload_parts WHERE upload_id = ? AND seq >= ? AND seq < ?`,
+    { replacements: [sweepFileId, uploadId, firstSeq, firstSeq + most], type: QueryTypes.INSERT },
   );
+  return copied;
+}
+
+/** The packed parts of an upload, in order. */
+export async function readUploadParts(uploadId: number): Promise<Buffer[]> {
+  const parts = await UploadPart.findAll({ where: { uploadId }, order: [['seq', 'ASC']] });
+  return parts.map((row) => row.part);
 }
 
 export async function readUpload(uploadId: number): Promise<Buffer> {
-  const parts = await UploadPart.findAll({ where: { uploadId }, order: [['seq', 'ASC']] });
-  return expand(Buffer.concat(parts.map((row) => row.part)));
+  return unpackFile(await readUploadParts(uploadId));
 }
 
 export async function readSweepFile(sweepFileId: number): Promise<Buffer> {
   const parts = await SweepFilePart.findAll({ where: { sweepFileId }, order: [['seq', 'ASC']] });
-  return expand(Buffer.concat(parts.map((row) => row.part)));
+  return unpackFile(parts.map((row) => row.part));
 }
 
 /** A picture is compressed already; it is only cut. */
@@ -49,4 +64,15 @@ export async function writePhoto(photoId: number, size: PhotoPart['size'], bytes
 export async function readPhoto(photoId: number, size: PhotoPart['size']): Promise<Buffer> {
   const parts = await PhotoPart.findAll({ where: { photoId, size }, order: [['seq', 'ASC']] });
   return Buffer.concat(parts.map((row) => row.part));
+}
+
+export async function writeUpload(uploadId: number, bytes: Uint8Array): Promise<void> {
+  const packing = packFile(bytes);
+  let step = packing.next();
+  while (!step.done) step = packing.next();
+  await writeUploadParts(uploadId, step.value, 0);
+}
+
+export async function keepUpload(uploadId: number, sweepFileId: number): Promise<void> {
+  await keepUploadParts(uploadId, sweepFileId, 0, 1e6);
 }

@@ -16,6 +16,8 @@ export class SweepSegment extends Model<InferAttributes<SweepSegment>, InferCrea
   declare highHz: number;
   declare startHz: CreationOptional<number | null>;
   declare stepHz: CreationOptional<number | null>;
+  /** How `axis` is written; see tracePacking. */
+  declare packing: CreationOptional<number>;
   declare axis: CreationOptional<Buffer | null>;
 }
 
@@ -30,6 +32,7 @@ export function defineSweepSegment(sequelize: Sequelize): void {
       highHz: { type: DataTypes.DOUBLE, field: 'high_hz', allowNull: false },
       startHz: { type: DataTypes.DOUBLE, field: 'start_hz', allowNull: true },
       stepHz: { type: DataTypes.DOUBLE, field: 'step_hz', allowNull: true },
+      packing: { type: DataTypes.TINYINT.UNSIGNED, allowNull: false, defaultValue: 0 },
       axis: { type: DataTypes.BLOB('medium'), allowNull: true },
     },
     { sequelize, modelName: 'SweepSegment', tableName: 'sweep_segments', timestamps: false },

@@ -13,6 +13,8 @@ export class TraceSegment extends Model<InferAttributes<TraceSegment>, InferCrea
   declare seq: number;
   declare lowLevel: CreationOptional<number | null>;
   declare highLevel: CreationOptional<number | null>;
+  /** How `levels` are written; see tracePacking. */
+  declare packing: CreationOptional<number>;
   declare levels: Buffer;
 }
 
@@ -24,6 +26,7 @@ export function defineTraceSegment(sequelize: Sequelize): void {
       seq: { type: DataTypes.INTEGER.UNSIGNED, primaryKey: true, allowNull: false },
       lowLevel: { type: DataTypes.FLOAT, field: 'low_level', allowNull: true },
       highLevel: { type: DataTypes.FLOAT, field: 'high_level', allowNull: true },
+      packing: { type: DataTypes.TINYINT.UNSIGNED, allowNull: false, defaultValue: 0 },
       levels: { type: DataTypes.BLOB('medium'), allowNull: false },
     },
     { sequelize, modelName: 'TraceSegment', tableName: 'trace_segments', timestamps: false },

@@ -1,67 +1,26 @@
-import { SweepSegment } from './sweepSegment';
-import { TraceSegment } from './traceSegment';
 import { Op } from 'sequelize';
+import { SweepSegment } from './sweepSegment';
+import { unpackAxis, unpackLevels } from './tracePacking';
+import { TraceSegment } from './traceSegment';
+import { segmentsOf, type Segment } from './traceSegments';
 
-/** 32768 points: an axis row is 256 KiB and a level row 128 KiB, both below the 512 KiB of a blob row. */
-export const SEGMENT_POINTS = 32768;
-
-/** Float arrays are kept little-endian, which every platform this runs on is. */
-const bytesOf = (array: Float64Array | Float32Array): Buffer =>
-  Buffer.from(array.buffer, array.byteOffset, array.byteLength);
-
-function floats64(bytes: Buffer): Float64Array {
-  return new Float64Array(bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.byteLength));
-}
-function floats32(bytes: Buffer): Float32Array {
-  return new Float32Array(bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.byteLength));
-}
-
-/** Start and step when every index reproduces its frequency exactly, else null. */
-export function evenAxis(frequencyHz: Float64Array): { startHz: number; stepHz: number } | null {
-  if (frequencyHz.length < 2) return null;
-  const startHz = frequencyHz[0]!;
-  const stepHz = frequencyHz[1]! - startHz;
-  for (let i = 0; i < frequencyHz.length; i++) if (frequencyHz[i] !== startHz + i * stepHz) return null;
-  return { startHz, stepHz };
-}
-
-/** Lowest and highest finite value; null when there is none. */
-function extremes(values: Float64Array | Float32Array): [number, number] | [null, null] {
-  let low = Infinity;
-  let high = -Infinity;
-  for (const value of values) {
-    if (!Number.isFinite(value)) continue;
-    if (value < low) low = value;
-    if (value > high) high = value;
-  }
-  return low <= high ? [low, high] : [null, null];
-}
-
-/** Writes the axis once and the levels of each trace, in file order, segment by segment. */
-export async function writeTraces(
-  sweepId: number,
-  frequencyHz: Float64Array,
-  traces: { index: number; levels: Float32Array }[],
-): Promise<void> {
-  for (let seq = 0, at = 0; at < frequencyHz.length; seq++, at += SEGMENT_POINTS) {
-    const axis = frequencyHz.subarray(at, at + SEGMENT_POINTS);
-    const [lowHz, highHz] = extremes(axis);
-    const even = evenAxis(axis);
+/** Writes segments of a sweep, the first of them with number `firstSeq`; call it once per transaction of a few. */
+export async function writeSegments(sweepId: number, segments: readonly Segment[], firstSeq: number): Promise<void> {
+  for (const [i, { even, axis, traces, ...range }] of segments.entries()) {
+    const seq = firstSeq + i;
     await SweepSegment.create({
       sweepId,
       seq,
-      firstIndex: at,
-      points: axis.length,
-      lowHz: lowHz ?? 0,
-      highHz: highHz ?? 0,
+      ...range,
       startHz: even?.startHz ?? null,
       stepHz: even?.stepHz ?? null,
-      axis: even ? null : bytesOf(axis),
+      packing: axis?.packing ?? 0,
+      axis: axis && Buffer.from(axis.bytes),
     });
-    for (const { index, levels } of traces) {
-      const part = levels.subarray(at, at + SEGMENT_POINTS);
-      const [lowLevel, highLevel] = extremes(part);
-      await TraceSegment.create({ sweepId, traceIndex: index, seq, lowLevel, highLevel, levels: bytesOf(part) });
+    for (const { index, lowLevel, highLevel, levels } of traces) {
+      const { packing, bytes } = levels;
+      const row = { sweepId, traceIndex: index, seq, lowLevel, highLevel, packing, levels: Buffer.from(bytes) };
+      await TraceSegment.create(row);
     }
   }
 }
@@ -79,11 +38,27 @@ export async function readPieces(sweepId: number, range?: { fromHz: number; toHz
   const rows = await TraceSegment.findAll({ where: { sweepId, seq: segments.map((segment) => segment.seq) } });
   return segments.map((segment) => ({
     firstIndex: segment.firstIndex,
-    frequencyHz: segment.axis ? floats64(segment.axis) : evenPoints(segment),
-    levels: new Map(rows.filter((row) => row.seq === segment.seq).map((row) => [row.traceIndex, floats32(row.levels)])),
+    frequencyHz: axisOf(segment),
+    levels: new Map(
+      rows
+        .filter((row) => row.seq === segment.seq)
+        .map(({ traceIndex, packing, levels }) => [traceIndex, unpackLevels({ packing, bytes: levels })]),
+    ),
   }));
 }
 
-function evenPoints({ points, startHz, stepHz }: SweepSegment): Float64Array {
+function axisOf({ points, startHz, stepHz, packing, axis }: SweepSegment): Float64Array {
+  if (axis) return unpackAxis({ packing, bytes: axis });
   return Float64Array.from({ length: points }, (_, i) => startHz! + i * stepHz!);
+}
+
+export async function writeTraces(
+  sweepId: number,
+  frequencyHz: Float64Array,
+  traces: { index: number; levels: Float32Array }[],
+): Promise<void> {
+  const cutting = segmentsOf(frequencyHz, traces);
+  let step = cutting.next();
+  while (!step.done) step = cutting.next();
+  await writeSegments(sweepId, step.value, 0);
 }

@@ -92,9 +92,7 @@ test('every table of this build has its rights, and audit, evaluations, blobs an
   await fresh.close();
   const tables = rows.map(({ name }) => name);
   expect(Object.keys(RIGHTS).sort()).toEqual(tables.sort());
-  const facts = tables.filter((name) =>
-    /^audit_entries$|^evaluation|_revisions$|_parts$|_segments$|^sweep_files$/.test(name),
-  );
+  const facts = tables.filter((name) => /^audit_entries$|^evaluation|_revisions$|_parts$|_segments$/.test(name));
   expect(facts.length).toBeGreaterThan(5);
   // parts of an upload nobody kept are removed by housekeeping
   const growing = facts.filter((name) => name !== 'upload_parts');
