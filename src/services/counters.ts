@@ -23,3 +23,13 @@ export async function nextNumber(scope: string): Promise<number> {
   });
   return Number(row.value);
 }
+
+/** As many numbers in a row; answers the first. */
+export async function nextNumbers(scope: string, count: number): Promise<number> {
+  await database().query(
+    'INSERT INTO counters (scope, value) VALUES (?, ?) ON DUPLICATE KEY UPDATE value = value + VALUES(value)',
+    { replacements: [scope, count], type: QueryTypes.INSERT },
+  );
+  const row = await Counter.findOne({ where: { scope }, lock: currentTransaction().LOCK.UPDATE, rejectOnEmpty: true });
+  return Number(row.value) - count + 1;
+}

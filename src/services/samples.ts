@@ -15,6 +15,7 @@ import { recordChange } from './audit';
 import { nextNumber } from './counters';
 import { findJob } from './jobs';
 import { olderThan, pageFrom, type PageRequest } from './paging';
+import { settleFitting } from './settleRetests';
 import { changeVersioned } from './versions';
 
 type WholeJob = Job & { organisation: Organisation; product: Product };
@@ -204,6 +205,7 @@ export async function createState(
       after: { sample: sampleId, position, ...body },
       at,
     });
+    if (!row.planned) await settleFitting(actor, row, at);
     return whole(actor, sampleId);
   });
 }
@@ -236,6 +238,7 @@ export async function changeState(
       before,
       after: { ...before, ...body },
     });
+    if (body.planned !== undefined && body.planned !== before.planned) await settleFitting(actor, row);
     return whole(actor, sample.publicId);
   });
 }
