@@ -5,6 +5,7 @@ import { mayRole } from '@/auth/permissions';
 import type { RouteHandler } from '@/http/handle';
 import type { Operation } from '@/schemas/operation';
 import { OPERATIONS } from '@/schemas/operations';
+import { previewResultMail } from '@/services/resultMails';
 import { PASSWORD } from '../auth/people';
 import { freshDatabase, type TestDatabase } from '../support/database';
 import { enterWorld, pixel, sweepFile, type Somebody, type World } from '../support/world';
@@ -43,6 +44,7 @@ interface Sample {
 }
 
 const stateOf = (w: World) => w.sample.states[0]!;
+const resultAsked = (w: World) => ({ stateId: stateOf(w).id, recipientIds: [w.designer.actor.publicId], note: '' });
 
 let turn = 0;
 /** The two spare runs by turns: what the manager did to one, the technician does to the other. */
@@ -108,6 +110,15 @@ const SAMPLES: Record<string, Sample> = {
   createBooking: { body: (w) => ({ ...w.slot, startsAt: '2031-01-08T09:00:00Z', endsAt: '2031-01-08T10:00:00Z' }) },
   changeBooking: { params: (w) => w.booking.id, body: () => ({ endsAt: '2031-01-07T12:00:00Z' }) },
   cancelBooking: { params: (w) => w.spareBooking.id, body: () => ({ reason: 'the sample comes later' }) },
+  listResultMails: {},
+  listResultMailRecipients: { query: (w) => `?stateId=${stateOf(w).id}` },
+  previewResultMail: { body: resultAsked },
+  sendResultMail: {
+    body: async (w) => ({
+      ...resultAsked(w),
+      digest: (await previewResultMail(w.manager.actor, resultAsked(w))).digest,
+    }),
+  },
   listSweeps: {},
   readSweep: { params: (w) => w.run.id },
   readWindow: { params: (w) => w.run.id, query: '?fromHz=100e6&toHz=200e6&columns=64' },
@@ -177,7 +188,7 @@ async function ask(op: Operation, who: Somebody | null): Promise<Response> {
     body = form;
   } else if (sample.body) {
     headers.set('content-type', 'application/json');
-    body = JSON.stringify(sample.body(world));
+    body = JSON.stringify(await sample.body(world));
   }
   const request = new Request(url, { method: op.method, headers, body });
   return handlers.get(op.id)!(request, { params: Promise.resolve(id === undefined ? {} : { id }) });
