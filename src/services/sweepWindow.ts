@@ -38,7 +38,7 @@ export async function readWindow(
 }
 
 /** Judges a trace and collects its columns, one stored piece per step. */
-function* columnsOfPieces(
+export function* columnsOfPieces(
   head: TraceHead,
   { terms, lines }: Pick<EvaluationInput, 'terms' | 'lines'>,
   pieces: readonly StoredPiece[],
