@@ -94,6 +94,42 @@ const SAMPLES: Record<string, Sample> = {
   listPaths: {},
   listLimitSets: {},
   listEquipment: {},
+  readEquipment: { params: (w) => w.items[1]!.equipmentId },
+  readLimitSet: { params: (w) => w.limitSet.publicId },
+  createLimitSet: {
+    body: (w) => ({
+      name: `set ${Math.random()}`,
+      port: 'enclosure',
+      distanceM: 3,
+      lineIds: [w.limitLine.publicId],
+      reason: 'a sample',
+    }),
+  },
+  listFactorTables: {},
+  readFactorTable: { params: (w) => w.items[1]!.tables.any },
+  downloadFactorTable: { params: (w) => w.items[1]!.tables.any },
+  previewFactorTable: { body: (w) => ({ fileId: w.tableFile.id, equipmentId: w.items[1]!.equipmentId, tables: [] }) },
+  enterFactorTables: {
+    body: (w) => ({
+      fileId: w.tableFile.id,
+      equipmentId: w.items[1]!.equipmentId,
+      tables: [{ index: 0, name: `table ${Math.random()}`, quantity: null, revises: null }],
+      calibration: { certificate: 'C-9', laboratory: 'invented', calibratedOn: '2024-05-06', dueOn: null },
+      source: 'certificate C-9',
+      reason: 'a sample',
+    }),
+  },
+  listLimitLines: {},
+  readLimitLine: { params: (w) => w.limitLine.publicId },
+  downloadLimitLine: { params: (w) => w.limitLine.publicId },
+  previewLimitLine: { body: (w) => ({ fileId: w.lineFile.id }) },
+  enterLimitLine: {
+    body: (w) => ({
+      ...{ fileId: w.lineFile.id, unit: 'dBuV/m', name: 'a line', document: 'X 1', class: 'B', port: 'enclosure' },
+      ...{ detector: 'quasi-peak', bandwidthHz: 120e3, distanceM: 3, source: 'table 1', basis: 'from memory' },
+      reason: 'a sample',
+    }),
+  },
   createSweepFile: {},
   readSweepFile: { params: (w) => w.file.id },
   previewSweepFile: { params: (w) => w.file.id, body: (w) => w.choice },
@@ -142,6 +178,16 @@ const SAMPLES: Record<string, Sample> = {
   downloadPhoto: { params: (w) => w.photos[0]!.id },
 };
 
+/** A run can be voided while it has a voice, and restored while it has none. */
+async function giveVoice(id: string, voice: boolean): Promise<void> {
+  const { readSweep } = await import('@/services/sweeps');
+  const { restoreSweep, voidSweep } = await import('@/services/runActs');
+  const { actor } = world.technician;
+  const run = await readSweep(actor, id);
+  if ((run.voided === null) === voice) return;
+  await (voice ? restoreSweep : voidSweep)(actor, id, run.version, { reason: 'for the next test' });
+}
+
 /** A change names the version that is current now; two allowed roles may have changed it before. */
 async function versionFor(op: Operation, id: string | undefined): Promise<string> {
   const reader: Record<string, [string, string]> = {
@@ -161,6 +207,8 @@ async function versionFor(op: Operation, id: string | undefined): Promise<string
     changePhoto: ['readPhoto', id!],
     withdrawPhoto: ['readPhoto', id!],
   };
+  if (op.id === 'restoreSweep') await giveVoice(id!, false);
+  if (op.id === 'voidSweep') await giveVoice(id!, true);
   const [read, record] = reader[op.id]!;
   const answer = await handlers.get(read)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
     params: Promise.resolve({ id: record }),
