@@ -66,5 +66,5 @@ export function contextOf(prepared: Prepared, scan: Scan, first: number): Contex
   const headings = headingsOf(near, template);
   const rest = preamble.filter(({ line }) => headings.line === null || line < headings.line);
   const entries = entriesOf(rest, template.delimiter);
-  return { headings, preamble: rest, entries, declared: settingsOf(entries, template), near };
+  return { headings, preamble: rest, entries, declared: settingsOf(entries, template, near[0]?.line), near };
 }

@@ -72,8 +72,11 @@ function seconds(quantity: Quantity | null): number | null {
   return /^(?:s|sec|seconds?|auto|man(?:ual)?)$/.test(unit) ? quantity.value : null;
 }
 
-/** Settings that a preamble states. What it does not state is null. */
-export function settingsOf(entries: readonly Entry[], style: NumberStyle): Declared {
+/**
+ * Settings that a preamble states. What it does not state is null.
+ * @param ownFrom line from which on the preamble is that of this sweep and not of one before it
+ */
+export function settingsOf(entries: readonly Entry[], style: NumberStyle, ownFrom = 0): Declared {
   const find = (key: RegExp) => quantityOf(nearest(entries, key), style);
   const remarks: Declared['remarks'] = [];
 
@@ -87,7 +90,9 @@ export function settingsOf(entries: readonly Entry[], style: NumberStyle): Decla
     (e) => KEYS.vbwState.test(e.key) || (KEYS.vbw.test(e.key) && /[a-z]/i.test(e.values[0] ?? '')),
   );
   const vbwEnabled = states.map((entry) => onOrOff(entry.values[0])).findLast((state) => state !== null) ?? null;
-  const vbwValues = new Set(entries.filter((e) => KEYS.vbw.test(e.key)).map((e) => quantityOf(e, style)?.value));
+  const everyVbw = entries.filter((e) => KEYS.vbw.test(e.key));
+  const ownVbw = everyVbw.filter((e) => e.line >= ownFrom);
+  const vbwValues = new Set((ownVbw.length > 0 ? ownVbw : everyVbw).map((e) => quantityOf(e, style)?.value));
   vbwValues.delete(undefined);
   if (vbwValues.size > 1 && vbwEnabled !== false) {
     remarks.push({
