@@ -207,8 +207,6 @@ async function versionFor(op: Operation, id: string | undefined): Promise<string
     changePhoto: ['readPhoto', id!],
     withdrawPhoto: ['readPhoto', id!],
   };
-  if (op.id === 'restoreSweep') await giveVoice(id!, false);
-  if (op.id === 'voidSweep') await giveVoice(id!, true);
   const [read, record] = reader[op.id]!;
   const answer = await handlers.get(read)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
     params: Promise.resolve({ id: record }),
@@ -223,6 +221,8 @@ async function ask(op: Operation, who: Somebody | null): Promise<Response> {
   const headers = new Headers({ origin: ORIGIN });
   if (who) headers.set('cookie', who.cookie);
   const id = sample.params?.(world);
+  if (op.id === 'restoreSweep') await giveVoice(id!, false);
+  if (op.id === 'voidSweep' || op.id === 'evaluateSweep') await giveVoice(id!, true);
   if (op.ifMatch) headers.set('if-match', await versionFor(op, id));
   const url =
     ORIGIN +
