@@ -2,8 +2,7 @@ import { runThrough } from './bytes';
 import { delimiterName } from './cells';
 import { IngestError } from './ingestError';
 import { moved } from './numbers';
-import { prepareSteps } from './prepare';
-import { scanSteps } from './scan';
+import { scannedFile, type ScannedFile } from './scannedFile';
 import { axisOf, levelsOf } from './series';
 import { tableFor, tableSteps } from './table';
 import { tracesOf } from './traces';
@@ -41,11 +40,11 @@ function settle(recognition: Recognition, answers: Answers) {
 /**
  * Reads one sweep as recognised and answered: every point, in file order, nothing sorted, merged or rounded. Yields
  * about every 16,384 rows. A refused file is read up to its broken row only where the answers say `partial`.
- * @param file the bytes as they came, or the text decoded from them
+ * @param file the bytes as they came, the text decoded from them, or what was scanned of them already
  * @throws IngestError when the file was refused, an answer it needs is missing, or it is not the file recognised
  */
 export function* readSweepSteps(
-  file: Uint8Array | string,
+  file: Uint8Array | string | ScannedFile,
   recognition: Recognition,
   answers: Answers = {},
 ): Generator<void, ReadSweep> {
@@ -57,8 +56,9 @@ export function* readSweepSteps(
     throw new IngestError(line, found, expected, message);
   }
   const { unit, sweepIndex, centreHz } = settle(recognition, answers);
-  const prepared = yield* prepareSteps(typeof file === 'string' ? new TextEncoder().encode(file) : file);
-  const { template, clean } = prepared;
+  const scanned = scannedFile(typeof file === 'string' ? new TextEncoder().encode(file) : file);
+  const prepared = yield* scanned.prepare();
+  const { template } = prepared;
   const { column } = recognition.frequency;
   const shift = TO_HZ[unit];
   const same =
@@ -71,7 +71,7 @@ export function* readSweepSteps(
   }
   const shifts: number[] = [];
   if (column !== null) shifts[column] = shift;
-  const scan = yield* scanSteps(clean, template, shifts);
+  const scan = yield* scanned.scan(shifts);
   const table = yield* tableSteps(prepared, scan, { layout: recognition.layout, axisColumn: column });
   const piece = table.pieces[sweepIndex];
   if (!piece || (table.damage !== null) !== (answers.partial === true) || table.layout !== recognition.layout) {

@@ -6,13 +6,13 @@ import { correctionsOf } from './corrections';
 import { factorQuestions, factorTraces, isFactorTable } from './factorShape';
 import { axisRemarks, axisUnit, declaredSpan, describeAxis } from './frequency';
 import { IngestError } from './ingestError';
-import { prepareSteps, type Prepared } from './prepare';
+import type { Prepared } from './prepare';
 import { bareLines, previewOf } from './preview';
 import { linesAround } from './damage';
 import { shapeOf } from './shape';
 import { questionsFor } from './questions';
 import { brokenRow, commaTwice, missingIn, notOverFrequency, noTable, type Refusal } from './refusals';
-import { scanSteps } from './scan';
+import { scannedFile, type ScannedFile } from './scannedFile';
 import { settingsOf } from './settings';
 import { axisOf } from './series';
 import { tableFor, tableSteps, type Table } from './table';
@@ -22,6 +22,8 @@ import type { Recognition, RecognisedSettings, RecognisedTrace } from './types';
 import { TO_HZ } from './units';
 
 const MOST_SWEEPS = 2000;
+/** Of fewer rows nobody can tell the column of frequencies from one of levels. */
+const FEWEST_TO_KEEP = 10;
 
 const NO_AXIS: Recognition['frequency'] = {
   column: null,
@@ -110,18 +112,23 @@ function differing(settings: RecognisedSettings, other: RecognisedSettings): Par
 /**
  * What a file is, as far as the file itself says; everything else becomes a question. Never throws on a file: one that
  * cannot be read is answered as refused. Yields often, so that a server can serve others meanwhile.
- * @param raw the file's bytes as they came
+ * @param file the bytes as they came, or what was scanned of them already
  * @param fileName names the only sweep of a file; nothing is concluded from it
  * @param sweepIndex which of several sweeps to describe; without it the first is described, and what differs between
  *   them is left open
  */
-export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?: number): Generator<void, Recognition> {
-  const prepared = yield* prepareSteps(raw);
+export function* recogniseSteps(
+  file: Uint8Array | ScannedFile,
+  fileName?: string,
+  sweepIndex?: number,
+): Generator<void, Recognition> {
+  const scanned = scannedFile(file);
+  const prepared = yield* scanned.prepare();
   const { clean, template, option } = prepared;
   if (template === null) return refused(prepared, noTable(prepared), null);
   let table: Table;
   try {
-    const scan = yield* scanSteps(clean, template);
+    const scan = yield* scanned.scan();
     if (scan.rows < 2) return refused(prepared, noTable(prepared), null);
     table = yield* tableSteps(prepared, scan);
   } catch (error) {
@@ -206,7 +213,7 @@ export function* recogniseSteps(raw: Uint8Array, fileName?: string, sweepIndex?:
     preview: previewOf(prepared, own),
   };
   if (table.damage === null) return recognition;
-  const partial = factor || frequency.points < 2 ? null : partialOf(table, frequency, settings);
+  const partial = factor || frequency.points < FEWEST_TO_KEEP ? null : partialOf(table, frequency, settings);
   const questions = partial === null ? [] : recognition.questions;
   const refusal = brokenRow(table, unit.unit);
   return { ...recognition, kind: 'refused', refusal, broken: brokenOf(prepared, table), partial, questions };

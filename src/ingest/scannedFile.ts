@@ -30,6 +30,10 @@ export class ScannedFile {
   }
 }
 
+export function scannedFile(file: Uint8Array | ScannedFile): ScannedFile {
+  return file instanceof ScannedFile ? file : new ScannedFile(file);
+}
+
 /**
  * The scan that would have been made with `shifts`, from the one made without; null where it cannot be proven to be.
  * A column of numbers with at most 15 digits around a mark is a column of whole numbers over one power of ten; when
