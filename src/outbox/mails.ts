@@ -6,6 +6,7 @@ import { aboutLab } from '@/services/aboutLab';
 import { composeInvitationMail } from '@/services/invitations';
 import type { MailKind } from '@/services/mailQueue';
 import { composeResetMail } from '@/services/passwordReset';
+import { composeResultMail } from '@/services/resultMail';
 import { FinalFailure, NotYet } from './failures';
 import type { LeasedMessage } from './queue';
 
@@ -15,6 +16,7 @@ export type Compose = (payload: Record<string, unknown>) => Promise<Mail>;
 export const MAILS: Readonly<Partial<Record<MailKind, Compose>>> = {
   'mail-reset': composeResetMail,
   'mail-invitation': composeInvitationMail,
+  'mail-result': composeResultMail,
 };
 
 /** Writes an e-mail anew and hands it to the mail server. It is at least once, always with the same Message-ID. */
