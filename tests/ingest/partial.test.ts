@@ -75,6 +75,12 @@ describe('a file that breaks off', () => {
     expect(recognition.traces.map(({ blank }) => blank)).toEqual([false, true]);
   });
 
+  it('of a handful of rows nothing is kept: they do not tell frequencies from levels', () => {
+    const rows = Array.from({ length: 9 }, (_, i) => `${30 + i},${31 + ((i * 7) % 5) / 10}`);
+    expect(recognise(bytesOf([...rows, '39'])).partial).toBeNull();
+    expect(recognise(bytesOf([...rows, '39,31.4', '40'])).partial).toMatchObject({ points: 10 });
+  });
+
   it.each(['comma-twice.csv', 'time-axis.csv', 'levels-alone.txt', 'prose.txt'])('%s holds nothing to keep', (name) => {
     const recognition = recognise(shapeOf(name).bytes);
     expect([recognition.kind, recognition.partial]).toEqual(['refused', null]);
