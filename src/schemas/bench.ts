@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { day, pageOf, pageQuery, polarisation, port, publicId } from './common';
+import { day, instant, pageOf, pageQuery, polarisation, port, publicId, version } from './common';
 import { operation } from './operation';
 import { dueState, limitLineView, pathItemView } from './sweep';
 
@@ -38,6 +38,8 @@ export const limitSetView = z.strictObject({
   port,
   distanceM: z.number().nullable(),
   revision: z.int(),
+  /** Taken out of the choice for new runs, usually by its next revision; runs judged with it keep it. */
+  withdrawnAt: instant.nullable(),
   lines: z.array(limitLineView),
 });
 export type LimitSetView = z.infer<typeof limitSetView>;
@@ -45,11 +47,42 @@ export const listLimitSets = operation({
   id: 'listLimitSets',
   method: 'GET',
   path: '/api/limit-sets',
-  summary: 'Limit sets with their lines, sources and revisions',
+  summary: 'Limit sets in use with their lines, sources and revisions; for a client, those of its own runs',
   permission: 'limit-set.list',
   status: 200,
-  query: pageQuery,
+  query: z.strictObject({ ...pageQuery.shape, withdrawn: z.enum(['without', 'with']).default('without') }),
   reply: pageOf(limitSetView),
+});
+const idParams = z.strictObject({ id: publicId });
+export const readLimitSet = operation({
+  id: 'readLimitSet',
+  method: 'GET',
+  path: '/api/limit-sets/{id}',
+  summary: 'One revision of a limit set, withdrawn or not; for a client, of its own runs',
+  permission: 'limit-set.list',
+  status: 200,
+  params: idParams,
+  reply: limitSetView,
+});
+export const createLimitSet = operation({
+  id: 'createLimitSet',
+  method: 'POST',
+  path: '/api/limit-sets',
+  summary: 'Make a limit set of chosen lines, or the next revision of one; the older is withdrawn from the choice',
+  permission: 'limit.enter',
+  status: 201,
+  body: z.strictObject({
+    name: z.string().trim().min(1, 'is needed').max(160),
+    port,
+    distanceM: z.number().positive().max(1000).nullable(),
+    /** Newest revisions of the lines, in the order they are shown. */
+    lineIds: z.array(publicId).min(1, 'names at least one limit line').max(40),
+    /** The set this is the next revision of; null for a new name. */
+    revises: publicId.nullable().default(null),
+    reason: z.string().trim().min(1, 'is needed').max(300),
+  }),
+  reply: limitSetView,
+  idempotent: true,
 });
 
 export const equipmentView = z.strictObject({
@@ -76,13 +109,41 @@ export const equipmentView = z.strictObject({
   ),
 });
 export type EquipmentView = z.infer<typeof equipmentView>;
+export const equipmentRecord = z.strictObject({
+  ...equipmentView.shape,
+  version,
+  /** Newest first. */
+  calibrations: z.array(
+    z.strictObject({
+      id: publicId,
+      certificate: z.string(),
+      laboratory: z.string(),
+      calibratedOn: day,
+      dueOn: day.nullable(),
+      enteredAt: instant,
+    }),
+  ),
+  /** Signal paths it is part of now. */
+  paths: z.array(z.strictObject({ id: publicId, code: z.string(), name: z.string(), revision: z.int() })),
+});
+export type EquipmentRecord = z.infer<typeof equipmentRecord>;
+export const readEquipment = operation({
+  id: 'readEquipment',
+  method: 'GET',
+  path: '/api/equipment/{id}',
+  summary: 'An item of equipment with its calibrations, factor tables and paths',
+  permission: 'equipment.list',
+  status: 200,
+  params: idParams,
+  reply: equipmentRecord,
+});
 export const listEquipment = operation({
   id: 'listEquipment',
   method: 'GET',
   path: '/api/equipment',
-  summary: 'Equipment with its last calibration and factor tables',
+  summary: 'Equipment with its last calibration and factor tables; by words of the trade',
   permission: 'equipment.list',
   status: 200,
-  query: pageQuery,
+  query: z.strictObject({ ...pageQuery.shape, find: z.string().trim().max(120).optional() }),
   reply: pageOf(equipmentView),
 });

@@ -78,6 +78,7 @@ export async function enterCalibration(
           calibrationId: row.id,
           revision: earlier + 1,
           ...table,
+          userId: actor.userId,
           createdAt: at,
         }),
       );

@@ -16,6 +16,10 @@ export interface NewLimitLine extends Omit<LimitLine, 'id'> {
   port: string;
   source: string;
   basis: string;
+  /** Where it came from a file by hand: why it was entered, and the file. */
+  reason?: string;
+  fileName?: string;
+  fileSha256?: string;
 }
 
 /** Enters a limit line as the next revision of its key; earlier ones stay, and so does what was judged by them. */
@@ -34,6 +38,7 @@ export async function enterLimitLine(
       revision,
       ...rest,
       segments: [...segments],
+      userId: actor.userId,
       createdAt: at,
     });
     recordChange(actor, {

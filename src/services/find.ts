@@ -1,4 +1,4 @@
-import { Op, type WhereOptions } from 'sequelize';
+import { Op } from 'sequelize';
 import type { z } from 'zod';
 import { authorise, visibleOrganisation, type Actor } from '@/auth/actor';
 import { Equipment } from '@/models/equipment';
@@ -12,26 +12,10 @@ import { FOUND_KINDS, type Found, type FoundItem, type FoundKind, type findQuery
 import { olderThan, pageFrom, type Page, type PageRequest } from './paging';
 import { runInclude, type Run } from './runs';
 import { stateLabel } from './samples';
+import { wordsIn } from './tradeWords';
 
 /** How many of each kind stand on the first answer. */
 const FIRST_FEW = 8;
-
-/** The trade has two names for each of these networks; either finds the other. */
-const ALSO: Readonly<Record<string, string>> = { lisn: 'amn', amn: 'lisn', isn: 'aan', aan: 'isn' };
-
-/** Every word has to stand in one of the columns; `%` and `_` in a word are themselves. */
-export function wordsIn(q: string, columns: readonly string[]): WhereOptions {
-  const words = q.toLowerCase().split(/\s+/).filter(Boolean).slice(0, 8);
-  return {
-    [Op.and]: words.map((word) => ({
-      [Op.or]: [word, ALSO[word]]
-        .filter((form) => form !== undefined)
-        .flatMap((form) =>
-          columns.map((column) => ({ [column]: { [Op.like]: `%${form.replace(/[\\%_]/g, '\\$&')}%` } })),
-        ),
-    })),
-  };
-}
 
 type JobOf = Job & { organisation: Organisation; product: Product };
 type Search = (own: number | null, q: string, page: PageRequest) => Promise<Page<FoundItem>>;

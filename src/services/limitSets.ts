@@ -1,6 +1,9 @@
-import { authorise, type Actor } from '@/auth/actor';
+import { Op, QueryTypes } from 'sequelize';
+import { authorise, visibleOrganisation, type Actor } from '@/auth/actor';
 import type { LineUnit } from '@/emc/kinds';
 import type { LimitLine } from '@/emc/types';
+import { NotFound } from '@/errors';
+import { database } from '@/models/database';
 import { LimitLineRevision } from '@/models/limitLineRevision';
 import { LimitSet } from '@/models/limitSet';
 import { unitOfWork } from '@/models/unitOfWork';
@@ -38,18 +41,49 @@ export async function linesOf(sets: LimitSet[]): Promise<Map<number, LimitLineVi
   return new Map(sets.map((set) => [set.id, set.lineRevisionIds.map((id) => byId.get(id)!)]));
 }
 
-export async function listLimitSets(actor: Actor | null, page: PageRequest) {
+function setView(row: LimitSet, lines: LimitLineView[]): LimitSetView {
+  const { publicId: id, name, port, distanceM, revision, withdrawnAt } = row;
+  return { id, name, port, distanceM, revision, withdrawnAt: withdrawnAt?.toISOString() ?? null, lines };
+}
+
+/** Row ids of the sets a client's own runs were judged by; null for the lab's people, who see every set. */
+async function setsOfOwnRuns(actor: Actor): Promise<number[] | null> {
+  const own = visibleOrganisation(actor);
+  if (own === null) return null;
+  const rows = await database().query<{ id: number | string }>(
+    `SELECT DISTINCT s.limit_set_id AS id FROM sweeps s
+     JOIN modification_states m ON m.id = s.state_id JOIN samples p ON p.id = m.sample_id
+     JOIN jobs j ON j.id = p.job_id WHERE j.organisation_id = :own AND s.evaluation_id IS NOT NULL`,
+    { replacements: { own }, type: QueryTypes.SELECT },
+  );
+  return rows.map(({ id }) => Number(id));
+}
+
+/** Sets in use, newest first; a client sees those of its own runs, whether withdrawn since or not. */
+export async function listLimitSets(actor: Actor | null, page: PageRequest & { withdrawn?: 'without' | 'with' }) {
   authorise(actor, 'limit-set.list');
   return unitOfWork(async () => {
+    const own = await setsOfOwnRuns(actor);
+    const all = own !== null || page.withdrawn === 'with';
     const rows = await LimitSet.findAll({
-      where: { withdrawnAt: null, ...olderThan(page) },
+      where: {
+        [Op.and]: [olderThan(page), all ? {} : { withdrawnAt: null }, own === null ? {} : { id: own }],
+      },
       order: [['id', 'DESC']],
       limit: page.limit + 1,
     });
     const lines = await linesOf(rows);
-    return pageFrom(rows, page, (row): LimitSetView => {
-      const { publicId: id, name, port, distanceM, revision } = row;
-      return { id, name, port, distanceM, revision, lines: lines.get(row.id)! };
-    });
+    return pageFrom(rows, page, (row) => setView(row, lines.get(row.id)!));
+  });
+}
+
+/** One revision of a set, withdrawn or not. */
+export async function readLimitSet(actor: Actor | null, publicId: string): Promise<LimitSetView> {
+  authorise(actor, 'limit-set.list');
+  return unitOfWork(async () => {
+    const row = await LimitSet.findOne({ where: { publicId } });
+    const own = row && (await setsOfOwnRuns(actor));
+    if (!row || (own !== null && !own.includes(row.id))) throw new NotFound('limit set');
+    return setView(row, (await linesOf([row])).get(row.id)!);
   });
 }

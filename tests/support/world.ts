@@ -161,6 +161,9 @@ export async function enterWorld() {
     trial: null,
   };
   const file = await createSweepFile(technician.actor, sweepFile());
+  const text = (name: string, lines: string[]) => ({ name, bytes: new TextEncoder().encode(`${lines.join('\n')}\n`) });
+  const tableFile = await createSweepFile(boss, text('cable.csv', ['Frequency (MHz);Loss (dB)', '20;1,9', '1000;2,6']));
+  const lineFile = await createSweepFile(boss, text('line.csv', ['Start MHz;Stop MHz;Limit dBuV/m', '30;230;39', '230;1000;47'])); // prettier-ignore
   const run = await keepSweep(technician.actor, { ...choice, ...about, fileId: file.id });
   // A second sample of the same client, whose two runs are moved, voided and judged again.
   const other = await createSample(technician.actor, job.id, { serial: 'P2-0194', firmware: '', description: '' });
@@ -212,6 +215,10 @@ export async function enterWorld() {
     outsider,
     invited,
     limitSet,
+    limitLine,
+    items,
+    tableFile,
+    lineFile,
     product,
     job,
     sample,
