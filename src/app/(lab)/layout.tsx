@@ -6,6 +6,7 @@ import { SignOutButton } from './SignOutButton';
 import { ROOM_COOKIE, roomOf } from '@/components/shell/room';
 import type { Section } from '@/components/shell/SectionNav';
 import { TopLine } from '@/components/shell/TopLine';
+import { lettersShown } from '@/services/mailbox';
 import { listProducts } from '@/services/products';
 import type { Actor } from '@/auth/actor';
 
@@ -17,6 +18,7 @@ const LAB_SECTIONS: Section[] = [
 
 /** A designer's sections are their own products; beyond five the rest stand on the products sheet. */
 async function sectionsOf(actor: Actor): Promise<Section[]> {
+  if (actor.role === 'manager') return [...LAB_SECTIONS, { href: '/people', name: 'People' }];
   if (actor.role !== 'designer') return LAB_SECTIONS;
   const { items, next } = await listProducts(actor, { limit: 5 });
   const products = items.map(({ id, code }) => ({ href: `/products/${id}`, name: code }));
@@ -41,7 +43,8 @@ export default async function LabLayout({ children }: { children: ReactNode }) {
         room={room}
         menu={
           <>
-            <Link href="/account">Where you are signed in</Link>
+            <Link href="/account">Your account</Link>
+            {lettersShown() && <Link href="/letters">Letters of the demo</Link>}
             <SignOutButton />
           </>
         }

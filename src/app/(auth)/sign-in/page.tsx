@@ -5,6 +5,8 @@ import { currentActor } from '@/app/currentActor';
 import { ROOM_COOKIE, roomOf } from '@/components/shell/room';
 import { SignInFrame } from '@/components/shell/SignInFrame';
 import { aboutLab } from '@/services/aboutLab';
+import { lettersShown } from '@/services/mailbox';
+import { DemoLetters } from '../DemoLetters';
 import { nextPath } from './nextPath';
 import { SignInForm } from './SignInForm';
 
@@ -19,7 +21,7 @@ export default async function SignInPage({ searchParams }: Props) {
   if (await currentActor()) redirect(next);
   const { name } = await aboutLab();
   const room = roomOf((await cookies()).get(ROOM_COOKIE)?.value);
-  const foot = 'New here? The lab enters you and gives you your first password.';
+  const foot = lettersShown() ? <DemoLetters /> : 'New here? The lab enters you and sends you an invitation.';
   return (
     <SignInFrame title="Sign in" labName={name} room={room} foot={foot}>
       <SignInForm next={next} />

@@ -3,14 +3,16 @@ import { requireActor } from '@/app/requireActor';
 import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
 import { Pager } from '@/components/ui/Pager';
+import { SectionHeading } from '@/components/ui/SectionHeading';
 import { Cell, HeadCell, KeyCell, Row, Table, TableHead } from '@/components/ui/Table';
 import { formatDayTime } from '@/format/dates';
 import { aboutLab } from '@/services/aboutLab';
 import { listSessions } from '@/services/sessions';
 import { agentName } from './agentName';
+import { ChangePassword } from './ChangePassword';
 import { EndSession, SignOut } from './EndSession';
 
-export const metadata: Metadata = { title: 'Where you are signed in' };
+export const metadata: Metadata = { title: 'Your account' };
 
 const PAGE = 50;
 /** Columns a phone leaves out. */
@@ -33,7 +35,7 @@ export default async function AccountPage({ searchParams }: Props) {
     <Sheet
       header={
         <SheetHeader
-          title="Where you are signed in"
+          title="Your account"
           identity={
             <>
               <span>{actor.name}</span>
@@ -46,10 +48,14 @@ export default async function AccountPage({ searchParams }: Props) {
         />
       }
     >
-      <p className="t-finding mt-2">
+      <SectionHeading className="mt-5">Your password</SectionHeading>
+      <p className="t-text mt-1">Changing it ends your other sessions. Nobody at the lab asks for it.</p>
+      <ChangePassword email={actor.email} />
+      <SectionHeading className="mt-6">Where you are signed in</SectionHeading>
+      <p className="t-text mt-1">
         A session ends 12 hours after its last use, and 7 days after signing in at the latest.
       </p>
-      <div className="mt-5">
+      <div className="mt-2">
         <Table caption="Your sessions, newest first">
           <TableHead>
             <HeadCell>Browser</HeadCell>
