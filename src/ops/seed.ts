@@ -13,6 +13,7 @@ import { unitOfWork } from '@/models/unitOfWork';
 import { dayIn } from '@/services/lab';
 import { seedJobs, seedRuns } from './seedJobs';
 import { seedEquipment, seedPaths } from './seedBench';
+import { seedBookings, seedPositions, seedResultMails } from './seedBookings';
 import { enterPublishedLimits } from './publishedLimits';
 import { seedPeople } from './seedPeople';
 
@@ -31,6 +32,9 @@ async function seed(): Promise<void> {
     await seedPaths(manager, items, at);
     const states = await seedJobs(people, at);
     const runs = await seedRuns(people, states, sets, seedDay);
+    const booked = await seedBookings(people, await seedPositions(people, at), states, at);
+    await seedResultMails(people, states, at);
+    process.stdout.write(`  ${booked} bookings\n`);
     process.stdout.write(`  ${items.size} items of equipment, ${sets.size} limit sets, ${runs} runs\n`);
   });
   const state = process.env.STILLFIELD_STATE ?? '.stillfield';
