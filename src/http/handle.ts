@@ -207,17 +207,28 @@ function readKey(request: Request): string | null {
   return key;
 }
 
-const DATABASE_GONE = /^SequelizeConnection|^SequelizeHostNot|^SequelizeAccessDenied/;
+/** Of an error that stands for a database that does not answer; `uncertain` when it went during a commit. */
+interface Gone {
+  digest?: string;
+  uncertain?: boolean;
+}
+
+const RETRY_AFTER_S = 2;
 
 /** How far a request came: a failure after the work began may have come after its commit. */
 type Reached = 'input' | 'work' | 'keyed work';
 
-/** What became of a request that broke, as far as it is known. */
-function outcomeOf(op: Operation, reached: Reached): string {
-  if (op.method === 'GET') return 'This could not be read.';
-  if (reached === 'input') return 'Nothing was changed.';
+/** What became of a request that broke, as far as it is known, and whether the same may be sent again. */
+function outcomeOf(op: Operation, reached: Reached, gone?: Gone): { detail: string; repeatable: boolean } {
+  if (op.method === 'GET') return { detail: 'This could not be read.', repeatable: true };
+  if (reached === 'input') return { detail: 'Nothing was changed.', repeatable: true };
+  // Under a key the whole of the work is one unit, and it did not come to its commit.
+  if (reached === 'keyed work' && gone?.uncertain === false)
+    return { detail: 'Nothing was changed.', repeatable: true };
+  if (op.repeatable) return { detail: 'This could not be finished.', repeatable: true };
   const look = 'It is not certain that this was done. Look before you repeat it';
-  return reached === 'work' ? `${look}.` : `${look}; a repeat with the same Idempotency-Key is done once.`;
+  if (reached === 'work') return { detail: `${look}.`, repeatable: false };
+  return { detail: `${look}; a repeat with the same Idempotency-Key is done once.`, repeatable: true };
 }
 
 interface Broken {
@@ -237,14 +248,16 @@ function refuse(error: unknown, op: Operation, { reached, actor, address }: Brok
     }
     return problemOf(error);
   }
-  const name = (error as Error)?.name ?? '';
-  if (DATABASE_GONE.test(name)) {
-    securityLog({ event: 'error', operation: op.id, address, status: 503, detail: name });
-    const again = op.method === 'GET' || reached === 'input' ? ' Try again in a few seconds.' : '';
-    return problemResponse('unavailable', outcomeOf(op, reached) + again, {}, { 'retry-after': '5' });
+  const gone = (error ?? {}) as Gone;
+  if (gone.digest === 'database-gone') {
+    securityLog({ event: 'error', operation: op.id, address, status: 503, detail: 'DatabaseGone' });
+    const { detail, repeatable } = outcomeOf(op, reached, gone);
+    const again = repeatable && !detail.includes('repeat') ? ' Try again in a few seconds.' : '';
+    const retry = { 'retry-after': String(RETRY_AFTER_S) };
+    return problemResponse('unavailable', detail + again, { ...(repeatable && { repeatable }) }, retry);
   }
   const detail = error instanceof Error ? `${error.name}: ${error.message}`.slice(0, 400) : 'unknown';
   securityLog({ event: 'error', userId: actor?.publicId ?? null, operation: op.id, address, status: 500, detail });
   if (process.env.STILLFIELD_TRACE) console.error(error);
-  return problemResponse('internal', `${outcomeOf(op, reached)} The lab’s log holds the cause.`);
+  return problemResponse('internal', `${outcomeOf(op, reached).detail} The lab’s log holds the cause.`);
 }

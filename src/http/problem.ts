@@ -26,6 +26,8 @@ export interface Problem {
   found?: string;
   expected?: string;
   version?: number;
+  /** The same may be sent again as it is: nothing was changed, or a repeat is done once. */
+  repeatable?: boolean;
 }
 
 /** An RFC 9457 reply. `kind` is the last part of its type, a stable word for programs. */

@@ -1,5 +1,5 @@
 import { AsyncLocalStorage } from 'node:async_hooks';
-import { Sequelize } from 'sequelize';
+import { type Options, Sequelize } from 'sequelize';
 import { connectionOptions } from '@/config/database';
 import { env } from '@/config/env';
 import { associate } from './associations';
@@ -21,13 +21,31 @@ const namespace = {
   bind: <F>(work: F): F => work,
 };
 
+/** A person waits this long for a free connection, and no longer than that to hear that there is none. */
+const ACQUIRE_MS = 6000;
+const CONNECT_MS = 3000;
+/** A line that went without a word; longer than the 50 s a query may wait for a row lock. */
+const SILENCE_MS = 90_000;
+/** The pool looks for idle connections this often; one that died is found when it is taken as well. */
+const EVICT_MS = 2000;
+
+/** For processes that serve: they hear soon that the database is gone, and use no connection that died. */
+function servingOptions(url: string): Options {
+  const options = connectionOptions(url);
+  return {
+    ...options,
+    pool: { ...options.pool, acquire: ACQUIRE_MS, evict: EVICT_MS },
+    dialectOptions: { ...options.dialectOptions, connectTimeout: CONNECT_MS, socketTimeout: SILENCE_MS },
+  };
+}
+
 let defined = false;
 
 /** The one pool of this process; the models of this bundle are ready to use once it has been called. */
 export function database(): Sequelize {
   if (!holder.stillfieldDatabase) {
     Sequelize.useCLS(namespace);
-    const sequelize = new Sequelize(connectionOptions(env().DATABASE_URL));
+    const sequelize = new Sequelize(servingOptions(env().DATABASE_URL));
     sequelize.addHook('beforeQuery', (options: { transaction?: unknown }) => {
       if (!options.transaction) throw new Error('A query ran outside a unit of work');
     });

@@ -1,5 +1,6 @@
 import type { Transaction } from 'sequelize';
 import { database, unitScope } from './database';
+import { asGone } from './databaseGone';
 
 /** Deadlock, lock wait, record changed since last read, node not ready: the whole unit may be tried again. */
 const RETRIED = new Set([1213, 1205, 1020, 1047]);
@@ -14,18 +15,21 @@ function errno(error: unknown): number | undefined {
  * Runs `work` in one READ COMMITTED transaction and commits it; on a lost race the whole of it runs again, up to five
  * times, so `work` keeps nothing outside the database between tries. Inside another unit it joins that one.
  * `beforeCommit` hooks registered with `lastly` run at the end, in the order of their sort keys.
+ * @throws {DatabaseGone} when the database does not answer
  */
 export async function unitOfWork<T>(work: () => Promise<T>): Promise<T> {
   if (unitScope()?.get('transaction')) return work();
   for (let attempt = 1; ; attempt++) {
+    let committing = false;
     try {
       return await database().transaction(async () => {
         const result = await work();
         await runLast();
+        committing = true;
         return result;
       });
     } catch (error) {
-      if (attempt >= TRIES || !RETRIED.has(errno(error) ?? 0)) throw error;
+      if (attempt >= TRIES || !RETRIED.has(errno(error) ?? 0)) throw asGone(error, committing);
       await new Promise((resolve) => setTimeout(resolve, 10 * 2 ** attempt * (0.5 + Math.random())));
     }
   }

@@ -26,6 +26,8 @@ export interface Operation<
   idempotent?: boolean;
   /** The change names the version it was made on in If-Match. */
   ifMatch?: boolean;
+  /** A repeat does no harm and needs no key, such as signing in. */
+  repeatable?: boolean;
   /** Body is multipart/form-data with one `file`; reply is bytes. */
   upload?: boolean;
   download?: boolean;

@@ -22,6 +22,7 @@ export const signIn = operation({
   status: 200,
   body: signInBody,
   reply: meView,
+  repeatable: true,
 });
 export const signOut = operation({
   id: 'signOut',
@@ -30,6 +31,7 @@ export const signOut = operation({
   summary: 'Sign out: end this session',
   permission: null,
   status: 204,
+  repeatable: true,
 });
 export const readMe = operation({
   id: 'readMe',

@@ -70,6 +70,8 @@ export const keepSweep = z.strictObject({
   trial: z.string().trim().min(1).max(120).nullable().default(null),
 });
 
+export type KeepSweep = z.infer<typeof keepSweep>;
+
 export const limitSegment = z.strictObject({
   startHz: z.number(),
   stopHz: z.number(),
@@ -339,6 +341,7 @@ export const previewSweepFile = operation({
   params: sweepParams,
   body: sweepChoice,
   reply: previewView,
+  repeatable: true,
 });
 export const listSweeps = operation({
   id: 'listSweeps',
@@ -375,11 +378,11 @@ export const listCandidates = operation({
   id: 'listCandidates',
   method: 'GET',
   path: '/api/sweeps/{id}/candidates',
-  summary: 'Candidates of a run, worst first',
+  summary: 'Candidates of a run, worst first; of its current evaluation unless an earlier one is named',
   permission: 'sweep.read',
   status: 200,
   params: sweepParams,
-  query: pageQuery,
+  query: z.strictObject({ ...pageQuery.shape, evaluation: publicId.optional() }),
   reply: z.strictObject({ total: z.int(), items: z.array(candidateView), next: z.string().nullable() }),
 });
 export const readWorking = operation({

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import type { Actor } from '@/auth/actor';
 import { Conflict } from '@/errors';
+import { isGone } from '@/models/databaseGone';
 import { IdempotencyKey } from '@/models/idempotencyKey';
 import { unitOfWork } from '@/models/unitOfWork';
 
@@ -41,7 +42,11 @@ export async function once<T>(
       return { reply, repeated: false };
     });
   } catch (error) {
-    const winner = await stored();
+    // A database that is gone cannot tell who won; what happened first is what is said.
+    const winner = await stored().catch((later: unknown) => {
+      if (isGone(later)) throw error;
+      throw later;
+    });
     if (winner) return winner;
     throw error;
   }

@@ -5,7 +5,7 @@ import { Conflict, NotFound } from '@/errors';
 import { Photo } from '@/models/photo';
 import { readPhotoBytes, writePhoto } from '@/models/photoStore';
 import { newPublicId } from '@/models/publicId';
-import { Sweep } from '@/models/sweep';
+import { type Sweep } from '@/models/sweep';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import type { User } from '@/models/user';
 import type { PhotoView } from '@/schemas/setup';

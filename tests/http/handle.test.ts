@@ -6,6 +6,7 @@ import { POST as createProduct } from '@/app/api/products/route';
 import { POST as signIn } from '@/app/api/session/route';
 import { closePasswordWorkers } from '@/auth/passwordWorker';
 import { handle } from '@/http/handle';
+import { DatabaseGone } from '@/models/databaseGone';
 import { Product } from '@/models/product';
 import { unitOfWork } from '@/models/unitOfWork';
 import { operation } from '@/schemas/operation';
@@ -108,17 +109,36 @@ describe('what a broken request says of itself', () => {
 
   test('a database that goes during a write is 503 without a promise; during a read it is worth another try', async () => {
     const gone = async () => {
-      throw Object.assign(new Error('gone'), { name: 'SequelizeConnectionError' });
+      throw new DatabaseGone(new Error('gone'), true);
     };
     const write = await handle(createProductOperation, gone)(post(entry('K-3'), asTechnician()));
-    expect([write.status, await detail(write)]).toEqual([
+    expect([write.status, await write.json()]).toMatchObject([
       503,
-      'It is not certain that this was done. Look before you repeat it.',
+      { detail: 'It is not certain that this was done. Look before you repeat it.' },
     ]);
     const read = operation({ id: 'r', method: 'GET', path: '/x', summary: '', permission: null, status: 200 });
     const answer = await handle(read, gone)(new Request(`${ORIGIN}/x`));
     expect([answer.status, await detail(answer)]).toEqual([503, 'This could not be read. Try again in a few seconds.']);
-    expect(answer.headers.get('retry-after')).toBe('5');
+    expect(answer.headers.get('retry-after')).toBe('2');
+  });
+
+  test.each([
+    ['before its commit nothing was changed', false, /^Nothing was changed\. Try again/],
+    [
+      'during its commit a repeat under the key is done once',
+      true,
+      /^It is not certain.*same Idempotency-Key is done once\.$/,
+    ],
+  ])('under a key, a database that goes %s, and either may be repeated', async (_what, uncertain, words) => {
+    const gone = async () => {
+      throw new DatabaseGone(new Error('gone'), uncertain);
+    };
+    const key = { 'idempotency-key': `gone-${uncertain}-1` };
+    const answer = await handle(createProductOperation, gone)(post(entry('K-5'), asTechnician(key)));
+    expect([answer.status, await answer.json()]).toMatchObject([
+      503,
+      { repeatable: true, detail: expect.stringMatching(words) },
+    ]);
   });
 
   test('a repeat under a key answers the same bytes', async () => {

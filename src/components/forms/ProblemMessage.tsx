@@ -5,9 +5,16 @@ import { wholeFormIssues, type Problem } from './problem';
 export function ProblemMessage({ problem, className }: { problem: Problem | null; className?: string }) {
   if (!problem) return null;
   const lead = stopped(problem.title);
-  const rest = [problem.detail, ...wholeFormIssues(problem)].filter((text) => text !== null).map(stopped);
+  const kept =
+    problem.status === 503 && !problem.detail?.includes('still here') ? 'What you entered is still here.' : null;
+  const rest = [problem.detail, kept, ...wholeFormIssues(problem)].filter((text) => text !== null).map(stopped);
   return (
-    <Message tone="over" lead={lead} live={problem.status === 0 ? 'assertive' : 'polite'} className={className}>
+    <Message
+      tone={problem.waiting ? 'inconclusive' : 'over'}
+      lead={lead}
+      live={problem.status === 0 && !problem.waiting ? 'assertive' : 'polite'}
+      className={className}
+    >
       {rest.filter((text) => text !== lead).join(' ')}
     </Message>
   );

@@ -15,6 +15,12 @@ export interface Problem {
   errors: FieldIssue[];
   /** Of a file that was refused: where it stopped, what stood there, what was expected. */
   refusal: { line: number | null; found: string; expected: string } | null;
+  /** The server says that the same may be sent again as it is. */
+  repeatable?: boolean;
+  /** How long the server asks to be left alone. */
+  retryAfterS?: number | null;
+  /** No end yet: it is sent again by itself. */
+  waiting?: boolean;
 }
 
 /** Error by field: keys as in the body, nested ones with slashes, `traces/0/unit`; the first message of each. */
@@ -56,6 +62,27 @@ export const UNREACHABLE: Problem = {
   refusal: null,
 };
 
+/** The same where the browser knows that it is the device itself that is cut off. */
+export const OFFLINE: Problem = {
+  ...UNREACHABLE,
+  title: 'This device has no network.',
+  detail: 'What you entered is still here. Press again when the network is back; it is done once, however often.',
+};
+
+/** What is said while something is sent again by itself. */
+export function waitingFor(problem: Problem): Problem {
+  const title =
+    problem.status === 503
+      ? 'The lab’s database does not answer just now.'
+      : 'The lab’s server does not answer just now.';
+  return {
+    ...problem,
+    title: problem === OFFLINE ? OFFLINE.title : title,
+    detail: 'What you entered is still here and is sent again by itself; it is done once.',
+    waiting: true,
+  };
+}
+
 const PLAIN: Record<number, [title: string, detail: string]> = {
   401: ['You are signed out.', 'What you entered is still here. Sign in again in another tab, then press again.'],
   403: ['Your role does not allow this.', 'Ask a manager of the lab.'],
@@ -64,8 +91,13 @@ const PLAIN: Record<number, [title: string, detail: string]> = {
   412: ['Somebody else changed this first.', 'Reload the page to see the change, then make yours again.'],
   413: ['This is larger than the server takes.', 'Send it in smaller parts.'],
   429: ['Too many attempts.', 'Wait a minute, then press again.'],
-  503: ['The lab’s server is not ready.', 'What you entered is still here. Wait a minute, then press again.'],
+  503: ['The lab’s database does not answer.', 'What you entered is still here. Wait a minute, then press again.'],
 };
+
+/** Seconds of a Retry-After header; null for none, and for a date, which our server does not send. */
+export function retryAfterOf(header: string | null): number | null {
+  return header !== null && /^\d{1,5}$/.test(header) ? Number(header) : null;
+}
 
 /** Reads an answer that is not 2xx. One that is no problem document still becomes a sentence with a next step. */
 export function problemOf(status: number, contentType: string | null, text: string): Problem {
@@ -77,7 +109,16 @@ export function problemOf(status: number, contentType: string | null, text: stri
   if (!contentType?.includes('json')) return plain;
   const sent = parsed(text);
   if (typeof sent !== 'object' || sent === null) return plain;
-  const { type, title: said, detail: more, errors, line, found, expected } = sent as Record<string, unknown>;
+  const {
+    type,
+    title: said,
+    detail: more,
+    errors,
+    line,
+    found,
+    expected,
+    repeatable,
+  } = sent as Record<string, unknown>;
   return {
     type: typeof type === 'string' ? type : plain.type,
     title: typeof said === 'string' && said !== '' ? said : title,
@@ -88,6 +129,7 @@ export function problemOf(status: number, contentType: string | null, text: stri
       typeof found === 'string' && typeof expected === 'string'
         ? { line: typeof line === 'number' ? line : null, found, expected }
         : null,
+    ...(repeatable === true && { repeatable }),
   };
 }
 

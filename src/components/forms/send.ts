@@ -1,4 +1,5 @@
-import { problemOf, UNREACHABLE, type Problem } from './problem';
+import { OFFLINE, problemOf, retryAfterOf, UNREACHABLE, type Problem } from './problem';
+import { untilAnswered, type Patience } from './untilAnswered';
 
 /** The part of an API operation that a browser needs; every `operation(…)` of @/schemas fits. */
 export interface Submittable {
@@ -13,6 +14,11 @@ export interface SendOptions {
   /** The `version` the change was made on. */
   ifMatch?: number | string;
   signal?: AbortSignal;
+  /** Told each time that it waits before it sends again; `waits` is for tests. */
+  onWait?: Patience['onWait'];
+  /** Ends the waiting, not what is on its way. */
+  patience?: AbortSignal;
+  waits?: Patience['waits'];
 }
 
 export type Outcome<Reply> =
@@ -27,12 +33,32 @@ export function filledPath(path: string, params: SendOptions['params'] = {}): st
   });
 }
 
-/** Sends one operation to our own origin. Never throws for what the network or the server does. */
+/**
+ * Sends one operation to our own origin. Never throws for what the network or the server does. While no answer comes, or
+ * a 502 to 504, it sends again by itself for about twenty seconds: a GET, or a POST under an Idempotency-Key, which the
+ * server does once; anything else only where the server says that it may be repeated.
+ */
 export async function send<Reply>(
   operation: Submittable,
   body: unknown,
-  { params, ifMatch, signal, idempotencyKey }: SendOptions & { idempotencyKey?: string },
+  options: SendOptions & { idempotencyKey?: string },
   doFetch: typeof fetch = fetch,
+): Promise<Outcome<Reply>> {
+  const { signal, patience, onWait, waits } = options;
+  const once = operation.method === 'GET' || (operation.method === 'POST' && options.idempotencyKey !== undefined);
+  return untilAnswered(() => sendOnce<Reply>(operation, body, options, doFetch), {
+    once,
+    signals: [signal, patience],
+    onWait,
+    waits,
+  });
+}
+
+async function sendOnce<Reply>(
+  operation: Submittable,
+  body: unknown,
+  { params, ifMatch, signal, idempotencyKey }: SendOptions & { idempotencyKey?: string },
+  doFetch: typeof fetch,
 ): Promise<Outcome<Reply>> {
   const path = filledPath(operation.path, params);
   const headers: Record<string, string> = { accept: 'application/json, application/problem+json' };
@@ -50,13 +76,19 @@ export async function send<Reply>(
     });
     const text = await response.text();
     if (!response.ok) {
-      return { ok: false, problem: problemOf(response.status, response.headers.get('content-type'), text) };
+      const problem = problemOf(response.status, response.headers.get('content-type'), text);
+      const retryAfterS = retryAfterOf(response.headers.get('retry-after'));
+      return { ok: false, problem: retryAfterS === null ? problem : { ...problem, retryAfterS } };
     }
     const reply = (text === '' ? null : JSON.parse(text)) as Reply;
     return { ok: true, status: response.status, reply, version: response.headers.get('etag') };
   } catch {
-    return { ok: false, problem: UNREACHABLE };
+    return { ok: false, problem: unreachable() };
   }
+}
+
+export function unreachable(): Problem {
+  return typeof navigator !== 'undefined' && navigator.onLine === false ? OFFLINE : UNREACHABLE;
 }
 
 /** Something that tells one body from another; files count by name, size and date. */

@@ -9,8 +9,10 @@ export async function GET(): Promise<Response> {
     return problemResponse(
       'unavailable',
       `Run the migrations: ${missing.length} are not applied, first ${missing[0]}.`,
+      {},
+      { 'retry-after': '10' },
     );
   } catch {
-    return problemResponse('unavailable', 'The database does not answer.', {}, { 'retry-after': '5' });
+    return problemResponse('unavailable', 'The database does not answer.', {}, { 'retry-after': '2' });
   }
 }
