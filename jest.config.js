@@ -3,7 +3,7 @@ const nextJest = require('next/jest');
 const createConfig = nextJest({ dir: './' });
 
 /** Test directories that need a database, and those that drive a browser; every other one is the core. */
-const WITH_DATABASE = ['app', 'database', 'http', 'models', 'outbox', 'services'];
+const WITH_DATABASE = ['app', 'database', 'http', 'models', 'outbox', 'resilience', 'services'];
 const WITH_BROWSER = ['browser'];
 
 const common = {
