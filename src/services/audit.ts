@@ -110,7 +110,11 @@ export interface HistoryEntry {
   at: string;
   by: string | null;
   action: string;
+  /** What moved, where that is little enough to be read in a line. */
+  changes: { name: string; before: Small; after: Small }[];
 }
+
+type Small = string | number | boolean | null;
 
 /** What happened to one record, newest first. The caller has shown that it may see the record. */
 export async function historyOf(
@@ -131,6 +135,33 @@ export async function historyOf(
       at: entry.at.toISOString(),
       by: (entry as AuditEntry & { actor?: { name: string } }).actor?.name ?? null,
       action: entry.action,
+      changes: smallChanges(entry.canonical),
     }));
   });
+}
+
+const FEW = 6;
+const SHORT = 160;
+/** Identifiers say nothing to a reader; figures are told where they can be rounded. */
+const UNTOLD = /Id$|^(evaluation|organisation|sha256|engine|worstMarginDb|voided)$/;
+
+/** The plain fields in which before and after differ, of a change that kept most of its record; a creation has none. */
+function smallChanges(bytes: string): HistoryEntry['changes'] {
+  const { before, after } = JSON.parse(bytes) as Record<'before' | 'after', Record<string, unknown> | null>;
+  if (!before || !after) return [];
+  const small = (value: unknown): value is Small =>
+    value === null ||
+    ['number', 'boolean'].includes(typeof value) ||
+    (typeof value === 'string' && value.length <= SHORT);
+  const names = Object.keys(after).filter((name) => {
+    const [was, is] = [before[name] ?? null, after[name] ?? null];
+    return !UNTOLD.test(name) && small(was) && small(is) && was !== is;
+  });
+  if (names.length > FEW) return [];
+  // Of a reason given for each of two acts only the newer belongs to this one.
+  return names.map((name) => ({
+    name,
+    before: name === 'reason' ? null : ((before[name] ?? null) as Small),
+    after: (after[name] ?? null) as Small,
+  }));
 }

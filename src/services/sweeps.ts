@@ -1,8 +1,9 @@
 import { Op } from 'sequelize';
 import type { z } from 'zod';
 import { authorise, visibleOrganisation, type Actor } from '@/auth/actor';
-import { Invalid } from '@/errors';
+import { Invalid, NotFound } from '@/errors';
 import { readSweepFile } from '@/models/blobs';
+import { Evaluation } from '@/models/evaluation';
 import { EvaluationCandidate } from '@/models/evaluationCandidate';
 import { ModificationState } from '@/models/modificationState';
 import { Sweep } from '@/models/sweep';
@@ -157,22 +158,30 @@ function candidateView(row: EvaluationCandidate, run: Run): CandidateView {
 }
 
 /** Candidates worst first; the cursor is the rank of the last one shown. */
-export async function listCandidates(actor: Actor | null, publicId: string, page: PageRequest) {
+export async function listCandidates(
+  actor: Actor | null,
+  publicId: string,
+  page: PageRequest & { evaluation?: string },
+) {
   authorise(actor, 'sweep.read');
   return unitOfWork(async () => {
     const run = await findRun(actor, publicId);
+    const evaluation = page.evaluation
+      ? await Evaluation.findOne({ where: { publicId: page.evaluation, sweepId: run.id } })
+      : run.evaluation;
+    if (!evaluation) throw new NotFound('evaluation of this run');
     const from = page.after === undefined ? 0 : Number(page.after);
     if (!Number.isSafeInteger(from) || from < 0) {
       throw new Invalid([{ pointer: '/query/after', message: 'is not a cursor of this list' }]);
     }
     const rows = await EvaluationCandidate.findAll({
-      where: { evaluationId: run.evaluation.id, rank: { [Op.gt]: from } },
+      where: { evaluationId: evaluation.id, rank: { [Op.gt]: from } },
       order: [['rank', 'ASC']],
       limit: page.limit + 1,
     });
     const shown = rows.slice(0, page.limit);
     return {
-      total: run.evaluation.candidates,
+      total: evaluation.candidates,
       items: shown.map((row) => candidateView(row, run)),
       next: rows.length > page.limit ? String(shown.at(-1)!.rank) : null,
     };

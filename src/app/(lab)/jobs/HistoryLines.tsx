@@ -1,9 +1,11 @@
+import { changeText, type FieldChange } from '@/format/changes';
 import { formatDayTime } from '@/format/dates';
 
 export interface HistoryLine {
   at: string;
   by: string | null;
   action: string;
+  changes: readonly FieldChange[];
 }
 
 /** What happened, newest first; people do it, or a command of the lab. */
@@ -14,6 +16,11 @@ export function HistoryLines({ entries, zone }: { entries: readonly HistoryLine[
       {entries.map((entry, at) => (
         <li key={at}>
           {entry.action}
+          {entry.changes.map((change) => (
+            <span key={change.name} className="block [overflow-wrap:anywhere]">
+              {changeText(change)}
+            </span>
+          ))}
           <span className="column-quiet block">
             {entry.by ?? 'a command'}, {formatDayTime(entry.at, zone)}
           </span>

@@ -64,6 +64,7 @@ export function RunTable({
                 </span>
               )}
               <span className="t-detail block font-normal whitespace-normal pad:hidden">{secondLine(run, zone)}</span>
+              <Marks run={run} />
             </KeyCell>
             {whose && (
               <Cell className={`${WIDE} whitespace-nowrap`} strong>
@@ -83,14 +84,14 @@ export function RunTable({
             <Cell figure strong className="max-pad:pt-2 max-pad:pr-0!">
               {run.worst ? formatMargin(run.worst.marginDb) : ABSENT}
               <span className="mt-1 flex justify-end font-sans font-normal tracking-normal [word-spacing:normal] pad:hidden">
-                <VerdictWord verdict={run.verdict} />
+                <RunVerdict run={run} />
               </span>
             </Cell>
             <Cell figure className={WIDE}>
               {run.worst ? formatFrequencyMhz(run.worst.frequencyHz) : ABSENT}
             </Cell>
             <Cell className={WIDE}>
-              <VerdictWord verdict={run.verdict} />
+              <RunVerdict run={run} />
             </Cell>
             <Cell figure quiet className={last}>
               {formatCount(run.points)}
@@ -106,6 +107,18 @@ export function RunTable({
       </tbody>
     </Table>
   );
+}
+
+/** What sets a run apart from those that speak for their state. */
+function Marks({ run: { trial, partial, voided } }: { run: Run }) {
+  const marks = [trial !== null && `trial ${trial}`, partial && 'partial', voided && 'voided'].filter(Boolean);
+  if (marks.length === 0) return null;
+  return <span className="t-detail block font-normal whitespace-normal">{marks.join(', ')}</span>;
+}
+
+/** A voided run keeps its figures and has no verdict any more. */
+function RunVerdict({ run: { verdict, voided } }: { run: Run }) {
+  return voided ? <VerdictWord verdict="not-covered">voided</VerdictWord> : <VerdictWord verdict={verdict} />;
 }
 
 /** `line L`, `horizontal`. */

@@ -22,11 +22,13 @@ export function runListFinding(
   const clauses: string[] = [];
   let worst: Verdict | null = null;
   for (const verdict of verdictSchema.options) {
-    const count = runs.filter((run) => run.verdict === verdict).length;
+    const count = runs.filter((run) => run.verdict === verdict && !run.voided).length;
     if (count === 0) continue;
     worst ??= verdict;
     clauses.push(`${countInWords(count)} ${SAID[verdict][count === 1 ? 0 : 1]}`);
   }
+  const voided = runs.filter((run) => run.voided).length;
+  if (voided > 0) clauses.push(`${countInWords(voided)} ${voided === 1 ? 'is' : 'are'} voided`);
   const many = runs.length > 1;
   const which =
     newest && whole
@@ -34,5 +36,5 @@ export function runListFinding(
       : `of the ${newest ? 'newest' : 'next'} ${countInWords(runs.length)} runs`;
   const text =
     newest && whole ? `${capitalised(which)}: ${clauses.join('; ')}.` : `${capitalised(which)}, ${clauses.join('; ')}.`;
-  return { verdict: worst!, runs: [{ text }] };
+  return { verdict: worst ?? 'not-covered', runs: [{ text }] };
 }

@@ -22,9 +22,9 @@ export function worstFirst(one: Judged, other: Judged): number {
   return a === b ? 0 : a - b;
 }
 
-/** An ambient run is without the sample and speaks for nothing. */
+/** An ambient run is without the sample, a trial speaks for itself alone, and a voided run for nothing. */
 export function counted(runs: readonly Run[]): Run[] {
-  return runs.filter(({ purpose }) => purpose !== 'ambient');
+  return runs.filter(({ purpose, trial, voided }) => purpose !== 'ambient' && trial === null && !voided);
 }
 
 export function worstRun(runs: readonly Run[]): Run | null {

@@ -21,8 +21,9 @@ export function Coverage({ sweep }: { sweep: SweepView }) {
       ) : (
         <p>Nothing is missing for a verdict on this port.</p>
       )}
+      {!portVerdict.runs.some((run) => run.id === sweep.id) && <p className="mt-[22px]">{silence(sweep)}</p>}
       <p className="mt-[22px]">
-        Runs:{' '}
+        {portVerdict.runs.length === 0 ? 'No run speaks for it.' : 'Runs:'}{' '}
         {portVerdict.runs.map((run, i) => (
           <span key={run.id}>
             {i > 0 ? ', ' : ''}
@@ -38,6 +39,12 @@ export function Coverage({ sweep }: { sweep: SweepView }) {
       </p>
     </>
   );
+}
+
+/** Why this run is not among those that speak for its state. */
+function silence({ trial, voided }: SweepView): string {
+  if (voided) return 'This run is voided and speaks for nothing.';
+  return trial === null ? 'This run is not counted.' : 'This run is a trial and speaks for nothing but itself.';
 }
 
 function Summary({ sweep }: { sweep: SweepView }) {

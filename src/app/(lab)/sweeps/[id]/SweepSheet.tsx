@@ -1,6 +1,9 @@
 'use client';
 
 import { useCallback, useId, useMemo, useRef, useState } from 'react';
+import { LayOver } from '@/app/(lab)/compare/LayOver';
+import type { ListedRun } from '@/app/(lab)/compare/runLabel';
+import type { HistoryLine } from '@/app/(lab)/jobs/HistoryLines';
 import { notesSection, type NotesPage } from '@/app/(lab)/notes/notesSection';
 import { ChartLegend } from '@/components/charts/ChartLegend';
 import { chartSubject } from '@/components/charts/chartSubject';
@@ -12,15 +15,19 @@ import { SheetHeader } from '@/components/shell/SheetHeader';
 import { useKey } from '@/components/shell/keys';
 import { ButtonLink } from '@/components/ui/Button';
 import { Id } from '@/components/ui/IdentityLine';
+import { SectionHeading } from '@/components/ui/SectionHeading';
+import type { EvaluationItem } from '@/schemas/runActs';
 import type { CandidateView, SweepView, WindowView } from '@/schemas/sweep';
 import { formatDayTime } from '@/format/dates';
-import { findingOf } from '@/format/finding';
 import { formatBandwidth, formatFrequency } from '@/format/frequencies';
 import { formatCount, formatMargin } from '@/format/quantities';
 import { PURPOSE_WORDS } from '@/format/words';
 import { Coverage } from './Coverage';
-import { History, type HistoryEntry } from './History';
+import { History } from './History';
+import { NewerRevisions } from './NewerRevisions';
 import { Record } from './Record';
+import { RunActs } from './RunActs';
+import { runFinding, runTitle } from './runFinding';
 import { orientationOf, runWords } from './runWords';
 import { SettingsLine } from './SettingsLine';
 import { useCandidates, type CandidatePage } from './useCandidates';
@@ -34,7 +41,10 @@ interface Props {
   overview: WindowView;
   first: CandidatePage;
   /** null for a reader who does not see it. */
-  history: HistoryEntry[] | null;
+  history: HistoryLine[] | null;
+  evaluations: { items: EvaluationItem[]; next: string | null; newer: string[] };
+  /** Runs of the same sample, this one among them. */
+  others: ListedRun[];
   notes: NotesPage;
   zone: string;
   /** Whether the reader is one of the lab's people. */
@@ -48,7 +58,8 @@ interface Open {
 }
 
 /** The sheet of one run: finding, chart, candidates, and beside them how each figure came about. */
-export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }: Props) {
+export function SweepSheet(props: Props) {
+  const { sweep, overview, first, history, evaluations, others, notes, zone, lab } = props;
   const tableId = useId();
   const legend = useRef<HTMLDivElement>(null);
   const [mode, setMode] = useState<ChartMode>('margin');
@@ -59,7 +70,6 @@ export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }
   const { window, ask } = useWindow(sweep.id, overview);
   const { working, busy, problem, load, clear } = useWorking(sweep.id);
   const subject = useMemo(() => chartSubject(sweep, orientationOf(sweep)), [sweep]);
-  const finding = findingOf(sweep.evaluation, sweep.traces, sweep.limitSet.lines);
 
   const show = useCallback(
     (candidate: CandidateView, figure: CandidateFigure = 'margin') => {
@@ -97,7 +107,7 @@ export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }
     <Sheet
       header={
         <SheetHeader
-          title={sweep.sample.product}
+          title={runTitle(sweep)}
           state={{ label: sweep.state.label }}
           identity={
             <>
@@ -117,7 +127,7 @@ export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }
               <span>{sweep.by.name}</span>
             </>
           }
-          finding={{ verdict: sweep.evaluation.verdict, runs: finding }}
+          finding={runFinding(sweep, zone)}
           actions={
             lab ? (
               <ButtonLink kind="primary" keyName="U" href={`/sweeps/new?state=${sweep.state.id}`}>
@@ -167,13 +177,21 @@ export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }
           summary: sweep.file.name,
           children: <Record sweep={sweep} zone={zone} />,
         },
-        ...(history
+        ...(history || evaluations.items.length > 1
           ? [
               {
                 id: 'history',
                 title: 'History',
-                summary: `${history.length === 1 ? '1 change' : `${history.length} changes`}`,
-                children: <History entries={history} zone={zone} />,
+                summary: historySummary(history, evaluations.items.length),
+                children: (
+                  <History
+                    sweepId={sweep.id}
+                    evaluations={evaluations.items}
+                    more={evaluations.next !== null}
+                    entries={history}
+                    zone={zone}
+                  />
+                ),
               },
             ]
           : []),
@@ -187,6 +205,7 @@ export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }
         { keys: ['?'], does: 'all keys' },
       ]}
     >
+      <NewerRevisions id={sweep.id} number={sweep.number} newer={evaluations.newer} />
       <div ref={legend}>
         <ChartLegend
           mode={mode}
@@ -228,10 +247,26 @@ export function SweepSheet({ sweep, overview, first, history, notes, zone, lab }
         onMore={more}
         loading={loadingMore}
       />
+      <section aria-labelledby="this-run" className="print:hidden">
+        <SectionHeading
+          id="this-run"
+          className="mt-6"
+          remark={lab && 'nothing is deleted; each change stands in the history'}
+        >
+          This run
+        </SectionHeading>
+        <LayOver runs={others} over={{ id: sweep.id, number: sweep.number }} />
+        {lab && <RunActs sweep={sweep} newer={evaluations.newer} />}
+      </section>
       <p className="t-detail mt-4">
         A pre-compliance record of {formatCount(sweep.points)} points, step{' '}
         {sweep.stepHz === null ? 'uneven' : formatBandwidth(sweep.stepHz)}; not a certificate.
       </p>
     </Sheet>
   );
+}
+
+function historySummary(history: readonly HistoryLine[] | null, evaluations: number): string {
+  const changes = history && (history.length === 1 ? '1 change' : `${history.length} changes`);
+  return [changes, evaluations > 1 && `${evaluations} evaluations`].filter(Boolean).join(', ');
 }

@@ -1,0 +1,27 @@
+import type { SweepView } from '@/schemas/sweep';
+import { formatDay } from '@/format/dates';
+import { findingOf, type FindingRun } from '@/format/finding';
+import type { Verdict } from '@/emc/kinds';
+
+/** The sentence a run opens with; before it, when it is voided, and after it, when it is a trial, what it speaks for. */
+export function runFinding(sweep: SweepView, zone: string): { verdict: Verdict; runs: FindingRun[] } {
+  const { evaluation, traces, limitSet, voided, trial, state } = sweep;
+  const runs = findingOf(evaluation, traces, limitSet.lines);
+  if (trial !== null) runs.push({ text: ` A trial under ${state.label}, ${trial}: it speaks for nothing but itself.` });
+  if (!voided) return { verdict: evaluation.verdict, runs };
+  const reason = /[.!?]$/.test(voided.reason) ? voided.reason : `${voided.reason}.`;
+  const lead = `Voided on ${formatDay(voided.at, zone)} by ${voided.by.name}, so it speaks for nothing: ${reason} It read: `;
+  return { verdict: 'not-covered', runs: [{ text: lead }, ...lowered(runs)] };
+}
+
+/** What follows a colon goes on in small letters. */
+function lowered([first, ...rest]: FindingRun[]): FindingRun[] {
+  if (!first || first.figure) return [first, ...rest].filter((run) => run !== undefined);
+  return [{ ...first, text: first.text.charAt(0).toLowerCase() + first.text.slice(1) }, ...rest];
+}
+
+/** `Lumen strip driver LD-40`, with what sets the run apart. */
+export function runTitle({ sample, trial, voided, partial }: SweepView): string {
+  const marks = [trial !== null && `trial ${trial}`, partial && 'partial', voided && 'voided'].filter(Boolean);
+  return [sample.product, ...marks].join(', ');
+}
