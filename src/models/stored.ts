@@ -42,7 +42,6 @@ export interface StoredShapeAnswers {
   valuesHold: 'receiver-input' | 'field';
   alreadyCorrected: string[];
   frequencyUnit: 'Hz' | 'kHz' | 'MHz' | 'GHz';
-  centreHz: number | null;
   traces: { index: number; unit: LevelUnit; detector: Detector; rbwHz: number | null }[];
 }
 

@@ -138,7 +138,6 @@ const shapeProposal = z.strictObject({
   valuesHold: z.enum(['receiver-input', 'field']),
   alreadyCorrected: z.array(z.string()),
   frequencyUnit,
-  centreHz: number,
   traces: z.array(z.strictObject({ index: z.int(), unit: levelUnit, detector, rbwHz: number })),
 });
 

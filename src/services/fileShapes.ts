@@ -11,7 +11,7 @@ import type { keepSweep } from '@/schemas/sweep';
 import type { SweepFileView } from '@/schemas/sweepFile';
 
 function answersOf(body: z.infer<typeof keepSweep>): StoredShapeAnswers {
-  const { port, pathId, limitSetId, distanceM, heightSwept, valuesHold, frequencyUnit, centreHz } = body;
+  const { port, pathId, limitSetId, distanceM, heightSwept, valuesHold, frequencyUnit } = body;
   return {
     port,
     pathId,
@@ -21,7 +21,6 @@ function answersOf(body: z.infer<typeof keepSweep>): StoredShapeAnswers {
     valuesHold,
     alreadyCorrected: body.alreadyCorrected ?? [],
     frequencyUnit,
-    centreHz,
     traces: body.traces.map(({ index, unit, detector, rbwHz }) => ({ index, unit, detector, rbwHz })),
   };
 }

@@ -6,7 +6,8 @@ import { Field, SelectField } from '@/components/ui/Field';
 import { Switch } from '@/components/ui/Switch';
 import { MAINS_LINE_WORDS, PORT_WORDS } from '@/format/words';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import { proposedCorrected, proposedLimitSet, proposedPath, rangeOf, type Draft } from './draft';
+import { rangeOf, type Draft } from './draft';
+import { proposedCorrected, proposedLimitSet, proposedPath } from './proposed';
 import { TraceFields } from './TraceFields';
 import type { UploadLists } from './uploadLists';
 

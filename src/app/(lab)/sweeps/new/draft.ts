@@ -1,9 +1,10 @@
 import type { Detector, LevelUnit, MainsLine, Polarisation, Port, Purpose } from '@/schemas/common';
-import type { LimitSetView, PathView } from '@/schemas/bench';
-import type { SampleView } from '@/schemas/job';
-import type { SweepChoice } from '@/schemas/sweep';
+import type { KeepSweep, SweepChoice } from '@/schemas/sweep';
 import type { SweepFileView } from '@/schemas/sweepFile';
+import { asBefore, type AsBefore } from './asBefore';
+import { proposedCorrected, proposedLimitSet, proposedPath, proposedState } from './proposed';
 import { typedNumber } from './typedNumber';
+import type { UploadLists } from './uploadLists';
 
 type FrequencyUnit = SweepChoice['frequencyUnit'];
 
@@ -38,85 +39,27 @@ export interface Draft {
   /** Empty until chosen, where the file holds several. */
   sweepIndex: number | '';
   traces: TraceDraft[];
+  /** What was tried, for a quick trial; empty for a run that speaks for its state. */
+  trial: string;
+  /** Read up to the broken line, on purpose. */
+  keepPartial: boolean;
+  /** What was taken from the last file of this shape, and whether a person has said that it holds for this one. */
+  asBefore: AsBefore | null;
 }
 
 const UNIT_HZ: Record<FrequencyUnit, number> = { Hz: 1, kHz: 1e3, MHz: 1e6, GHz: 1e9 };
 
-/** How much of a range a set's lines cover, in decades. */
-function overlap(set: LimitSetView, firstHz: number, lastHz: number): number {
-  const low = Math.min(...set.lines.flatMap((line) => line.segments.map((segment) => segment.startHz)));
-  const high = Math.max(...set.lines.flatMap((line) => line.segments.map((segment) => segment.stopHz)));
-  return Math.log10(Math.min(high, lastHz) / Math.max(low, firstHz, 1));
-}
-
-/** The set of a port that covers most of a range; of equals the one the lab entered first (the list is newest first). */
-export function proposedLimitSet(sets: readonly LimitSetView[], port: Port, firstHz: number, lastHz: number): string {
-  const fit = [...sets]
-    .reverse()
-    .filter((set) => set.port === port)
-    .map((set) => ({ set, covers: overlap(set, firstHz, lastHz) }))
-    .sort((a, b) => b.covers - a.covers);
-  return fit[0]?.set.id ?? '';
-}
-
-/** The path of a port whose tables reach furthest over a range; a path with lapsed equipment comes last. */
-export function proposedPath(paths: readonly PathView[], port: Port, firstHz: number, lastHz: number): string {
-  const fit = paths
-    .filter((path) => path.port === port)
-    .map((path) => ({
-      path,
-      lapsed: path.items.some((item) => item.due === 'lapsed') ? 1 : 0,
-      covers: Math.log10(Math.min(path.highHz ?? lastHz, lastHz) / Math.max(path.lowHz ?? firstHz, firstHz, 1)),
-    }))
-    .sort((a, b) => a.lapsed - b.lapsed || b.covers - a.covers || a.path.code.localeCompare(b.path.code));
-  return fit[0]?.path.id ?? '';
-}
-
-const TERM_WORDS: [RegExp, RegExp][] = [
-  [/antenna|transducer/i, /antenna/i],
-  [/limiter/i, /limiter/i],
-  [/cable/i, /cable/i],
-  [/amplifier|preamp/i, /preamplifier/i],
-  [/network|voltage division|AMN|LISN/i, /voltage division|AMN/i],
-  [/attenuator|external attenuation/i, /attenuat/i],
-];
-
-/** Terms of a path that the file says are in its values; a proposal to be looked at. */
-export function proposedCorrected(file: SweepFileView, path: PathView | undefined): string[] {
-  const said = file.recognition.correctedFor.map(({ what }) => what).join('; ');
-  return (path?.terms ?? [])
-    .filter((term) => TERM_WORDS.some(([file, name]) => file.test(said) && name.test(term.name)))
-    .map((term) => term.id);
-}
-
-interface Lists {
-  samples: readonly SampleView[];
-  paths: readonly PathView[];
-  limitSets: readonly LimitSetView[];
-}
-
-/** The state a file's name speaks of (`m2`), in the sample of the named state or in the only sample there is. */
-function proposedState(file: SweepFileView, samples: readonly SampleView[], stateId: string | null): string {
-  const named = samples.find((sample) => sample.states.some((state) => state.id === stateId));
-  if (stateId && named) return stateId;
-  const code = file.name.toLowerCase().replace(/[^a-z0-9]/g, '');
-  const spoken = samples.filter((sample) => code.includes(sample.product.code.toLowerCase().replace(/[^a-z0-9]/g, '')));
-  const sample = spoken.length === 1 ? spoken[0]! : null;
-  const measured = sample?.states.filter((state) => !state.planned) ?? [];
-  const label = file.proposals.state?.toUpperCase();
-  return (measured.find((state) => state.label === label) ?? (label ? undefined : measured.at(-1)))?.id ?? '';
-}
-
 /** What the sheet opens with: what the file states, and proposals that can all be seen and changed. */
-export function draftFrom(file: SweepFileView, { samples, paths, limitSets }: Lists, stateId: string | null): Draft {
+export function draftFrom(file: SweepFileView, lists: UploadLists, stateId: string | null): Draft {
+  const { samples, paths, limitSets } = lists;
   const { recognition, proposals } = file;
-  const { frequency, settings, traces } = recognition;
+  const { frequency, traces } = recognition;
   const port: Port = frequency.lastHz <= 31e6 && !frequency.offset ? 'ac-mains' : 'enclosure';
   const limitSetId = proposedLimitSet(limitSets, port, frequency.firstHz, frequency.lastHz);
   const pathId = proposedPath(paths, port, frequency.firstHz, frequency.lastHz);
   const field = traces.some((trace) => trace.unit === 'dBuV/m' || trace.unit === 'dBuA/m');
   const path = paths.find(({ id }) => id === pathId);
-  return {
+  const draft: Draft = {
     stateId: proposedState(file, samples, stateId),
     port,
     purpose: proposals.purpose ?? 'prescan',
@@ -134,15 +77,51 @@ export function draftFrom(file: SweepFileView, { samples, paths, limitSets }: Li
     frequencyUnit: frequency.unit ?? '',
     centreMhz: '',
     sweepIndex: recognition.sweeps.length > 1 ? '' : 0,
-    traces: traces.map((trace) => ({
-      index: trace.index,
-      use: !trace.blank,
-      name: trace.name,
-      unit: trace.unit ?? '',
-      detector: trace.detector ?? '',
-      rbwKhz: settings.rbwHz === null ? '' : String(settings.rbwHz / 1e3),
-    })),
+    traces: statedTraces(file),
+    trial: '',
+    keepPartial: false,
+    asBefore: null,
   };
+  return asBefore(draft, file, lists);
+}
+
+/** The traces as far as the file states them; filler is not used. */
+export function statedTraces({ recognition: { traces, settings } }: SweepFileView): TraceDraft[] {
+  return traces.map((trace) => ({
+    index: trace.index,
+    use: !trace.blank,
+    name: trace.name,
+    unit: trace.unit ?? '',
+    detector: trace.detector ?? '',
+    rbwKhz: settings.rbwHz === null ? '' : String(settings.rbwHz / 1e3),
+  }));
+}
+
+/** What one of several sweeps states by its own preamble, where a person has not said otherwise. */
+export function withSweep(draft: Draft, sweepIndex: number, file: SweepFileView): Draft {
+  const stated = statedTraces(file);
+  const traces = draft.traces.map((trace) => {
+    const own = stated.find(({ index }) => index === trace.index);
+    if (!own) return trace;
+    return {
+      ...trace,
+      unit: own.unit || trace.unit,
+      detector: own.detector || trace.detector,
+      rbwKhz: own.rbwKhz || trace.rbwKhz,
+    };
+  });
+  return { ...draft, sweepIndex, traces };
+}
+
+/** What is still to be said before the file can be kept; empty when nothing is. */
+export function stillToSay(draft: Draft, file: SweepFileView): string[] {
+  const { asBefore: taken } = draft;
+  return [
+    ...(draft.stateId === '' ? ['the sample and state'] : []),
+    ...unsaid(draft, file),
+    ...(taken && !taken.holds ? [`whether it is as in ${taken.number}`] : []),
+    ...(draft.operatingMode.trim() === '' ? ['the operating mode'] : []),
+  ];
 }
 
 /** What is still to be said before the file can be judged, in the order of the form; empty when nothing is. */
@@ -182,7 +161,7 @@ export function choiceOf(draft: Draft, file: SweepFileView): SweepChoice | null 
     frequencyUnit,
     centreHz: file.recognition.frequency.offset && centreMhz !== null ? centreMhz * 1e6 : null,
     sweepIndex: draft.sweepIndex === '' ? null : draft.sweepIndex,
-    keepPartial: false,
+    keepPartial: draft.keepPartial,
     traces: draft.traces
       .filter((trace) => trace.use)
       .map(({ index, name, unit, detector, rbwKhz }) => ({
@@ -192,6 +171,23 @@ export function choiceOf(draft: Draft, file: SweepFileView): SweepChoice | null 
         detector: detector as Detector,
         rbwHz: typedNumber(rbwKhz) === null ? null : typedNumber(rbwKhz)! * 1e3,
       })),
+  };
+}
+
+/** What is sent to keep it, or null while something is unsaid. */
+export function keepBody(draft: Draft, file: SweepFileView): Partial<KeepSweep> | null {
+  const choice = choiceOf(draft, file);
+  if (!choice || stillToSay(draft, file).length > 0) return null;
+  const radiated = draft.port === 'enclosure';
+  return {
+    ...choice,
+    fileId: file.id,
+    stateId: draft.stateId,
+    operatingMode: draft.operatingMode,
+    heightM: typedNumber(draft.heightM),
+    heightSwept: radiated && draft.heightSwept,
+    azimuthDeg: typedNumber(draft.azimuthDeg),
+    trial: draft.trial.trim() || null,
   };
 }
 

@@ -6,6 +6,7 @@ import { listLimitSets } from '@/services/limitSets';
 import { listSamples } from '@/services/samples';
 import { listPaths } from '@/services/signalPaths';
 import { readSweepFile } from '@/services/sweepFiles';
+import { listTrialWords } from '@/services/trialWords';
 import { UploadSheet } from './UploadSheet';
 
 export const metadata: Metadata = { title: 'Upload a sweep file' };
@@ -21,11 +22,12 @@ export default async function UploadPage({ searchParams }: Props) {
   const actor = await requireActor();
   if (actor.role === 'designer') notFound();
   const { file, state } = await searchParams;
-  const [samples, paths, limitSets, held] = await Promise.all([
+  const [samples, paths, limitSets, held, trials] = await Promise.all([
     listSamples(actor, MOST),
     listPaths(actor, MOST),
     listLimitSets(actor, MOST),
     file ? found(readSweepFile(actor, file)) : null,
+    listTrialWords(actor),
   ]);
   return (
     <UploadSheet
@@ -35,6 +37,7 @@ export default async function UploadPage({ searchParams }: Props) {
       samples={samples.items}
       paths={paths.items}
       limitSets={limitSets.items}
+      trials={trials}
     />
   );
 }

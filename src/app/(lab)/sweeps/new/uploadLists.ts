@@ -6,4 +6,6 @@ export interface UploadLists {
   samples: readonly SampleView[];
   paths: readonly PathView[];
   limitSets: readonly LimitSetView[];
+  /** What was tried lately, to choose from. */
+  trials: readonly string[];
 }
