@@ -5,7 +5,11 @@ import { mayRole } from '@/auth/permissions';
 import type { RouteHandler } from '@/http/handle';
 import type { Operation } from '@/schemas/operation';
 import { OPERATIONS } from '@/schemas/operations';
+import { keepSweep } from '@/services/keepSweep';
 import { previewResultMail } from '@/services/resultMails';
+import { listRetests } from '@/services/retests';
+import { createSample } from '@/services/samples';
+import { createSweepFile } from '@/services/sweepFiles';
 import { PASSWORD } from '../auth/people';
 import { freshDatabase, type TestDatabase } from '../support/database';
 import { enterWorld, pixel, sweepFile, type Somebody, type World } from '../support/world';
@@ -22,6 +26,7 @@ const handlers = new Map<string, RouteHandler>();
 beforeAll(async () => {
   schema = await freshDatabase();
   world = await enterWorld();
+  retestId = await enterRetest(world);
   for (const file of readdirSync(API, { recursive: true, encoding: 'utf8' })) {
     if (!file.endsWith('route.ts')) continue;
     const module = (await import(path.join(API, file))) as Record<string, RouteHandler>;
@@ -49,6 +54,16 @@ const resultAsked = (w: World) => ({ stateId: stateOf(w).id, recipientIds: [w.de
 let turn = 0;
 /** The two spare runs by turns: what the manager did to one, the technician does to the other. */
 const spareOf = (w: World) => w.spares[turn++ % 2]!.id;
+
+/** A retest of a sample of its own, which no other operation touches. */
+let retestId = '';
+
+async function enterRetest({ technician, job, choice, about }: World): Promise<string> {
+  const sample = await createSample(technician.actor, job.id, { serial: 'P2-0777', firmware: '', description: '' });
+  const file = await createSweepFile(technician.actor, sweepFile());
+  await keepSweep(technician.actor, { ...choice, ...about, stateId: sample.states[0]!.id, fileId: file.id });
+  return (await listRetests(technician.actor, { limit: 1, sampleId: sample.id })).items[0]!.id;
+}
 
 /** What makes each operation do something when the asker may; a missing row fails the test below. */
 const SAMPLES: Record<string, Sample> = {
@@ -176,6 +191,10 @@ const SAMPLES: Record<string, Sample> = {
   changePhoto: { params: (w) => w.photos[0]!.id, body: () => ({ caption: 'the table from the door' }) },
   withdrawPhoto: { params: (w) => w.photos[1 + (turn++ % 2)]!.id, body: () => ({ reason: 'another sample is in it' }) },
   downloadPhoto: { params: (w) => w.photos[0]!.id },
+  listRetests: {},
+  readRetest: { params: () => retestId },
+  changeRetest: { params: () => retestId, body: () => ({ act: 'schedule', note: 'beside the next samples' }) },
+  downloadFrequencyList: {},
 };
 
 /** A run can be voided while it has a voice, and restored while it has none. */
@@ -206,6 +225,7 @@ async function versionFor(op: Operation, id: string | undefined): Promise<string
     restoreSweep: ['readSweep', id!],
     changePhoto: ['readPhoto', id!],
     withdrawPhoto: ['readPhoto', id!],
+    changeRetest: ['readRetest', id!],
   };
   const [read, record] = reader[op.id]!;
   const answer = await handlers.get(read)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
@@ -291,7 +311,7 @@ test.each(ofOneRecord.map((op) => [op.id, op] as const))(
   },
 );
 
-const lists = ['listProducts', 'listJobs', 'listSamples', 'listSweeps'];
+const lists = ['listProducts', 'listJobs', 'listSamples', 'listSweeps', 'listRetests'];
 
 test.each(lists)('%s: a designer sees the own organisation’s records and no other', async (id) => {
   const op = OPERATIONS.find((one) => one.id === id)!;
