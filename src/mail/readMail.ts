@@ -21,7 +21,8 @@ const DEEPEST = 5;
 
 function splitPart(raw: Buffer): Part {
   const source = raw.toString('latin1');
-  const gap = /\r?\n\r?\n/.exec(source);
+  // a part without headers of its own begins with the empty line
+  const gap = /^\r?\n|\r?\n\r?\n/.exec(source);
   const head = gap ? source.slice(0, gap.index) : source;
   const headers = new Map<string, string>();
   for (const line of head.replace(/\r?\n[ \t]+/g, ' ').split(/\r?\n/)) {

@@ -108,9 +108,11 @@ export function InviteForm({ choices, chosen, mailWaits }: Props) {
           error={fieldErrors.role && `The role ${fieldErrors.role}.`}
         />
       ) : (
-        <p className="t-text">
-          As designer: sees this client’s products, runs and reports, and no other organisation’s.
-        </p>
+        (from === 'new' || organisationId) && (
+          <p className="t-text">
+            As designer: sees this client’s products, runs and reports, and no other organisation’s.
+          </p>
+        )
       )}
       <Field
         label="Name"
