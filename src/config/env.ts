@@ -70,6 +70,15 @@ const port = z
   .transform(Number)
   .refine((value) => value >= 1 && value <= 65535, 'a port is a number from 1 to 65535');
 
+/** A whole number from 1 up. */
+const count = (fallback: number, most: number) =>
+  z
+    .string()
+    .regex(/^\d{1,9}$/, 'write a whole number')
+    .transform(Number)
+    .refine((value) => value >= 1 && value <= most, `a number from 1 to ${most}`)
+    .default(fallback);
+
 const shape = z.object({
   DATABASE_URL: databaseUrl,
   DATABASE_MIGRATE_URL: databaseUrl.optional(),
@@ -83,6 +92,10 @@ const shape = z.object({
   TRUSTED_PROXIES: trustedProxies.default([]),
   PORT: port.default(3000),
   HOST: z.string().default('127.0.0.1'),
+  /** What one person may send: imports at once, megabytes and files within an hour. */
+  IMPORTS_AT_ONCE: count(2, 20),
+  IMPORT_MB_PER_HOUR: count(2000, 1_000_000),
+  IMPORT_FILES_PER_HOUR: count(600, 1_000_000),
   STILLFIELD_DEMO: z
     .enum(['0', '1'], 'write 1 for the demo lab or 0 for none')
     .transform((value) => value === '1')

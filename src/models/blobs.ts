@@ -1,6 +1,6 @@
 import { QueryTypes } from 'sequelize';
 import { database } from './database';
-import { packFile, unpackFile } from './filePacking';
+import { unpackFile } from './filePacking';
 import { PhotoPart } from './photoPart';
 import { SweepFilePart } from './sweepFilePart';
 import { UploadPart } from './uploadPart';
@@ -64,15 +64,4 @@ export async function writePhoto(photoId: number, size: PhotoPart['size'], bytes
 export async function readPhoto(photoId: number, size: PhotoPart['size']): Promise<Buffer> {
   const parts = await PhotoPart.findAll({ where: { photoId, size }, order: [['seq', 'ASC']] });
   return Buffer.concat(parts.map((row) => row.part));
-}
-
-export async function writeUpload(uploadId: number, bytes: Uint8Array): Promise<void> {
-  const packing = packFile(bytes);
-  let step = packing.next();
-  while (!step.done) step = packing.next();
-  await writeUploadParts(uploadId, step.value, 0);
-}
-
-export async function keepUpload(uploadId: number, sweepFileId: number): Promise<void> {
-  await keepUploadParts(uploadId, sweepFileId, 0, 1e6);
 }

@@ -4,6 +4,7 @@ import {
   type InferAttributes,
   type InferCreationAttributes,
   Model,
+  Op,
   type Sequelize,
 } from 'sequelize';
 import type { StoredPartial, StoredReading } from './stored';
@@ -84,6 +85,13 @@ export function defineSweep(sequelize: Sequelize): void {
       createdAt: { type: DataTypes.DATE(3), field: 'created_at', allowNull: false },
       updatedAt: { type: DataTypes.DATE(3), field: 'updated_at', allowNull: false },
     },
-    { sequelize, modelName: 'Sweep', tableName: 'sweeps', timestamps: true },
+    {
+      sequelize,
+      modelName: 'Sweep',
+      tableName: 'sweeps',
+      timestamps: true,
+      // A run whose bytes are still being written is none yet; `Sweep.unscoped()` is for who writes them.
+      defaultScope: { where: { evaluationId: { [Op.not]: null } } },
+    },
   );
 }

@@ -5,7 +5,8 @@ export const PACKING = { plain: 0, decimals: 1 } as const;
 
 export interface PackedValues {
   packing: number;
-  bytes: Buffer<ArrayBuffer>;
+  /** With a memory of its own, so that it can be handed from thread to thread. */
+  bytes: Uint8Array<ArrayBuffer>;
 }
 
 /** Powers of ten that Float64 holds exactly. */
@@ -14,7 +15,7 @@ const LARGEST_WHOLE = 2 ** 50;
 const INT32 = 2 ** 31;
 
 /** Float arrays are kept little-endian, which every platform this runs on is. */
-const bytesOf = (array: Float64Array | Float32Array) => Buffer.from(array.slice().buffer);
+const bytesOf = (array: Float64Array | Float32Array) => new Uint8Array(array.slice().buffer);
 
 /**
  * An axis in few bytes. Frequencies were written as decimals, so they are whole numbers over one power of ten, and
@@ -76,7 +77,7 @@ function same(a: number, b: number): boolean {
 }
 
 /** Byte planes of the zigzag of each value (small numbers of either sign have empty upper planes), deflated. */
-function packed(decimals: number, values: Int32Array): Buffer<ArrayBuffer> {
+function packed(decimals: number, values: Int32Array): Uint8Array<ArrayBuffer> {
   const n = values.length;
   const planes = new Uint8Array(4 * n);
   for (let i = 0; i < n; i++) {
@@ -87,10 +88,14 @@ function packed(decimals: number, values: Int32Array): Buffer<ArrayBuffer> {
     planes[2 * n + i] = zigzag >>> 16;
     planes[3 * n + i] = zigzag >>> 24;
   }
-  return Buffer.concat([Buffer.of(decimals), deflateRawSync(planes, { level: 1 })]) as Buffer<ArrayBuffer>;
+  const deflated = deflateRawSync(planes, { level: 1 });
+  const bytes = new Uint8Array(1 + deflated.length);
+  bytes[0] = decimals;
+  bytes.set(deflated, 1);
+  return bytes;
 }
 
-function unpacked(bytes: Buffer): { power: number; values: Int32Array } {
+function unpacked(bytes: Uint8Array): { power: number; values: Int32Array } {
   const planes = inflateRawSync(bytes.subarray(1));
   const n = planes.length >> 2;
   const values = new Int32Array(n);
@@ -102,7 +107,7 @@ function unpacked(bytes: Buffer): { power: number; values: Int32Array } {
 }
 
 /** @throws {RangeError} on a packing this build does not know */
-export function unpackAxis({ packing, bytes }: { packing: number; bytes: Buffer }): Float64Array {
+export function unpackAxis({ packing, bytes }: { packing: number; bytes: Uint8Array }): Float64Array {
   if (packing === PACKING.plain) return new Float64Array(own(bytes));
   if (packing !== PACKING.decimals) throw new RangeError(`Packing ${packing} of an axis is not known.`);
   const { power, values } = unpacked(bytes);
@@ -117,7 +122,7 @@ export function unpackAxis({ packing, bytes }: { packing: number; bytes: Buffer 
 }
 
 /** @throws {RangeError} on a packing this build does not know */
-export function unpackLevels({ packing, bytes }: { packing: number; bytes: Buffer }): Float32Array {
+export function unpackLevels({ packing, bytes }: { packing: number; bytes: Uint8Array }): Float32Array {
   if (packing === PACKING.plain) return new Float32Array(own(bytes));
   if (packing !== PACKING.decimals) throw new RangeError(`Packing ${packing} of levels is not known.`);
   const { power, values } = unpacked(bytes);
@@ -127,6 +132,6 @@ export function unpackLevels({ packing, bytes }: { packing: number; bytes: Buffe
 }
 
 /** The driver's buffers are views of larger ones, at any offset. */
-function own(bytes: Buffer): ArrayBuffer {
-  return bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.byteLength) as ArrayBuffer;
+function own(bytes: Uint8Array): ArrayBuffer {
+  return new Uint8Array(bytes).buffer;
 }

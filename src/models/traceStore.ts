@@ -2,7 +2,7 @@ import { Op } from 'sequelize';
 import { SweepSegment } from './sweepSegment';
 import { unpackAxis, unpackLevels } from './tracePacking';
 import { TraceSegment } from './traceSegment';
-import { segmentsOf, type Segment } from './traceSegments';
+import type { Segment } from './traceSegments';
 
 /** Writes segments of a sweep, the first of them with number `firstSeq`; call it once per transaction of a few. */
 export async function writeSegments(sweepId: number, segments: readonly Segment[], firstSeq: number): Promise<void> {
@@ -15,11 +15,11 @@ export async function writeSegments(sweepId: number, segments: readonly Segment[
       startHz: even?.startHz ?? null,
       stepHz: even?.stepHz ?? null,
       packing: axis?.packing ?? 0,
-      axis: axis && Buffer.from(axis.bytes),
+      axis: axis && Buffer.from(axis.bytes.buffer),
     });
     for (const { index, lowLevel, highLevel, levels } of traces) {
       const { packing, bytes } = levels;
-      const row = { sweepId, traceIndex: index, seq, lowLevel, highLevel, packing, levels: Buffer.from(bytes) };
+      const row = { sweepId, traceIndex: index, seq, lowLevel, highLevel, packing, levels: Buffer.from(bytes.buffer) };
       await TraceSegment.create(row);
     }
   }
@@ -50,15 +50,4 @@ export async function readPieces(sweepId: number, range?: { fromHz: number; toHz
 function axisOf({ points, startHz, stepHz, packing, axis }: SweepSegment): Float64Array {
   if (axis) return unpackAxis({ packing, bytes: axis });
   return Float64Array.from({ length: points }, (_, i) => startHz! + i * stepHz!);
-}
-
-export async function writeTraces(
-  sweepId: number,
-  frequencyHz: Float64Array,
-  traces: { index: number; levels: Float32Array }[],
-): Promise<void> {
-  const cutting = segmentsOf(frequencyHz, traces);
-  let step = cutting.next();
-  while (!step.done) step = cutting.next();
-  await writeSegments(sweepId, step.value, 0);
 }

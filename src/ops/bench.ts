@@ -17,10 +17,12 @@ import { SignalPath } from '@/models/signalPath';
 import { unitOfWork } from '@/models/unitOfWork';
 import type { Actor } from '@/auth/actor';
 import { evaluateNow } from '@/emc/evaluate';
+import { readSweep } from '@/ingest/read';
 import { recognise } from '@/ingest/recognise';
 import { createJob } from '@/services/jobs';
-import { gather, judge } from '@/services/judgeFile';
+import { gather } from '@/services/judgeFile';
 import { keepSweep } from '@/services/keepSweep';
+import { toCoreLine } from '@/services/limitSets';
 import { createProduct } from '@/services/products';
 import { createSample } from '@/services/samples';
 import { createSweepFile } from '@/services/sweepFiles';
@@ -122,8 +124,20 @@ async function benchImport({ actor, choice, stateId }: Lab): Promise<string> {
   const reading = await median(() => bytes.reduce((sum, byte) => sum ^ byte, 0));
   const recognising = await median(() => recognise(bytes, 'bench.csv'));
   const recognition = recognise(bytes);
-  const gathered = await unitOfWork(() => gather(recognition, choice, new Date()));
-  const { input } = await judge(bytes, recognition, choice, gathered);
+  const { terms, lines, path: its } = await unitOfWork(() => gather(recognition, choice, new Date()));
+  const read = readSweep(bytes, recognition, { frequencyUnit: 'Hz' });
+  const input = {
+    ...{ purpose: choice.purpose, port: choice.port, rule: 'guarded-by-u' as const },
+    terms: terms.map(({ term }) => term),
+    lines: lines.map(toCoreLine),
+    uncertainty: its!.revision.uncertainty,
+    traces: choice.traces.map((trace, i) => ({
+      ...trace,
+      ...{ rbwShape: null, vbwHz: null },
+      frequencyHz: read.frequencyHz,
+      reading: new Float32Array(read.traces[i]!.values),
+    })),
+  };
   const evaluating = await median(() => evaluateNow(input));
   say({
     bench: 'import',

@@ -1,28 +1,29 @@
 import { Op } from 'sequelize';
 import { authorise, type Actor } from '@/auth/actor';
 import { LAYER_COLUMNS } from '@/emc/columns';
-import { evaluate } from '@/emc/evaluate';
-import type { Evaluation, EvaluationInput, Trace } from '@/emc/types';
+import type { TraceHead } from '@/emc/segment';
+import type { Evaluation } from '@/emc/types';
 import { isReceiverInput } from '@/emc/units';
-import { Conflict, Invalid, type Issue } from '@/errors';
-import { recogniseSteps } from '@/ingest/recognise';
-import type { Recognition } from '@/ingest/types';
-import { readUpload } from '@/models/blobs';
+import { Conflict, Invalid, Unreadable, type Issue } from '@/errors';
+import type { Answers, Recognition } from '@/ingest/types';
 import { LimitSet } from '@/models/limitSet';
 import { SignalPath } from '@/models/signalPath';
 import { SignalPathRevision } from '@/models/signalPathRevision';
 import { unitOfWork } from '@/models/unitOfWork';
+import type { Upload } from '@/models/upload';
 import type { LimitLineView, PreviewView, SweepChoice } from '@/schemas/sweep';
 import { dueOnDay } from './calibrationState';
-import { inTurns } from './inTurns';
+import type { JudgedFile, Judging } from './importTasks';
 import { dayIn, labSettings } from './lab';
 import { linesOf, toCoreLine } from './limitSets';
 import { loadPaths, termsOf, type LoadedPath, type LoadedTerm } from './signalPaths';
-import { findUpload, readAsAnswered, recognitionOf } from './sweepFiles';
+import { findUpload, recognitionOf } from './sweepFiles';
 import { candidateOf, columnsView, traceViews } from './sweepViews';
+import { onUpload } from './uploadTasks';
 
+/** What was judged, without its points. */
 export interface Judged extends Gathered {
-  input: EvaluationInput;
+  input: Judging & { traces: readonly TraceHead[] };
   evaluation: Evaluation;
 }
 
@@ -135,18 +136,25 @@ export async function gather(recognition: Recognition, choice: SweepChoice, at: 
 }
 
 /**
- * Reads a file as chosen, rounds its levels to Float32 once and evaluates them against the limit set; no queries.
+ * Reads a held file as chosen, rounds its levels to Float32 once and evaluates them against the limit set.
  * Throws Unreadable with the line of the file, Invalid where the frequencies cannot be an axis.
+ * @param store whether the points are wanted in the rows they are stored in
  */
 export async function judge(
-  bytes: Uint8Array,
-  recognition: Recognition,
+  actor: Actor,
+  upload: Upload,
   choice: SweepChoice,
   gathered: Gathered,
-): Promise<Judged> {
+  { store }: { store: boolean },
+): Promise<Judged & JudgedFile> {
   const { path, terms, lines } = gathered;
+  const recognition = recognitionOf(upload);
+  if (recognition.refusal && !choice.keepPartial) {
+    const { message, line, found, expected } = recognition.refusal;
+    throw new Unreadable(message, line, found, expected);
+  }
   const { frequencyUnit, centreHz, sweepIndex } = choice;
-  const read = await readAsAnswered(bytes, recognition, {
+  const answers: Answers = {
     frequencyUnit,
     sweepIndex: sweepIndex ?? 0,
     partial: choice.keepPartial,
@@ -155,21 +163,8 @@ export async function judge(
       const chosen = choice.traces.find((trace) => trace.index === index);
       return chosen ? { index, use: true, unit: chosen.unit, detector: chosen.detector } : { index, use: false };
     }),
-  });
-  if (!read.frequencyHz.some((f) => f > 0)) {
-    const pointer = centreHz === null ? '/frequencyUnit' : '/centreHz';
-    throw new Invalid([{ pointer, message: 'leaves no frequency above 0 Hz' }]);
-  }
-  // Of several sweeps each may state its own filters.
-  const several = recognition.sweeps.length > 1;
-  const own = several ? await inTurns(recogniseSteps(bytes, undefined, sweepIndex ?? 0)) : recognition;
-  const { rbwShape, vbwHz, vbwEnabled } = own.settings;
-  const filter = { rbwShape, vbwHz: vbwEnabled === false ? null : vbwHz };
-  const input: EvaluationInput = {
-    traces: choice.traces.map((chosen): Trace => {
-      const { values } = read.traces.find((trace) => trace.index === chosen.index)!;
-      return { ...chosen, ...filter, frequencyHz: read.frequencyHz, reading: Float32Array.from(values) };
-    }),
+  };
+  const judging: Judging = {
     terms: terms.map(({ term }) => term),
     lines: lines.map(toCoreLine),
     uncertainty: path?.revision.uncertainty ?? { prescan: [], final: [] },
@@ -178,35 +173,30 @@ export async function judge(
     rule: 'guarded-by-u',
     partial: choice.keepPartial,
   };
-  return { ...gathered, input, evaluation: await inTurns(evaluate(input)) };
-}
-
-/** Lowest and highest frequency above 0 Hz; there is one. */
-export function rangeOf(frequencyHz: Float64Array): { firstHz: number; lastHz: number } {
-  let firstHz = Infinity;
-  let lastHz = 0;
-  for (const f of frequencyHz) {
-    if (f > 0 && f < firstHz) firstHz = f;
-    if (f > lastHz) lastHz = f;
+  const { traces } = choice;
+  const task = { kind: 'judge' as const, recognition, answers, traces, judging, store };
+  const result = await onUpload(actor, upload, task);
+  if ('unreadable' in result) {
+    const { message, line, found, expected } = result.unreadable;
+    throw new Unreadable(message, line, found, expected);
   }
-  return { firstHz, lastHz };
+  if ('noFrequency' in result) {
+    const pointer = centreHz === null ? '/frequencyUnit' : '/centreHz';
+    throw new Invalid([{ pointer, message: 'leaves no frequency above 0 Hz' }]);
+  }
+  return { ...gathered, ...result, input: { ...judging, traces: result.heads } };
 }
 
 /** A held file judged as it would be kept now; nothing is stored. */
 export async function previewSweepFile(actor: Actor | null, fileId: string, choice: SweepChoice): Promise<PreviewView> {
   authorise(actor, 'sweep-file.read');
-  const { bytes, recognition, gathered } = await unitOfWork(async () => {
+  const { upload, gathered } = await unitOfWork(async () => {
     const upload = await findUpload(fileId);
-    const recognition = recognitionOf(upload);
-    return {
-      recognition,
-      gathered: await gather(recognition, choice, new Date()),
-      bytes: await readUpload(upload.id),
-    };
+    return { upload, gathered: await gather(recognitionOf(upload), choice, new Date()) };
   });
   // Nothing of the database is held while the file is read and judged.
-  const { evaluation, input, lines } = await judge(bytes, recognition, choice, gathered);
-  const { firstHz, lastHz } = rangeOf(input.traces[0]!.frequencyHz);
+  const { evaluation, input, lines, axis } = await judge(actor, upload, choice, gathered, { store: false });
+  const { firstHz, lastHz } = axis;
   const worst = evaluation.candidates[0];
   return {
     window: {

@@ -1,14 +1,14 @@
 import type { z } from 'zod';
 import { authorise, type Actor } from '@/auth/actor';
-import { Conflict, Invalid, NotFound } from '@/errors';
-import { keepUpload, readUpload } from '@/models/blobs';
+import { Conflict, Invalid } from '@/errors';
+import { keepUploadParts } from '@/models/blobs';
 import { ModificationState } from '@/models/modificationState';
 import { newPublicId } from '@/models/publicId';
 import type { StoredPartial } from '@/models/stored';
 import { Sweep } from '@/models/sweep';
 import { SweepFile } from '@/models/sweepFile';
-import { SweepFilePart } from '@/models/sweepFilePart';
-import { writeTraces } from '@/models/traceStore';
+import type { Segment } from '@/models/traceSegments';
+import { writeSegments } from '@/models/traceStore';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import type { Upload } from '@/models/upload';
 import type { keepSweep as keepSweepBody, SweepView } from '@/schemas/sweep';
@@ -16,7 +16,9 @@ import { recordChange } from './audit';
 import { nextNumber } from './counters';
 import { writeEvaluation } from './evaluations';
 import { rememberShape } from './fileShapes';
-import { gather, judge, rangeOf, type Judged } from './judgeFile';
+import { inImportTurn } from './importLimits';
+import type { JudgedFile } from './importTasks';
+import { gather, judge, type Judged } from './judgeFile';
 import { dayIn, labSettings } from './lab';
 import { findSample, lockOpenJob, stateLabel } from './samples';
 import { settleRetests } from './settleRetests';
@@ -27,37 +29,107 @@ type Body = z.infer<typeof keepSweepBody>;
 
 /** A bench PC's clock may run a little ahead. */
 const CLOCK_SLACK_MS = 5 * 60_000;
+/** What is written in one transaction: two to four megabytes at most. */
+const FILE_PARTS_AT_ONCE = 8;
+const SEGMENTS_AT_ONCE = 8;
+
+/** A run whose bytes are written and that nothing shows yet. */
+export interface PendingSweep {
+  id: number;
+  fileId: number;
+  state: { id: number; jobId: number; jobPublicId: string };
+  upload: Upload;
+  judged: Judged;
+}
 
 /**
  * Keeps an uploaded file as a run of a sample state: the original bytes, the traces, the evaluation and its audit
- * entry, in one transaction. The path's revision and its calibrations are those in force when it was measured; without
- * that moment, when it is kept (`at`).
+ * entry. The path's revision and its calibrations are those in force when it was measured; without that moment, when
+ * it is kept (`at`).
  */
 export async function keepSweep(actor: Actor | null, body: Body, at = new Date()): Promise<SweepView> {
+  const pending = await stageSweep(actor, body, at);
+  try {
+    return await publishSweep(actor, body, pending, at);
+  } catch (error) {
+    await dropSweep(pending).catch(() => undefined);
+    throw error;
+  }
+}
+
+/**
+ * Reads and judges the file, and writes its bytes and points in several small transactions, under a run without
+ * evaluation that no query finds. No lock is held meanwhile. What is not published is dropped, at the latest by
+ * housekeeping.
+ */
+export async function stageSweep(actor: Actor | null, body: Body, at = new Date()): Promise<PendingSweep> {
+  authorise(actor, 'sweep.keep');
+  return inImportTurn(actor, async () => {
+    const { state, upload, gathered } = await unitOfWork(async () => {
+      const state = await findState(actor, body.stateId);
+      refusePlanned(state.row);
+      const upload = await findUpload(body.fileId);
+      const measuredAt = body.measuredAt === null ? at : new Date(body.measuredAt);
+      if (measuredAt.getTime() > at.getTime() + CLOCK_SLACK_MS) {
+        throw new Invalid([{ pointer: '/measuredAt', message: 'lies in the future' }]);
+      }
+      return { state, upload, gathered: await gather(recognitionOf(upload), body, measuredAt) };
+    });
+    const judged = await judge(actor, upload, body, gathered, { store: true });
+    const { id, fileId } = await unitOfWork(() => writeRun(actor, body, { state: state.row, upload, judged, at }));
+    const { jobId, jobPublicId } = state;
+    const pending = { id, fileId, state: { id: state.row.id, jobId, jobPublicId }, upload, judged };
+    try {
+      await writeBytes(pending, judged.segments);
+    } catch (error) {
+      await dropSweep(pending).catch(() => undefined);
+      throw error;
+    }
+    return pending;
+  });
+}
+
+async function writeBytes({ id, fileId, upload }: PendingSweep, segments: readonly Segment[]): Promise<void> {
+  for (let seq = 0, copied = FILE_PARTS_AT_ONCE; copied === FILE_PARTS_AT_ONCE; seq += copied) {
+    copied = await unitOfWork(() => keepUploadParts(upload.id, fileId, seq, FILE_PARTS_AT_ONCE));
+    // Housekeeping may have taken the upload away meanwhile.
+    if (copied < FILE_PARTS_AT_ONCE) await unitOfWork(() => findUpload(upload.publicId));
+  }
+  for (let seq = 0; seq < segments.length; seq += SEGMENTS_AT_ONCE) {
+    await unitOfWork(() => writeSegments(id, segments.slice(seq, seq + SEGMENTS_AT_ONCE), seq));
+  }
+}
+
+/** Takes a run that was not published out again, with its points and its file. */
+export async function dropSweep({ id, fileId }: Pick<PendingSweep, 'id' | 'fileId'>): Promise<void> {
+  await unitOfWork(async () => {
+    await Sweep.unscoped().destroy({ where: { id, evaluationId: null } });
+    await SweepFile.destroy({ where: { id: fileId } });
+  });
+}
+
+/** Gives a pending run its number and its evaluation, and all that follows from there being a run, in one transaction. */
+export async function publishSweep(
+  actor: Actor | null,
+  body: Body,
+  { id, state, upload, judged }: PendingSweep,
+  at = new Date(),
+): Promise<SweepView> {
   authorise(actor, 'sweep.keep');
   return unitOfWork(async () => {
-    const state = await findState(actor, body.stateId);
-    refusePlanned(state.row);
-    // Locked, so that housekeeping cannot take the file away between reading and copying it.
-    const upload = await findUpload(body.fileId, { lock: true });
-    const recognition = recognitionOf(upload);
-    const measuredAt = body.measuredAt === null ? at : new Date(body.measuredAt);
-    if (measuredAt.getTime() > at.getTime() + CLOCK_SLACK_MS) {
-      throw new Invalid([{ pointer: '/measuredAt', message: 'lies in the future' }]);
-    }
-    const gathered = await gather(recognition, body, measuredAt);
-    const judged = await judge(await readUpload(upload.id), recognition, body, gathered);
-    // Judging takes a while; what was looked at before it is decided under its locks.
+    // Judging took a while; what was looked at before it is decided under its locks.
     await lockOpenJob(state.jobId);
-    refusePlanned(await state.row.reload({ lock: currentTransaction().LOCK.UPDATE, include: [] }));
-    const run = await writeRun(actor, body, { state: state.row, upload, judged, at });
+    const lock = currentTransaction().LOCK.UPDATE;
+    refusePlanned(await ModificationState.findByPk(state.id, { lock, rejectOnEmpty: true }));
+    const run = await Sweep.unscoped().findOne({ where: { id, evaluationId: null }, lock });
+    if (!run) throw new Conflict('Keeping this file took too long, and it was let go. Keep it again.');
     const evaluation = await writeEvaluation(actor, run, judged, at);
     const { zone } = await labSettings();
     const year = dayIn(zone, at).slice(0, 4);
     const number = `R-${year.slice(2)}-${String(await nextNumber(`run-${year}`)).padStart(3, '0')}`;
-    await Sweep.update({ number, evaluationId: evaluation.id }, { where: { id: run.id } });
+    await run.update({ number, evaluationId: evaluation.id });
     await rememberShape(actor, upload, run, body, at);
-    await settleRetests(actor, { stateId: state.row.id, port: body.port, because: `run ${number} kept`, at });
+    await settleRetests(actor, { stateId: state.id, port: body.port, because: `run ${number} kept`, at });
     recordChange(actor, {
       scope: `job-${state.jobPublicId}`,
       action: `run ${number} kept`,
@@ -94,11 +166,12 @@ function refusePlanned({ planned, position }: ModificationState): void {
 interface Keeping {
   state: ModificationState;
   upload: Upload;
-  judged: Judged;
+  judged: Judged & JudgedFile;
   at: Date;
 }
 
-async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }: Keeping): Promise<Sweep> {
+/** The file and the run without what is large; both are pending until the run has an evaluation. */
+async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }: Keeping) {
   const { name, bytes, sha256, recognition } = upload;
   const file = await SweepFile.create({
     publicId: newPublicId(),
@@ -109,9 +182,7 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
     userId: actor.userId,
     createdAt: at,
   });
-  await keepUpload(upload.id, file.id);
-  if ((await SweepFilePart.count({ where: { sweepFileId: file.id } })) === 0) throw new NotFound('uploaded file');
-  const axis = judged.input.traces[0]!.frequencyHz;
+  const { points, firstHz, lastHz, stepHz, readToHz } = judged.axis;
   const { purpose, port, line, polarisation, heightM, heightSwept, azimuthDeg, distanceM } = body;
   const { operatingMode, valuesHold, trial } = body;
   const { frequencyUnit, centreHz, traces, sweepIndex, measuredAt } = body;
@@ -121,7 +192,7 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
   const publicId = newPublicId();
   const run = await Sweep.create({
     publicId,
-    // replaced by its number at the end of the unit, so that the counter is locked as briefly as can be
+    // replaced by its number when it is published
     number: publicId,
     stateId: state.id,
     sweepFileId: file.id,
@@ -136,42 +207,27 @@ async function writeRun(actor: Actor, body: Body, { state, upload, judged, at }:
     distanceM,
     operatingMode,
     trial,
-    partial: body.keepPartial ? partialOf(upload, axis) : null,
+    partial: body.keepPartial ? partialOf(upload, readToHz) : null,
     valuesHold,
     pathRevisionId: judged.path?.revision.id ?? null,
     limitSetId: judged.limitSet.id,
     reading: { frequencyUnit, centreHz, alreadyCorrected, traces, remarks, vbwHz, rbwShape },
     measuredAt: measuredAt === null ? null : new Date(measuredAt),
-    points: axis.length,
-    ...rangeOf(axis),
-    stepHz: stepOf(axis),
+    points,
+    firstHz,
+    lastHz,
+    stepHz,
     userId: actor.userId,
     createdAt: at,
   });
-  await writeTraces(
-    run.id,
-    axis,
-    judged.input.traces.map(({ index, reading }) => ({ index, levels: reading })),
-  );
-  return run;
+  return { id: run.id, fileId: file.id };
 }
 
 /** Where the file was cut, as its refusal said it. */
-function partialOf(upload: Upload, axis: Float64Array): StoredPartial {
+function partialOf(upload: Upload, readToHz: number): StoredPartial {
   const { refusal, partial } = recognitionOf(upload);
   const message = refusal!.message.replace(/ Export [^.]*\.$/, '');
-  return { line: partial!.line, message, readToHz: axis.at(-1)! };
-}
-
-/** The distance between neighbours when all are equal to a millionth of it, else null. */
-function stepOf(frequencyHz: Float64Array): number | null {
-  const steps = frequencyHz.length - 1;
-  if (steps < 1) return null;
-  const step = (frequencyHz[steps]! - frequencyHz[0]!) / steps;
-  for (let i = 0; i < steps; i++) {
-    if (Math.abs(frequencyHz[i + 1]! - frequencyHz[i]! - step) > Math.abs(step) * 1e-6) return null;
-  }
-  return step;
+  return { line: partial!.line, message, readToHz };
 }
 
 /** What recognition remarked, and where a person read the file otherwise than it says. */

@@ -1,12 +1,9 @@
 import { createHash } from 'node:crypto';
 import { authorise, type Actor } from '@/auth/actor';
-import { Invalid, NotFound, Unreadable } from '@/errors';
-import { IngestError } from '@/ingest/ingestError';
+import { Invalid, NotFound } from '@/errors';
 import { proposeFromName } from '@/ingest/proposals';
-import { readSweepSteps } from '@/ingest/read';
-import { recogniseSteps } from '@/ingest/recognise';
-import type { Answers, ReadSweep, Recognition } from '@/ingest/types';
-import { readUpload, writeUpload } from '@/models/blobs';
+import type { Recognition } from '@/ingest/types';
+import { writeUploadParts } from '@/models/blobs';
 import { newPublicId } from '@/models/publicId';
 import { Sweep } from '@/models/sweep';
 import { SweepFile } from '@/models/sweepFile';
@@ -14,31 +11,71 @@ import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import { Upload } from '@/models/upload';
 import type { RecognitionView, SweepFileView } from '@/schemas/sweepFile';
 import { proposedByShape } from './fileShapes';
-import { inTurns } from './inTurns';
+import { letOldestGo } from './importLimits';
+import { isSmall, runApart, runHere } from './importWorkers';
+import { onUpload } from './uploadTasks';
 
 const HELD_MS = 24 * 3600 * 1000;
+/** Parts written in one transaction: a few megabytes at most. */
+const PARTS_AT_ONCE = 8;
 
-/** Keeps an uploaded file for a day and answers what was recognised in it; a refused file is held too, to be shown. */
-export async function createSweepFile(
-  actor: Actor | null,
-  file: { name: string; bytes: Uint8Array; sha256?: string },
-): Promise<SweepFileView> {
+/** A file as it was received: in memory, or in a spool that only this process can open. */
+export interface SweepFileToHold {
+  name: string;
+  /** Hex, of the bytes. */
+  sha256: string;
+  source: { whole: Uint8Array } | { fd: number; bytes: number };
+}
+
+/**
+ * Recognises a file and holds it for a day; a refused file is held too, to be shown. Its bytes are written in several
+ * small transactions: until `showSweepFile` has answered its id nobody knows it, and one that never does expires.
+ */
+export async function holdSweepFile(actor: Actor | null, file: SweepFileToHold): Promise<Upload> {
   authorise(actor, 'sweep-file.create');
-  const recognition = await inTurns(recogniseSteps(file.bytes, file.name));
-  const { sha256 = createHash('sha256').update(file.bytes).digest('hex') } = file;
-  return unitOfWork(async () => {
-    const upload = await Upload.create({
+  const { name, sha256, source } = file;
+  const bytes = 'whole' in source ? source.whole.length : source.bytes;
+  const task = { kind: 'recognise' as const, name, sweepIndex: null, store: true };
+  const { recognition, parts } =
+    'whole' in source && isSmall(bytes)
+      ? await runHere(source.whole, task)
+      : await runApart(actor.userId, task, sha256, async () => source);
+  const upload = await unitOfWork(async () => {
+    await letOldestGo(actor.userId);
+    return Upload.create({
       publicId: newPublicId(),
       sha256,
-      name: file.name,
-      bytes: file.bytes.length,
+      name,
+      bytes,
       recognition: recognition as unknown as Record<string, unknown>,
       userId: actor.userId,
       expiresAt: new Date(Date.now() + HELD_MS),
     });
-    await writeUpload(upload.id, file.bytes);
-    return view(upload);
   });
+  for (let seq = 0; seq < parts.length; seq += PARTS_AT_ONCE) {
+    await unitOfWork(() => writeUploadParts(upload.id, parts.slice(seq, seq + PARTS_AT_ONCE), seq));
+  }
+  return upload;
+}
+
+/** What was recognised in a file that was just held. */
+export async function showSweepFile(actor: Actor | null, upload: Upload): Promise<SweepFileView> {
+  authorise(actor, 'sweep-file.create');
+  return unitOfWork(() => view(upload));
+}
+
+/** A held file that nobody was told of is let go at once. */
+export async function dropSweepFile(upload: Upload): Promise<void> {
+  await unitOfWork(() => Upload.destroy({ where: { id: upload.id } }));
+}
+
+/** Holds and shows a file that is in memory. */
+export async function createSweepFile(
+  actor: Actor | null,
+  { name, bytes }: { name: string; bytes: Uint8Array },
+): Promise<SweepFileView> {
+  const sha256 = createHash('sha256').update(bytes).digest('hex');
+  return showSweepFile(actor, await holdSweepFile(actor, { name, sha256, source: { whole: bytes } }));
 }
 
 /** What was recognised; with `sweep`, the file is read again and that sweep described by its own preamble. */
@@ -50,8 +87,8 @@ export async function readSweepFile(actor: Actor | null, publicId: string, sweep
   if (sweep >= whole.sweeps.length) {
     throw new Invalid([{ pointer: '/query/sweep', message: `is not in this file; it holds ${whole.sweeps.length}` }]);
   }
-  const bytes = await unitOfWork(() => readUpload(upload.id));
-  const recognition = await inTurns(recogniseSteps(bytes, upload.name, sweep));
+  const task = { kind: 'recognise' as const, name: upload.name, sweepIndex: sweep, store: false };
+  const { recognition } = await onUpload(actor, upload, task);
   return unitOfWork(() => view(upload, recognition));
 }
 
@@ -67,24 +104,6 @@ export const recognitionOf = (row: Upload | SweepFile): Recognition => ({
   ...{ broken: null, partial: null, shape: null },
   ...(row.recognition as unknown as Recognition),
 });
-
-/** Reads the whole file in turns; what the reader refuses becomes an Unreadable with its line. */
-export async function readAsAnswered(
-  bytes: Uint8Array,
-  recognition: Recognition,
-  answers: Answers,
-): Promise<ReadSweep> {
-  if (recognition.refusal && !answers.partial) {
-    const { message, line, found, expected } = recognition.refusal;
-    throw new Unreadable(message, line, found, expected);
-  }
-  try {
-    return await inTurns(readSweepSteps(bytes, recognition, answers));
-  } catch (error) {
-    if (error instanceof IngestError) throw new Unreadable(error.message, error.line, error.found, error.expected);
-    throw error;
-  }
-}
 
 async function view(upload: Upload, recognised = recognitionOf(upload)): Promise<SweepFileView> {
   const files = await SweepFile.findAll({ where: { sha256: upload.sha256 }, attributes: ['id'], limit: 20 });
