@@ -11,6 +11,7 @@ import { listProducts } from '@/services/products';
 import type { Actor } from '@/auth/actor';
 
 const LAB_SECTIONS: Section[] = [
+  { href: '/day', name: 'Day' },
   { href: '/jobs', name: 'Jobs', also: ['/samples', '/products'] },
   { href: '/sweeps', name: 'Sweeps', onPhone: true },
   { href: '/equipment', name: 'Equipment' },
