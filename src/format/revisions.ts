@@ -1,0 +1,83 @@
+import type { FactorQuantity } from '@/emc/kinds';
+import { formatFrequencyRange } from './frequencies';
+import { formatDb, formatDistance } from './quantities';
+
+/** Words for what a new revision of a table or a limit line changes. */
+
+interface Difference {
+  largestDb: number;
+  atHz: number;
+}
+
+/** A row's or an edge's frequency, without idle zeros: `144 MHz`. */
+export function formatEdge(hz: number): string {
+  return formatFrequencyRange(hz, hz);
+}
+
+/** `0.6 dB higher`; the word follows the rounded figure, so that nothing reads `0.0 dB higher`. */
+export function formatDifference(db: number): string {
+  const figure = formatDb(Math.abs(db));
+  if (Number(figure) === 0) return 'no different';
+  return `${figure} dB ${db > 0 ? 'higher' : 'lower'}`;
+}
+
+/** `at most 0.6 dB higher, at 144 MHz`; null: the two share no frequency. */
+export function differenceWords(difference: Difference | null): string {
+  if (difference === null) return 'shares no frequency with the revision before';
+  const { largestDb, atHz } = difference;
+  if (largestDb === 0) return 'the same at every frequency that both have';
+  if (Number(formatDb(Math.abs(largestDb))) === 0) return 'less than 0.1 dB apart everywhere';
+  return `at most ${formatDifference(largestDb)}, at ${formatEdge(atHz)}`;
+}
+
+export const QUANTITY_WORDS: Record<FactorQuantity, string> = {
+  'antenna-factor': 'antenna factor',
+  loss: 'loss',
+  gain: 'gain',
+};
+
+/** `dB/m` for an antenna factor, else `dB`. */
+export function quantityUnit(quantity: FactorQuantity | null): string {
+  return quantity === 'antenna-factor' ? 'dB/m' : 'dB';
+}
+
+export interface Remark {
+  kind: string;
+  fromHz: number | null;
+  toHz: number | null;
+  db: number | null;
+}
+
+/** One remark on the rows of a new table, as a sentence. */
+export function remarkWords({ kind, fromHz, toHz, db }: Remark, what: string): string {
+  const range = fromHz !== null && toHz !== null ? formatFrequencyRange(fromHz, toHz) : '';
+  switch (kind) {
+    case 'jump':
+      return `Between ${formatEdge(fromHz!)} and ${formatEdge(toHz!)} the ${what} steps by ${formatDb(Math.abs(db!))} dB.`;
+    case 'gap-between-rows':
+      return `No row lies between ${formatEdge(fromHz!)} and ${formatEdge(toHz!)}; what is added there is one straight line over log f.`;
+    case 'no-factor-above':
+      return `From now on nothing above ${formatEdge(fromHz!)} has a factor; the revision before reached ${formatEdge(toHz!)}.`;
+    case 'no-factor-below':
+      return `From now on nothing below ${formatEdge(toHz!)} has a factor; the revision before began at ${formatEdge(fromHz!)}.`;
+    case 'turned':
+      return 'The frequencies fall in the file; the rows were turned round.';
+    case 'negated':
+      return 'No figure in the file is above zero: read as a loss and turned over, since no loss is a gain.';
+    case 'unit-not-stated':
+      return `The file states no unit; the figures are read as ${what === 'antenna factor' ? 'dB/m' : 'dB'}.`;
+    case 'not-said-to-be-factors':
+      return 'Nothing in the file says that these are corrections. Look at the chart before you enter them.';
+    case 'mixed-signs':
+      return `Some figures are above zero and some below; a ${what} of less than nothing is the opposite.`;
+    case 'distance-differs':
+      return 'The distance is another than before; runs at the other distance find no table.';
+    default:
+      return range;
+  }
+}
+
+/** `horizontal, 3 m`; empty where neither is given. */
+export function tableConditions(polarisation: string | null, distanceM: number | null): string {
+  return [polarisation, distanceM === null ? null : formatDistance(distanceM)].filter(Boolean).join(', ');
+}
