@@ -174,13 +174,13 @@ test('under another SESSION_SECRET than it was made with, a link that would open
 });
 
 test('killed between the sending and the noting of it, a mail is sent twice with the same Message-ID', async () => {
-  let victim: ReturnType<typeof startEntry> | undefined;
+  const started: ReturnType<typeof startEntry>[] = [];
   let kills = 0;
   const { taken, port } = await listening({}, () => {
     if (kills > 0) return;
     kills += 1;
     // The mail is whole and taken; the process that sent it never hears of it.
-    victim!.process.kill('SIGKILL');
+    started[0]!.process.kill('SIGKILL');
   });
   const { state } = await asked();
   const environment = {
@@ -188,8 +188,8 @@ test('killed between the sending and the noting of it, a mail is sent twice with
     APP_ORIGIN: 'http://localhost:3000',
     SMTP_URL: `smtp://127.0.0.1:${port}`,
   };
-  victim = startEntry('src/outbox/main.ts', [], environment);
-  expect(await victim.ended).toBeNull();
+  started.push(startEntry('src/outbox/main.ts', [], environment));
+  expect(await started[0]!.ended).toBeNull();
   expect(taken).toHaveLength(1);
   expect(await state()).toMatchObject({ state: 'sending', attempts: 1 });
   // Its lease is respected until it has run out.
