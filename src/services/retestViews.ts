@@ -29,7 +29,7 @@ export function retestInclude(ofJob: Record<string, number> = {}): IncludeOption
     { association: 'state', required: true, include: [sample] },
     { association: 'carried', attributes: ['position'] },
     { association: 'limitLine' },
-    { association: 'sweep', attributes: ['publicId', 'number'] },
+    { association: 'sweep', required: false, attributes: ['publicId', 'number'] },
     { association: 'origin', attributes: ['number'], include: [{ association: 'state', attributes: ['position'] }] },
   ];
 }

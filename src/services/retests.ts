@@ -74,7 +74,7 @@ export async function readRetest(actor: Actor | null, publicId: string): Promise
     const row = await findRetest(actor, publicId);
     const changes = await RetestChange.findAll({
       where: { retestId: row.id },
-      include: ['user', { association: 'sweep', attributes: ['publicId', 'number'] }],
+      include: ['user', { association: 'sweep', required: false, attributes: ['publicId', 'number'] }],
       order: [['id', 'DESC']],
       limit: CHANGES_SHOWN,
     });
