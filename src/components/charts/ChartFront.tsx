@@ -10,7 +10,7 @@ import type { ChartSubject } from './chartSubject';
 import { CombLayer } from './CombLayer';
 import { combTicks } from './combTicks';
 import { frequencyTicks } from './frequencyTicks';
-import { floorPath } from './floorPath';
+import { floorPath, floorsOnce } from './floorPath';
 import { limitLabels, type LimitLabel } from './limitLabels';
 import { drawnLimits, labelY, LimitLayer, zoneWords, type ZoneWord } from './LimitLayer';
 import type { ChartMode } from './marginSeries';
@@ -69,9 +69,9 @@ export const ChartFront = memo(function ChartFront(props: ChartFrontProps) {
         );
   const { overview, detail } = props.layers;
   const finest = detail && detail.fromHz <= span.fromHz && detail.toHz >= span.toHz ? detail : overview;
-  const floors = candidates.flatMap((candidate) => {
-    const path = candidate.kind === 'floor' ? floorPath(candidate, finest, span, scale, mode) : '';
-    return path ? [{ rank: candidate.rank, path, verdict: candidate.verdict }] : [];
+  const floors = useMemo(() => floorsOnce(candidates), [candidates]).flatMap((candidate) => {
+    const path = floorPath(candidate, finest, span, scale, mode);
+    return path ? [{ key: `${candidate.rank} ${candidate.fromHz}`, path, verdict: candidate.verdict }] : [];
   });
   const tabRank = marks.some(({ id }) => id === selectedRank) ? selectedRank : Math.min(...marks.map(({ id }) => id));
   return (

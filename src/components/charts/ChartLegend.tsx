@@ -20,6 +20,12 @@ interface Props {
   children?: ReactNode;
 }
 
+/** A trace by its detector; where traces share one, each by its own name. */
+function traceWord({ detector, name }: SweepView['traces'][number], traces: SweepView['traces']): string {
+  const alone = traces.filter((other) => other.detector === detector).length === 1;
+  return alone ? DETECTOR_WORDS[detector] : name;
+}
+
 /** The line over the chart: which chart, which traces, whose harmonics, and against what. */
 export function ChartLegend({ mode, onMode, traces, purpose, clockHz, onClock, children }: Props) {
   const leading = leadingTrace(traces);
@@ -44,7 +50,7 @@ export function ChartLegend({ mode, onMode, traces, purpose, clockHz, onClock, c
               className={trace.index === leading ? 'stroke-ink' : 'stroke-ink3'}
             />
           </svg>
-          {DETECTOR_WORDS[trace.detector]}
+          {traceWord(trace, traces)}
           {trace.index === leading && purpose ? `, ${purpose}` : ''}
         </span>
       ))}

@@ -13,7 +13,7 @@ type PlacedMark = ReturnType<typeof candidateMarks>[number];
 interface Props {
   marks: PlacedMark[];
   labels: PlacedLabel[];
-  floors: { rank: number; path: string; verdict: CandidateView['verdict'] }[];
+  floors: { key: string; path: string; verdict: CandidateView['verdict'] }[];
   scale: PlotScale;
   unit: LineUnit;
   selectedRank: number | null;
@@ -31,7 +31,7 @@ export function MarkLayer({ marks, labels, floors, scale, unit, selectedRank, ta
       <g aria-hidden="true" fill="none">
         {floors.map((floor) => (
           <path
-            key={floor.rank}
+            key={floor.key}
             d={floor.path}
             className={VERDICT_MARKS[floor.verdict].colour}
             stroke="currentColor"

@@ -28,6 +28,8 @@ const noTicks = (axis: { ticks: unknown[] }) => {
 export interface DrawnTrace {
   index: number;
   leading: boolean;
+  /** Drawn in dashes whatever its place: the run another is laid over. */
+  dashed?: boolean;
   points: DrawnPoint[];
 }
 
@@ -50,7 +52,7 @@ export default function TraceCanvas(props: { frame: Frame; range: Range; view: S
           data: trace.points,
           borderColor: trace.leading ? ink : ink3,
           borderWidth: trace.leading ? 1 : 0.9,
-          borderDash: order > 1 ? [4, 3] : [],
+          borderDash: trace.dashed || order > 1 ? [4, 3] : [],
           backgroundColor: fill,
           fill: trace.leading ? 'start' : false,
         })),

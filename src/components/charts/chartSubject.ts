@@ -15,7 +15,10 @@ export interface ChartSubject {
   orientation: string;
 }
 
-export function chartSubject(sweep: SweepView, orientation: string): ChartSubject {
+export function chartSubject(
+  sweep: Pick<SweepView, 'firstHz' | 'lastHz' | 'stepHz' | 'limitSet' | 'traces' | 'evaluation'>,
+  orientation: string,
+): ChartSubject {
   return {
     firstHz: sweep.firstHz,
     lastHz: sweep.lastHz,

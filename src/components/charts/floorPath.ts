@@ -35,3 +35,25 @@ export function floorPath(
   const along = points.map(([x, y]) => `${x} ${y - 3}`).join('L');
   return `M${firstX} ${firstY + 3}V${firstY - 3}L${along}M${lastX} ${lastY - 3}v6`;
 }
+
+/**
+ * Floors of several traces against one line often cover one another. Of each line's stretch only the worst is drawn:
+ * the candidates cut to where no worse one of the same line stands.
+ */
+export function floorsOnce(candidates: readonly CandidateView[]): CandidateView[] {
+  const drawn: CandidateView[] = [];
+  const floors = candidates.filter(({ kind }) => kind === 'floor').sort((one, other) => one.rank - other.rank);
+  for (const floor of floors) {
+    let left: Span[] = [{ fromHz: floor.fromHz, toHz: floor.toHz }];
+    for (const worse of drawn.filter(({ lineId }) => lineId === floor.lineId)) {
+      left = left.flatMap(({ fromHz, toHz }) =>
+        [
+          { fromHz, toHz: Math.min(toHz, worse.fromHz) },
+          { fromHz: Math.max(fromHz, worse.toHz), toHz },
+        ].filter((part) => part.toHz > part.fromHz),
+      );
+    }
+    drawn.push(...left.map((part) => ({ ...floor, ...part })));
+  }
+  return drawn;
+}
