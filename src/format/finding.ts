@@ -9,6 +9,8 @@ export interface FindingRun {
   text: string;
   figure?: boolean;
   strong?: boolean;
+  /** What a person has to know beside the verdict; ochre. */
+  remark?: boolean;
 }
 
 type Worst = Pick<

@@ -23,7 +23,13 @@ export function Figure({ value, unit, strong, className }: FigureProps) {
 /** The runs of a finding, or of any sentence with figures in it. */
 export function Runs({ runs }: { runs: readonly FindingRun[] }) {
   return runs.map((run, at) =>
-    run.figure ? <Figure key={at} value={run.text} strong={run.strong} /> : <span key={at}>{run.text}</span>,
+    run.figure ? (
+      <Figure key={at} value={run.text} strong={run.strong} />
+    ) : (
+      <span key={at} className={run.remark ? 'text-ochre' : undefined}>
+        {run.text}
+      </span>
+    ),
   );
 }
 

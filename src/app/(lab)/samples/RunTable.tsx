@@ -5,6 +5,7 @@ import { VerdictWord } from '@/components/ui/VerdictWord';
 import { dayOf, formatDayTime, formatShortDay } from '@/format/dates';
 import { formatFrequencyMhz } from '@/format/frequencies';
 import { ABSENT, formatCount, formatMargin } from '@/format/quantities';
+import { STRAYED_MARK } from '@/format/setup';
 import { MAINS_LINE_WORDS, POLARISATION_MARKS, PORT_WORDS, PURPOSE_WORDS } from '@/format/words';
 import type { Run } from './worstRun';
 
@@ -110,10 +111,20 @@ export function RunTable({
 }
 
 /** What sets a run apart from those that speak for their state. */
-function Marks({ run: { trial, partial, voided } }: { run: Run }) {
+function Marks({ run: { trial, partial, voided, strayed } }: { run: Run }) {
   const marks = [trial !== null && `trial ${trial}`, partial && 'partial', voided && 'voided'].filter(Boolean);
-  if (marks.length === 0) return null;
-  return <span className="t-detail block font-normal whitespace-normal">{marks.join(', ')}</span>;
+  if (marks.length === 0 && strayed === null) return null;
+  return (
+    <span className="t-detail block font-normal whitespace-normal">
+      {marks.join(', ')}
+      {marks.length > 0 && strayed !== null && ', '}
+      {strayed !== null && (
+        <span className="text-ochre" title={strayed}>
+          {STRAYED_MARK}
+        </span>
+      )}
+    </span>
+  );
 }
 
 /** A voided run keeps its figures and has no verdict any more. */

@@ -1,3 +1,4 @@
+import { SetUpsOfPort } from '@/app/(lab)/sweeps/[id]/SetUpsOfPort';
 import { VerdictWord } from '@/components/ui/VerdictWord';
 import { capitalised, PORT_WORDS } from '@/format/words';
 import type { Standing } from './standing';
@@ -12,7 +13,7 @@ export function missingSection(standings: readonly Standing[]) {
       title: 'Ports',
       children: (
         <ul>
-          {standings.map(({ port, state, verdict, missing }) => (
+          {standings.map(({ port, state, verdict, missing, sweep }) => (
             <li key={port}>
               <span className="column-line">
                 <span>
@@ -28,6 +29,7 @@ export function missingSection(standings: readonly Standing[]) {
               {missing.length > 4 && (
                 <span className="column-quiet block">And {missing.length - 4} more, on its sweep sheet.</span>
               )}
+              <SetUpsOfPort runs={sweep.portVerdict.runs} />
             </li>
           ))}
           {lacking.length === 0 && <li className="column-quiet">Nothing is missing for these verdicts.</li>}

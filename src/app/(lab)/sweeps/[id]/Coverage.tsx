@@ -3,6 +3,7 @@ import { VerdictWord } from '@/components/ui/VerdictWord';
 import type { SweepView } from '@/schemas/sweep';
 import { missingText } from '@/format/missing';
 import { PORT_WORDS } from '@/format/words';
+import { SetUpsOfPort } from './SetUpsOfPort';
 
 /** The port's verdict over every run of this state, and what is missing for it. */
 export function Coverage({ sweep }: { sweep: SweepView }) {
@@ -21,6 +22,7 @@ export function Coverage({ sweep }: { sweep: SweepView }) {
       ) : (
         <p>Nothing is missing for a verdict on this port.</p>
       )}
+      <SetUpsOfPort runs={portVerdict.runs} className="mt-[22px]" />
       {!portVerdict.runs.some((run) => run.id === sweep.id) && <p className="mt-[22px]">{silence(sweep)}</p>}
       <p className="mt-[22px]">
         {portVerdict.runs.length === 0 ? 'No run speaks for it.' : 'Runs:'}{' '}

@@ -17,6 +17,7 @@ import { ButtonLink } from '@/components/ui/Button';
 import { Id } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import type { EvaluationItem } from '@/schemas/runActs';
+import type { PhotoView, SetupView } from '@/schemas/setup';
 import type { CandidateView, SweepView, WindowView } from '@/schemas/sweep';
 import { formatDayTime } from '@/format/dates';
 import { formatBandwidth, formatFrequency } from '@/format/frequencies';
@@ -29,6 +30,7 @@ import { Record } from './Record';
 import { RunActs } from './RunActs';
 import { runFinding, runTitle } from './runFinding';
 import { orientationOf, runWords } from './runWords';
+import { setUpSection } from './setUpSection';
 import { SettingsLine } from './SettingsLine';
 import { useCandidates, type CandidatePage } from './useCandidates';
 import { useWindow } from './useWindow';
@@ -46,6 +48,8 @@ interface Props {
   /** Runs of the same sample, this one among them. */
   others: ListedRun[];
   notes: NotesPage;
+  setup: SetupView;
+  photos: { items: PhotoView[]; next: string | null };
   zone: string;
   /** Whether the reader is one of the lab's people. */
   lab: boolean;
@@ -59,7 +63,7 @@ interface Open {
 
 /** The sheet of one run: finding, chart, candidates, and beside them how each figure came about. */
 export function SweepSheet(props: Props) {
-  const { sweep, overview, first, history, evaluations, others, notes, zone, lab } = props;
+  const { sweep, overview, first, history, evaluations, others, notes, setup, photos, zone, lab } = props;
   const tableId = useId();
   const legend = useRef<HTMLDivElement>(null);
   const [mode, setMode] = useState<ChartMode>('margin');
@@ -170,6 +174,7 @@ export function SweepSheet(props: Props) {
           summary: <Coverage.Summary sweep={sweep} />,
           children: <Coverage sweep={sweep} />,
         },
+        setUpSection({ sweep, setup, photos, zone, lab }),
         notesSection({ sweepId: sweep.id }, notes, zone, lab),
         {
           id: 'record',

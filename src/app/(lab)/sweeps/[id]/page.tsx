@@ -7,6 +7,8 @@ import { historyOf } from '@/services/audit';
 import { listEvaluations } from '@/services/evaluations';
 import { labZone } from '@/services/lab';
 import { listNotes } from '@/services/notes';
+import { listPhotos } from '@/services/photos';
+import { readSetup } from '@/services/setup';
 import { listCandidates, listSweeps, readSweep } from '@/services/sweeps';
 import { readOverview } from '@/services/sweepWindow';
 import { runTitle } from './runFinding';
@@ -20,6 +22,7 @@ const FIRST_CANDIDATES = 50;
 /** Runs of the sample that this one can be laid over from here; older ones from the sample's list. */
 const OTHERS = 200;
 const EVALUATIONS = 20;
+const PHOTOS = 12;
 
 /** Title and sheet are one read per request; the actor is the same object in both. */
 const readOnce = cache((actor: Actor, id: string) => found(readSweep(actor, id)));
@@ -33,13 +36,15 @@ export default async function SweepPage({ params }: Props) {
   const actor = await requireActor();
   const { id } = await params;
   const sweep = await readOnce(actor, id);
-  const [window, candidates, zone, notes, evaluations, others] = await Promise.all([
+  const [window, candidates, zone, notes, evaluations, others, setup, photos] = await Promise.all([
     readOverview(actor, id),
     listCandidates(actor, id, { limit: FIRST_CANDIDATES }),
     labZone(),
     listNotes(actor, { limit: 10, sweepId: id }),
     listEvaluations(actor, id, { limit: EVALUATIONS }),
     listSweeps(actor, { limit: OTHERS, sampleId: sweep.sample.id }),
+    readSetup(actor, id),
+    listPhotos(actor, id, { limit: PHOTOS }),
   ]);
   const history = actor.role === 'designer' ? null : await historyOf(actor, 'sweep', id);
   return (
@@ -52,6 +57,8 @@ export default async function SweepPage({ params }: Props) {
       evaluations={evaluations}
       others={others.items}
       notes={notes}
+      setup={setup}
+      photos={photos}
       zone={zone}
       lab={actor.role !== 'designer'}
     />

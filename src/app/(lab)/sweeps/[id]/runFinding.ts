@@ -1,12 +1,15 @@
 import type { SweepView } from '@/schemas/sweep';
 import { formatDay } from '@/format/dates';
 import { findingOf, type FindingRun } from '@/format/finding';
+import { strayedText } from '@/format/setup';
 import type { Verdict } from '@/emc/kinds';
 
 /** The sentence a run opens with; before it, when it is voided, and after it, when it is a trial, what it speaks for. */
 export function runFinding(sweep: SweepView, zone: string): { verdict: Verdict; runs: FindingRun[] } {
   const { evaluation, traces, limitSet, voided, trial, state } = sweep;
   const runs = findingOf(evaluation, traces, limitSet.lines);
+  const strayed = strayedText(sweep.setup.eutStayed === 'no' ? sweep.setup.whatHappened : null);
+  if (strayed) runs.push({ text: ` ${strayed}`, remark: true });
   if (trial !== null) runs.push({ text: ` A trial under ${state.label}, ${trial}: it speaks for nothing but itself.` });
   if (!voided) return { verdict: evaluation.verdict, runs };
   const reason = /[.!?]$/.test(voided.reason) ? voided.reason : `${voided.reason}.`;
