@@ -1,10 +1,10 @@
-import { Op } from 'sequelize';
+import { Op, QueryTypes } from 'sequelize';
 import { authorise, type Actor } from '@/auth/actor';
 import { VERDICTS } from '@/emc/kinds';
 import { Booking } from '@/models/booking';
+import { database } from '@/models/database';
 import type { Evaluation } from '@/models/evaluation';
 import { ModificationState } from '@/models/modificationState';
-import { Retest } from '@/models/retest';
 import { Sample } from '@/models/sample';
 import { Sweep } from '@/models/sweep';
 import { TestPosition } from '@/models/testPosition';
@@ -66,10 +66,7 @@ async function withWhatCame(actor: Actor, rows: Booking[]): Promise<DayBooking[]
   });
   const stateId = states.map(({ id }) => id);
   const runs = await runsBetween(stateId, rows);
-  const retests = await Retest.findAll({
-    attributes: ['stateId'],
-    where: { stateId, status: ['waiting', 'scheduled'], carriedTo: null },
-  });
+  const retests = await openRetests(stateId);
   return rows.map((row) => {
     const own = states.filter((state) =>
       row.stateId === null ? state.sampleId === row.sampleId : state.id === row.stateId,
@@ -85,9 +82,20 @@ async function withWhatCame(actor: Actor, rows: Booking[]): Promise<DayBooking[]
       own: row.technicianId === actor.userId,
       verdict: VERDICTS.find((verdict) => verdicts.includes(verdict)) ?? null,
       runs: within.length,
-      openRetests: retests.filter((retest) => speaksFor(retest.stateId)).length,
+      openRetests: own.reduce((sum, { id }) => sum + (retests.get(id) ?? 0), 0),
     };
   });
+}
+
+/** Retests that wait or are scheduled, by the state (row id) they are of. */
+async function openRetests(stateIds: number[]): Promise<Map<number, number>> {
+  if (stateIds.length === 0) return new Map();
+  const rows = await database().query<{ stateId: number; open: number }>(
+    `SELECT state_id AS stateId, COUNT(*) AS open FROM retests
+      WHERE state_id IN (:stateIds) AND status IN ('waiting', 'scheduled') GROUP BY state_id`,
+    { replacements: { stateIds }, type: QueryTypes.SELECT },
+  );
+  return new Map(rows.map(({ stateId, open }) => [Number(stateId), Number(open)]));
 }
 
 type Run = Sweep & { evaluation: Evaluation };

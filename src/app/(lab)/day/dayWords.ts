@@ -122,10 +122,6 @@ export function dayFinding(
 
   function what({ product, state, position }: DayBooking, lead: string): FindingRun[] {
     const named = `${product.code}${state ? ` ${state.label}` : ''}`;
-    return [
-      plain(lead),
-      figure(named, true),
-      plain(` at position ${position.code}, ${position.name},`),
-    ];
+    return [plain(lead), figure(named, true), plain(` at position ${position.code}, ${position.name},`)];
   }
 }
