@@ -23,6 +23,9 @@ test('a whole environment reads with its defaults', () => {
   expect(readEnv(GOOD)).toEqual({
     ...GOOD,
     TRUSTED_PROXIES: [],
+    IMPORTS_AT_ONCE: 2,
+    IMPORT_MB_PER_HOUR: 2000,
+    IMPORT_FILES_PER_HOUR: 600,
     PORT: 3000,
     HOST: '127.0.0.1',
     STILLFIELD_DEMO: false,
@@ -113,3 +116,23 @@ test('no message repeats a secret', () => {
   expect(lines).toHaveLength(2);
   expect(lines.join()).not.toContain('hunter2');
 });
+
+test.each(['lab@harrowlane.example', 'no-reply+stillfield@mail.harrowlane.example'])(
+  'MAIL_FROM %s is a sender',
+  (MAIL_FROM) => expect(readEnv({ ...GOOD, MAIL_FROM }).MAIL_FROM).toBe(MAIL_FROM),
+);
+
+test.each([
+  'Harrow Lane <lab@harrowlane.example>',
+  'lab@harrowlane.example\r\nBcc: x@elsewhere.example',
+  'lab@harrowlane.example, x@elsewhere.example',
+  'lab',
+  '@harrowlane.example',
+])('MAIL_FROM %j is refused', (MAIL_FROM) => {
+  expect(problems({ ...GOOD, MAIL_FROM })).toEqual([expect.stringMatching(/^MAIL_FROM: write one plain address/)]);
+});
+
+test.each(['smtp://mail.example/path', 'smtp://mail.example?pool=true', 'mail.example:25'])(
+  'SMTP_URL %s says more, or less, than host, port, user and password',
+  (SMTP_URL) => expect(problems({ ...GOOD, SMTP_URL })).toEqual([expect.stringMatching(/^SMTP_URL: write smtp/)]),
+);

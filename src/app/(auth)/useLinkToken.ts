@@ -2,9 +2,8 @@
 
 import { useEffect, useState, useSyncExternalStore } from 'react';
 import type { Problem } from '@/components/forms/problem';
-import { send, type Submittable } from '@/components/forms/send';
-
-const READ: Submittable = { method: 'POST', path: '/api/one-time-links/read' };
+import { send } from '@/components/forms/send';
+import { PASSWORD_WRITES } from './writes';
 
 export interface LinkOf {
   name: string;
@@ -39,7 +38,7 @@ export function useLinkToken(kind: 'reset' | 'invitation'): LinkState {
     let current = true;
     const answered = (state: LinkState) => current && setRead({ token, state });
     // A token that cannot be one is not worth asking about.
-    const asked = /^[\w-]{43}$/.test(token) ? send<LinkOf>(READ, { kind, token }, {}) : null;
+    const asked = /^[\w-]{43}$/.test(token) ? send<LinkOf>(PASSWORD_WRITES.readLink, { kind, token }, {}) : null;
     void Promise.resolve(asked).then((answer) => {
       if (answer?.ok) answered({ at: 'open', token, link: answer.reply });
       else if (!answer || answer.problem.status === 409) answered({ at: 'spent' });

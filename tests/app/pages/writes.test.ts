@@ -1,9 +1,11 @@
 import { TABLE_WRITES } from '@/app/(lab)/equipment/writes';
+import { PASSWORD_WRITES } from '@/app/(auth)/writes';
 import { WRITES } from '@/app/(lab)/jobs/writes';
+import { WRITES as PEOPLE_WRITES } from '@/app/(lab)/people/writes';
 import { SETUP_WRITES } from '@/app/(lab)/sweeps/[id]/setUpWrites';
 import { OPERATIONS } from '@/schemas/operations';
 
-test.each(Object.entries({ ...WRITES, ...TABLE_WRITES, ...SETUP_WRITES }))(
+test.each(Object.entries({ ...WRITES, ...PASSWORD_WRITES, ...PEOPLE_WRITES, ...TABLE_WRITES, ...SETUP_WRITES }))(
   '%s is sent as its operation declares it',
   (id, { method, path }) => {
     const declared = OPERATIONS.find((operation) => operation.id === id);

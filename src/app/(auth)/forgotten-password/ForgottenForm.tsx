@@ -2,17 +2,15 @@
 
 import { useState, type FormEvent } from 'react';
 import { ProblemMessage } from '@/components/forms/ProblemMessage';
-import type { Submittable } from '@/components/forms/send';
 import { useSubmit } from '@/components/forms/useSubmit';
 import { Button, ButtonLink } from '@/components/ui/Button';
 import { Field } from '@/components/ui/Field';
 import { Message } from '@/components/ui/Message';
-
-const ASK: Submittable = { method: 'POST', path: '/api/password-reset' };
+import { PASSWORD_WRITES } from '../writes';
 
 /** Asks for the e-mail with the link; what is said afterwards is the same for every address. */
 export function ForgottenForm({ labName }: { labName: string }) {
-  const { submit, busy, problem, fieldErrors } = useSubmit<{ email: string }>(ASK);
+  const { submit, busy, problem, fieldErrors } = useSubmit<{ email: string }>(PASSWORD_WRITES.requestPasswordReset);
   const [asked, setAsked] = useState<string | null>(null);
 
   async function ask(event: FormEvent<HTMLFormElement>) {

@@ -1,14 +1,13 @@
 'use client';
 
 import { PasswordByLink } from '../PasswordByLink';
-
-const ACCEPT = { method: 'POST', path: '/api/invitations/accept' } as const;
+import { PASSWORD_WRITES } from '../writes';
 
 export function InvitationForm({ labName }: { labName: string }) {
   return (
     <PasswordByLink
       kind="invitation"
-      operation={ACCEPT}
+      operation={PASSWORD_WRITES.acceptInvitation}
       act="Set it and sign in"
       about={({ name, email, role, organisation }) => (
         <p>

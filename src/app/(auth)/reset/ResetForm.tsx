@@ -4,14 +4,13 @@ import Link from 'next/link';
 import { ButtonLink } from '@/components/ui/Button';
 import { Message } from '@/components/ui/Message';
 import { PasswordByLink } from '../PasswordByLink';
-
-const SET = { method: 'POST', path: '/api/password-reset/use' } as const;
+import { PASSWORD_WRITES } from '../writes';
 
 export function ResetForm() {
   return (
     <PasswordByLink
       kind="reset"
-      operation={SET}
+      operation={PASSWORD_WRITES.resetPassword}
       act="Set the new password"
       about={({ name, email }) => (
         <p>

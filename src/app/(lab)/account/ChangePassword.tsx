@@ -3,15 +3,13 @@
 import { useState, type FormEvent } from 'react';
 import { useRouter } from 'next/navigation';
 import { ProblemMessage } from '@/components/forms/ProblemMessage';
-import type { Submittable } from '@/components/forms/send';
 import { useSubmit } from '@/components/forms/useSubmit';
+import { PASSWORD_WRITES } from '@/app/(auth)/writes';
 import { InPlace } from '@/app/(lab)/jobs/InPlace';
 import { useKey } from '@/components/shell/keys';
 import { Button } from '@/components/ui/Button';
 import { Field } from '@/components/ui/Field';
 import { showToast } from '@/components/ui/Toast';
-
-const CHANGE: Submittable = { method: 'POST', path: '/api/account/password' };
 
 /** One's own password behind one button: the old one, then the new one. */
 export function ChangePassword({ email }: { email: string }) {
@@ -28,7 +26,9 @@ export function ChangePassword({ email }: { email: string }) {
 
 function Form({ email, onClose }: { email: string; onClose: () => void }) {
   const router = useRouter();
-  const { submit, busy, problem, fieldErrors } = useSubmit<{ current: string; password: string }>(CHANGE);
+  const { submit, busy, problem, fieldErrors } = useSubmit<{ current: string; password: string }>(
+    PASSWORD_WRITES.changeOwnPassword,
+  );
   const [shown, setShown] = useState(false);
   useKey('Escape', onClose);
 

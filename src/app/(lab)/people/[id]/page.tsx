@@ -14,6 +14,7 @@ import { readPerson } from '@/services/people';
 import { standsAs, standsBecause } from '../personWords';
 import { InviteAgain } from './InviteAgain';
 import { PersonActs } from './PersonActs';
+import { WatchMail } from './WatchMail';
 
 interface Props {
   params: Promise<{ id: string }>;
@@ -31,6 +32,8 @@ export default async function PersonPage({ params }: Props) {
   const history = await historyOf(actor, 'user', person.id);
   const zone = await labZone();
   const { verdict } = standsAs(person);
+  const mail = person.state === 'invited' ? person.invitation?.mail : null;
+  const onItsWay = mail?.state === 'sending' || (mail?.state === 'queued' && mail.reason === null);
   return (
     <Sheet
       header={
@@ -54,6 +57,7 @@ export default async function PersonPage({ params }: Props) {
       margin={[historySection(history, zone, true)]}
       marginLine={history[0]?.action}
     >
+      {onItsWay && <WatchMail />}
       <SectionHeading className="mt-5" remark="by a manager; each change stands in the history">
         This person
       </SectionHeading>
