@@ -6,7 +6,7 @@ import type { ChartSubject } from './chartSubject';
 import { frequencyTicks } from './frequencyTicks';
 import { flattened, guardBands, upperEnvelope, type PathPoint } from './limitPath';
 import type { ChartMode } from './marginSeries';
-import { plotScale, valueTicks, type Frame, type Range, type Span } from './scale';
+import { plotScale, valueTicks, type Frame, type PlotScale, type Range, type Span } from './scale';
 import { FIGURE } from './chartText';
 
 /** Drawn lines as the chart has them: at 0 in the margin chart, at their level in the level chart. */
@@ -45,6 +45,7 @@ export const ChartBack = memo(function ChartBack(props: {
   return (
     <svg className="absolute inset-0 size-full overflow-visible" aria-hidden="true" focusable="false">
       <path d={zone} className="fill-madderw print:fill-none" fillOpacity="0.55" />
+      {subject.notRead && <NotRead range={subject.notRead} span={span} scale={scale} />}
       <path d={grid} className="stroke-rule" fill="none" strokeWidth="1" />
       {ticks.map((value) => (
         <ValueNumber key={value} value={value} x={scale.left - 5} y={scale.y(value) + 4} mode={mode} />
@@ -52,6 +53,32 @@ export const ChartBack = memo(function ChartBack(props: {
     </svg>
   );
 });
+
+/** Where a broken file says nothing: shaded, over the zones, with its word at the foot. */
+function NotRead(props: { range: Span; span: Span; scale: PlotScale }) {
+  const { range, span, scale } = props;
+  const from = scale.x(Math.max(range.fromHz, span.fromHz));
+  const to = scale.x(Math.min(range.toHz, span.toHz));
+  if (!(to > from)) return null;
+  const width = to - from;
+  return (
+    <>
+      <rect
+        x={from}
+        y={scale.top}
+        width={width}
+        height={scale.bottom - scale.top}
+        className="fill-desk"
+        fillOpacity="0.85"
+      />
+      {width > 52 && (
+        <text x={(from + to) / 2} y={scale.bottom - 14} textAnchor="middle" fontSize="12.5" className="fill-ink2">
+          not read
+        </text>
+      )}
+    </>
+  );
+}
 
 function ValueNumber({ value, x, y, mode }: { value: number; x: number; y: number; mode: ChartMode }) {
   const zero = mode === 'margin' && value === 0;

@@ -13,6 +13,8 @@ export interface ChartSubject {
   gaps: SweepView['evaluation']['gaps'];
   /** `H`, `V`, `L1`…, for the tooltip; empty when it does not apply. */
   orientation: string;
+  /** Of a file that breaks off: the range that was not read, shaded. */
+  notRead?: { fromHz: number; toHz: number };
 }
 
 export function chartSubject(

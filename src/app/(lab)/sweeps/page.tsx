@@ -13,6 +13,7 @@ import { formatCount } from '@/format/quantities';
 import { labZone } from '@/services/lab';
 import { readSample } from '@/services/samples';
 import { listSweeps } from '@/services/sweeps';
+import { DropOnList } from './DropOnList';
 
 export const metadata: Metadata = { title: 'Sweeps' };
 
@@ -53,6 +54,7 @@ export default async function SweepsPage({ searchParams }: { searchParams: Searc
         />
       }
     >
+      {lab && <DropOnList />}
       <div className="mt-4">
         <RunTable caption="Runs, newest first" runs={page.items} zone={zone} whose />
         {page.items.length === 0 && (

@@ -17,12 +17,14 @@ interface Props {
   lists: UploadLists;
   errors: Readonly<Record<string, string>>;
   onDraft: (change: (before: Draft) => Draft) => void;
+  /** One of several sweeps was chosen. */
+  onSweep: (index: number) => void;
 }
 
 /** Everything a person says about the file, most of it proposed already. */
-export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
+export function ChoiceFields({ file, draft, lists, errors, onDraft, onSweep }: Props) {
   const set = (change: Partial<Draft>) => onDraft((before) => ({ ...before, ...change }));
-  const { recognition } = file;
+  const { recognition, asBefore: before } = file;
   const path = lists.paths.find(({ id }) => id === draft.pathId);
   const radiated = draft.port === 'enclosure';
 
@@ -91,7 +93,9 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
         hint={
           draft.pathId === ''
             ? 'Without a path no factor and no uncertainty is known; nothing is concluded.'
-            : 'Proposed from the port and the range.'
+            : before && draft.pathId === before.pathId
+              ? `As in ${before.run.number}, the last file of this shape.`
+              : 'Proposed from the port and the range.'
         }
         onChange={(event) => choosePath(event.target.value)}
       >
@@ -109,6 +113,7 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
         keyName="3"
         value={draft.limitSetId}
         error={errors.limitSetId}
+        hint={before && draft.limitSetId === before.limitSetId ? `As in ${before.run.number}.` : undefined}
         onChange={(event) => chooseLimitSet(event.target.value)}
       >
         {draft.limitSetId === '' && <option value="">say which</option>}
@@ -200,6 +205,25 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
         placeholder="what the EUT was doing"
         onChange={(event) => set({ operatingMode: event.target.value })}
       />
+      <Field
+        label="Trial, if it is one"
+        value={draft.trial}
+        error={errors.trial}
+        maxLength={120}
+        list="trial-words"
+        placeholder="foil on lid"
+        hint={
+          draft.trial.trim() === ''
+            ? 'A quick trial under this state, named by what was tried.'
+            : 'A trial never speaks for its state: it counts for no verdict of the port.'
+        }
+        onChange={(event) => set({ trial: event.target.value })}
+      />
+      <datalist id="trial-words">
+        {lists.trials.map((trial) => (
+          <option key={trial} value={trial} />
+        ))}
+      </datalist>
       <Switch<Draft['valuesHold']>
         legend="Values are"
         shown
@@ -243,7 +267,13 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
           label="Frequencies in"
           value={draft.frequencyUnit}
           error={errors.frequencyUnit}
-          hint={draft.frequencyUnit === '' ? `not stated; ${recognition.frequency.proposedUnit} is likely` : undefined}
+          hint={
+            draft.frequencyUnit === ''
+              ? `not stated; ${recognition.frequency.proposedUnit} is likely`
+              : recognition.frequency.unit === null && before?.frequencyUnit === draft.frequencyUnit
+                ? `not stated; as in ${before.run.number}`
+                : undefined
+          }
           onChange={(event) => set({ frequencyUnit: event.target.value as Draft['frequencyUnit'] })}
         >
           {draft.frequencyUnit === '' && <option value="">say which</option>}
@@ -267,7 +297,7 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft }: Props) {
           <SelectField
             label="Which sweep"
             value={draft.sweepIndex}
-            onChange={(event) => set({ sweepIndex: event.target.value === '' ? '' : Number(event.target.value) })}
+            onChange={(event) => event.target.value !== '' && onSweep(Number(event.target.value))}
           >
             {draft.sweepIndex === '' && <option value="">say which</option>}
             {recognition.sweeps.map((sweep, i) => (

@@ -1,15 +1,27 @@
 import Link from 'next/link';
+import { Button } from '@/components/ui/Button';
 import { Message } from '@/components/ui/Message';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { formatDay } from '@/format/dates';
 import { formatBandwidth } from '@/format/frequencies';
+import { formatCount } from '@/format/quantities';
 import type { PathView } from '@/schemas/bench';
 import type { SweepFileView } from '@/schemas/sweepFile';
 import { typedNumber } from './typedNumber';
 import type { Draft } from './draft';
 
+interface Props {
+  file: SweepFileView;
+  draft: Draft;
+  path: PathView | undefined;
+  /** What was taken from the last file of this shape holds for this one too. */
+  onHolds: () => void;
+  /** Back from keeping a broken file in part. */
+  onRefuse: () => void;
+}
+
 /** What is worth a look before keeping: questions, what the file says of itself, equipment dates, a repeat. */
-export function LookAtFirst({ file, draft, path }: { file: SweepFileView; draft: Draft; path: PathView | undefined }) {
+export function LookAtFirst({ file, draft, path, onHolds, onRefuse }: Props) {
   const { recognition, repeats } = file;
   const { frequency } = recognition;
   const rbwHz = (typedNumber(draft.traces.find((trace) => trace.use)?.rbwKhz ?? '') ?? 0) * 1e3;
@@ -24,8 +36,34 @@ export function LookAtFirst({ file, draft, path }: { file: SweepFileView; draft:
             Its figures are in dB, which cannot be judged against a limit. Tables are entered with their calibration.
           </Message>
         )}
+        {draft.keepPartial && recognition.partial && (
+          <Message
+            tone="over"
+            lead={`The file breaks off at line ${formatCount(recognition.partial.line)}; what stands before it is kept as partial.`}
+          >
+            What is over in it is over. Nothing of it is under, and it covers nothing of the port.{' '}
+            <button type="button" className="text-pen underline max-pad:min-h-11" onClick={onRefuse}>
+              Back to the line
+            </button>
+          </Message>
+        )}
+        {draft.asBefore && !draft.asBefore.holds && (
+          <Message
+            tone="inconclusive"
+            lead={`Taken as in ${draft.asBefore.number}: ${draft.asBefore.took.join(', ')}.`}
+          >
+            The file states none of it; the last file of this shape was read so.
+            <span className="mt-2 block">
+              <Button size="table" onClick={onHolds}>
+                It holds for this file
+              </Button>
+            </span>
+          </Message>
+        )}
         {recognition.questions
           .filter(({ key }) => ['frequencyUnit', 'centreHz', 'sweepIndex'].includes(key))
+          .filter(({ key }) => (key === 'frequencyUnit' ? draft.frequencyUnit === '' : true))
+          .filter(({ key }) => (key === 'sweepIndex' ? draft.sweepIndex === '' : true))
           .map((question) => (
             <Message key={question.key} tone="inconclusive" lead={question.text}>
               {question.proposal !== null && question.key === 'frequencyUnit'

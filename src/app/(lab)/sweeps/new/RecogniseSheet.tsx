@@ -1,55 +1,59 @@
 'use client';
 
-import { useRouter } from 'next/navigation';
-import { useMemo, useState } from 'react';
+import { useMemo } from 'react';
 import type { ChartSubject } from '@/components/charts/chartSubject';
 import { SweepChart } from '@/components/charts/SweepChart';
+import { fieldErrorsOf } from '@/components/forms/problem';
 import { ProblemMessage } from '@/components/forms/ProblemMessage';
-import { useSubmit } from '@/components/forms/useSubmit';
+import type { MarginKey, MarginSection } from '@/components/shell/marginSection';
 import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
 import { Button } from '@/components/ui/Button';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { VerdictWord } from '@/components/ui/VerdictWord';
+import { formatFileName } from '@/format/fileNames';
 import { formatFrequency } from '@/format/frequencies';
 import { formatBytes, formatCount, formatMarginDb } from '@/format/quantities';
-import { keepSweepOperation, type SweepView } from '@/schemas/sweep';
-import type { SweepFileView } from '@/schemas/sweepFile';
 import { ChoiceFields } from './ChoiceFields';
-import { choiceOf, draftFrom, rangeOf, unsaid, type Draft } from './draft';
+import { choiceOf, rangeOf, stillToSay, type Draft } from './draft';
+import type { DropEntry } from './dropEntry';
 import { FilePreview } from './FilePreview';
 import { LookAtFirst } from './LookAtFirst';
-import { Recognised } from './Recognised';
-import { typedNumber } from './typedNumber';
+import { spanOf } from './spanOf';
 import type { UploadLists } from './uploadLists';
 import { usePreview } from './usePreview';
 
-interface Props extends UploadLists {
-  file: SweepFileView;
-  stateId: string | null;
+interface Props {
+  entry: DropEntry;
+  draft: Draft;
+  lists: UploadLists;
+  place: string | null;
+  margin: readonly MarginSection[];
+  keys: readonly MarginKey[];
+  /** The file that something was said of last, when it is another one. */
+  last: DropEntry | null;
+  onLast: () => void;
+  onDraft: (change: (before: Draft) => Draft) => void;
+  onSweep: (index: number) => void;
+  onKeep: () => Promise<void>;
   onDiscard: () => void;
 }
 
 /** What was recognised, how it will be judged, and what a person has to say before it is kept. */
-export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
-  const router = useRouter();
-  const [draft, setDraft] = useState<Draft>(() => draftFrom(file, lists, stateId));
-  const { submit, busy, problem, fieldErrors } = useSubmit<unknown, SweepView>(keepSweepOperation);
-  const [leaving, setLeaving] = useState(false);
+export function RecogniseSheet(props: Props) {
+  const { entry, draft, lists, place, margin, keys, last, onLast, onDraft, onSweep, onKeep, onDiscard } = props;
+  const file = entry.file!;
   const choice = choiceOf(draft, file);
   const { preview, problem: previewProblem, busy: judging } = usePreview(file.id, choice);
-  const { firstHz, lastHz } = rangeOf(draft, file);
+  const read = rangeOf(draft, file);
   const limitSet = lists.limitSets.find(({ id }) => id === draft.limitSetId);
   const path = lists.paths.find(({ id }) => id === draft.pathId);
+  const { firstHz, lastHz, notRead } = spanOf(file, draft, limitSet);
   const errors = {
     ...Object.fromEntries((previewProblem?.errors ?? []).map((e) => [e.pointer.slice(1), e.message])),
-    ...fieldErrors,
+    ...fieldErrorsOf(entry.problem),
   };
-  const missing = [
-    ...(draft.stateId === '' ? ['the sample and state'] : []),
-    ...unsaid(draft, file),
-    ...(draft.operatingMode.trim() === '' ? ['the operating mode'] : []),
-  ];
+  const missing = stillToSay(draft, file);
 
   const subject = useMemo<ChartSubject>(
     () => ({
@@ -62,25 +66,12 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
       uncertainty: preview?.uncertainty ?? [],
       gaps: preview?.gaps ?? [],
       orientation: '',
+      notRead: notRead ?? undefined,
     }),
-    [firstHz, lastHz, file, limitSet, preview],
+    // The range is made anew with every draft; its figures are what counts.
+    // eslint-disable-next-line react-hooks/exhaustive-deps
+    [firstHz, lastHz, notRead?.fromHz, notRead?.toHz, file, limitSet, preview],
   );
-
-  async function keep() {
-    if (!choice || missing.length > 0) return;
-    const outcome = await submit({
-      ...choice,
-      fileId: file.id,
-      stateId: draft.stateId,
-      operatingMode: draft.operatingMode,
-      heightM: typedNumber(draft.heightM),
-      heightSwept: draft.port === 'enclosure' && draft.heightSwept,
-      azimuthDeg: typedNumber(draft.azimuthDeg),
-    });
-    if (!outcome.ok) return;
-    setLeaving(true);
-    router.push(`/sweeps/${outcome.reply.id}`);
-  }
 
   const used = draft.traces.filter((trace) => trace.use).length;
   const { points } = file.recognition.frequency;
@@ -91,8 +82,10 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
           title="Recognise a sweep file"
           identity={
             <>
-              <span className="t-id">{file.name}</span>
+              <span className="t-id">{formatFileName(file.name)}</span>
               <span>{formatBytes(file.bytes)}</span>
+              {place && <span>{place}</span>}
+              {draft.keepPartial && <span>partial</span>}
             </>
           }
           finding={{
@@ -100,9 +93,10 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
             children: (
               <>
                 Read as <b className="t-figure">{formatCount(points)}</b> points from{' '}
-                <span className="t-figure">{formatFrequency(firstHz)}</span> to{' '}
-                <span className="t-figure">{formatFrequency(lastHz)}</span>,{' '}
-                {used === 1 ? 'one trace' : `${used} traces`}.{' '}
+                <span className="t-figure">{formatFrequency(read.firstHz)}</span> to{' '}
+                <span className="t-figure">{formatFrequency(read.lastHz)}</span>,{' '}
+                {used === 1 ? 'one trace' : `${used} traces`}
+                {draft.keepPartial ? ', up to the broken line' : ''}.{' '}
                 {missing.length > 0 ? `Still to say: ${missing.join(', ')}.` : 'Everything is said.'}
               </>
             ),
@@ -115,23 +109,22 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
               {missing.length > 0 ? (
                 <Button kind="unavailable">Waits for {missing[0]}</Button>
               ) : (
-                <Button kind="primary" keyName="Enter" busy={busy || leaving} onClick={keep}>
-                  Keep as a run
+                <Button kind="primary" keyName="Enter" busy={entry.keeping} onClick={() => void onKeep()}>
+                  {draft.keepPartial
+                    ? `Keep ${formatCount(points)} points as partial`
+                    : draft.trial.trim()
+                      ? 'Keep as a trial'
+                      : 'Keep as a run'}
                 </Button>
               )}
             </>
           }
         />
       }
-      margin={[
-        { id: 'recognised', title: 'What was recognised', children: <Recognised recognition={file.recognition} /> },
-      ]}
-      keys={[
-        { keys: ['1', '2', '3'], does: 'choices' },
-        { keys: ['Enter'], does: 'keep' },
-      ]}
+      margin={margin}
+      keys={[{ keys: ['1', '2', '3'], does: 'choices' }, { keys: ['Enter'], does: 'keep' }, ...keys]}
     >
-      <ProblemMessage problem={problem} className="mt-3" />
+      <ProblemMessage problem={entry.problem} className="mt-3" />
       <div className="mt-2 grid gap-x-7 gap-y-6 wide:grid-cols-[minmax(0,1fr)_minmax(0,402px)]">
         <div className="min-w-0">
           <FilePreview recognition={file.recognition} />
@@ -165,10 +158,23 @@ export function RecogniseSheet({ file, stateId, onDiscard, ...lists }: Props) {
           ) : previewProblem && previewProblem.errors.length === 0 ? (
             <ProblemMessage problem={previewProblem} />
           ) : null}
-          <LookAtFirst file={file} draft={draft} path={path} />
+          <LookAtFirst
+            file={file}
+            draft={draft}
+            path={path}
+            onHolds={() =>
+              onDraft((before) => ({ ...before, asBefore: before.asBefore && { ...before.asBefore, holds: true } }))
+            }
+            onRefuse={() => onDraft((before) => ({ ...before, keepPartial: false }))}
+          />
         </div>
         <div className="min-w-0">
-          <ChoiceFields file={file} draft={draft} lists={lists} errors={errors} onDraft={setDraft} />
+          {last && missing.length > 0 && (
+            <div className="mb-4">
+              <Button onClick={onLast}>Same as {formatFileName(last.name, 28)}</Button>
+            </div>
+          )}
+          <ChoiceFields file={file} draft={draft} lists={lists} errors={errors} onDraft={onDraft} onSweep={onSweep} />
         </div>
       </div>
     </Sheet>

@@ -45,6 +45,17 @@ export function Recognised({ recognition }: { recognition: RecognitionView }) {
         {recognition.decimalMark === ',' ? 'comma' : 'point'}
         <Quiet>{recognition.thousandsMark === null ? 'no thousands mark seen' : 'thousands mark seen'}</Quiet>
       </Pair>
+      {recognition.partial && recognition.refusal && (
+        <Pair name="Found">
+          {formatCount(recognition.partial.points)} points
+          <Quiet>
+            {settings.declaredPoints !== null && settings.declaredPoints > recognition.partial.points
+              ? `${formatCount(settings.declaredPoints - recognition.partial.points)} short, `
+              : ''}
+            broken at line {formatCount(recognition.partial.line)}
+          </Quiet>
+        </Pair>
+      )}
       {columns.slice(0, 8).map((column) => (
         <Pair key={column.index} name={`Column ${column.index + 1}`}>
           {column.role}

@@ -38,6 +38,8 @@ export function TraceFields({ file, traces, errors, onChange }: Props) {
         const proposal = (key: 'levelUnit' | 'detector' | 'rbwHz') =>
           recognition.questions.find((q) => q.key === key && (q.traceIndex === trace.index || q.traceIndex === null))
             ?.proposal ?? null;
+        const its = file.asBefore?.traces.find(({ index }) => index === trace.index);
+        const as = `not stated; as in ${file.asBefore?.run.number}`;
         const unitProposal = proposal('levelUnit') as LevelUnit | null;
         const rbwProposal = proposal('rbwHz');
         return (
@@ -65,7 +67,11 @@ export function TraceFields({ file, traces, errors, onChange }: Props) {
                   required
                   error={errors[`traces/${at}/unit`]}
                   hint={
-                    trace.unit === '' && unitProposal ? `not stated; ${unitLabel(unitProposal)} is likely` : undefined
+                    trace.unit === '' && unitProposal
+                      ? `not stated; ${unitLabel(unitProposal)} is likely`
+                      : stated.unit === null && its?.unit === trace.unit
+                        ? as
+                        : undefined
                   }
                   onChange={(event) => onChange(trace.index, { unit: event.target.value as LevelUnit })}
                 >
@@ -82,7 +88,13 @@ export function TraceFields({ file, traces, errors, onChange }: Props) {
                   required
                   error={errors[`traces/${at}/detector`]}
                   hint={
-                    trace.detector === 'unknown' ? 'proves nothing' : trace.detector === '' ? 'not stated' : undefined
+                    trace.detector === 'unknown'
+                      ? 'proves nothing'
+                      : trace.detector === ''
+                        ? 'not stated'
+                        : stated.detector === null && its?.detector === trace.detector
+                          ? as
+                          : undefined
                   }
                   onChange={(event) => onChange(trace.index, { detector: event.target.value as Detector })}
                 >
@@ -108,7 +120,9 @@ export function TraceFields({ file, traces, errors, onChange }: Props) {
                       ? rbwProposal
                         ? `not stated; ${Number(rbwProposal) / 1e3} kHz is usual`
                         : 'unknown proves nothing'
-                      : undefined
+                      : recognition.settings.rbwHz === null && its?.rbwHz === Number(trace.rbwKhz) * 1e3
+                        ? as
+                        : undefined
                   }
                   onChange={(event) => onChange(trace.index, { rbwKhz: event.target.value })}
                 />

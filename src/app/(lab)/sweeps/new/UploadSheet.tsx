@@ -1,47 +1,79 @@
 'use client';
 
-import { useRouter, useSearchParams } from 'next/navigation';
-import { useEffect, useState } from 'react';
+import { useRouter } from 'next/navigation';
+import { useRef } from 'react';
+import { showToast } from '@/components/ui/Toast';
+import { formatCount } from '@/format/quantities';
 import type { SweepFileView } from '@/schemas/sweepFile';
+import { DropVeil } from '../DropVeil';
+import { useFileDrop } from '../useFileDrop';
+import { DropList } from './DropList';
 import { DropSheet } from './DropSheet';
-import { RecogniseSheet } from './RecogniseSheet';
-import { RefusedSheet } from './RefusedSheet';
+import { isUnkept } from './dropEntry';
+import { LeaveGuard } from './LeaveGuard';
+import { OpenFile } from './OpenFile';
 import type { UploadLists } from './uploadLists';
+import { MOST_FILES, useDrop } from './useDrop';
 
 interface Props extends UploadLists {
-  held: SweepFileView | null;
+  held: readonly SweepFileView[];
   stateId: string | null;
 }
 
-/** A file on its way in: dropped, then either refused with its line or recognised and kept. */
+/** Files on their way in: dropped, recognised each on its own, answered and kept. */
 export function UploadSheet({ held, stateId, ...lists }: Props) {
-  const [known, setKnown] = useState(held);
   const router = useRouter();
-  const named = useSearchParams().get('file');
-  // The address decides, so that back, forward and reload show what it names.
-  const file = known?.id === named ? known : null;
+  const input = useRef<HTMLInputElement>(null);
+  const drop = useDrop(held, lists, stateId);
+  const over = useFileDrop(drop.take);
+  const choose = () => input.current?.click();
+  const { shown, open } = drop;
 
-  useEffect(() => {
-    if (named === null || known?.id === named) return;
-    const stop = new AbortController();
-    fetch(`/api/sweep-files/${encodeURIComponent(named)}`, { signal: stop.signal })
-      .then(async (answer) => answer.ok && setKnown((await answer.json()) as SweepFileView))
-      // A file that is held no longer, or no network: the sheet to drop it again is what is shown.
-      .catch(() => undefined);
-    return () => stop.abort();
-  }, [named, known]);
-
-  const query = stateId ? `&state=${stateId}` : '';
-
-  function take(next: SweepFileView) {
-    setKnown(next);
-    window.history.pushState(null, '', `/sweeps/new?file=${next.id}${query}`);
-  }
-  function discard() {
-    router.replace(stateId ? `/sweeps/new?state=${stateId}` : '/sweeps/new');
+  /** A single file goes to its run; of several the others are still to be kept. */
+  async function keep(keys: readonly string[]) {
+    const kept = await drop.keep(keys);
+    const [only] = kept;
+    if (shown.length === 1 && only) return router.push(`/sweeps/${only.id}`);
+    if (only && open) drop.closeEntry();
+    if (only) {
+      const runs = kept.map(({ number }) => number).join(', ');
+      showToast({ text: kept.length === 1 ? `Kept as ${runs}` : `${formatCount(kept.length)} files kept: ${runs}` });
+    }
   }
 
-  if (!file) return <DropSheet onFile={take} />;
-  if (file.recognition.kind === 'refused') return <RefusedSheet file={file} onDiscard={discard} />;
-  return <RecogniseSheet key={file.id} file={file} stateId={stateId} onDiscard={discard} {...lists} />;
+  const notes = [
+    ...(drop.gone > 0
+      ? [`${drop.gone === 1 ? 'One file is' : `${drop.gone} files are`} held no longer. Drop again what is missing.`]
+      : []),
+    ...(drop.left > 0
+      ? [`One drop takes ${MOST_FILES} files; ${formatCount(drop.left)} were left out. Drop them after these.`]
+      : []),
+  ];
+  return (
+    <>
+      {shown.length === 0 ? (
+        <DropSheet notes={notes} onChoose={choose} />
+      ) : open?.file && open.draft ? (
+        <OpenFile key={open.key} drop={drop} entry={open} lists={lists} onKeep={keep} onChoose={choose} />
+      ) : (
+        <DropList drop={drop} notes={notes} lists={lists} onKeep={keep} onChoose={choose} />
+      )}
+      <input
+        ref={input}
+        type="file"
+        multiple
+        className="sr-only"
+        tabIndex={-1}
+        aria-label="Sweep files"
+        accept=".csv,.txt,.dat,.tsv,.asc,.s2p,text/*"
+        onChange={(event) => {
+          const files = [...(event.target.files ?? [])];
+          event.target.value = '';
+          if (files.length > 0) drop.take(files);
+        }}
+      />
+      <DropVeil over={over} />
+      <LeaveGuard entries={shown.filter(isUnkept)} />
+    </>
+  );
 }
