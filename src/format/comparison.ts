@@ -1,8 +1,8 @@
-import type { Detector, MainsLine, Polarisation } from '@/emc/kinds';
+import type { Detector, LevelUnit, MainsLine, Polarisation, Verdict } from '@/emc/kinds';
 import type { FindingRun } from './finding';
 import { formatBandwidth, formatFrequency, formatFrequencyRange } from './frequencies';
-import { formatDb, formatDistance, formatHeight } from './quantities';
-import { DETECTOR_WORDS, MAINS_LINE_WORDS } from './words';
+import { formatDb, formatDistance, formatHeight, unitLabel } from './quantities';
+import { DETECTOR_WORDS, MAINS_LINE_WORDS, VERDICT_WORDS } from './words';
 
 /** What a comparison is called by: a run by its state, or by its trial, or by its number where both are alike. */
 export interface NamedRun {
@@ -28,6 +28,16 @@ export function moveText(movedDb: number): { figure: string; word: 'lower' | 'hi
   const figure = formatDb(Math.abs(movedDb));
   if (Number(figure) === 0) return { figure, word: 'the same' };
   return { figure, word: movedDb < 0 ? 'lower' : 'higher' };
+}
+
+/** `M2 is over, and so is M1.`, `M2 is inconclusive, M1 is over.` */
+export function verdictsBeside(names: { a: string; b: string }, verdicts: { a: Verdict; b: Verdict }): string {
+  const said = (verdict: Verdict) => (verdict === 'needs-final' ? '' : 'is ') + VERDICT_WORDS[verdict];
+  if (verdicts.a === verdicts.b) {
+    const too = verdicts.b === 'needs-final' ? 'does' : 'is';
+    return `${names.b} ${said(verdicts.b)}, and so ${too} ${names.a}.`;
+  }
+  return `${names.b} ${said(verdicts.b)}, ${names.a} ${said(verdicts.a)}.`;
 }
 
 interface Moved {
@@ -76,7 +86,7 @@ export function cautionText({ what, a, b }: ToldCaution, names: { a: string; b: 
   const both = (say: (value: Told) => string) => `${names.a} ${say(a)}, ${names.b} ${say(b)}`;
   switch (what) {
     case 'unit':
-      return `${both((value) => `in ${value}`)}: levels in different units have no difference.`;
+      return `${both((value) => `in ${unitWords(value)}`)}: levels in different units have no difference.`;
     case 'no-overlap':
       return 'They have no frequency in common.';
     case 'overlap':
@@ -88,7 +98,9 @@ export function cautionText({ what, a, b }: ToldCaution, names: { a: string; b: 
     case 'rbw':
       return `${both((value) => (value === null ? 'with an RBW not stated' : `with RBW ${formatBandwidth(Number(value))}`))}: broadband levels differ by that alone.`;
     case 'step':
-      return `${both((value) => (value === null ? 'in uneven steps' : `in steps of ${formatBandwidth(Number(value))}`))}: compared in stretches that hold points of both.`;
+      return a === b
+        ? `Both ${stepWords(a)} on axes of their own: compared in stretches that hold points of both.`
+        : `${both(stepWords)}: compared in stretches that hold points of both.`;
     case 'position':
       return `${both(positionWords)}: not the same position.`;
     case 'height':
@@ -108,6 +120,17 @@ export function cautionText({ what, a, b }: ToldCaution, names: { a: string; b: 
     default:
       throw new RangeError(`${what} is no caution`);
   }
+}
+
+function unitWords(value: Told): string {
+  return String(value)
+    .split(', ')
+    .map((unit) => unitLabel(unit as LevelUnit))
+    .join(' and ');
+}
+
+function stepWords(value: Told): string {
+  return value === null ? 'in uneven steps' : `in steps of ${formatBandwidth(Number(value))}`;
 }
 
 function positionWords(value: Told): string {

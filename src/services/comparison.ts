@@ -76,6 +76,35 @@ async function compared(actor: Actor, id: string) {
   return comparedRun.strip().parse(await readSweep(actor, id));
 }
 
+export interface TrialMove {
+  /** The state's own run that the trial is laid beside. */
+  own: string;
+  /** At the trial's worst emission that both read: how much higher it is than in the own run, dB. */
+  move: { frequencyHz: number; movedDb: number } | null;
+}
+
+/** What each trial moved against a run of its own state, by the trial's id. */
+export async function movesOfTrials(
+  actor: Actor | null,
+  pairs: readonly { trial: string; own: string }[],
+): Promise<Map<string, TrialMove>> {
+  authorise(actor, 'sweep.compare');
+  return unitOfWork(async () => {
+    const moves = new Map<string, TrialMove>();
+    for (const { trial, own } of pairs) {
+      const [runA, runB] = [await findRun(actor, own), await findRun(actor, trial)];
+      if (runA.state.sampleId !== runB.state.sampleId) continue;
+      const a: Side = { run: runA, context: await contextOf(runA) };
+      const b: Side = { run: runB, context: await contextOf(runB) };
+      const laid = sameUnit(a, b) ? pairTraces(a.context.heads, b.context.heads) : [];
+      const worst = (await emissionsOf(a, b, laid)).find(({ movedDb }) => movedDb !== null);
+      const move = worst ? { frequencyHz: worst.frequencyHz, movedDb: worst.movedDb! } : null;
+      moves.set(trial, { own, move });
+    }
+    return moves;
+  });
+}
+
 /** Columns by trace index; of a whole run at the width of its kept layer nothing is computed. */
 async function columnsOf({ run, context }: Side, window: Window): Promise<Map<number, Columns>> {
   if (window.fromHz === run.firstHz && window.toHz === run.lastHz && window.columns === LAYER_COLUMNS) {

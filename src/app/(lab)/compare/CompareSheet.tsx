@@ -12,7 +12,7 @@ import { Button } from '@/components/ui/Button';
 import { Id } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { orientationOf } from '@/app/(lab)/sweeps/[id]/runWords';
-import { cautionText, comparisonFinding, formatMove, namesBeside } from '@/format/comparison';
+import { cautionText, comparisonFinding, formatMove, namesBeside, verdictsBeside } from '@/format/comparison';
 import { findingText } from '@/format/finding';
 import { formatFrequency } from '@/format/frequencies';
 import { DETECTOR_WORDS } from '@/format/words';
@@ -49,6 +49,10 @@ export function CompareSheet({ comparison, about, runs, zone }: Props) {
   const shown = comparison.differences[pair] ?? null;
   const drawn = useMemo(() => emissions.filter((emission) => emission.pair === pair), [emissions, pair]);
   const finding = comparisonFinding(names, emissions);
+  if (!a.voided && !b.voided) {
+    const verdicts = { a: a.evaluation.verdict, b: b.evaluation.verdict };
+    finding.push({ text: ` ${verdictsBeside(names, verdicts)}` });
+  }
 
   const swap = () => router.push(`/compare?a=${b.id}&b=${a.id}`);
   const select = (rank: number) => {

@@ -1,7 +1,6 @@
 import { Button } from '@/components/ui/Button';
 import { SelectField } from '@/components/ui/Field';
-import { runLabel } from './runLabel';
-import type { ListedRun } from './runLabel';
+import { likest, runLabel, sameReading, type ListedRun } from './runLabel';
 
 interface Props {
   /** Of one sample, newest first; voided ones are said to be. */
@@ -18,11 +17,14 @@ export function LayOver({ runs, over, chosen }: Props) {
   if (others.length < (over ? 1 : 2)) {
     return <p className="t-detail mt-2">There is no second run of this sample yet.</p>;
   }
-  const options = others.map((run) => (
+  const first = runs.find(({ id }) => id === (over?.id ?? chosen?.b)) ?? others[0]!;
+  const second = others.find(({ id }) => id === chosen?.a) ?? likest(first, others);
+  const option = (run: ListedRun) => (
     <option key={run.id} value={run.id}>
       {runLabel(run)}
     </option>
-  ));
+  );
+  const alike = others.filter((run) => sameReading(run, first));
   return (
     <form
       action="/compare"
@@ -33,23 +35,25 @@ export function LayOver({ runs, over, chosen }: Props) {
       {over ? (
         <input type="hidden" name="b" value={over.id} />
       ) : (
-        <SelectField
-          label="Lay"
-          name="b"
-          defaultValue={chosen?.b ?? others[0]!.id}
-          className="w-full min-w-0 pad:w-[24rem]"
-        >
-          {options}
+        <SelectField label="Lay" name="b" defaultValue={first.id} className="w-full min-w-0 pad:w-[24rem]">
+          {others.map(option)}
         </SelectField>
       )}
       <SelectField
         label={over ? `Lay ${over.number} over` : 'over'}
         name="a"
-        defaultValue={chosen?.a ?? others.find(({ id }) => id !== others[0]!.id || over)?.id}
+        defaultValue={second.id}
         className="w-full min-w-0 pad:w-[24rem]"
         keyName={over && 'O'}
       >
-        {options}
+        {over && alike.length > 0 ? (
+          <>
+            <optgroup label="The same port and position">{alike.map(option)}</optgroup>
+            <optgroup label="Others">{others.filter((run) => !alike.includes(run)).map(option)}</optgroup>
+          </>
+        ) : (
+          others.map(option)
+        )}
       </SelectField>
       <Button type="submit">Lay over each other</Button>
     </form>

@@ -19,3 +19,18 @@ export function runLabel(run: ListedRun): string {
   ];
   return parts.filter(Boolean).join(', ');
 }
+
+/** Whether two runs read the same port at the same position. */
+export function sameReading(one: ListedRun, other: ListedRun): boolean {
+  return one.port === other.port && one.line === other.line && one.polarisation === other.polarisation;
+}
+
+/** The run that another is most likely laid over: the newest of the same reading and purpose, not voided. */
+export function likest(run: ListedRun, others: readonly ListedRun[]): ListedRun {
+  const rank = (other: ListedRun) =>
+    (other.id === run.id ? 8 : 0) +
+    (sameReading(other, run) ? 0 : 4) +
+    (other.purpose === run.purpose ? 0 : 2) +
+    (other.voided ? 1 : 0);
+  return [...others].sort((one, other) => rank(one) - rank(other))[0]!;
+}

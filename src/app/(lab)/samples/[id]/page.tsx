@@ -3,6 +3,7 @@ import Link from 'next/link';
 import { found } from '@/app/found';
 import { requireActor } from '@/app/requireActor';
 import { mayRole } from '@/auth/permissions';
+import { LayOver } from '@/app/(lab)/compare/LayOver';
 import { historiesOf } from '@/app/(lab)/jobs/history';
 import { notesSection } from '@/app/(lab)/notes/notesSection';
 import { historySection } from '@/app/(lab)/jobs/HistoryLines';
@@ -18,6 +19,7 @@ import { readSample } from '@/services/samples';
 import { missingLine, missingSection } from '../missingSection';
 import { sampleRecord } from '../sampleRecord';
 import { StateGrid } from '../StateGrid';
+import { trialMoves } from '../trials';
 import { AddState } from './AddState';
 import { CorrectSample } from './CorrectSample';
 import { StateRuns } from './StateRuns';
@@ -36,6 +38,7 @@ export default async function SamplePage({ params }: Props) {
   const sample = await found(readSample(actor, (await params).id));
   const zone = await labZone();
   const { runs, more, grid, latest, finding, days } = await sampleRecord(actor, sample, zone);
+  const moves = await trialMoves(actor, runs);
   const history = await historiesOf(actor, [
     ['sample', sample.id],
     ...sample.states.map(({ id }) => ['state', id] as const),
@@ -105,6 +108,7 @@ export default async function SamplePage({ params }: Props) {
           key={state.id}
           state={state}
           runs={runs.filter((run) => run.state === state.label)}
+          moves={moves}
           zone={zone}
           upload={upload}
           change={change}
@@ -114,6 +118,14 @@ export default async function SamplePage({ params }: Props) {
         <p className="t-detail mt-2">
           Older runs stand in the <Link href={`/sweeps?sample=${sample.id}`}>list of its runs</Link>.
         </p>
+      )}
+      {runs.length > 1 && (
+        <section aria-labelledby="two-runs" className="print:hidden">
+          <SectionHeading id="two-runs" className="mt-6" remark="trials too">
+            Two runs over each other
+          </SectionHeading>
+          <LayOver runs={runs} />
+        </section>
       )}
       {mayRole(actor.role, 'state.create') && <AddState sampleId={sample.id} next={`M${sample.states.length}`} />}
       {mayRole(actor.role, 'sample.change') && (
