@@ -5,7 +5,7 @@ import { env } from '@/config/env';
 import { DomainError, Forbidden, Invalid, Unauthenticated, type Issue } from '@/errors';
 import type { Operation } from '@/schemas/operation';
 import { TokenRefused } from '@/services/apiTokens';
-import { once } from '@/services/idempotency';
+import { once, staged } from '@/services/idempotency';
 import { actorOf, SignInRefused } from '@/services/sessions';
 import { issuesOf, problemOf, problemResponse } from './problem';
 import { withApiHeaders } from './securityHeaders';
@@ -33,6 +33,17 @@ export interface Received {
   /** Hex, of the bytes that came: with the body it tells one upload from another under the same Idempotency-Key. */
   sha256: string;
   fields: Record<string, string>;
+  /** Called when the request is over, whatever became of it. */
+  close?: () => Promise<void>;
+}
+/**
+ * A use-case that writes much: `stage` does so in small transactions that show nothing, `publish` shows it in one short
+ * one, with the reply under its Idempotency-Key; `drop` undoes what was staged and not published.
+ */
+export interface InStages<C, S> {
+  stage: (context: C) => Promise<S>;
+  publish: (context: C, staged: S) => Promise<unknown>;
+  drop: (staged: S) => Promise<void>;
 }
 type Extra = { params?: Promise<Record<string, string | string[] | undefined>> };
 export type RouteHandler = ((request: Request, extra?: Extra) => Promise<Response>) & { operation: Operation };
@@ -49,15 +60,20 @@ export function handle<
   B extends z.ZodType,
   R extends z.ZodType,
   F extends Received | undefined = undefined,
+  S = undefined,
 >(
   op: Operation<P, Q, B, R>,
-  run: (context: Context<Out<P>, Out<Q>, Out<B>, F>) => Promise<unknown>,
-  receive?: (request: Request) => Promise<F>,
+  run:
+    | ((context: Context<Out<P>, Out<Q>, Out<B>, F>) => Promise<unknown>)
+    | InStages<Context<Out<P>, Out<Q>, Out<B>, F>, S>,
+  receive?: (request: Request, actor: Actor | null) => Promise<F>,
 ): RouteHandler {
+  const stages: InStages<Context<Out<P>, Out<Q>, Out<B>, F>, S> = typeof run === 'function' ? inOne(run) : run;
   const route = async (request: Request, extra?: Extra): Promise<Response> => {
     const address = request.headers.get('x-forwarded-for')?.split(',')[0]?.trim() || '127.0.0.1';
     let actor: Actor | null = null;
     let reached: Reached = 'input';
+    let file = undefined as F;
     try {
       actor = await actorOf(request.headers, address);
       checkOrigin(request, op, actor);
@@ -66,7 +82,7 @@ export function handle<
         if (!actor) throw new Unauthenticated();
         if (!mayRole(actor.role, op.permission)) throw new Forbidden();
       }
-      const file = (await receive?.(request)) as F;
+      file = (await receive?.(request, actor)) as F;
       const context: Context<Out<P>, Out<Q>, Out<B>, F> = {
         actor,
         file,
@@ -77,23 +93,31 @@ export function handle<
         headers: new Headers({ 'cache-control': 'no-store' }),
       };
       const key = op.idempotent || (op.ifMatch && op.method === 'POST') ? readKey(request) : null;
-      const work = async () => checkReply(op, await run(context));
+      const steps = { prepare: () => stages.stage(context), drop: stages.drop };
+      const work = async (prepared: S) => checkReply(op, await stages.publish(context, prepared));
       let reply: unknown;
       if (key && actor) {
         reached = 'keyed work';
-        const done = await once(actor, key, op.id, asked(context), op.status, work);
+        const done = await once(actor, key, op.id, asked(context), op.status, steps, work);
         if (done.repeated) context.headers.set('idempotency-replayed', 'true');
         reply = done.reply;
       } else {
         reached = 'work';
-        reply = await work();
+        reply = await staged(steps, work);
       }
       return withApiHeaders(respond(op, reply, context.params, context.headers));
     } catch (error) {
       return withApiHeaders(refuse(error, op, { reached, actor, address }));
+    } finally {
+      await file?.close?.().catch(() => undefined);
     }
   };
   return Object.assign(route, { operation: op as unknown as Operation });
+}
+
+/** A use-case that is done in one unit: there is nothing to stage and nothing to drop. */
+function inOne<C, S>(run: (context: C) => Promise<unknown>): InStages<C, S> {
+  return { stage: async () => undefined as S, publish: run, drop: async () => undefined };
 }
 
 /** What a repeat under the same Idempotency-Key has to ask again. */

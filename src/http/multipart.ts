@@ -6,13 +6,18 @@ import { Invalid, Throttled, TooLarge } from '@/errors';
 
 export const MAX_FILE_BYTES = 100 * 1024 * 1024;
 
-export interface ReceivedFile {
+export interface ReceivedForm {
   name: string;
-  bytes: Uint8Array;
-  /** Hex, of `bytes`. */
+  /** How many bytes the file has. */
+  length: number;
+  /** Hex, of the file. */
   sha256: string;
   /** The form's other fields; the first of each name. */
   fields: Record<string, string>;
+}
+
+export interface ReceivedFile extends Omit<ReceivedForm, 'length'> {
+  bytes: Uint8Array;
 }
 
 export interface FileLimit {
@@ -21,7 +26,7 @@ export interface FileLimit {
   tooLarge: string;
 }
 
-const SWEEP_FILE: FileLimit = {
+export const SWEEP_FILE: FileLimit = {
   maxBytes: MAX_FILE_BYTES,
   tooLarge: 'A sweep file takes at most 100 MB. Export a shorter range or fewer traces.',
 };
@@ -42,19 +47,25 @@ export async function receiveFile(request: Request, limit: FileLimit = SWEEP_FIL
   }
   receiving += 1;
   try {
-    return await receive(request, limit);
+    const chunks: Buffer[] = [];
+    const { length, ...form } = await receiveForm(request, limit, (chunk) => void chunks.push(chunk));
+    return { ...form, bytes: Buffer.concat(chunks, length) };
   } finally {
     receiving -= 1;
   }
 }
 
-async function receive(request: Request, { maxBytes, tooLarge }: FileLimit): Promise<ReceivedFile> {
+/** Takes the form in and hands the file on in pieces, the next one when `take` is done with the last. */
+export async function receiveForm(
+  request: Request,
+  { maxBytes, tooLarge }: FileLimit,
+  take: (chunk: Buffer) => Promise<void> | void,
+): Promise<ReceivedForm> {
   const type = request.headers.get('content-type') ?? '';
   if (!/^multipart\/form-data\b/i.test(type) || !request.body) {
     throw new Invalid([{ pointer: '/file', message: 'is sent as multipart/form-data' }]);
   }
   if (Number(request.headers.get('content-length') ?? 0) > maxBytes + 1024 * 1024) throw new TooLarge(tooLarge);
-  const parts: Buffer[] = [];
   const hash = createHash('sha256');
   let length = 0;
   const form = formidable({
@@ -68,10 +79,9 @@ async function receive(request: Request, { maxBytes, tooLarge }: FileLimit): Pro
     fileWriteStreamHandler: () =>
       new Writable({
         write(chunk: Buffer, _encoding, done) {
-          parts.push(chunk);
           hash.update(chunk);
           length += chunk.length;
-          done();
+          Promise.resolve(take(chunk)).then(() => done(), done);
         },
       }),
   });
@@ -92,7 +102,7 @@ async function receive(request: Request, { maxBytes, tooLarge }: FileLimit): Pro
     if (!file) throw new Invalid([{ pointer: '/file', message: 'is missing' }]);
     if (length === 0) throw new Invalid([{ pointer: '/file', message: 'is empty' }]);
     const name = safeName(file.originalFilename ?? 'sweep');
-    return { name, bytes: Buffer.concat(parts, length), sha256: hash.digest('hex'), fields: firstOf(fields) };
+    return { name, length, sha256: hash.digest('hex'), fields: firstOf(fields) };
   } catch (error) {
     const code = (error as { code?: number }).code;
     if (code === errors.biggerThanMaxFileSize || code === errors.biggerThanTotalMaxFileSize)

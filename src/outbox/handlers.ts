@@ -1,3 +1,4 @@
+import { dropOrphans } from '@/services/stageSweep';
 import { purgeExpired, scheduleHousekeeping } from './housekeeping';
 import { MAILS, sendMail } from './mails';
 import type { LeasedMessage } from './queue';
@@ -14,6 +15,7 @@ const mailHandlers = Object.entries(MAILS).map(([kind, compose]): [string, Handl
 export const HANDLERS: Readonly<Record<string, Handler>> = {
   housekeeping: async () => {
     await purgeExpired();
+    await dropOrphans();
   },
   ...Object.fromEntries(mailHandlers),
 };

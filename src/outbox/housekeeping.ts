@@ -12,6 +12,8 @@ const EXPIRING = {
   one_time_links: 90,
 } as const;
 const ROWS_AT_ONCE = 200;
+/** A held file goes with its parts, up to 100 MB of them. */
+const FILES_AT_ONCE = 5;
 
 /**
  * Deletes expired rows in small transactions, so that no request waits for a long one.
@@ -21,9 +23,10 @@ export async function purgeExpired(): Promise<Record<keyof typeof EXPIRING, numb
   const purged = { sessions: 0, uploads: 0, idempotency_keys: 0, caught_mails: 0, one_time_links: 0 };
   for (const [table, days] of Object.entries(EXPIRING) as [keyof typeof EXPIRING, number][]) {
     const past = `expires_at < UTC_TIMESTAMP(3) - INTERVAL ${days} DAY`;
-    for (let gone = ROWS_AT_ONCE; gone === ROWS_AT_ONCE; purged[table] += gone) {
+    const atOnce = table === 'uploads' ? FILES_AT_ONCE : ROWS_AT_ONCE;
+    for (let gone = atOnce; gone === atOnce; purged[table] += gone) {
       gone = await unitOfWork(() =>
-        database().query(`DELETE FROM ${table} WHERE ${past} LIMIT ${ROWS_AT_ONCE}`, {
+        database().query(`DELETE FROM ${table} WHERE ${past} LIMIT ${atOnce}`, {
           type: QueryTypes.BULKDELETE,
         }),
       );

@@ -1,6 +1,14 @@
 import { handle } from '@/http/handle';
-import { receiveFile } from '@/http/multipart';
+import { receiveSweepFile } from '@/http/spool';
 import { createSweepFile as operation } from '@/schemas/sweepFile';
-import { createSweepFile } from '@/services/sweepFiles';
+import { dropSweepFile, holdSweepFile, showSweepFile } from '@/services/sweepFiles';
 
-export const POST = handle(operation, ({ actor, file }) => createSweepFile(actor, file), receiveFile);
+export const POST = handle(
+  operation,
+  {
+    stage: ({ actor, file }) => holdSweepFile(actor, file),
+    publish: ({ actor }, upload) => showSweepFile(actor, upload),
+    drop: dropSweepFile,
+  },
+  receiveSweepFile,
+);

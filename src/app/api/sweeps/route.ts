@@ -1,7 +1,12 @@
 import { handle } from '@/http/handle';
 import * as operations from '@/schemas/sweep';
-import { keepSweep } from '@/services/keepSweep';
+import { publishSweep } from '@/services/keepSweep';
+import { dropSweep, stageSweep } from '@/services/stageSweep';
 import { listSweeps } from '@/services/sweeps';
 
 export const GET = handle(operations.listSweeps, ({ actor, query }) => listSweeps(actor, query));
-export const POST = handle(operations.keepSweepOperation, ({ actor, body }) => keepSweep(actor, body));
+export const POST = handle(operations.keepSweepOperation, {
+  stage: ({ actor, body }) => stageSweep(actor, body),
+  publish: ({ actor, body }, pending) => publishSweep(actor, body, pending),
+  drop: dropSweep,
+});
