@@ -20,8 +20,12 @@ export interface Asked {
 export interface Judgement<R extends Reading> {
   /** `gone`: no reading asks for it any more, and no final looked. */
   status: 'waiting' | 'measured' | 'cleared' | 'gone';
-  /** The position that decides, worst first. */
+  /** The position that decides the status. */
   governing: Stands<R>;
+  /** Each position, the one that decides first. */
+  stands: Stands<R>[];
+  /** Positions that are still to be measured. */
+  waitsAt: RetestPosition[];
   /** The newest final that decided anything about it. */
   finalId: number | null;
   /** Positions that are under and wait for their repeated prescan. */
@@ -42,9 +46,11 @@ export function judgeEmission<R extends Reading>(voices: readonly Voice<R>[], as
     null,
   );
   const unswept = swept ? positions.filter((position) => !swept(position)) : [];
-  const judged = (status: Judgement<R>['status']) => ({ status, governing, finalId, unswept });
+  const toMeasure = stands.filter(({ standing }) => standing === 'waits' || standing === 'silent');
+  const waitsAt = toMeasure.map(({ position }) => position);
+  const judged = (status: Judgement<R>['status']) => ({ status, governing, stands, waitsAt, finalId, unswept });
   if (!claimed && stands.some(({ finalId: id }) => id === null)) return judged('gone');
-  if (governing.standing === 'waits' || governing.standing === 'silent') return judged('waiting');
+  if (waitsAt.length > 0) return judged('waiting');
   return judged(governing.standing === 'under' && unswept.length === 0 ? 'cleared' : 'measured');
 }
 

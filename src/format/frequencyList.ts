@@ -12,6 +12,7 @@ export interface Listed {
   state: { label: string };
   port: Port;
   position: Polarisation | MainsLine | null;
+  waitsAt: readonly (Polarisation | MainsLine | null)[];
   line: { detector: LineDetector; bandwidthHz: number; unit: LineUnit } | null;
   kind: 'peak' | 'floor' | 'repeat-prescan';
   frequencyHz: number | null;
@@ -49,7 +50,7 @@ const columns = (unitOf: (unit: LineUnit) => string): Column[] => [
   { name: 'Serial', text: true, cell: (item) => item.sample.serial },
   { name: 'State', text: true, cell: (item) => item.state.label },
   { name: 'Port', text: true, cell: (item) => PORT_WORDS[item.port] },
-  { name: 'Position', text: true, cell: (item) => item.position ?? '' },
+  { name: 'Measure in', text: true, cell: (item) => item.waitsAt.flatMap((one) => one ?? []).join(' and ') },
   { name: 'Frequency (MHz)', cell: (item) => megahertz(item.frequencyHz) },
   { name: 'From (MHz)', cell: (item) => megahertz(item.kind === 'floor' ? item.fromHz : null) },
   { name: 'To (MHz)', cell: (item) => megahertz(item.kind === 'floor' ? item.toHz : null) },
@@ -59,6 +60,7 @@ const columns = (unitOf: (unit: LineUnit) => string): Column[] => [
   { name: 'Last level', cell: (item) => plain(item.level, 1) },
   { name: 'Unit', text: true, cell: ({ line }) => (line ? unitOf(line.unit) : '') },
   { name: 'Margin (dB)', text: true, cell: ({ marginDb }) => (marginDb === null ? '' : formatMargin(marginDb)) },
+  { name: 'Worst in', text: true, cell: (item) => item.position ?? '' },
   { name: 'Height (m)', cell: (item) => plain(item.heightM, 2) },
   { name: 'Azimuth (deg)', cell: (item) => plain(item.azimuthDeg, 0) },
   { name: 'Reason', text: true, cell: (item) => REASONS[item.reason] },

@@ -31,6 +31,8 @@ export class Retest extends Model<InferAttributes<Retest>, InferCreationAttribut
   declare position: CreationOptional<Polarisation | MainsLine | null>;
   /** Every position where it asks. */
   declare positions: (Polarisation | MainsLine | null)[];
+  /** Those of them that are still to be measured. */
+  declare waitsAt: CreationOptional<(Polarisation | MainsLine | null)[]>;
   /** Where it is found again; the shown reading may lie beside it. */
   declare fromHz: CreationOptional<number | null>;
   declare toHz: CreationOptional<number | null>;
@@ -87,6 +89,7 @@ export function defineRetest(sequelize: Sequelize): void {
       lineRevisionId: { ...id, field: 'line_revision_id' },
       position: { type: DataTypes.ENUM('horizontal', 'vertical', 'L', 'N', 'L1', 'L2', 'L3'), allowNull: true },
       positions: { type: DataTypes.JSON, allowNull: false },
+      waitsAt: { type: DataTypes.JSON, field: 'waits_at', allowNull: false, defaultValue: [] },
       fromHz: { ...figure, field: 'from_hz' },
       toHz: { ...figure, field: 'to_hz' },
       spacingHz: { ...figure, field: 'spacing_hz' },

@@ -16,6 +16,8 @@ import { seedEquipment, seedPaths } from './seedBench';
 import { seedBookings, seedPositions, seedResultMails } from './seedBookings';
 import { enterPublishedLimits } from './publishedLimits';
 import { seedPeople } from './seedPeople';
+import { seedSetups } from './seedSetups';
+import { seedRetests } from './seedRetests';
 
 const ZONE = 'Europe/London';
 
@@ -30,8 +32,11 @@ async function seed(): Promise<void> {
     const sets = await enterPublishedLimits(manager, demoLimitSets, at(-399));
     const items = await seedEquipment(manager, demoEquipment, (day) => dateOf(seedDay, day), at);
     await seedPaths(manager, items, at);
-    const states = await seedJobs(people, at);
-    const runs = await seedRuns(people, states, sets, seedDay);
+    const seeded = await seedJobs(people, at);
+    const runs = await seedRuns(people, seeded, sets, seedDay);
+    const { states } = seeded;
+    await seedSetups(people, states, at);
+    await seedRetests(people, states, (day) => dateOf(seedDay, day), at);
     const booked = await seedBookings(people, await seedPositions(people, at), states, at);
     await seedResultMails(people, states, at);
     process.stdout.write(`  ${booked} bookings\n`);

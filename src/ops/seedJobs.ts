@@ -1,6 +1,7 @@
 import { generateFile, timesOf } from '@fixtures/demo/files';
 import { runs as demoRuns } from '@fixtures/demo/runs/all';
 import { jobNumber, jobs as demoJobs, products as demoProducts, samples as demoSamples } from '@fixtures/demo/story';
+import type { DemoState } from '@fixtures/demo/types';
 import { Counter } from '@/models/counter';
 import type { LimitSet } from '@/models/limitSet';
 import { SignalPath } from '@/models/signalPath';
@@ -16,8 +17,15 @@ async function continueAt(scope: string, value: number): Promise<void> {
   await Counter.upsert({ scope, value: value - 1 });
 }
 
-/** Products, jobs, samples and modification states; answers the public ids of the states by the story's keys. */
-export async function seedJobs(people: SeededPeople, at: (day: number) => Date): Promise<Map<string, string>> {
+export interface SeededStates {
+  /** Public ids by the story's keys; a state is there once it was entered. */
+  states: Map<string, string>;
+  /** Enters every modification of the story up to a day, so that each is fitted after what was measured before it. */
+  fitUntil: (day: number) => Promise<void>;
+}
+
+/** Products, jobs and samples in their first state; the modifications follow as the story goes on. */
+export async function seedJobs(people: SeededPeople, at: (day: number) => Date): Promise<SeededStates> {
   const manager = people.actor('anselm');
   const products = new Map<string, string>();
   for (const { key, organisation, code, name, description } of demoProducts) {
@@ -33,36 +41,44 @@ export async function seedJobs(people: SeededPeople, at: (day: number) => Date):
     jobs.set(job.key, id);
   }
   const states = new Map<string, string>();
+  const modifications: { sampleId: string; position: number; state: DemoState; day: number }[] = [];
   for (const sample of [...demoSamples].sort((a, b) => a.receivedDay - b.receivedDay)) {
     const number = Number(sample.code.replace(/\D/g, ''));
     await continueAt('sample', number);
-    let view = await createSample(
+    const { id: sampleId, states: first } = await createSample(
       manager,
       jobs.get(sample.job)!,
       { serial: sample.serial, firmware: '', description: '' },
       at(sample.receivedDay),
     );
-    for (const [position, state] of sample.states.entries()) {
-      if (position > 0) {
-        const planned = state.status === 'planned';
-        const entered = planned ? at(-1) : at(state.day);
-        view = await createState(manager, view.id, { description: state.description, planned }, entered);
-      }
+    states.set(sample.states[0]!.key, first[0]!.id);
+    sample.states.forEach((state, position) => {
+      const day = state.status === 'planned' ? -1 : state.day;
+      if (position > 0) modifications.push({ sampleId, position, state, day });
+    });
+  }
+  modifications.sort((a, b) => a.day - b.day || a.position - b.position);
+  const fitUntil = async (day: number) => {
+    while (modifications.length > 0 && modifications[0]!.day <= day) {
+      const { sampleId, position, state, day: entered } = modifications.shift()!;
+      const body = { description: state.description, planned: state.status === 'planned' };
+      const view = await createState(manager, sampleId, body, at(entered));
       states.set(state.key, view.states[position]!.id);
     }
-  }
-  return states;
+  };
+  return { states, fitUntil };
 }
 
 /** Every run of the story, oldest first, through upload and keep; afterwards jobs that ended are closed. Answers how many. */
 export async function seedRuns(
   people: SeededPeople,
-  states: Map<string, string>,
+  { states, fitUntil }: SeededStates,
   sets: Map<string, LimitSet>,
   seedDay: string,
 ): Promise<number> {
   const paths = new Map((await SignalPath.findAll()).map((path) => [path.code, path.publicId]));
   for (const run of demoRuns) {
+    await fitUntil(run.measuredAt.day);
     const actor = people.actor(run.by);
     const { measuredAt, keptAt } = timesOf(run, seedDay);
     const file = await createSweepFile(actor, generateFile(run, seedDay));
@@ -108,6 +124,7 @@ export async function seedRuns(
       new Date(keptAt),
     );
   }
+  await fitUntil(Infinity);
   await endJobs(people, seedDay);
   return demoRuns.length;
 }

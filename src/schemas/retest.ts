@@ -43,6 +43,8 @@ export const retestItem = z.strictObject({
   port,
   /** Of the worst reading, or where the prescan is to be repeated; null where the port has only one. */
   position,
+  /** The positions that are still to be measured. */
+  waitsAt: z.array(position),
   line: z
     .strictObject({
       id: publicId,

@@ -7,7 +7,8 @@ import { Retest, type RetestStatus } from '@/models/retest';
 import { RetestChange, type RetestAction } from '@/models/retestChange';
 import { nextNumbers } from './counters';
 import { dayIn, labSettings } from './lab';
-import { factsOf, type RetestFacts, type Wanted } from './retestWants';
+import { factsOf, type RetestFacts } from './retestFacts';
+import type { Wanted } from './retestWants';
 
 export interface Happening {
   stateId: number;

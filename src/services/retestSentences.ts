@@ -16,17 +16,17 @@ export function positionWords(position: RetestPosition): string {
 /** Why an emission stands as it does, without figures: `over, confirmed by the final R-26-032`. `from` is the state before. */
 export function standingSentence(
   governing: Stands<LoadedReading>,
-  from: string | null,
-  unswept: readonly RetestPosition[],
+  { from, unswept, several }: { from: string | null; unswept: readonly RetestPosition[]; several: boolean },
 ): string {
   const { standing, reading } = governing;
   const runs = governing.runs as LoadedRun[];
   const named = numbersOf(runs);
+  const where = several ? `, ${positionWords(governing.position)}` : '';
   switch (standing) {
     case 'waits':
-      return `${reading?.verdict === 'over' ? 'over' : 'needs a final'} in ${named}`;
+      return `${reading?.verdict === 'over' ? 'over' : 'needs a final'} in ${named}${where}`;
     case 'silent':
-      return from ? `carried from ${from}, not measured since` : 'not measured';
+      return from ? `carried from ${from}, not measured since${where}` : `not measured${where}`;
     case 'contradicted':
       return `over in one and not in another of ${named}: void the run that is wrong`;
     case 'over':

@@ -89,7 +89,7 @@ export function retestItemOf(row: Retest): RetestItem {
   const { limitLine, sweep, origin, carried } = whole;
   const { sample } = whole.state;
   const { job } = sample;
-  const { number, version, kind, reason, status, statusReason, port, position } = row;
+  const { number, version, kind, reason, status, statusReason, port, position, waitsAt } = row;
   const { frequencyHz, fromHz, toHz, level, limit, marginDb, uncertaintyDb, verdict, because } = row;
   const { heightM, azimuthDeg, scheduledOn, note } = row;
   return {
@@ -102,6 +102,7 @@ export function retestItemOf(row: Retest): RetestItem {
     state: { id: whole.state.publicId, label: stateLabel(whole.state.position) },
     port,
     position,
+    waitsAt,
     line: limitLine && {
       id: limitLine.publicId,
       key: limitLine.lineKey,

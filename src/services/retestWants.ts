@@ -7,39 +7,7 @@ import { sameEmissions } from '@/emc/sameEmissions';
 import type { Retest } from '@/models/retest';
 import type { LoadedReading, LoadedRun } from './retestRuns';
 import { positionWords, standingSentence } from './retestSentences';
-
-const FACTS = [
-  'kind',
-  'reason',
-  'lineKey',
-  'lineRevisionId',
-  'position',
-  'positions',
-  'fromHz',
-  'toHz',
-  'spacingHz',
-  'frequencyHz',
-  'level',
-  'limit',
-  'marginDb',
-  'uncertaintyDb',
-  'verdict',
-  'because',
-  'heightM',
-  'azimuthDeg',
-  'sweepId',
-  'finalId',
-  'originId',
-] as const;
-/** What of a retest is read off its runs; a person's acts are no part of it. */
-export type RetestFacts = Pick<Retest, (typeof FACTS)[number]>;
-
-/** The facts a row holds. */
-export function factsOf(row: Retest): RetestFacts {
-  return Object.fromEntries(FACTS.map((name) => [name, row[name]])) as RetestFacts;
-}
-
-const NOTHING_READ = Object.fromEntries(FACTS.map((name) => [name, null])) as unknown as RetestFacts;
+import { factsOf, NOTHING_READ, readingFacts, shownReading, type RetestFacts } from './retestFacts';
 
 /** An item as the runs want it to be. */
 export interface Wanted {
@@ -103,7 +71,8 @@ function sightingOf(row: Retest): Sighting {
 
 function saying({ from }: Queue, judged: Judgement<LoadedReading>) {
   const { status, governing, unswept } = judged;
-  return { status, says: standingSentence(governing, from, unswept), runId: governing.runs.at(-1)?.id ?? null };
+  const says = standingSentence(governing, { from, unswept, several: judged.stands.length > 1 });
+  return { status, says, runId: governing.runs.at(-1)?.id ?? null };
 }
 
 function ofOneLine(queue: Queue, lineKey: string, seen: Seen[], swept: ((p: RetestPosition) => boolean) | null) {
@@ -125,7 +94,7 @@ function ofOneLine(queue: Queue, lineKey: string, seen: Seen[], swept: ((p: Rete
       const asked = { port, place: placeOf(row), positions: row.positions, claimed: false, swept };
       const judged = judgeEmission(voices, asked);
       const { finalId } = judged;
-      return { row, facts: { ...factsOf(row), finalId, originId: null }, ...saying(queue, judged) };
+      return { row, facts: { ...factsOf(row), waitsAt: [], finalId, originId: null }, ...saying(queue, judged) };
     }),
   ];
 }
@@ -145,25 +114,13 @@ function wantOf(
 ): Wanted {
   const own = emission.sightings.filter(({ carried }) => !carried);
   const [before] = emission.sightings.flatMap((one) => one.row ?? []);
-  const reading = judged.governing.reading ?? own[0]?.reading;
   const { kind, fromHz, toHz, bandwidthHz: spacingHz } = emission;
   const reason = own.length > 0 ? (own[0]!.verdict === 'over' ? 'over' : 'needs-final') : before!.reason;
-  const shown = reading ? readingFacts(queue.port, reading) : factsOf(before!);
-  const facts = { ...shown, kind, reason, positions, fromHz, toHz, spacingHz };
+  const shown = shownReading(judged) ?? (before ? null : own[0]!.reading!);
+  const read = shown ? readingFacts(queue.port, shown) : factsOf(before!);
+  const facts = { ...read, kind, reason, positions, waitsAt: judged.waitsAt, fromHz, toHz, spacingHz };
   const ids = { finalId: judged.finalId, originId: before?.id ?? null };
   return { row, facts: { ...facts, ...ids }, ...saying(queue, judged) };
-}
-
-function readingFacts(port: Port, reading: LoadedReading) {
-  const { line, run, frequencyHz, level, limit, marginDb, uncertaintyDb, verdict, because } = reading;
-  const { heightM, azimuthDeg } = run;
-  return {
-    lineKey: line.lineKey,
-    lineRevisionId: line.id,
-    position: positionOf(port, run),
-    ...{ frequencyHz, level, limit, marginDb, uncertaintyDb, verdict, because, heightM, azimuthDeg },
-    sweepId: run.id,
-  };
 }
 
 /** Every line the states before were compared with: a repeated prescan has to show all of them again. */
@@ -184,7 +141,15 @@ function repeats({ port, label, runs, earlier, carried, rows }: Queue, needed: r
       : `${label} was fitted, so the prescan of ${positionWords(position)} is repeated before anything is cleared`;
     const kind = 'repeat-prescan' as const;
     const ids = { sweepId: run?.id ?? null };
-    const facts = { ...NOTHING_READ, kind, reason: kind, position, positions: [position], ...ids };
+    const facts = {
+      ...NOTHING_READ,
+      kind,
+      reason: kind,
+      position,
+      positions: [position],
+      waitsAt: run ? [] : [position],
+      ...ids,
+    };
     return { row, facts, status: run ? 'cleared' : 'waiting', says, runId: run?.id ?? null };
   });
   const left = known.filter(({ position }) => !positions.includes(position));

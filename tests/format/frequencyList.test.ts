@@ -11,6 +11,7 @@ const item = (more: Partial<Listed> = {}): Listed => ({
   state: { label: 'M2' },
   port: 'enclosure',
   position: 'horizontal',
+  waitsAt: ['horizontal', 'vertical'],
   line: { detector: 'quasi-peak', bandwidthHz: 120e3, unit: 'dBuV/m' },
   kind: 'peak',
   frequencyHz: 144_018_375,
@@ -38,7 +39,7 @@ test('one row names the columns with their units, then one row per emission', ()
     Serial: 'P2-0193',
     State: 'M2',
     Port: 'enclosure',
-    Position: 'horizontal',
+    'Measure in': 'horizontal and vertical',
     'Frequency (MHz)': '144.018375',
     'From (MHz)': '',
     'To (MHz)': '',
@@ -48,6 +49,7 @@ test('one row names the columns with their units, then one row per emission', ()
     'Last level': '46.2',
     Unit: 'dBuV/m',
     'Margin (dB)': '6.2 over',
+    'Worst in': 'horizontal',
     'Height (m)': '2.10',
     'Azimuth (deg)': '48',
     Reason: 'needs a final',
@@ -65,14 +67,14 @@ test('a stretch of floor names its ends, and 200 Hz is 0.2 kHz', () => {
 
 test('without a figure a cell is empty, and a negative level is a number', () => {
   const { data } = parsed(frequencyListFile([item({ heightM: null, azimuthDeg: null, level: -3.21 })], 'csv').text);
-  expect([data[1]![12], data[1]![15], data[1]![16]]).toEqual(['-3.2', '', '']);
+  expect([data[1]![12], data[1]![16], data[1]![17]]).toEqual(['-3.2', '', '']);
 });
 
 test.each(['=1+1', '+1', '-1', '@SUM(A1)', '\t=1', '\r=1', '  =1', '\uff1dA1'])(
   'what somebody typed as %j is text to a spreadsheet (OWASP, CSV injection)',
   (typed) => {
     const { data } = parsed(frequencyListFile([item({ statusReason: typed })], 'csv').text);
-    expect(data[1]![19]).toBe(`'${typed}`);
+    expect(data[1]![20]).toBe(`'${typed}`);
   },
 );
 
@@ -88,11 +90,11 @@ test('whatever is typed, a row stays a row, reads back the same, and begins no f
       const rows = readRfc4180(text);
       expect(rows).toHaveLength(items.length + 1);
       rows.slice(1).forEach((row, i) => {
-        expect(row).toHaveLength(21);
-        expect([row[2]!.replace(/^'/, ''), row[19]!.replace(/^'/, '')]).toEqual(
+        expect(row).toHaveLength(22);
+        expect([row[2]!.replace(/^'/, ''), row[20]!.replace(/^'/, '')]).toEqual(
           [items[i]!.sample.serial, items[i]!.statusReason].map((one) => one.replace(/^'/, '')),
         );
-        for (const cell of [row[2]!, row[19]!]) expect(cell).not.toMatch(/^\s*[=+@-]/);
+        for (const cell of [row[2]!, row[20]!]) expect(cell).not.toMatch(/^\s*[=+@-]/);
       });
     }),
   );
