@@ -59,6 +59,7 @@ export function RunTable({
               >
                 {run.number}
               </Link>
+              <RunMarks run={run} />
               {whose && (
                 <span className="ml-2 font-semibold pad:hidden">
                   {run.product} <StateTag label={run.state} />
@@ -130,6 +131,12 @@ function Marks({ run: { trial, partial, voided, strayed } }: { run: Run }) {
 /** A voided run keeps its figures and has no verdict any more. */
 function RunVerdict({ run: { verdict, voided } }: { run: Run }) {
   return voided ? <VerdictWord verdict="not-covered">voided</VerdictWord> : <VerdictWord verdict={verdict} />;
+}
+
+/** What sets a run apart from those that speak for their state. */
+function RunMarks({ run: { trial, partial, voided } }: { run: Run }) {
+  const marks = [partial && 'partial', trial !== null && 'trial', voided && 'voided'].filter(Boolean);
+  return marks.length === 0 ? null : <span className="t-detail ml-1.5 font-normal">{marks.join(', ')}</span>;
 }
 
 /** `line L`, `horizontal`. */

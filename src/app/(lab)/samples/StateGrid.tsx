@@ -97,6 +97,7 @@ function Cell({ cell, name }: { cell: GridCell; name: string }) {
       title={sweep.number}
     >
       {chart}
+      {sweep.partial && <p className="t-detail pt-0.5">partial run</p>}
       {verdict !== sweep.evaluation.worst?.verdict && (
         <VerdictWord verdict={verdict} className="t-small pt-0.5">
           port {VERDICT_WORDS[verdict]}

@@ -71,7 +71,8 @@ export function DropRow({ entry, lists, onOpen, onDiscard, onAgain }: Props) {
       <Cell className="whitespace-nowrap max-pad:hidden">
         {sample ? (
           <>
-            {sample.code} <StateTag label={sample.label} />
+            <span className="mr-1.5">{sample.code}</span>
+            <StateTag label={sample.label} />
             <span className="t-detail block">{PURPOSE_WORDS[entry.draft!.purpose]}</span>
           </>
         ) : (

@@ -62,8 +62,7 @@ export function UploadSheet({ held, stateId, ...lists }: Props) {
         ref={input}
         type="file"
         multiple
-        className="sr-only"
-        tabIndex={-1}
+        hidden
         aria-label="Sweep files"
         accept=".csv,.txt,.dat,.tsv,.asc,.s2p,text/*"
         onChange={(event) => {
