@@ -9,6 +9,7 @@ import { Id, IdentityLine } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { StateTag } from '@/components/ui/StateTag';
 import { formatCount } from '@/format/quantities';
+import { capitalised } from '@/format/words';
 import type { BookingChoices, DayBooking, DayView } from '@/schemas/day';
 import { BookingForm } from './BookingForm';
 import { spanWords, untilWords, type Standing } from './dayWords';
@@ -25,7 +26,7 @@ interface Props {
 }
 
 const TITLES: Record<Standing, string> = {
-  done: 'Over',
+  done: 'Done',
   now: 'At the bench now',
   next: 'Next at the bench',
   later: 'To come',
@@ -78,8 +79,8 @@ export function ChosenBooking({ booking, standing, view, nowMs, choices, upload 
             </span>
           </IdentityLine>
           <p className="t-detail mt-1">
-            {work} at position {position.code}, {position.name}, {own ? 'by you' : `by ${technician.name}`}.{' '}
-            {state && `${state.label}: ${state.description}${state.planned ? ', planned and not fitted yet' : ''}. `}
+            {capitalised(work)} at position {position.code}, {position.name}, {own ? 'by you' : `by ${technician.name}`}
+            . {state && `${state.label}: ${state.description}${state.planned ? ', planned and not fitted yet' : ''}. `}
             {openRetests > 0 &&
               `${formatCount(openRetests)} ${openRetests === 1 ? 'retest is' : 'retests are'} open for it.`}
           </p>

@@ -7,7 +7,7 @@ import { useKey } from '@/components/shell/keys';
 import { Button, ButtonLink } from '@/components/ui/Button';
 import { EmptyLine } from '@/components/ui/EmptyLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
-import { formatWeekday } from '@/format/dates';
+import { formatShortDay, formatWeekday } from '@/format/dates';
 import { formatCount } from '@/format/quantities';
 import type { BookingChoices, DayView } from '@/schemas/day';
 import { BookingForm } from './BookingForm';
@@ -108,7 +108,7 @@ function DayNav({ view }: { view: DayView }) {
   return (
     <nav className="mt-1 flex flex-wrap items-center gap-x-3" aria-label="Days">
       <ButtonLink kind="quiet" size="table" keyName="ArrowLeft" href={`/day?day=${view.before}`}>
-        {formatWeekday(view.before)}
+        <DayWords day={view.before} />
       </ButtonLink>
       {view.day !== view.today && (
         <ButtonLink kind="quiet" size="table" href="/day">
@@ -116,9 +116,21 @@ function DayNav({ view }: { view: DayView }) {
         </ButtonLink>
       )}
       <ButtonLink kind="quiet" size="table" keyName="ArrowRight" href={`/day?day=${view.after}`} className="ml-auto">
-        {formatWeekday(view.after)}
+        <DayWords day={view.after} />
       </ButtonLink>
     </nav>
+  );
+}
+
+/** In full at a desk, short where a phone has both on one line. */
+function DayWords({ day }: { day: string }) {
+  return (
+    <>
+      <span className="max-pad:hidden">{formatWeekday(day)}</span>
+      <span className="pad:hidden">
+        {formatWeekday(day).slice(0, 3)} {formatShortDay(day)}
+      </span>
+    </>
   );
 }
 

@@ -7,7 +7,7 @@ import type { DayBooking, DayView } from '@/schemas/day';
 import { spanWords, type Standing } from './dayWords';
 
 const WIDE = 'max-pad:hidden';
-const STANDING_WORDS: Record<Standing, string> = { done: 'over', now: 'running', next: 'next', later: 'to come' };
+const STANDING_WORDS: Record<Standing, string> = { done: 'done', now: 'running', next: 'next', later: 'to come' };
 
 /** The same bookings as the lanes, in the order they begin: what a screen reader, a printer and a phone read. */
 export function DayTable({

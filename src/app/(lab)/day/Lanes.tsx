@@ -1,6 +1,6 @@
 'use client';
 
-import { Fragment } from 'react';
+import { Fragment, useEffect, useRef } from 'react';
 import { VerdictGlyph } from '@/components/ui/VerdictGlyph';
 import { classes } from '@/components/ui/classes';
 import { formatTime } from '@/format/dates';
@@ -18,15 +18,27 @@ interface Props {
   onChoose: (id: string) => void;
 }
 
+/** Percent of the width that the flag of now takes to each side; an hour below it is not written. */
+const FLAG_REACH = 4.5;
+
 const at = (percent: number) => `${percent.toFixed(3)}%`;
 
 /** Each position is a line; bookings are slips that hang on two threads from it, across an hour ruler. */
 export function Lanes({ view, nowMs, stands, chosen, onChoose }: Props) {
   const scale = laneScale(view);
   const now = view.day === view.today ? nowMs : null;
+  const frame = useRef<HTMLDivElement>(null);
   const inside = now !== null && now >= scale.fromMs && now <= scale.toMs;
+  const shown = view.bookings.find(({ id }) => id === chosen);
+  const middle = shown ? percentAt(shown.startsAt, scale) : inside ? percentAt(now, scale) : 0;
+  useEffect(() => {
+    // Where the lanes are wider than a phone, what the sheet opens with comes into view.
+    const element = frame.current;
+    if (element) element.scrollLeft = (element.scrollWidth - element.clientWidth) * (middle / 100);
+  }, [middle]);
   return (
     <div
+      ref={frame}
       className="lanes-frame"
       role="group"
       aria-label="Positions over the hours; the table below says the same"
@@ -86,13 +98,8 @@ function Ruler({ scale, now, inside, zone }: { scale: LaneScale; now: number | n
       {scale.hours.map(({ percent, label }) => (
         <Fragment key={percent}>
           <line x1={at(percent)} x2={at(percent)} y1="18" y2="34" className="stroke-ink3" strokeWidth="1" />
-          {label && (
-            <text
-              x={at(percent)}
-              y="12"
-              textAnchor={percent < 1 ? 'start' : percent > 99 ? 'end' : 'middle'}
-              className="lane-hour"
-            >
+          {label && !(flag !== null && Math.abs(flag - percent) < FLAG_REACH) && (
+            <text x={at(percent)} y="12" textAnchor="middle" className="lane-hour">
               {label}
             </text>
           )}
@@ -131,7 +138,7 @@ function Slip({ booking, view, scale, standing, chosen, onChoose }: SlipProps) {
   const [before, beyond] = [booking.startsAt < view.from, booking.endsAt > view.to];
   const who = own ? 'you' : technician.name;
   const named = `${product.code}${state ? ` ${state.label}` : ''}`;
-  const word = { done: verdict ? VERDICT_WORDS[verdict] : 'over', now: 'running', next: 'next', later: '' }[standing];
+  const word = { done: verdict ? VERDICT_WORDS[verdict] : 'done', now: 'running', next: 'next', later: '' }[standing];
   const said = [spanWords(booking, view.day, view.zone), named, work, who, `position ${position.code}`, word];
   return (
     <svg x={at(from)} y="1" width={at(to - from)} height="60" overflow="visible">

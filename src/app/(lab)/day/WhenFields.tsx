@@ -1,8 +1,12 @@
 'use client';
 
-import { Field } from '@/components/ui/Field';
+import { Field, SelectField } from '@/components/ui/Field';
 import { Switch } from '@/components/ui/Switch';
+import { QUARTER_MS } from '@/schemas/labTime';
 import type { TypedTime } from './typedSpan';
+
+/** A browser's own time field follows its language, with am and pm; the lab writes 24 h. */
+const QUARTERS = Array.from({ length: 96 }, (_, i) => new Date(i * QUARTER_MS).toISOString().slice(11, 16));
 
 interface Props {
   what: 'Start' | 'End';
@@ -24,16 +28,16 @@ export function WhenFields({ what, value, onChange, problem, twice }: Props) {
         value={value.day}
         onChange={(event) => onChange({ ...value, day: event.target.value })}
       />
-      <Field
+      <SelectField
         label={`${what}, time`}
-        type="time"
-        step={900}
-        figure
-        required
         value={value.time}
         onChange={(event) => onChange({ ...value, time: event.target.value })}
         error={problem}
-      />
+      >
+        {QUARTERS.map((time) => (
+          <option key={time}>{time}</option>
+        ))}
+      </SelectField>
       {twice && (
         <Switch
           legend={`${value.time} comes twice that night`}

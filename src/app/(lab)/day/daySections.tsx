@@ -7,7 +7,8 @@ export function beforeSection(position: PositionView | null): MarginSection {
   const cautions = position ? cautionsFor(position.capabilities) : [];
   return {
     id: 'before',
-    title: position ? `Before you start at ${position.code}` : 'Before you start',
+    title: 'Before you start',
+    subject: position ? `at position ${position.code}` : undefined,
     children: (
       <>
         {cautions.length > 0 && (

@@ -69,9 +69,9 @@ export function dayFinding(
   const open = waiting.find(([verdict]) => judged.includes(verdict));
   const count = open ? judged.filter((verdict) => verdict === open[0]).length : 0;
   const said = open
-    ? [plain(` Of what was measured ${countInWords(count)} ${count === 1 ? open[1] : open[2]}.`)]
+    ? [plain(` Of the day’s verdicts ${countInWords(count)} ${count === 1 ? open[1] : open[2]}.`)]
     : judged.length > 0
-      ? [plain(' All that was measured is under.')]
+      ? [plain(' All of the day’s verdicts are under.')]
       : [];
   const verdict = open?.[0] ?? (judged.length > 0 ? 'under' : 'not-covered');
   return { verdict, runs: [...(day === today ? todays() : another()), ...said] };
@@ -99,7 +99,7 @@ export function dayFinding(
       );
       runs.push(plain(`, in ${untilWords(Date.parse(next.startsAt) - nowMs)}.`));
     }
-    if (!now && !next) runs.push(plain(`${counted()} were booked today; all are over.`));
+    if (!now && !next) runs.push(plain(`${counted()} today; all are done.`));
     return runs;
   }
 

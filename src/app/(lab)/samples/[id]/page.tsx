@@ -22,6 +22,7 @@ import { StateGrid } from '../StateGrid';
 import { trialMoves } from '../trials';
 import { AddState } from './AddState';
 import { CorrectSample } from './CorrectSample';
+import { ResultMail } from './ResultMail';
 import { StateRuns } from './StateRuns';
 
 interface Props {
@@ -128,6 +129,7 @@ export default async function SamplePage({ params }: Props) {
         </section>
       )}
       {mayRole(actor.role, 'state.create') && <AddState sampleId={sample.id} next={`M${sample.states.length}`} />}
+      <ResultMail actor={actor} sample={sample} zone={zone} />
       {mayRole(actor.role, 'sample.change') && (
         <>
           <SectionHeading className="mt-6" remark="each change stands in the history">
