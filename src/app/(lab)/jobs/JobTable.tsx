@@ -4,7 +4,7 @@ import { VerdictWord } from '@/components/ui/VerdictWord';
 import { formatDay } from '@/format/dates';
 import { formatCount, formatMargin } from '@/format/quantities';
 import type { JobView } from '@/schemas/job';
-import type { Standing } from '@/app/(lab)/samples/standing';
+import type { PortStanding } from '@/services/portVerdict';
 
 const WIDE = 'max-pad:hidden';
 const BENCH = 'max-bench:hidden';
@@ -17,7 +17,7 @@ export function JobTable({
   product = true,
 }: {
   jobs: readonly JobView[];
-  standings: ReadonlyMap<string, Standing>;
+  standings: ReadonlyMap<string, PortStanding>;
   zone: string;
   product?: boolean;
 }) {
@@ -84,7 +84,7 @@ export function JobTable({
   );
 }
 
-function Stands({ job, standing }: { job: JobView; standing: Standing | undefined }) {
+function Stands({ job, standing }: { job: JobView; standing: PortStanding | undefined }) {
   if (job.state !== 'open') return <span className="text-ink2">{job.stateReason ?? ''}</span>;
   if (!standing) return <VerdictWord verdict="not-covered">not measured yet</VerdictWord>;
   return (
