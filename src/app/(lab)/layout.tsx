@@ -14,7 +14,7 @@ const LAB_SECTIONS: Section[] = [
   { href: '/day', name: 'Day' },
   { href: '/jobs', name: 'Jobs', also: ['/samples', '/products'] },
   { href: '/sweeps', name: 'Sweeps', onPhone: true },
-  { href: '/equipment', name: 'Equipment' },
+  { href: '/equipment', name: 'Equipment', also: ['/limits'] },
 ];
 
 /** A designer's sections are their own products; beyond five the rest stand on the products sheet. */

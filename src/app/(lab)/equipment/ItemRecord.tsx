@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import { VerdictWord } from '@/components/ui/VerdictWord';
 import { formatDay } from '@/format/dates';
 import { formatCount } from '@/format/quantities';
@@ -9,6 +10,11 @@ export function CalibrationRecord({ item, today }: { item: EquipmentView; today:
   return (
     <>
       <p>{item.description || kindOf(item.role)}</p>
+      <p>
+        <Link href={`/equipment/${item.id}`} className="text-pen underline">
+          Open the sheet of {item.identifier}
+        </Link>
+      </p>
       <p>
         <VerdictWord verdict={DUE_VERDICTS[item.due]}>{dueWords(item, today)}</VerdictWord>
       </p>
@@ -35,7 +41,9 @@ export function FactorTables({ item }: { item: EquipmentView }) {
     <ul>
       {item.tables.map((table) => (
         <li key={table.id}>
-          {table.name}
+          <Link href={`/equipment/${item.id}?table=${table.id}#table`} className="text-pen">
+            {table.name}
+          </Link>
           <span className="column-quiet block">
             {quantityOf(table.quantity)}
             {table.polarisation ? `, ${table.polarisation}` : ''}, {formatCount(table.rows)} rows, revision{' '}

@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import { EmptyLine } from '@/components/ui/EmptyLine';
 import { Pager } from '@/components/ui/Pager';
 import { SectionHeading } from '@/components/ui/SectionHeading';
@@ -31,6 +32,12 @@ export function LimitSets({ sets, firstHref, nextHref }: Props) {
       <SectionHeading className="mt-6" remark={remark}>
         Limit sets
       </SectionHeading>
+      <p className="t-text mt-1">
+        <Link href="/limits" className="text-pen underline">
+          Every line with its revisions
+        </Link>
+        , and uploading one, are on the limits sheet.
+      </p>
       <Table caption="Limit sets and their lines" className="max-pad:[&_td]:align-top [&_td]:py-1.5!">
         <TableHead>
           <HeadCell>Detector</HeadCell>

@@ -10,6 +10,7 @@ import { listEquipment } from '@/services/equipment';
 import { labZone } from '@/services/lab';
 import { listLimitSets } from '@/services/limitSets';
 import { listPaths } from '@/services/signalPaths';
+import { FindWords } from '../limits/FindWords';
 import { EquipmentSheet } from './EquipmentSheet';
 import { equipmentFinding, mostUrgentFirst } from './equipmentWords';
 import { LimitSets } from './LimitSets';
@@ -22,10 +23,11 @@ export default async function EquipmentPage({ searchParams }: { searchParams: Se
   const actor = await requireActor();
   const cursors = {
     after: await asked(searchParams, 'after'),
+    find: await asked(searchParams, 'find'),
     paths: await asked(searchParams, 'paths'),
     limits: await asked(searchParams, 'limits'),
   };
-  const equipment = await listed(listEquipment(actor, { limit: 50, after: cursors.after }));
+  const equipment = await listed(listEquipment(actor, { limit: 50, after: cursors.after, find: cursors.find }));
   const paths = await listed(listPaths(actor, { limit: 20, after: cursors.paths }));
   const limits = await listed(listLimitSets(actor, { limit: 20, after: cursors.limits }));
   const today = dayOf(new Date(), await labZone());
@@ -39,11 +41,25 @@ export default async function EquipmentPage({ searchParams }: { searchParams: Se
   };
   return (
     <EquipmentSheet
-      header={<SheetHeader title="Equipment" finding={equipmentFinding(items, today)} />}
+      header={
+        <>
+          <SheetHeader title="Equipment" finding={equipmentFinding(items, today)} />
+          <FindWords
+            action="/equipment"
+            value={cursors.find ?? ''}
+            label="Find an item: its number, or a word of the trade such as LISN"
+          />
+        </>
+      }
       items={items}
       today={today}
     >
-      {items.length === 0 && (
+      {items.length === 0 && cursors.find && (
+        <EmptyLine lead={`Nothing is found by “${cursors.find}”.`}>
+          Try LISN, antenna, or the item’s own number.
+        </EmptyLine>
+      )}
+      {items.length === 0 && !cursors.find && (
         <EmptyLine lead="No equipment is entered yet.">Factors and due dates come from it.</EmptyLine>
       )}
       <Pager
