@@ -27,18 +27,22 @@ export function DropRow({ entry, lists, onOpen, onDiscard, onAgain }: Props) {
   const name = formatFileName(entry.name, 44);
   const sample = sampleOf(entry, lists);
   const stands = (
-    <>
-      <VerdictGlyph verdict={glyphOf(entry)} className="mr-1.5" />
-      {kept ? <Link href={`/sweeps/${kept.id}`}>{standingWords(entry)}</Link> : standingWords(entry)}
-      {share !== null && (
-        <progress
-          className="mt-1 block h-1.5 w-40 max-w-full accent-pen"
-          max={1}
-          value={share < 1 ? share : undefined}
-          aria-label={`${share < 1 ? 'Sending' : 'Recognising'} ${name}`}
-        />
-      )}
-    </>
+    <span className="flex gap-1.5">
+      <span className="shrink-0">
+        <VerdictGlyph verdict={glyphOf(entry)} />
+      </span>
+      <span className="min-w-0 [overflow-wrap:anywhere]">
+        {kept ? <Link href={`/sweeps/${kept.id}`}>{standingWords(entry)}</Link> : standingWords(entry)}
+        {share !== null && (
+          <progress
+            className="mt-1 block h-1.5 w-40 max-w-full accent-pen"
+            max={1}
+            value={share < 1 ? share : undefined}
+            aria-label={`${share < 1 ? 'Sending' : 'Recognising'} ${name}`}
+          />
+        )}
+      </span>
+    </span>
   );
   return (
     <Row>

@@ -109,7 +109,7 @@ export function RefusedSheet(props: Props) {
             <dt className="text-ink2">Found</dt>
             <dd className="[overflow-wrap:anywhere]">{refusal!.found}</dd>
             <dt className="text-ink2">Expected</dt>
-            <dd>{refusal!.expected}</dd>
+            <dd>{gapped(refusal!.expected)}</dd>
           </dl>
         </div>
       </div>
@@ -143,6 +143,9 @@ function findingOf({ refusal, partial, broken }: SweepRecognition, lastHz: numbe
 }
 type SweepRecognition = NonNullable<DropEntry['file']>['recognition'];
 
+/** Counts in a sentence with thin gaps, as everywhere. */
+const gapped = (text: string) => text.replace(/\b\d{4,}\b/g, (count) => formatCount(Number(count)));
+
 /** Where other files of the drop have the same shape, they show where this one should have ended. */
 function againText({ file }: DropEntry, others: readonly DropEntry[]): ReactNode {
   const { shape, broken, partial } = file!.recognition;
@@ -155,8 +158,10 @@ function againText({ file }: DropEntry, others: readonly DropEntry[]): ReactNode
   return (
     <>
       {early}
-      {alike.length === 1 ? 'The other file' : `The other ${alike.length} files`} of this drop{' '}
-      {alike.length === 1 ? 'ends' : 'end'} at <span className="t-figure">{formatFrequency([...ends][0]!)}</span>.
+      {alike.length === 1
+        ? 'Another file of this drop in the same layout ends'
+        : `${alike.length} others of this drop in the same layout end`}{' '}
+      at <span className="t-figure">{formatFrequency([...ends][0]!)}</span>.
     </>
   );
 }
