@@ -31,7 +31,9 @@ export function onAxis(trace: Trace): Trace {
   if (frequencyHz.length !== reading.length) {
     throw new RangeError(`${name} holds ${frequencyHz.length} frequencies and ${reading.length} readings.`);
   }
-  if (frequencyHz.every(isFrequency)) return trace;
+  let all = true;
+  for (let i = 0; i < frequencyHz.length && all; i++) all = isFrequency(frequencyHz[i]!);
+  if (all) return trace;
   return {
     ...trace,
     frequencyHz: frequencyHz.filter(isFrequency),
@@ -45,8 +47,9 @@ export function axisRange(frequencyHz: Float64Array): { lowestHz: number; highes
   let lowestHz = Infinity;
   let highestHz = 0;
   for (let i = 0; i < frequencyHz.length; i++) {
-    lowestHz = Math.min(lowestHz, frequencyHz[i]!);
-    highestHz = Math.max(highestHz, frequencyHz[i]!);
+    const hz = frequencyHz[i]!;
+    if (hz < lowestHz) lowestHz = hz;
+    if (hz > highestHz) highestHz = hz;
   }
   return { lowestHz, highestHz };
 }

@@ -9,7 +9,7 @@ import { JUDGED, judgeInto, pairPoints, type PairPoints } from './pair';
 import { tracesFor, type PairableTrace } from './pairing';
 import { governed } from './repeats';
 import { findCandidates } from './search';
-import { hangTrace, judgeSegment, type HungTrace } from './segment';
+import { hangTrace, judgeSegment, logarithmsInto, type HungTrace } from './segment';
 import type { Columns, Evaluation, EvaluationInput, JudgedPair, LimitLine, Trace } from './types';
 import { prepareUncertainty, type PreparedUncertainty } from './uncertainty';
 import { reachOf, worstVerdict } from './verdict';
@@ -34,9 +34,13 @@ export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
 
   const judgements: PairJudgement[] = [];
   const layers: Columns[] = [];
+  const axes = new Map<Float64Array, SharedAxis>();
   for (const sweep of sweeps) {
     const lines = asked.filter(({ by }) => by.includes(sweep)).map(({ line }) => line);
-    layers.push(yield* judgeSweep(sweep, lines, uncertainty, input, judgements));
+    const { frequencyHz } = sweep.trace;
+    const axis = axes.get(frequencyHz) ?? { logHz: new Float64Array(frequencyHz.length), known: 0, steps: new Map() };
+    axes.set(frequencyHz, axis);
+    layers.push(yield* judgeSweep(sweep, axis, lines, uncertainty, input, judgements));
   }
 
   const of = (line: LimitLine) => judgements.filter((judgement) => judgement.line === line);
@@ -93,9 +97,25 @@ interface PairJudgement {
   spans: Span[];
 }
 
+/** What the traces of one axis need not compute again. */
+interface SharedAxis {
+  /** Natural logarithms of its first `known` frequencies. */
+  logHz: Float64Array;
+  known: number;
+  /** By bandwidth. */
+  steps: Map<number, Uint8Array>;
+}
+
+function stepsOf({ steps }: SharedAxis, frequencyHz: Float64Array, bandwidthHz: number): Uint8Array {
+  const before = steps.get(bandwidthHz) ?? axisSteps(frequencyHz, bandwidthHz);
+  steps.set(bandwidthHz, before);
+  return before;
+}
+
 /** Judges a trace against its lines, appending a judgement for each; returns the layer it is drawn from. */
 function* judgeSweep(
   { trace, hung, lowestHz, highestHz }: Sweep,
+  axis: SharedAxis,
   lines: readonly PreparedLine[],
   uncertainty: PreparedUncertainty,
   kind: { purpose: Purpose; partial?: boolean },
@@ -106,11 +126,15 @@ function* judgeSweep(
   const layer = points > 0 ? columnAccumulator(lowestHz, highestHz, LAYER_COLUMNS) : columnAccumulator(1, 1, 1);
   const pairs = lines.map((line) => {
     const bandwidthHz = trace.rbwHz ?? line.line.bandwidthHz;
-    return { line, bandwidthHz, points: pairPoints(frequencyHz, axisSteps(frequencyHz, bandwidthHz)) };
+    return { line, bandwidthHz, points: pairPoints(frequencyHz, stepsOf(axis, frequencyHz, bandwidthHz)) };
   });
   for (let from = 0; from < points; from += POINTS_PER_TURN) {
     const to = Math.min(from + POINTS_PER_TURN, points);
-    const segment = judgeSegment(hung, frequencyHz.subarray(from, to), reading.subarray(from, to));
+    const hz = frequencyHz.subarray(from, to);
+    const logHz = axis.logHz.subarray(from, to);
+    if (axis.known < to) logarithmsInto(logHz, hz);
+    axis.known = Math.max(axis.known, to);
+    const segment = judgeSegment(hung, hz, reading.subarray(from, to), logHz);
     layer.add(segment);
     for (const pair of pairs) judgeInto(pair.points, segment, pair.line, uncertainty, from);
     yield;

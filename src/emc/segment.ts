@@ -39,18 +39,33 @@ export interface JudgedSegment {
   hasMargin: Uint8Array;
 }
 
+/** Natural logarithms of frequencies, leaving out what is none; false when there was any. */
+export function logarithmsInto(logHz: Float64Array, frequencyHz: Float64Array): boolean {
+  let all = true;
+  for (let i = 0; i < frequencyHz.length; i++) {
+    const hz = frequencyHz[i]!;
+    // as `isFrequency` has it
+    if (hz > 0 && hz < Infinity) logHz[i] = Math.log(hz);
+    else all = false;
+  }
+  return all;
+}
+
 /**
  * Levels and margins of any run of points of a trace. The whole evaluation, a window of it and a single Working all
  * come through here, so they agree to the last bit. A point at 0 Hz, below, or at no frequency is not read.
+ * @param logarithms natural logarithms of the frequencies where they are known, since traces share an axis; every
+ *   frequency is one then (`onAxis`)
  */
-export function judgeSegment(hung: HungTrace, frequencyHz: Float64Array, reading: Float32Array): JudgedSegment {
+export function judgeSegment(
+  hung: HungTrace,
+  frequencyHz: Float64Array,
+  reading: Float32Array,
+  logarithms: Float64Array | null = null,
+): JudgedSegment {
   const points = frequencyHz.length;
-  const logHz = new Float64Array(points);
-  let astray = false;
-  for (let i = 0; i < points; i++) {
-    if (isFrequency(frequencyHz[i]!)) logHz[i] = Math.log(frequencyHz[i]!);
-    else astray = true;
-  }
+  const logHz = logarithms ?? new Float64Array(points);
+  const astray = logarithms === null && !logarithmsInto(logHz, frequencyHz);
   const level = new Float64Array(points);
   const state = new Uint8Array(points);
   levelsInto(hung.path, frequencyHz, logHz, reading, level, state);
