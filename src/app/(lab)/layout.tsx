@@ -7,6 +7,7 @@ import { ROOM_COOKIE, roomOf } from '@/components/shell/room';
 import type { Section } from '@/components/shell/SectionNav';
 import { TopLine } from '@/components/shell/TopLine';
 import { lettersShown } from '@/services/mailbox';
+import { waitingRetests } from '@/services/openRetests';
 import { listProducts } from '@/services/products';
 import type { Actor } from '@/auth/actor';
 
@@ -17,10 +18,21 @@ const LAB_SECTIONS: Section[] = [
   { href: '/equipment', name: 'Equipment', also: ['/limits'] },
 ];
 
+/** What is over stands above the line; what only needs a final, or a prescan again, lies across it. */
+async function retestSection(actor: Actor): Promise<Section> {
+  const { over, 'needs-final': finals, 'repeat-prescan': repeats } = await waitingRetests(actor);
+  const count = over + finals + repeats;
+  const says = over > 0 ? `${count} waiting, ${over} of them over` : `${count} waiting`;
+  return { href: '/retests', name: 'Retests', waiting: { state: over > 0 ? 'act' : 'decide', count, says } };
+}
+
 /** A designer's sections are their own products; beyond five the rest stand on the products sheet. */
 async function sectionsOf(actor: Actor): Promise<Section[]> {
-  if (actor.role === 'manager') return [...LAB_SECTIONS, { href: '/people', name: 'People' }];
-  if (actor.role !== 'designer') return LAB_SECTIONS;
+  if (actor.role !== 'designer') {
+    const retests = await retestSection(actor);
+    const sections = LAB_SECTIONS.flatMap((section) => (section.href === '/sweeps' ? [section, retests] : [section]));
+    return actor.role === 'manager' ? [...sections, { href: '/people', name: 'People' }] : sections;
+  }
   const { items, next } = await listProducts(actor, { limit: 5 });
   const products = items.map(({ id, code }) => ({ href: `/products/${id}`, name: code }));
   return [
