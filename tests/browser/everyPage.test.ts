@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import type { Browser } from 'playwright-core';
 import { launchBrowser, testOrigin } from '../support/browser';
-import { DESK, openAs, PHONE, runId, type Window } from './people';
+import { DESK, findRun, LD40_OVER, openAs, PHONE, type Window } from './people';
 
 /* Every page, as each role that may see it, at a desk's and a phone's width and in both rooms. */
 
@@ -38,9 +38,16 @@ async function pagesFor(window: Window, key: string): Promise<string[]> {
     const answer = await window.context.request.get(`${testOrigin()}/api/${list}?limit=1`);
     return ((await answer.json()) as { items: { id: string }[] }).items[0]!.id;
   };
+  const over = await findRun(window, LD40_OVER);
+  const before = await findRun(window, { ...LD40_OVER, state: 'M1' });
+  const trial = await findRun(window, { ...LD40_OVER, purpose: 'prescan', trial: 'foil on lid' });
   const shared = [
     '/sweeps',
-    `/sweeps/${await runId(window, key === 'teo' || key === 'mira' || key === 'anselm' ? '-032' : '-035')}`,
+    `/sweeps/${over.id}`,
+    `/sweeps/${trial.id}`,
+    `/compare?a=${before.id}&b=${over.id}`,
+    `/compare?b=${over.id}`,
+    `/samples/${over.sampleId}`,
     '/jobs',
     `/jobs/${await first('jobs')}`,
     `/samples/${await first('samples')}`,
@@ -69,7 +76,7 @@ test.each(cases)(
     for (const path of await pagesFor(window, key)) {
       const answer = await window.page.goto(testOrigin() + path, { waitUntil: 'load' });
       if (answer!.status() !== 200) wrong.push(`${path}: ${answer!.status()}`);
-      if (/^\/sweeps\/[0-9a-z]{16}$/.test(path)) await window.page.locator('canvas').first().waitFor();
+      if (/^\/sweeps\/[0-9a-z]{16}$|^\/compare\?a/.test(path)) await window.page.locator('canvas').first().waitFor();
       for (const found of await violations(window)) wrong.push(`${path}: ${found}`);
       if (await tooWide(window)) wrong.push(`${path}: wider than its window`);
     }

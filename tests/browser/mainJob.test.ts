@@ -2,7 +2,7 @@ import { dropFiles } from '@fixtures/demo/dropFiles';
 import { users } from '@fixtures/demo/people';
 import type { Browser } from 'playwright-core';
 import { launchBrowser, testOrigin } from '../support/browser';
-import { openAs, PHONE, runId, type Window } from './people';
+import { findRun, LD40_OVER, openAs, PHONE, type Window } from './people';
 
 let browser: Browser;
 let technician: Window;
@@ -128,7 +128,7 @@ test('the browser had nothing to complain of on the way', () => {
 
 test('zooming the chart asks for a finer window and keeps its candidates', async () => {
   const { page } = technician;
-  await page.goto(`${testOrigin()}/sweeps/${await runId(technician, '-032')}`);
+  await page.goto(`${testOrigin()}/sweeps/${(await findRun(technician, LD40_OVER)).id}`);
   await page.locator('canvas').first().waitFor();
   await page.locator('[data-rank="1"]').first().focus();
   const finer = page.waitForResponse((response) => response.url().includes('/window?'));

@@ -32,9 +32,51 @@ export async function openAs(browser: Browser, key: string | null, viewport = DE
   return { context, page, complaints };
 }
 
-/** The public id of a run by its number, as somebody who may see it. */
-export async function runId({ context }: Window, number: string): Promise<string> {
-  const answer = await context.request.get(`${testOrigin()}/api/sweeps?limit=200`);
-  const { items } = (await answer.json()) as { items: { id: string; number: string }[] };
-  return items.find((item) => item.number.endsWith(number))!.id;
+/** What a run of the demo lab is, in the words of the API's list. */
+export interface What {
+  product: string;
+  state: string;
+  port: string;
+  purpose: string;
+  /** Of the mains, a conductor; of the enclosure, a polarisation. */
+  position: string;
+  trial?: string | null;
 }
+
+export interface FoundRun {
+  id: string;
+  number: string;
+  stateId: string;
+  sampleId: string;
+}
+
+/** The newest run that is this, as somebody who may see it. */
+export async function findRun({ context }: Window, what: What): Promise<FoundRun> {
+  const answer = await context.request.get(`${testOrigin()}/api/sweeps?limit=200`);
+  const { items } = (await answer.json()) as { items: Record<string, string | boolean | null>[] };
+  const { trial = null, position, ...rest } = what;
+  const wanted = (run: (typeof items)[number]) =>
+    Object.entries(rest).every(([key, value]) => run[key] === value) &&
+    (run.line ?? run.polarisation) === position &&
+    run.trial === trial &&
+    run.voided === false;
+  const found = items.find(wanted);
+  if (!found) throw new Error(`the demo lab has no run that is ${JSON.stringify(what)}`);
+  const run = await context.request.get(`${testOrigin()}/api/sweeps/${found.id as string}`);
+  const { id, number, state, sample } = (await run.json()) as {
+    id: string;
+    number: string;
+    state: { id: string };
+    sample: { id: string };
+  };
+  return { id, number, stateId: state.id, sampleId: sample.id };
+}
+
+/** The horizontal final of the LD-40 in M2: 6.2 dB over at 144.018 MHz. */
+export const LD40_OVER: What = {
+  product: 'LD-40',
+  state: 'M2',
+  port: 'enclosure',
+  purpose: 'final',
+  position: 'horizontal',
+};
