@@ -1,6 +1,6 @@
 import { authorise, type Actor } from '@/auth/actor';
 import { mayRole } from '@/auth/permissions';
-import { ENGINE, evaluate } from '@/emc/evaluate';
+import { ENGINE } from '@/emc/evaluate';
 import type { EvaluationInput } from '@/emc/types';
 import { Conflict } from '@/errors';
 import { Evaluation } from '@/models/evaluation';
@@ -15,7 +15,7 @@ import type { EvaluationItem } from '@/schemas/runActs';
 import type { SweepView } from '@/schemas/sweep';
 import { recordChange } from './audit';
 import { changesBetween, inputsOf, nameInputs, type InputChange, type Used } from './evaluationInputs';
-import { inTurns } from './inTurns';
+import { evaluateApart } from './importWorkers';
 import type { Judged } from './judgeFile';
 import { contextNow } from './newestRevisions';
 import { olderThan, pageFrom, type Page, type PageRequest } from './paging';
@@ -25,6 +25,8 @@ import { settleRetests } from './settleRetests';
 import { readSweep } from './sweeps';
 import { joined } from './sweepWorking';
 import { changeVersioned } from './versions';
+
+const CANDIDATES_AT_ONCE = 100;
 
 /** Writes what was judged as a new evaluation of the run; the run's pointer is moved by the caller. */
 export async function writeEvaluation(
@@ -53,9 +55,11 @@ export async function writeEvaluation(
     userId: actor.userId,
     createdAt: at,
   });
-  await EvaluationCandidate.bulkCreate(
-    evaluation.candidates.map((candidate) => ({ evaluationId: row.id, ...candidate })),
-  );
+  const candidates = evaluation.candidates.map((candidate) => ({ evaluationId: row.id, ...candidate }));
+  // A floor without an end may hold thousands; no statement is so long that others wait for its text.
+  for (let from = 0; from < candidates.length; from += CANDIDATES_AT_ONCE) {
+    await EvaluationCandidate.bulkCreate(candidates.slice(from, from + CANDIDATES_AT_ONCE));
+  }
   await writeLayers(
     row.id,
     judged.input.traces.map(({ index }, i) => ({ index, layer: evaluation.layers[i]! })),
@@ -78,7 +82,7 @@ export async function evaluateSweep(
     const run = await findRun(actor, publicId);
     if (run.voidedAt) throw new Conflict(`Run ${run.number} is voided. Restore it before it is judged again.`);
     const before = run.evaluation;
-    const judged = await judgeAgain(run);
+    const judged = await judgeAgain(actor, run);
     const repeatsId = (await sameFigures(before, judged)) ? before.id : null;
     // Judging takes a while; whether the run is still the one that was read is decided under its job's lock.
     await lockOpenJob(run.state.sample.job.id);
@@ -109,12 +113,12 @@ export async function evaluateSweep(
 }
 
 /** The kept points through the code that judged the file, so that the same revisions give the same bits. */
-async function judgeAgain(run: Run): Promise<Judged> {
+async function judgeAgain(actor: Actor, run: Run): Promise<Judged> {
   const { heads, judged, ...gathered } = await contextNow(run);
   const pieces = await readPieces(run.id);
   const traces = heads.map((head) => ({ ...head, ...joined(pieces, head.index) }));
   const input: EvaluationInput = { ...judged, traces };
-  return { ...gathered, input, evaluation: await inTurns(evaluate(input)) };
+  return { ...gathered, input, evaluation: await evaluateApart(actor.userId, input) };
 }
 
 /** Whether an evaluation's candidates, gaps and layers are these, bit for bit; the line of a new revision is another. */

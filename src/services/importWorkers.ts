@@ -1,6 +1,7 @@
 import { AsyncResource } from 'node:async_hooks';
 import { availableParallelism } from 'node:os';
 import { Worker } from 'node:worker_threads';
+import type { Evaluation, EvaluationInput } from '@/emc/types';
 import { Throttled } from '@/errors';
 import { ScannedFile } from '@/ingest/scannedFile';
 import { FairTurns } from './fairTurns';
@@ -67,6 +68,17 @@ export function isSmall(bytes: number): boolean {
 
 export async function runHere<T extends ImportTask>(bytes: Uint8Array | null, task: T): Promise<ResultOf<T>> {
   return (await inTurns(taskSteps(bytes && new ScannedFile(bytes), task))) as ResultOf<T>;
+}
+
+/** Points of all traces that are judged on the main thread, in turns. */
+const INLINE_POINTS = 65_536;
+
+/** Judges points that are at hand: a few here, many on a worker's thread, which is given a copy. @throws {Throttled} */
+export async function evaluateApart(person: number, input: EvaluationInput): Promise<Evaluation> {
+  const task = { kind: 'evaluate' as const, input };
+  const points = input.traces.reduce((sum, { reading }) => sum + reading.length, 0);
+  if (points <= INLINE_POINTS) return runHere(null, task);
+  return runApart(person, task, null, () => Promise.reject(new Error('This task has no file')));
 }
 
 /**
