@@ -64,7 +64,9 @@ export function connectionTo(smtpUrl: string | undefined) {
 function configured(): string | undefined {
   const { SMTP_URL, STILLFIELD_DEMO, MAIL_CATCHER_PORT } = env();
   if (SMTP_URL) return SMTP_URL;
-  return STILLFIELD_DEMO && MAIL_CATCHER_PORT ? `smtp://127.0.0.1:${MAIL_CATCHER_PORT}` : undefined;
+  if (!STILLFIELD_DEMO) return undefined;
+  if (MAIL_CATCHER_PORT) return `smtp://127.0.0.1:${MAIL_CATCHER_PORT}`;
+  throw new NoMailServer('The demo’s mail catcher is not running: npm start runs it, or set SMTP_URL.');
 }
 
 /** One address and nothing beside it: no comma, no angle bracket, no line end can add a recipient or a header. */

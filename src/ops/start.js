@@ -210,4 +210,4 @@ async function main() {
 
 if (require.main === module) run(main);
 
-module.exports = { checkPort };
+module.exports = { checkPort, chooseCatcher, keepRunning };
