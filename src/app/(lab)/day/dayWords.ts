@@ -99,7 +99,7 @@ export function dayFinding(
       );
       runs.push(plain(`, in ${untilWords(Date.parse(next.startsAt) - nowMs)}.`));
     }
-    if (!now && !next) runs.push(plain(`${counted()} today; all are done.`));
+    if (!now && !next) runs.push(plain(`${counted()} today; ${bookings.length === 1 ? 'it is' : 'all are'} done.`));
     return runs;
   }
 
