@@ -5,12 +5,12 @@ import { carry } from './droppedFiles';
 import { DropVeil } from './DropVeil';
 import { useFileDrop } from './useFileDrop';
 
-/** Files dropped on the list of runs go to the sheet that takes them in. */
-export function DropOnList() {
+/** Files dropped on a sheet go to the one that takes them in; `state` is where they would be kept. */
+export function DropOnList({ state }: { state?: string }) {
   const router = useRouter();
   const over = useFileDrop((files) => {
     carry(files);
-    router.push('/sweeps/new');
+    router.push(state ? `/sweeps/new?state=${state}` : '/sweeps/new');
   });
   return <DropVeil over={over} />;
 }

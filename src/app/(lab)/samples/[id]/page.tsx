@@ -13,6 +13,8 @@ import { ButtonLink } from '@/components/ui/Button';
 import { Id } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { formatCount } from '@/format/quantities';
+import { listLimitSets } from '@/services/limitSets';
+import { prescanUncertainty } from '@/services/pathUncertainty';
 import { labZone } from '@/services/lab';
 import { listNotes } from '@/services/notes';
 import { readSample } from '@/services/samples';
@@ -21,7 +23,9 @@ import { sampleRecord } from '../sampleRecord';
 import { StateGrid } from '../StateGrid';
 import { trialMoves } from '../trials';
 import { AddState } from './AddState';
+import { DropOnList } from '@/app/(lab)/sweeps/DropOnList';
 import { CorrectSample } from './CorrectSample';
+import { NothingMeasured } from './NothingMeasured';
 import { ResultMail } from './ResultMail';
 import { StateRuns } from './StateRuns';
 
@@ -47,6 +51,7 @@ export default async function SamplePage({ params }: Props) {
   const notes = await listNotes(actor, { limit: 10, sampleId: sample.id });
   const upload = mayRole(actor.role, 'sweep.keep');
   const change = mayRole(actor.role, 'state.change');
+  const empty = runs.length === 0 ? await whatHangsHere() : null;
   const newest = sample.states.filter(({ planned }) => !planned).at(-1);
   return (
     <Sheet
@@ -96,6 +101,8 @@ export default async function SamplePage({ params }: Props) {
           : undefined
       }
     >
+      {empty && <NothingMeasured {...empty} upload={upload && newest !== undefined} />}
+      {upload && newest && <DropOnList state={newest.id} />}
       {grid.rows.length > 0 && (
         <div className="mt-5">
           <StateGrid grid={grid} days={days} />
@@ -140,6 +147,15 @@ export default async function SamplePage({ params }: Props) {
       )}
     </Sheet>
   );
+
+  /** Lines for the sheet of a sample that nobody has measured yet. */
+  async function whatHangsHere() {
+    const [{ items: sets }, uncertainty] = await Promise.all([
+      listLimitSets(actor, { limit: 50 }),
+      prescanUncertainty(actor),
+    ]);
+    return { sets, uncertainty };
+  }
 
   function margin() {
     const sections = [
