@@ -21,13 +21,13 @@ export function formatDifference(db: number): string {
   return `${figure} dB ${db > 0 ? 'higher' : 'lower'}`;
 }
 
-/** `at most 0.6 dB higher, at 144 MHz`; null: the two share no frequency. */
-export function differenceWords(difference: Difference | null): string {
-  if (difference === null) return 'shares no frequency with the revision before';
+/** `at most 0.6 dB higher than revision 1, at 144 MHz`; null: the two share no frequency. */
+export function differenceWords(difference: Difference | null, than: string): string {
+  if (difference === null) return `shares no frequency with ${than}`;
   const { largestDb, atHz } = difference;
-  if (largestDb === 0) return 'the same at every frequency that both have';
-  if (Number(formatDb(Math.abs(largestDb))) === 0) return 'less than 0.1 dB apart everywhere';
-  return `at most ${formatDifference(largestDb)}, at ${formatEdge(atHz)}`;
+  if (largestDb === 0) return `the same as ${than} at every frequency that both have`;
+  if (Number(formatDb(Math.abs(largestDb))) === 0) return `less than 0.1 dB from ${than} everywhere`;
+  return `at most ${formatDifference(largestDb)} than ${than}, at ${formatEdge(atHz)}`;
 }
 
 export const QUANTITY_WORDS: Record<FactorQuantity, string> = {

@@ -1,13 +1,13 @@
 import { differenceWords, formatDifference, remarkWords, tableConditions } from '@/format/revisions';
 
-const at = (largestDb: number) => differenceWords({ largestDb, atHz: 144e6 });
+const at = (largestDb: number) => differenceWords({ largestDb, atHz: 144e6 }, 'revision 1');
 
 test('the largest difference in words, with its side and its frequency', () => {
-  expect(at(0.6)).toBe('at most 0.6 dB higher, at 144 MHz');
-  expect(at(-1.25)).toBe('at most 1.3 dB lower, at 144 MHz');
-  expect(at(0)).toBe('the same at every frequency that both have');
-  expect(at(-0.04)).toBe('less than 0.1 dB apart everywhere');
-  expect(differenceWords(null)).toBe('shares no frequency with the revision before');
+  expect(at(0.6)).toBe('at most 0.6 dB higher than revision 1, at 144 MHz');
+  expect(at(-1.25)).toBe('at most 1.3 dB lower than revision 1, at 144 MHz');
+  expect(at(0)).toBe('the same as revision 1 at every frequency that both have');
+  expect(at(-0.04)).toBe('less than 0.1 dB from revision 1 everywhere');
+  expect(differenceWords(null, 'revision 1')).toBe('shares no frequency with revision 1');
   expect(formatDifference(0.01)).toBe('no different');
 });
 

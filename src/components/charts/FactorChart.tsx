@@ -29,7 +29,7 @@ export function FactorChart({ quantity, after, before, difference }: Props) {
   const what = quantity ? QUANTITY_WORDS[quantity] : 'figures, loss or gain not said';
   const count = after.frequencyHz.length;
   const range = formatFrequencyRange(after.frequencyHz[0]!, after.frequencyHz.at(-1)!);
-  const compared = before ? ` Against ${before.name}: ${differenceWords(difference)}.` : '';
+  const compared = before ? ` It is ${differenceWords(difference, before.name)}.` : '';
   const drawn = ({ name, frequencyHz, valueDb }: Rows) => {
     const points = tableLine(frequencyHz, valueDb);
     return { name, stretches: [points], rows: points };

@@ -29,7 +29,7 @@ export function LimitChart({ unit, after, before, difference }: Props) {
     (one) => one?.segments.flatMap(({ startHz, stopHz }) => [startHz, stopHz]) ?? [],
   );
   const span = wholeSpan(Math.min(...edges), Math.max(...edges));
-  const compared = before ? ` Against ${before.name}: ${differenceWords(difference)}.` : '';
+  const compared = before ? ` It is ${differenceWords(difference, before.name)}.` : '';
   const own = after.segments.flatMap(({ startHz, stopHz }) => [startHz, stopHz]);
   const range = formatFrequencyRange(Math.min(...own), Math.max(...own));
   const drawn = (line: Line) => ({ name: line.name, stretches: limitPolylines(line, span) });

@@ -136,7 +136,6 @@ function DifferenceStrip({ difference, frame, span, gridHz }: StripProps) {
   const words = formatDifference(largestDb);
   const x = scale.x(atHz);
   const onLeft = x + 10 + figureWidthPx(words, 12.5) > scale.right;
-  const [up, down] = [range.top / 2, -range.top / 2];
   return (
     <svg width="100%" height={STRIP_PX} className="mt-2 block overflow-visible" aria-hidden="true">
       <path
@@ -150,21 +149,20 @@ function DifferenceStrip({ difference, frame, span, gridHz }: StripProps) {
       <path d={area} className="fill-ink" fillOpacity="0.1" />
       <path d={`M${scale.left} ${scale.y(0)}H${scale.right}`} className="stroke-ink" strokeWidth="1" />
       <path d={line} className="stroke-ink" fill="none" strokeWidth="1.4" strokeLinejoin="round" />
-      <g fontSize="12" textAnchor="end" className="fill-ink3">
-        {[
-          { value: up, word: 'higher' },
-          { value: 0, word: '' },
-          { value: down, word: 'lower' },
-        ].map(({ value, word }) => (
+      <g fontSize="12" textAnchor="end" className={`fill-ink3 ${FIGURE}`}>
+        {[range.top, 0, range.bottom].map((value) => (
           <text key={value} x={scale.left - 6} y={scale.y(value) + 4}>
-            <tspan className={FIGURE}>{formatTrimmed(Math.abs(value), 2)}</tspan>
-            {word && (
-              <tspan x={scale.left - 6} dy="11" fontSize="11" className="[font-stretch:80%]">
-                {word}
-              </tspan>
-            )}
+            {formatTrimmed(Math.abs(value), 2)}
           </text>
         ))}
+      </g>
+      <g fontSize="11.5" strokeWidth="3" className={`fill-ink3 ${HALO}`}>
+        <text x={scale.left + 4} y={scale.top + 9}>
+          higher
+        </text>
+        <text x={scale.left + 4} y={scale.bottom - 2}>
+          lower
+        </text>
       </g>
       {words !== 'no different' && (
         <>

@@ -43,7 +43,14 @@ export default async function EquipmentPage({ searchParams }: { searchParams: Se
     <EquipmentSheet
       header={
         <>
-          <SheetHeader title="Equipment" finding={equipmentFinding(items, today)} />
+          <SheetHeader
+            title="Equipment"
+            finding={
+              cursors.find && items.length === 0
+                ? { verdict: 'not-covered', children: `Nothing is found by “${cursors.find}”.` }
+                : equipmentFinding(items, today)
+            }
+          />
           <FindWords
             action="/equipment"
             value={cursors.find ?? ''}

@@ -48,9 +48,7 @@ export function ChosenTable({ table, before, zone }: Props) {
       </div>
       <p className="t-text mt-2">
         {table.before && (
-          <>
-            {capitalised(differenceWords(table.before.difference))}, than revision {table.before.revision}.{' '}
-          </>
+          <>{capitalised(differenceWords(table.before.difference, `revision ${table.before.revision}`))}. </>
         )}
         Outside {formatFrequencyRange(table.firstHz, table.lastHz)} it has no factor; nothing is carried beyond its
         rows.

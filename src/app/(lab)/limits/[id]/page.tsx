@@ -95,7 +95,7 @@ export default async function LimitLinePage({ params }: Props) {
       </div>
       {line.before && (
         <p className="t-text mt-2">
-          {capitalised(differenceWords(line.before.difference))}, than revision {line.before.revision}.
+          {capitalised(differenceWords(line.before.difference, `revision ${line.before.revision}`))}.
         </p>
       )}
       <SegmentTable segments={line.segments} unit={line.unit} name={`${line.name}, revision ${line.revision}`} />

@@ -53,7 +53,7 @@ export function LinePreviewed({ preview, unit, zone }: Props) {
       <p className="t-text mt-2" aria-live="polite">
         {before && (
           <>
-            <b>{capitalised(differenceWords(before.difference))}</b> than revision {before.revision}.{' '}
+            <b>{capitalised(differenceWords(before.difference, `revision ${before.revision}`))}.</b>{' '}
           </>
         )}
         Where two segments share a frequency the lower limit governs on it; outside the line there is no limit.

@@ -25,7 +25,7 @@ export function TablePreviewed({ table, zone }: { table: Previewed; zone: string
   const others = remarks.filter(({ kind }) => !NARROWER.has(kind));
   return (
     <section aria-label={name}>
-      <SectionHeading className="mt-1" remark={`${formatCount(frequencyHz.length)} rows, ${range}`}>
+      <SectionHeading className="mt-4" remark={`${formatCount(frequencyHz.length)} rows, ${range}`}>
         {name}
       </SectionHeading>
       {narrower.map((remark) => (
@@ -55,7 +55,7 @@ export function TablePreviewed({ table, zone }: { table: Previewed; zone: string
             'Loss or gain has to be said before the two can be compared. '
           ) : (
             <>
-              <b>{capitalised(differenceWords(before.difference))}</b> than revision {before.revision}.{' '}
+              <b>{capitalised(differenceWords(before.difference, `revision ${before.revision}`))}.</b>{' '}
             </>
           )
         ) : (
