@@ -21,9 +21,11 @@ function meansGone(error: unknown): boolean {
   const { name = '', original, parent } = error as DriverError;
   if (NO_CONNECTION.test(name)) return true;
   const { errno, sqlState, fatal } = original ?? parent ?? (error as DriverError);
-  // SQLSTATE class 08 is a connection exception (ISO/IEC 9075-2, table 38), 70100 an interrupted query.
-  const class08 = sqlState?.startsWith('08') === true || sqlState === '70100';
-  return (errno !== undefined && GOING.has(errno)) || (fatal === true && class08);
+  if (errno !== undefined && GOING.has(errno)) return true;
+  // A fatal error of the system's own (ECONNRESET is -104) is the socket's. SQLSTATE class 08 is a connection exception
+  // (ISO/IEC 9075-2, table 38), 70100 an interrupted query.
+  const socket = errno !== undefined && errno < 0;
+  return fatal === true && (socket || sqlState?.startsWith('08') === true || sqlState === '70100');
 }
 
 /**
