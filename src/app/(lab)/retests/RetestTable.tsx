@@ -42,7 +42,7 @@ export function RetestTable({ items, zone, chosenId, onChoose }: Props) {
           Margin
         </HeadCell>
         <HeadCell className={WIDE}>Since</HeadCell>
-        <HeadCell className={WIDE}>State</HeadCell>
+        <HeadCell className={WIDE}>Status</HeadCell>
       </TableHead>
       <tbody>
         {items.map((item) => (
@@ -71,7 +71,8 @@ export function RetestTable({ items, zone, chosenId, onChoose }: Props) {
               <Where item={item} />
             </Cell>
             <Cell className={`${WIDE} whitespace-nowrap`}>
-              <span className="font-semibold">{item.product.code}</span> <StateTag label={item.state.label} />{' '}
+              <span className="font-semibold">{item.product.code}</span>
+              <StateTag label={item.state.label} className="mx-2" />
               <span className={`${BROAD} t-id text-ink2`}>{item.sample.code}</span>
             </Cell>
             <Cell className={WIDE} quiet>

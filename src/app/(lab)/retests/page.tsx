@@ -32,6 +32,7 @@ export default async function RetestsPage({ searchParams }: { searchParams: Sear
   const search = readSearch(said);
   const { items, next } = await listed(listRetests(actor, { limit: ROWS, after: said.after, ...filtersOf(search) }));
   const sample = search.sample ? await listed(readSample(actor, search.sample)) : null;
+  const label = sample?.states.find(({ id }) => id === search.state)?.label;
   const products = await listProducts(actor, { limit: 200 });
   const whole = said.after === undefined && next === null;
   const measurable = items.filter(({ kind, status }) => kind !== 'repeat-prescan' && isToMeasure(status)).length;
@@ -52,9 +53,9 @@ export default async function RetestsPage({ searchParams }: { searchParams: Sear
                 <span>
                   only{' '}
                   {sample ? (
-                    <Link
-                      href={`/samples/${sample.id}`}
-                    >{`${sample.code}, ${sample.product.name} ${sample.product.code}`}</Link>
+                    <Link href={`/samples/${sample.id}`}>
+                      {[sample.code, label].filter(Boolean).join(' in ')}, {sample.product.name} {sample.product.code}
+                    </Link>
                   ) : (
                     <Link href={`/sweeps/${search.run}`}>what one run asked for or settled</Link>
                   )}

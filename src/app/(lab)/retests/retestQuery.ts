@@ -6,6 +6,8 @@ export interface RetestSearch {
   reason?: RetestFilters['reason'];
   port?: RetestFilters['port'];
   sample?: string;
+  /** A modification state. */
+  state?: string;
   product?: string;
   run?: string;
 }
@@ -25,17 +27,19 @@ export function readSearch(said: Record<string, string | undefined>): RetestSear
     reason: among(REASONS, said.reason),
     port: among(PORTS, said.port),
     sample: said.sample,
+    state: said.state,
     product: said.product,
     run: said.run,
   };
 }
 
-export function filtersOf({ status, reason, port, sample, product, run }: RetestSearch): RetestFilters {
+export function filtersOf({ status, reason, port, sample, state, product, run }: RetestSearch): RetestFilters {
   return {
     ...(status !== 'all' && { status }),
     ...(reason && { reason }),
     ...(port && { port }),
     ...(sample && { sampleId: sample }),
+    ...(state && { stateId: state }),
     ...(product && { productId: product }),
     ...(run && { runId: run }),
   };

@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import { ButtonLink } from '@/components/ui/Button';
 import { EmptyLine } from '@/components/ui/EmptyLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
@@ -16,13 +17,16 @@ interface Props {
   runs: readonly Run[];
   /** What its trials moved against its own runs. */
   moves: ReadonlyMap<string, TrialMove>;
+  /** How many retests of it are open, and where they stand. */
+  retests: number;
+  retestsHref: string;
   zone: string;
   upload: boolean;
   change: boolean;
 }
 
 /** One modification state: what it is, its runs, and what the lab may do with it. */
-export function StateRuns({ state, runs, moves, zone, upload, change }: Props) {
+export function StateRuns({ state, runs, moves, retests, retestsHref, zone, upload, change }: Props) {
   const trials = runs.filter(isTrial);
   const own = runs.filter((run) => !isTrial(run));
   const counting =
@@ -40,6 +44,14 @@ export function StateRuns({ state, runs, moves, zone, upload, change }: Props) {
       {!state.planned && <RunTable caption={`Runs of ${state.label}`} runs={own} zone={zone} />}
       {own.length === 0 && <EmptyLine lead={nothingHere(state, trials.length, upload)} />}
       <TrialTable state={state.label} trials={trials} runs={runs} moves={moves} zone={zone} />
+      {retests > 0 && (
+        <p className="t-detail mt-2">
+          <Link prefetch={false} href={retestsHref}>
+            {retests === 1 ? '1 retest is' : `${formatCount(retests)} retests are`} open
+          </Link>{' '}
+          in {state.label}.
+        </p>
+      )}
       {(upload || change) && (
         <div className="mt-2 flex flex-wrap items-start gap-x-2">
           {upload && !state.planned && (

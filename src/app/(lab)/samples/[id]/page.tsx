@@ -7,6 +7,7 @@ import { LayOver } from '@/app/(lab)/compare/LayOver';
 import { historiesOf } from '@/app/(lab)/jobs/history';
 import { notesSection } from '@/app/(lab)/notes/notesSection';
 import { historySection } from '@/app/(lab)/jobs/HistoryLines';
+import { addressOf } from '@/app/(lab)/retests/retestQuery';
 import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
 import { ButtonLink } from '@/components/ui/Button';
@@ -16,6 +17,7 @@ import { formatCount } from '@/format/quantities';
 import { listLimitSets } from '@/services/limitSets';
 import { prescanUncertainty } from '@/services/pathUncertainty';
 import { labZone } from '@/services/lab';
+import { openByState } from '@/services/openRetests';
 import { listNotes } from '@/services/notes';
 import { readSample } from '@/services/samples';
 import { missingLine, missingSection } from '../missingSection';
@@ -44,6 +46,7 @@ export default async function SamplePage({ params }: Props) {
   const zone = await labZone();
   const { runs, more, grid, latest, finding, days } = await sampleRecord(actor, sample, zone);
   const moves = await trialMoves(actor, runs);
+  const retests = await openByState(actor, sample.id);
   const history = await historiesOf(actor, [
     ['sample', sample.id],
     ...sample.states.map(({ id }) => ['state', id] as const),
@@ -117,6 +120,8 @@ export default async function SamplePage({ params }: Props) {
           state={state}
           runs={runs.filter((run) => run.state === state.label)}
           moves={moves}
+          retests={retests.get(state.id) ?? 0}
+          retestsHref={addressOf({ status: 'open', sample: sample.id, state: state.id })}
           zone={zone}
           upload={upload}
           change={change}

@@ -5,6 +5,7 @@ import { LayOver } from '@/app/(lab)/compare/LayOver';
 import type { ListedRun } from '@/app/(lab)/compare/runLabel';
 import type { HistoryLine } from '@/app/(lab)/jobs/HistoryLines';
 import { notesSection, type NotesPage } from '@/app/(lab)/notes/notesSection';
+import { retestsSection } from '@/app/(lab)/retests/runRetests';
 import { ChartLegend } from '@/components/charts/ChartLegend';
 import { chartSubject } from '@/components/charts/chartSubject';
 import type { ChartMode } from '@/components/charts/marginSeries';
@@ -16,6 +17,7 @@ import { useKey } from '@/components/shell/keys';
 import { ButtonLink } from '@/components/ui/Button';
 import { Id } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
+import type { RetestItem } from '@/schemas/retest';
 import type { EvaluationItem } from '@/schemas/runActs';
 import type { PhotoView, SetupView } from '@/schemas/setup';
 import type { CandidateView, SweepView, WindowView } from '@/schemas/sweep';
@@ -50,6 +52,8 @@ interface Props {
   notes: NotesPage;
   setup: SetupView;
   photos: { items: PhotoView[]; next: string | null };
+  /** What this run asked for or settled. */
+  retests: { items: RetestItem[]; next: string | null };
   zone: string;
   /** Whether the reader is one of the lab's people. */
   lab: boolean;
@@ -63,7 +67,7 @@ interface Open {
 
 /** The sheet of one run: finding, chart, candidates, and beside them how each figure came about. */
 export function SweepSheet(props: Props) {
-  const { sweep, overview, first, history, evaluations, others, notes, setup, photos, zone, lab } = props;
+  const { sweep, overview, first, history, evaluations, others, notes, setup, photos, retests, zone, lab } = props;
   const tableId = useId();
   const legend = useRef<HTMLDivElement>(null);
   const [mode, setMode] = useState<ChartMode>('margin');
@@ -174,6 +178,7 @@ export function SweepSheet(props: Props) {
           summary: <Coverage.Summary sweep={sweep} />,
           children: <Coverage sweep={sweep} />,
         },
+        ...retestsSection(retests, sweep.id),
         setUpSection({ sweep, setup, photos, zone, lab }),
         notesSection({ sweepId: sweep.id }, notes, zone, lab),
         {

@@ -8,6 +8,7 @@ import { listEvaluations } from '@/services/evaluations';
 import { labZone } from '@/services/lab';
 import { listNotes } from '@/services/notes';
 import { listPhotos } from '@/services/photos';
+import { listRetests } from '@/services/retests';
 import { readSetup } from '@/services/setup';
 import { listCandidates, listSweeps, readSweep } from '@/services/sweeps';
 import { readOverview } from '@/services/sweepWindow';
@@ -23,6 +24,7 @@ const FIRST_CANDIDATES = 50;
 const OTHERS = 200;
 const EVALUATIONS = 20;
 const PHOTOS = 12;
+const RETESTS = 50;
 
 /** Title and sheet are one read per request; the actor is the same object in both. */
 const readOnce = cache((actor: Actor, id: string) => found(readSweep(actor, id)));
@@ -36,7 +38,7 @@ export default async function SweepPage({ params }: Props) {
   const actor = await requireActor();
   const { id } = await params;
   const sweep = await readOnce(actor, id);
-  const [window, candidates, zone, notes, evaluations, others, setup, photos] = await Promise.all([
+  const [window, candidates, zone, notes, evaluations, others, setup, photos, retests] = await Promise.all([
     readOverview(actor, id),
     listCandidates(actor, id, { limit: FIRST_CANDIDATES }),
     labZone(),
@@ -45,6 +47,7 @@ export default async function SweepPage({ params }: Props) {
     listSweeps(actor, { limit: OTHERS, sampleId: sweep.sample.id }),
     readSetup(actor, id),
     listPhotos(actor, id, { limit: PHOTOS }),
+    listRetests(actor, { limit: RETESTS, runId: id }),
   ]);
   const history = actor.role === 'designer' ? null : await historyOf(actor, 'sweep', id);
   return (
@@ -59,6 +62,7 @@ export default async function SweepPage({ params }: Props) {
       notes={notes}
       setup={setup}
       photos={photos}
+      retests={retests}
       zone={zone}
       lab={actor.role !== 'designer'}
     />
