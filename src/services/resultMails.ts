@@ -152,7 +152,7 @@ export async function sendResultMail(
     }
     recordChange(actor, {
       scope: `job-${state.sample.job.publicId}`,
-      action: `result of ${stateLabel(state.position)} sent`,
+      action: `result e-mail of ${stateLabel(state.position)} queued`,
       subjectType: 'state',
       subjectId: state.publicId,
       before: null,

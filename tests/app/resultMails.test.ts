@@ -127,7 +127,7 @@ test('what is sent is what was previewed, word for word, stored with its evaluat
     html: shown.html,
   });
   const entry = await unitOfWork(() =>
-    AuditEntry.findOne({ where: { action: 'result of M0 sent' }, rejectOnEmpty: true }),
+    AuditEntry.findOne({ where: { action: 'result e-mail of M0 queued' }, rejectOnEmpty: true }),
   );
   expect(entry.canonical).toContain(world.designer.actor.publicId);
   expect(entry.canonical).not.toContain('designer@');

@@ -87,8 +87,7 @@ function SendForm({ organisation, states, recipients, onClose }: Props & { onClo
           <dd className="font-semibold">{preview.subject}</dd>
         </dl>
         <pre
-          className="t-text max-h-[28rem] overflow-y-auto border border-rule2 bg-margin p-4 font-sans whitespace-pre-wrap"
-          tabIndex={0}
+          className="t-text border border-rule2 bg-margin p-4 font-sans whitespace-pre-wrap"
           aria-label="Words of the e-mail"
         >
           {preview.text}
