@@ -8,6 +8,7 @@ import { limitSegment } from './sweep';
 
 const frequencyUnit = z.enum(['Hz', 'kHz', 'MHz', 'GHz']);
 export const factorQuantity = z.enum(FACTOR_QUANTITIES);
+export type FactorQuantity = z.infer<typeof factorQuantity>;
 const idParams = z.strictObject({ id: publicId });
 const text = (most: number) => z.string().trim().min(1, 'is needed').max(most);
 const findWords = z.string().trim().max(120).optional();

@@ -15,8 +15,14 @@ beforeAll(async () => {
 afterAll(() => browser.close());
 
 const unique = () => Math.random().toString(36).slice(2, 8);
-const drop = (page: Page, name: string, text: string) =>
-  page.setInputFiles('input[type=file]', { name, mimeType: 'text/csv', buffer: Buffer.from(text) });
+/** Hands a file to the sheet once the page listens for it. */
+async function drop(page: Page, name: string, text: string): Promise<void> {
+  await page.waitForFunction(() => {
+    const input = document.querySelector('input[type=file]');
+    return input !== null && Object.keys(input).some((key) => key.startsWith('__reactProps'));
+  });
+  await page.setInputFiles('input[type=file]', { name, mimeType: 'text/csv', buffer: Buffer.from(text) });
+}
 
 /** The public id of an item of the demo lab that no signal path adds a table of. */
 async function itemId({ context }: Window, identifier: string): Promise<string> {

@@ -3,7 +3,7 @@
 import type { FieldErrors } from '@/components/forms/problem';
 import { AreaField, Field, SelectField } from '@/components/ui/Field';
 import { CheckField } from '@/components/ui/CheckField';
-import { LINE_DETECTORS } from '@/emc/kinds';
+import { lineDetector } from '@/schemas/common';
 import { DETECTOR_WORDS } from '@/format/words';
 import type { LimitLinePreview } from '@/schemas/tables';
 import { BASES, PORTS_OF_LINES, type LineDraft } from './lineDraft';
@@ -50,7 +50,7 @@ export function LineFields({ draft, fixed, sets, setIds, onSets, onChange, error
           onChange={(event) => onChange({ detector: event.target.value as LineDraft['detector'] })}
         >
           {draft.detector === '' && <option value="">say which</option>}
-          {LINE_DETECTORS.map((detector) => (
+          {lineDetector.options.map((detector) => (
             <option key={detector} value={detector}>
               {DETECTOR_WORDS[detector]}
             </option>

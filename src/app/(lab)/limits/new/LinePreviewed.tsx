@@ -3,7 +3,7 @@
 import { LimitChart } from '@/components/charts/LimitChart';
 import { Message } from '@/components/ui/Message';
 import { SectionHeading } from '@/components/ui/SectionHeading';
-import type { LineUnit } from '@/emc/kinds';
+import type { LineUnit } from '@/schemas/common';
 import { formatDay } from '@/format/dates';
 import { formatFrequencyRange } from '@/format/frequencies';
 import { differenceWords, formatEdge } from '@/format/revisions';

@@ -7,7 +7,7 @@ import { useSubmit } from '@/components/forms/useSubmit';
 import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
 import { Button } from '@/components/ui/Button';
-import type { LineUnit } from '@/emc/kinds';
+import type { LineUnit } from '@/schemas/common';
 import { formatBytes, formatCount } from '@/format/quantities';
 import type { SweepFileView } from '@/schemas/sweepFile';
 import type { EnteredLimitLine, LimitLinePreview } from '@/schemas/tables';
@@ -16,8 +16,7 @@ import { RefusedFile } from '../RefusedFile';
 import { FileLines } from './FileLines';
 import { LineFields } from './LineFields';
 import { LinePreviewed } from './LinePreviewed';
-import { lineBody, lineDraftFrom, missingOfLine, type LineDraft } from './lineDraft';
-import type { LineUploadFor } from './LineUpload';
+import { lineBody, lineDraftFrom, missingOfLine, type LineDraft, type LineUploadFor } from './lineDraft';
 import { ReadAs, type Answers } from './ReadAs';
 
 interface Props extends LineUploadFor {

@@ -7,16 +7,10 @@ import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
 import { ButtonLink } from '@/components/ui/Button';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import type { EnteredLimitLine, LimitLineSummary } from '@/schemas/tables';
+import type { EnteredLimitLine } from '@/schemas/tables';
 import { EnteredLine } from './EnteredLine';
+import type { LineUploadFor } from './lineDraft';
 import { LineSheet } from './LineSheet';
-
-export interface LineUploadFor {
-  /** The line that is revised, by its newest revision; null for a new one. */
-  revises: string | null;
-  lines: readonly LimitLineSummary[];
-  zone: string;
-}
 
 /** A limit line on its way in: dropped, looked at beside the revision before, entered. */
 export function LineUpload({ held, ...about }: LineUploadFor & { held: SweepFileView | null }) {

@@ -2,7 +2,7 @@
 
 import type { FieldErrors } from '@/components/forms/problem';
 import { SelectField } from '@/components/ui/Field';
-import { LINE_UNITS, type LineUnit } from '@/emc/kinds';
+import { lineUnit, type LineUnit } from '@/schemas/common';
 import { unitLabel } from '@/format/quantities';
 import type { LimitLinePreview, LimitLineSummary } from '@/schemas/tables';
 
@@ -68,7 +68,7 @@ export function ReadAs({ preview, answers, onAnswer, lines, revises, onRevises, 
           onChange={(event) => onAnswer({ unit: event.target.value as Answers['unit'] })}
         >
           {answers.unit === '' && <option value="">say which</option>}
-          {LINE_UNITS.map((unit) => (
+          {lineUnit.options.map((unit) => (
             <option key={unit} value={unit}>
               {unitLabel(unit)}
             </option>

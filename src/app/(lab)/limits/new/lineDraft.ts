@@ -1,5 +1,12 @@
-import type { LineDetector, LineUnit } from '@/emc/kinds';
+import type { LineDetector, LineUnit } from '@/schemas/common';
 import type { LimitLinePreview, LimitLineSummary } from '@/schemas/tables';
+
+export interface LineUploadFor {
+  /** The line that is revised, by its newest revision; null for a new one. */
+  revises: string | null;
+  lines: readonly LimitLineSummary[];
+  zone: string;
+}
 
 /** What a person says of a line; numbers stay as typed until they are sent. */
 export interface LineDraft {

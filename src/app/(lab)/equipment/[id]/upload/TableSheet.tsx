@@ -19,8 +19,15 @@ import { CalibrationFields } from './CalibrationFields';
 import { RefusedTable } from './RefusedTable';
 import { TableFields } from './TableFields';
 import { TablePreviewed } from './TablePreviewed';
-import { choiceTables, draftsFor, missingOf, nameOf, type CalibrationDraft, type ChosenDraft } from './tableDraft';
-import type { UploadFor } from './TableUpload';
+import {
+  choiceTables,
+  draftsFor,
+  missingOf,
+  nameOf,
+  type CalibrationDraft,
+  type ChosenDraft,
+  type UploadFor,
+} from './tableDraft';
 
 interface Props extends UploadFor {
   file: SweepFileView;

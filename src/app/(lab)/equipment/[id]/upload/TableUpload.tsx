@@ -6,19 +6,11 @@ import { FileDrop } from '@/components/forms/FileDrop';
 import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
 import { ButtonLink } from '@/components/ui/Button';
-import type { EquipmentRecord } from '@/schemas/bench';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import type { EnteredFactorTables, FactorTableSummary } from '@/schemas/tables';
+import type { EnteredFactorTables } from '@/schemas/tables';
 import { EnteredSheet } from './EnteredSheet';
+import type { UploadFor } from './tableDraft';
 import { TableSheet } from './TableSheet';
-
-export interface UploadFor {
-  item: EquipmentRecord;
-  /** The newest revision of each name of this item. */
-  named: readonly FactorTableSummary[];
-  today: string;
-  zone: string;
-}
 
 /** A factor table on its way in: dropped, looked at beside the revision before, entered. */
 export function TableUpload({ held, ...about }: UploadFor & { held: SweepFileView | null }) {

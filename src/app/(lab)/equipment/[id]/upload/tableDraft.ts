@@ -1,6 +1,15 @@
-import type { FactorQuantity, Polarisation } from '@/emc/kinds';
 import type { EquipmentRecord } from '@/schemas/bench';
-import type { FactorTablePreview, FactorTableSummary } from '@/schemas/tables';
+import type { Polarisation } from '@/schemas/common';
+import type { FactorQuantity, FactorTablePreview, FactorTableSummary } from '@/schemas/tables';
+
+/** What an upload sheet knows of its item. */
+export interface UploadFor {
+  item: EquipmentRecord;
+  /** The newest revision of each name of this item. */
+  named: readonly FactorTableSummary[];
+  today: string;
+  zone: string;
+}
 
 /** One table of the file as a person means to enter it. */
 export interface ChosenDraft {

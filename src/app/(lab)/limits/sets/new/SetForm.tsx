@@ -8,7 +8,7 @@ import { useSubmit } from '@/components/forms/useSubmit';
 import { Button } from '@/components/ui/Button';
 import { CheckField } from '@/components/ui/CheckField';
 import { AreaField, Field, SelectField } from '@/components/ui/Field';
-import { PORTS, type Port } from '@/emc/kinds';
+import { port as ports, type Port } from '@/schemas/common';
 import { PORT_WORDS } from '@/format/words';
 import type { LimitSetView } from '@/schemas/bench';
 import type { LimitLineSummary } from '@/schemas/tables';
@@ -71,7 +71,7 @@ export function SetForm({ before, lines, chosen, more }: Props) {
           setLineIds([]);
         }}
       >
-        {PORTS.map((one) => (
+        {ports.options.map((one) => (
           <option key={one} value={one}>
             {PORT_WORDS[one]}
           </option>
