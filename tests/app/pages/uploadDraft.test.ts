@@ -1,6 +1,7 @@
 import { recognise } from '@/ingest/recognise';
 import { asBefore } from '@/app/(lab)/sweeps/new/asBefore';
-import { choiceOf, draftFrom, keepBody, stillToSay, type Draft } from '@/app/(lab)/sweeps/new/draft';
+import { choiceOf, draftFrom, keepBody, stillToSay } from '@/app/(lab)/sweeps/new/draft';
+import type { Draft } from '@/app/(lab)/sweeps/new/draftTypes';
 import { sameAsLast } from '@/app/(lab)/sweeps/new/sameAsLast';
 import { spanOf } from '@/app/(lab)/sweeps/new/spanOf';
 import type { UploadLists } from '@/app/(lab)/sweeps/new/uploadLists';

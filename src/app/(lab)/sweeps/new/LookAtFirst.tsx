@@ -8,7 +8,7 @@ import { formatCount } from '@/format/quantities';
 import type { PathView } from '@/schemas/bench';
 import type { SweepFileView } from '@/schemas/sweepFile';
 import { typedNumber } from './typedNumber';
-import type { Draft } from './draft';
+import type { Draft } from './draftTypes';
 
 interface Props {
   file: SweepFileView;

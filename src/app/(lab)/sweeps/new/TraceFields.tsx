@@ -6,7 +6,7 @@ import { Field, SelectField } from '@/components/ui/Field';
 import { formatFigure, unitLabel } from '@/format/quantities';
 import { DETECTOR_WORDS } from '@/format/words';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import type { TraceDraft } from './draft';
+import type { TraceDraft } from './draftTypes';
 
 interface Props {
   file: SweepFileView;

@@ -2,20 +2,10 @@ import { formatBandwidth } from '@/format/frequencies';
 import { unitLabel } from '@/format/quantities';
 import { DETECTOR_WORDS } from '@/format/words';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import type { Draft, TraceDraft } from './draft';
+import type { Draft, TraceDraft } from './draftTypes';
 import { proposedCorrected } from './proposed';
 import { typedNumber } from './typedNumber';
 import type { UploadLists } from './uploadLists';
-
-/** What a draft took from the last file of its shape. */
-export interface AsBefore {
-  /** The run it was said of: `R-26-031`. */
-  number: string;
-  /** In words, what the figures depend on: `frequencies in MHz`, `dBµV`, `CBL-07 in the reading`. */
-  took: string[];
-  /** A person has said that it holds for this file too. */
-  holds: boolean;
-}
 
 type Before = NonNullable<SweepFileView['asBefore']>;
 

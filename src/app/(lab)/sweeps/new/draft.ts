@@ -1,51 +1,11 @@
-import type { Detector, LevelUnit, MainsLine, Polarisation, Port, Purpose } from '@/schemas/common';
+import type { Detector, LevelUnit, Port } from '@/schemas/common';
 import type { KeepSweep, SweepChoice } from '@/schemas/sweep';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import { asBefore, type AsBefore } from './asBefore';
+import { asBefore } from './asBefore';
+import type { Draft, FrequencyUnit, TraceDraft } from './draftTypes';
 import { proposedCorrected, proposedLimitSet, proposedPath, proposedState } from './proposed';
 import { typedNumber } from './typedNumber';
 import type { UploadLists } from './uploadLists';
-
-type FrequencyUnit = SweepChoice['frequencyUnit'];
-
-export interface TraceDraft {
-  index: number;
-  use: boolean;
-  name: string;
-  /** Empty until a person says it, where the file does not. */
-  unit: LevelUnit | '';
-  detector: Detector | '';
-  rbwKhz: string;
-}
-
-/** The form as it stands: text where a person types, empty where nothing has been said yet. */
-export interface Draft {
-  stateId: string;
-  port: Port;
-  purpose: Purpose;
-  operatingMode: string;
-  line: MainsLine | '';
-  polarisation: Polarisation | '';
-  heightM: string;
-  heightSwept: boolean;
-  azimuthDeg: string;
-  distanceM: string;
-  pathId: string;
-  limitSetId: string;
-  valuesHold: SweepChoice['valuesHold'];
-  alreadyCorrected: string[];
-  frequencyUnit: FrequencyUnit | '';
-  centreMhz: string;
-  /** Empty until chosen, where the file holds several. */
-  sweepIndex: number | '';
-  traces: TraceDraft[];
-  /** What was tried, for a quick trial; empty for a run that speaks for its state. */
-  trial: string;
-  /** Read up to the broken line, on purpose. */
-  keepPartial: boolean;
-  /** What was taken from the last file of this shape, and whether a person has said that it holds for this one. */
-  asBefore: AsBefore | null;
-}
 
 const UNIT_HZ: Record<FrequencyUnit, number> = { Hz: 1, kHz: 1e3, MHz: 1e6, GHz: 1e9 };
 

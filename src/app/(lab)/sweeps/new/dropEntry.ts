@@ -1,8 +1,9 @@
 import type { Problem } from '@/components/forms/problem';
-import type { Verdict } from '@/emc/kinds';
+import type { VerdictGlyphProps } from '@/components/ui/VerdictGlyph';
 import { formatBytes, formatCount } from '@/format/quantities';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import { stillToSay, type Draft } from './draft';
+import { stillToSay } from './draft';
+import type { Draft } from './draftTypes';
 
 /** One file of a drop, on its way in or held by the lab. */
 export interface DropEntry {
@@ -61,6 +62,8 @@ export const isReady = (entry: DropEntry) => ['ready', 'not-kept'].includes(stan
 
 /** Leaving now would leave something of it undone. What was refused stays in the file it came from. */
 export const isUnkept = (entry: DropEntry) => !['kept', 'refused', 'not-taken'].includes(standingOf(entry));
+
+type Verdict = VerdictGlyphProps['verdict'];
 
 const GLYPHS: Record<Standing, Verdict> = {
   waits: 'not-covered',

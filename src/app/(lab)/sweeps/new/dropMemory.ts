@@ -1,4 +1,4 @@
-import type { Draft } from './draft';
+import type { Draft } from './draftTypes';
 import type { DropEntry } from './dropEntry';
 
 /* What was said of a held file, for as long as the tab is open: a reload loses nothing of it. */

@@ -1,5 +1,5 @@
 import type { SweepFileView } from '@/schemas/sweepFile';
-import type { Draft, TraceDraft } from './draft';
+import type { Draft, TraceDraft } from './draftTypes';
 import type { UploadLists } from './uploadLists';
 
 /** A file with what has been said of it. */

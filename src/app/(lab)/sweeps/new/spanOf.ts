@@ -1,6 +1,7 @@
 import type { LimitSetView } from '@/schemas/bench';
 import type { SweepFileView } from '@/schemas/sweepFile';
-import { rangeOf, type Draft } from './draft';
+import { rangeOf } from './draft';
+import type { Draft } from './draftTypes';
 
 /** What a chart of the file shows, and of a broken file the range that was not read. */
 export interface FileSpan {
