@@ -60,7 +60,7 @@ export function DaySheet({ view, choices, upload }: Props) {
         />
       }
       margin={[beforeSection(position), positionsSection(view.positions)]}
-      marginLine={position ? `Before you start at position ${position.code}` : 'Positions'}
+      marginLine={position ? `${position.code}, ${position.name}` : 'Positions'}
       keys={[
         { keys: ['ArrowLeft', 'ArrowRight'], does: 'days' },
         { keys: ['ArrowUp', 'ArrowDown'], does: 'bookings' },
