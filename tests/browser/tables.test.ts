@@ -7,6 +7,7 @@ import { DESK, openAs, PHONE, type Window } from './people';
 
 const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
 const SLOW = 240_000;
+const WAIT = { timeout: SLOW / 2 };
 
 let browser: Browser;
 beforeAll(async () => {
@@ -26,7 +27,7 @@ async function drop(page: Page, name: string, text: string): Promise<void> {
 
 /** The public id of an item of the demo lab that no signal path adds a table of. */
 async function itemId({ context }: Window, identifier: string): Promise<string> {
-  const answer = await context.request.get(`${testOrigin()}/api/equipment?find=${identifier}`);
+  const answer = await context.request.get(`${testOrigin()}/api/equipment?find=${identifier}`, WAIT);
   return ((await answer.json()) as { items: { id: string }[] }).items[0]!.id;
 }
 
@@ -119,7 +120,7 @@ test(
     await drop(page, 'twice.csv', 'Frequency (MHz);Loss (dB)\n30;1\n100;2\n100;3\n300;3\n');
     await page.getByRole('heading', { name: 'This file is not a factor table of RX-1' }).waitFor();
     expect(await page.locator('.sheet-finding').innerText()).toContain('Line 4: 100000000 Hz stands twice');
-    await page.getByText('each frequency once').waitFor();
+    await page.getByRole('definition').filter({ hasText: 'each frequency once' }).waitFor();
     expect([await violations(page), await tooWide(page)]).toEqual([[], false]);
     await window.context.close();
   },
@@ -172,7 +173,7 @@ test(
     await page.getByText('The figures are from memory').waitFor();
     await page.getByText('At most 1.0 dB lower than revision 1, at 30 MHz.').waitFor();
 
-    const answer = await window.context.request.get(`${testOrigin()}/api/limit-sets?limit=200&withdrawn=with`);
+    const answer = await window.context.request.get(`${testOrigin()}/api/limit-sets?limit=200&withdrawn=with`, WAIT);
     const { items } = (await answer.json()) as {
       items: { name: string; revision: number; withdrawnAt: string | null }[];
     };
@@ -198,7 +199,7 @@ test.each(cases)(
       const window = await openAs(browser, key, viewport, room);
       const { page, context } = window;
       page.setDefaultTimeout(SLOW / 2);
-      const lines = await context.request.get(`${testOrigin()}/api/limit-lines?limit=1`);
+      const lines = await context.request.get(`${testOrigin()}/api/limit-lines?limit=1`, WAIT);
       const line = ((await lines.json()) as { items: { id: string }[] }).items[0]!.id;
       const item = await itemId(window, 'ANT-02');
       const manager = ['/limits/new', '/limits/sets/new', `/equipment/${item}/upload`];
