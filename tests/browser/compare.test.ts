@@ -12,6 +12,7 @@ let m2: FoundRun;
 beforeAll(async () => {
   browser = await launchBrowser();
   technician = await openAs(browser, 'mira');
+  technician.context.setDefaultTimeout(90_000);
   m1 = await findRun(technician, { ...LD40_OVER, state: 'M1' });
   m2 = await findRun(technician, LD40_OVER);
 }, 120_000);

@@ -43,6 +43,9 @@ export interface What {
   trial?: string | null;
 }
 
+/** A development server compiles what is asked for first. */
+const PATIENT = { timeout: 90_000 };
+
 export interface FoundRun {
   id: string;
   number: string;
@@ -52,7 +55,7 @@ export interface FoundRun {
 
 /** The newest run that is this, as somebody who may see it. */
 export async function findRun({ context }: Window, what: What): Promise<FoundRun> {
-  const answer = await context.request.get(`${testOrigin()}/api/sweeps?limit=200`);
+  const answer = await context.request.get(`${testOrigin()}/api/sweeps?limit=200`, PATIENT);
   const { items } = (await answer.json()) as { items: Record<string, string | boolean | null>[] };
   const { trial = null, position, ...rest } = what;
   const wanted = (run: (typeof items)[number]) =>
@@ -62,7 +65,7 @@ export async function findRun({ context }: Window, what: What): Promise<FoundRun
     run.voided === false;
   const found = items.find(wanted);
   if (!found) throw new Error(`the demo lab has no run that is ${JSON.stringify(what)}`);
-  const run = await context.request.get(`${testOrigin()}/api/sweeps/${found.id as string}`);
+  const run = await context.request.get(`${testOrigin()}/api/sweeps/${found.id as string}`, PATIENT);
   const { id, number, state, sample } = (await run.json()) as {
     id: string;
     number: string;

@@ -42,6 +42,7 @@ function fileWith(mhz: number, level: number): Buffer {
 beforeAll(async () => {
   browser = await launchBrowser();
   technician = await openAs(browser, 'mira');
+  technician.context.setDefaultTimeout(90_000);
   const manager = await openAs(browser, 'anselm');
   const sample = await newSample(manager, /^Pell/, `A-${mark}`);
   target = await newSample(manager, /^Tidewater/, `B-${mark}`);

@@ -4,10 +4,12 @@ import { findingOf, type FindingRun } from '@/format/finding';
 import { formatFrequency } from '@/format/frequencies';
 import { formatCount } from '@/format/quantities';
 import { strayedText } from '@/format/setup';
-import type { Verdict } from '@/emc/kinds';
 
 /** The sentence a run opens with; before it, when it is voided, and after it, when it is a trial, what it speaks for. */
-export function runFinding(sweep: SweepView, zone: string): { verdict: Verdict; runs: FindingRun[] } {
+export function runFinding(
+  sweep: SweepView,
+  zone: string,
+): { verdict: SweepView['evaluation']['verdict']; runs: FindingRun[] } {
   const { evaluation, traces, limitSet, voided, trial, state, partial } = sweep;
   const runs = findingOf(evaluation, traces, limitSet.lines);
   const strayed = strayedText(sweep.setup.eutStayed === 'no' ? sweep.setup.whatHappened : null);
