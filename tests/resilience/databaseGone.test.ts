@@ -1,5 +1,3 @@
-import { mkdtempSync, rmSync } from 'node:fs';
-import path from 'node:path';
 import { Op } from 'sequelize';
 import { closePasswordWorkers } from '@/auth/passwordWorker';
 import { closeDatabase } from '@/models/database';
@@ -14,9 +12,8 @@ import { SweepSegment } from '@/models/sweepSegment';
 import { unitOfWork } from '@/models/unitOfWork';
 import { OPERATIONS } from '@/schemas/operations';
 import { verifyChain } from '@/services/audit';
-import { startDatabase } from '../../src/ops/privateDatabase';
-import { freshSchema, PREFIX, type SchemaUrls } from '../../src/ops/testDatabase';
 import { PASSWORD } from '../auth/people';
+import { goneDatabase, type GoneDatabase } from '../support/goneDatabase';
 import { routesOf } from '../support/routes';
 import { enterWorld, pixel, sweepFile, type World } from '../support/world';
 
@@ -30,24 +27,14 @@ const OUT_MS = 2500;
 /** From the moment the database answers again to the first request that does. */
 const RECOVERED_WITHIN_MS = 5000;
 
-type Running = Awaited<ReturnType<typeof startDatabase>>;
-let state: string;
-let running: Running | undefined;
+let database: GoneDatabase;
 let world: World;
 let call: (request: Request) => Promise<Response>;
 
-async function startAgain(): Promise<Running> {
-  const options = { state, database: PREFIX, tell: () => {} };
-  running = await startDatabase({ ...options, wantedPort: 3617, port: running?.port });
-  return running;
-}
-
 beforeAll(async () => {
-  state = mkdtempSync(path.join(path.resolve(__dirname, '../../.stillfield-test'), 'gone-'));
-  const urls: SchemaUrls = await startAgain();
-  const made = await freshSchema(urls, PREFIX);
+  database = await goneDatabase(3617);
   const secret = 'a session secret that only the tests use';
-  Object.assign(process.env, { DATABASE_URL: made.databaseUrl, SESSION_SECRET: secret, APP_ORIGIN: ORIGIN });
+  Object.assign(process.env, { DATABASE_URL: database.databaseUrl, SESSION_SECRET: secret, APP_ORIGIN: ORIGIN });
   world = await enterWorld();
   call = await routesOf();
 }, 180_000);
@@ -55,8 +42,7 @@ beforeAll(async () => {
 afterAll(async () => {
   await closePasswordWorkers();
   await closeDatabase();
-  await running?.stop();
-  rmSync(state, { recursive: true, force: true });
+  await database.remove();
 }, 60_000);
 
 interface Asked {
@@ -172,8 +158,8 @@ function underUse(round: string) {
 }
 
 const rounds = [
-  ['killed', async () => void process.kill(running!.pid, 'SIGKILL')],
-  ['stopped in order', async () => running!.stop()],
+  ['killed', async () => database.kill()],
+  ['stopped in order', async () => database.stop()],
 ] as const;
 
 describe.each(rounds)('the database is %s under five clients', (how, stop) => {
@@ -187,7 +173,7 @@ describe.each(rounds)('the database is %s under five clients', (how, stop) => {
     await stop();
     await pause(OUT_MS);
     await until(() => REFUSED.every((what) => use.seen.some((one) => one.what === what && one.status === 503)), 20_000);
-    await startAgain();
+    await database.startAgain();
     const back = performance.now();
     for (const address of ['/api/ready', '/api/sweeps']) {
       while ((await ask(address)).status !== 200 && performance.now() - back < 30_000) await pause(50);
@@ -274,10 +260,10 @@ describe.each(rounds)('the database is %s under five clients', (how, stop) => {
 
 describe('while it is gone', () => {
   beforeAll(async () => {
-    await running!.stop();
+    await database.stop();
   }, 60_000);
   afterAll(async () => {
-    await startAgain();
+    await database.startAgain();
   }, 60_000);
 
   test('the process is up and not ready', async () => {

@@ -8,6 +8,9 @@ const ROOT = path.resolve(__dirname, '../..');
 /** Where `npm test` builds; NEXT_DIST_DIR chooses another one. */
 export const TEST_BUILD = process.env.NEXT_DIST_DIR ?? '.stillfield-test/next';
 
+/** STILLFIELD_TEST_DEV=1: without a build, pages are compiled as they are asked for. For one test file at a time. */
+const DEV = process.env.STILLFIELD_TEST_DEV === '1';
+
 export interface RunningServer {
   /** like http://127.0.0.1:41234 */
   origin: string;
@@ -68,7 +71,7 @@ export function testEnvironment(urls: SchemaUrls, port: number): Record<string, 
     APP_ORIGIN: `http://127.0.0.1:${port}`,
     HOST: '127.0.0.1',
     PORT: String(port),
-    NODE_ENV: 'production',
+    NODE_ENV: DEV ? 'development' : 'production',
     NEXT_DIST_DIR: TEST_BUILD,
     NEXT_TELEMETRY_DISABLED: '1',
   };
@@ -80,16 +83,16 @@ export function testEnvironment(urls: SchemaUrls, port: number): Record<string, 
  * @param extra further environment variables
  */
 export async function startServer(urls: SchemaUrls, extra: Record<string, string> = {}): Promise<RunningServer> {
-  if (!existsSync(path.join(ROOT, TEST_BUILD, 'BUILD_ID'))) {
+  if (!DEV && !existsSync(path.join(ROOT, TEST_BUILD, 'BUILD_ID'))) {
     throw new Error(
       `there is no build in ${TEST_BUILD}: npm test makes it, or NEXT_DIST_DIR=${TEST_BUILD} npx next build`,
     );
   }
   const port = await freePort();
   const environment = { ...testEnvironment(urls, port), ...extra };
-  const { process: child, words, ended } = startEntry('src/ops/server.ts', [], environment);
+  const { process: child, words, ended } = startEntry('src/ops/server.ts', DEV ? ['--dev'] : [], environment);
   const origin = `http://127.0.0.1:${port}`;
-  const until = Date.now() + 30_000;
+  const until = Date.now() + (DEV ? 180_000 : 30_000);
   for (;;) {
     const ready = await fetch(`${origin}/api/ready`)
       .then((answer) => answer.ok)
