@@ -32,6 +32,7 @@ export type Detector = z.infer<typeof detector>;
 export type LevelUnit = z.infer<typeof levelUnit>;
 export type LineUnit = z.infer<typeof lineUnit>;
 export type LineDetector = z.infer<typeof lineDetector>;
+export type Verdict = z.infer<typeof verdict>;
 export type Port = z.infer<typeof port>;
 export type Purpose = z.infer<typeof purpose>;
 export type MainsLine = z.infer<typeof mainsLine>;

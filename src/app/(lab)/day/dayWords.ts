@@ -1,4 +1,4 @@
-import type { Verdict } from '@/emc/kinds';
+import type { Verdict } from '@/app/(lab)/samples/worstRun';
 import { formatTime, formatWeekday, formatShortDay, dayOf } from '@/format/dates';
 import type { FindingRun } from '@/format/finding';
 import { capitalised, countInWords } from '@/format/words';

@@ -13,8 +13,12 @@ import { CheckField } from '@/components/ui/CheckField';
 import { AreaField } from '@/components/ui/Field';
 import { formatDayTime } from '@/format/dates';
 import type { NoteView } from '@/schemas/note';
-import type { NotesPage } from './notesSection';
 import './notes.css';
+
+export interface NotesPage {
+  items: NoteView[];
+  next: string | null;
+}
 
 export type About = { jobId: string } | { sampleId: string } | { sweepId: string };
 

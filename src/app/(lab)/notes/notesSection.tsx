@@ -1,11 +1,5 @@
 import type { MarginSection } from '@/components/shell/marginSection';
-import type { NoteView } from '@/schemas/note';
-import { Notes, type About } from './Notes';
-
-export interface NotesPage {
-  items: NoteView[];
-  next: string | null;
-}
+import { Notes, type About, type NotesPage } from './Notes';
 
 /** The Notes of a record, for its column. */
 export function notesSection(about: About, page: NotesPage, zone: string, lab: boolean): MarginSection {

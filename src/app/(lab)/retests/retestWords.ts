@@ -1,4 +1,4 @@
-import type { Verdict } from '@/emc/kinds';
+import type { Verdict } from '@/schemas/common';
 import { countInWords, capitalised, MAINS_LINE_WORDS, PORT_WORDS } from '@/format/words';
 import { formatFrequency } from '@/format/frequencies';
 import type { RetestItem, RetestView } from '@/schemas/retest';

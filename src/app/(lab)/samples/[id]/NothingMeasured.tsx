@@ -8,7 +8,7 @@ import { SelectField } from '@/components/ui/Field';
 import { Switch } from '@/components/ui/Switch';
 import { HeadCell, Table, TableHead } from '@/components/ui/Table';
 import { PORT_WORDS } from '@/format/words';
-import type { Port } from '@/emc/kinds';
+import type { Port } from '@/schemas/common';
 import type { LimitSetView } from '@/schemas/bench';
 
 interface Props {

@@ -1,6 +1,6 @@
-import type { Verdict } from '@/emc/kinds';
 import { dayOf, formatDay, formatTime } from '@/format/dates';
 import type { MailState } from '@/schemas/mailState';
+import type { Verdict } from '../worstRun';
 
 /** The same three positions as a verdict: arrived hangs under the line, waiting lies across it, refused stands above. */
 export const MAIL_POSITIONS: Record<MailState['state'], Verdict> = {
