@@ -77,22 +77,39 @@ export function testEnvironment(urls: SchemaUrls, port: number): Record<string, 
   };
 }
 
+const built = () => existsSync(path.join(ROOT, TEST_BUILD, 'BUILD_ID'));
+
 /**
  * Starts the built product on a free port with the given schema and waits until it is ready.
  * @param urls as `freshDatabase` answers
  * @param extra further environment variables
  */
 export async function startServer(urls: SchemaUrls, extra: Record<string, string> = {}): Promise<RunningServer> {
-  if (!DEV && !existsSync(path.join(ROOT, TEST_BUILD, 'BUILD_ID'))) {
+  if (!DEV && !built()) {
     throw new Error(
       `there is no build in ${TEST_BUILD}: npm test makes it, or NEXT_DIST_DIR=${TEST_BUILD} npx next build`,
     );
   }
+  return startListening('src/ops/server.ts', DEV ? ['--dev'] : [], urls, extra, DEV ? 180_000 : 30_000);
+}
+
+/** The built product, as `npm test` makes it; without a build the API alone (routeServer.ts), for tests of the API. */
+export async function startApi(urls: SchemaUrls): Promise<RunningServer> {
+  return built() ? startServer(urls) : startListening('tests/support/routeServer.ts', [], urls, {}, 90_000);
+}
+
+async function startListening(
+  file: string,
+  args: string[],
+  urls: SchemaUrls,
+  extra: Record<string, string>,
+  atMostMs: number,
+): Promise<RunningServer> {
   const port = await freePort();
   const environment = { ...testEnvironment(urls, port), ...extra };
-  const { process: child, words, ended } = startEntry('src/ops/server.ts', DEV ? ['--dev'] : [], environment);
+  const { process: child, words, ended } = startEntry(file, args, environment);
   const origin = `http://127.0.0.1:${port}`;
-  const until = Date.now() + (DEV ? 180_000 : 30_000);
+  const until = Date.now() + atMostMs;
   for (;;) {
     const ready = await fetch(`${origin}/api/ready`)
       .then((answer) => answer.ok)
