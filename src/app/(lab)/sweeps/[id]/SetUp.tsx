@@ -1,17 +1,26 @@
 'use client';
 
-import type { ReactNode } from 'react';
 import { InPlace } from '@/app/(lab)/jobs/InPlace';
 import { Message } from '@/components/ui/Message';
 import { formatDayTime } from '@/format/dates';
-import { climateText, STAYED_WORDS, supplyText, unsaidText } from '@/format/setup';
-import type { SetupRecordView } from '@/schemas/setup';
+import { unsaidText } from '@/format/setup';
+import type { PhotoView, SetupView } from '@/schemas/setup';
+import type { SweepView } from '@/schemas/sweep';
 import { MainsCaution } from './MainsCaution';
 import { PhotoStrip } from './PhotoStrip';
+import { SetUpFacts } from './SetUpFacts';
 import { SetUpForm } from './SetUpForm';
 import { SetUpRevisions } from './SetUpRevisions';
-import type { SetUpProps } from './setUpSection';
 import './setup.css';
+
+export interface SetUpProps {
+  sweep: SweepView;
+  setup: SetupView;
+  photos: { items: PhotoView[]; next: string | null };
+  zone: string;
+  /** Whether the reader is one of the lab's people. */
+  lab: boolean;
+}
 
 /** How a run was set up: what is said of it and by whom, what nobody has said, and its photographs. */
 export function SetUp({ sweep, setup, photos, zone, lab }: SetUpProps) {
@@ -47,39 +56,6 @@ export function SetUp({ sweep, setup, photos, zone, lab }: SetUpProps) {
         />
       )}
       <PhotoStrip sweepId={sweep.id} first={photos} zone={zone} lab={lab} />
-    </>
-  );
-}
-
-/** What is said, and nothing of what is not. */
-export function SetUpFacts({ record }: { record: SetupRecordView }) {
-  const facts: [string, ReactNode][] = [
-    ['Mode', record.operatingMode],
-    ['Supply', supplyText(record)],
-    ['Cables', record.cableLayout],
-    ['Ancillary', record.ancillary],
-    ['Climate', climateText(record)],
-    ['Deviations', record.deviations],
-    ['EUT', record.eutStayed && (record.whatHappened ?? STAYED_WORDS[record.eutStayed])],
-  ];
-  return (
-    <dl className="column-pair">
-      {facts
-        .filter(([, said]) => said)
-        .map(([name, said]) => (
-          <Fact key={name} name={name}>
-            {said}
-          </Fact>
-        ))}
-    </dl>
-  );
-}
-
-function Fact({ name, children }: { name: string; children: ReactNode }) {
-  return (
-    <>
-      <dt>{name}</dt>
-      <dd className="min-w-0 whitespace-pre-line [overflow-wrap:anywhere]">{children}</dd>
     </>
   );
 }

@@ -6,7 +6,7 @@ import type { Problem } from '@/components/forms/problem';
 import { send } from '@/components/forms/send';
 import { formatDayTime } from '@/format/dates';
 import type { SetupRecordView } from '@/schemas/setup';
-import { SetUpFacts } from './SetUp';
+import { SetUpFacts } from './SetUpFacts';
 
 interface Page {
   items: SetupRecordView[];

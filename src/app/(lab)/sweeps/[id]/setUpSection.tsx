@@ -1,17 +1,6 @@
 import type { MarginSection } from '@/components/shell/marginSection';
 import { setupSummary } from '@/format/setup';
-import type { PhotoView, SetupView } from '@/schemas/setup';
-import type { SweepView } from '@/schemas/sweep';
-import { SetUp } from './SetUp';
-
-export interface SetUpProps {
-  sweep: SweepView;
-  setup: SetupView;
-  photos: { items: PhotoView[]; next: string | null };
-  zone: string;
-  /** Whether the reader is one of the lab's people. */
-  lab: boolean;
-}
+import { SetUp, type SetUpProps } from './SetUp';
 
 /** How the run was set up, for its column. */
 export function setUpSection(props: SetUpProps): MarginSection {
