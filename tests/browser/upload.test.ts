@@ -10,7 +10,7 @@ beforeAll(async () => {
 }, 60_000);
 afterAll(() => browser.close());
 
-const LONG = 240_000;
+const LONG = 400_000;
 const word = () => Array.from({ length: 8 }, () => 'abcdefghij'[Math.floor(Math.random() * 10)]).join('');
 
 interface Written {
@@ -45,13 +45,20 @@ const asUpload = (name: string, more: Written = {}) => ({
 const row = (page: Page, name: string) => page.getByRole('row', { name: new RegExp(name.replaceAll('.', '\\.')) });
 const input = (page: Page) => page.locator('input[type=file]');
 
+/** A window that waits as long as a busy machine needs. */
+async function technicianAt(...window: Parameters<typeof openAs>): Promise<Window> {
+  const opened = await openAs(...window);
+  opened.page.setDefaultTimeout(120_000);
+  return opened;
+}
+
 async function drop(page: Page, files: ReturnType<typeof asUpload>[]): Promise<void> {
-  await page.goto(`${testOrigin()}/sweeps/new`, { timeout: 120_000 });
+  await page.goto(`${testOrigin()}/sweeps/new`);
   await page.getByRole('heading', { name: 'Drop sweep files anywhere on this sheet' }).waitFor();
   await input(page).setInputFiles(files);
 }
 async function recognised(page: Page, names: string[]): Promise<void> {
-  for (const name of names) await page.getByRole('button', { name, exact: true }).waitFor({ timeout: 120_000 });
+  for (const name of names) await page.getByRole('button', { name, exact: true }).waitFor();
 }
 async function say(page: Page, mode: string): Promise<void> {
   await page.getByLabel('Operating mode').fill(mode);
@@ -64,7 +71,7 @@ describe('a drop of several files', () => {
   const mark = word();
   let technician: Window;
   beforeAll(async () => {
-    technician = await openAs(browser, 'mira');
+    technician = await technicianAt(browser, 'mira');
   }, LONG);
   afterAll(() => technician.context.close());
 
@@ -121,7 +128,7 @@ describe('a drop of several files', () => {
       await say(page, 'full brightness');
       await page.getByText('Everything is said.').waitFor();
       await page.reload();
-      await page.getByText('Everything is said.').waitFor({ timeout: 120_000 });
+      await page.getByText('Everything is said.').waitFor();
       expect(await page.getByLabel('Operating mode').inputValue()).toBe('full brightness');
       await allFiles(page);
       await page.getByRole('button', { name: 'Same as last for 2 files' }).click();
@@ -154,21 +161,21 @@ describe('a drop of several files', () => {
       await page.getByRole('button', { name: /^Keep 3 files/ }).dblclick();
       await row(page, names[0]!)
         .getByRole('link', { name: /^kept, R-/ })
-        .waitFor({ timeout: 120_000 });
+        .waitFor();
       await row(page, names[1]!)
         .getByRole('link', { name: /^kept, R-/ })
-        .waitFor({ timeout: 120_000 });
+        .waitFor();
       await row(page, names[2]!)
         .getByText(/not kept: Job HL-2611 is closed\./)
         .filter({ visible: true })
-        .waitFor({ timeout: 120_000 });
+        .waitFor();
       expect(keys).toHaveLength(3);
       expect(new Set(keys).size).toBe(3);
       await page.unroute('**/api/sweeps', refuseVertical);
       await page.getByRole('button', { name: /^Keep 1 file/ }).click();
       await row(page, names[2]!)
         .getByRole('link', { name: /^kept, R-/ })
-        .waitFor({ timeout: 120_000 });
+        .waitFor();
     },
     LONG,
   );
@@ -185,7 +192,7 @@ describe('a drop of several files', () => {
       const lines = page.getByRole('region', { name: 'Lines around line 306' });
       expect(await lines.locator('tr', { hasText: 'Peak is missing' }).innerText()).toMatch(/306\s+60\.000;/);
       expect(await lines.getByRole('row').count()).toBe(6);
-      await page.getByText('not read', { exact: true }).waitFor({ timeout: 60_000 });
+      await page.getByText('not read', { exact: true }).waitFor();
       await page.getByText(/3 others of this drop in the same layout end at/).waitFor();
     },
     LONG,
@@ -202,11 +209,11 @@ describe('a drop of several files', () => {
       await page.getByRole('button', { name: /^Keep 300 points as partial/ }).click();
       await row(page, names[3]!)
         .getByRole('link', { name: /^kept, R-/ })
-        .waitFor({ timeout: 120_000 });
+        .waitFor();
       await row(page, names[3]!)
         .getByRole('link', { name: /^kept, R-/ })
         .click();
-      await page.waitForURL(/\/sweeps\/[0-9a-z]{16}$/, { timeout: 120_000 });
+      await page.waitForURL(/\/sweeps\/[0-9a-z]{16}$/);
       await page.getByRole('heading', { level: 1, name: /partial/ }).waitFor();
       const finding = await page.locator('.finding').innerText();
       expect(finding).toMatch(/Partial: its file breaks off at line 306, after 59\.900 MHz; nothing of it is under\./);
@@ -215,7 +222,7 @@ describe('a drop of several files', () => {
       const run = (await answer.json()) as { evaluation: { verdict: string; counts: { under: number } } };
       expect(run.evaluation.counts.under).toBe(0);
       expect(run.evaluation.verdict).not.toBe('under');
-      await page.goto(`${testOrigin()}/sweeps`, { timeout: 120_000 });
+      await page.goto(`${testOrigin()}/sweeps`);
       expect(await page.getByRole('row').nth(1).innerText()).toMatch(/partial/);
     },
     LONG,
@@ -231,7 +238,7 @@ describe('when the lab or the network is busy', () => {
   test(
     '429 with Retry-After waits and goes on; without a network it waits and goes on by itself',
     async () => {
-      const technician = await openAs(browser, 'mira');
+      const technician = await technicianAt(browser, 'mira');
       const { page, context } = technician;
       let asked = 0;
       await page.route('**/api/sweep-files', (route) => {
@@ -249,7 +256,7 @@ describe('when the lab or the network is busy', () => {
         .filter({ visible: true })
         .first()
         .waitFor();
-      await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor({ timeout: 120_000 });
+      await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor();
       expect(asked).toBe(2);
       await context.setOffline(true);
       await input(page).setInputFiles([asUpload('offline_v.csv')]);
@@ -266,10 +273,10 @@ describe('when the lab or the network is busy', () => {
   test(
     'a lost answer and a second press keep one run',
     async () => {
-      const technician = await openAs(browser, 'mira');
+      const technician = await technicianAt(browser, 'mira');
       const { page, context } = technician;
       await drop(page, [asUpload('ld40_m2_h_150.csv', { level: 21 })]);
-      await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor({ timeout: 120_000 });
+      await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor();
       await say(page, 'answer lost');
       let lost = false;
       const kept: string[] = [];
@@ -281,7 +288,7 @@ describe('when the lab or the network is busy', () => {
         return route.abort();
       });
       await page.getByRole('button', { name: /^Keep as a run/ }).click();
-      await page.waitForURL(/\/sweeps\/[0-9a-z]{16}$/, { timeout: 180_000 });
+      await page.waitForURL(/\/sweeps\/[0-9a-z]{16}$/);
       expect(kept.length).toBeGreaterThanOrEqual(2);
       expect(new Set(kept).size).toBe(1);
       await context.close();
@@ -294,7 +301,7 @@ describe('leaving', () => {
   test(
     'a link asks first with files that are not kept; staying keeps the sheet, leaving and back bring it back',
     async () => {
-      const { page, context } = await openAs(browser, 'mira');
+      const { page, context } = await technicianAt(browser, 'mira');
       await drop(page, [asUpload('ld40_m2_h_100.csv'), asUpload('ld40_m2_v_100.csv')]);
       await recognised(page, ['ld40_m2_h_100.csv', 'ld40_m2_v_100.csv']);
       const address = page.url();
@@ -305,7 +312,7 @@ describe('leaving', () => {
       expect(page.url()).toBe(address);
       await page.getByRole('link', { name: 'Jobs' }).click();
       await page.getByRole('button', { name: 'Leave 2 files' }).click();
-      await page.waitForURL('**/jobs', { timeout: 120_000 });
+      await page.waitForURL('**/jobs');
       await page.goBack();
       await recognised(page, ['ld40_m2_h_100.csv', 'ld40_m2_v_100.csv']);
       await context.close();
@@ -316,9 +323,9 @@ describe('leaving', () => {
   test(
     'closing the page asks too',
     async () => {
-      const { page, context } = await openAs(browser, 'mira');
+      const { page, context } = await technicianAt(browser, 'mira');
       await drop(page, [asUpload('ld40_m2_h_100.csv')]);
-      await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor({ timeout: 120_000 });
+      await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor();
       await say(page, 'asked');
       const asked = page.waitForEvent('dialog');
       void page.close({ runBeforeUnload: true });
@@ -333,9 +340,9 @@ describe('leaving', () => {
   test(
     'a file that is held no longer is said to be',
     async () => {
-      const { page, context } = await openAs(browser, 'mira');
-      await page.goto(`${testOrigin()}/sweeps/new?file=aaaaaaaaaaaaaaaa`, { timeout: 120_000 });
-      await page.getByText('One file is held no longer. Drop again what is missing.').waitFor({ timeout: 60_000 });
+      const { page, context } = await technicianAt(browser, 'mira');
+      await page.goto(`${testOrigin()}/sweeps/new?file=aaaaaaaaaaaaaaaa`);
+      await page.getByText('One file is held no longer. Drop again what is missing.').waitFor();
       await context.close();
     },
     LONG,
@@ -345,8 +352,8 @@ describe('leaving', () => {
 test(
   'files dropped on the list of runs are taken in',
   async () => {
-    const { page, context } = await openAs(browser, 'mira');
-    await page.goto(`${testOrigin()}/sweeps`, { timeout: 120_000 });
+    const { page, context } = await technicianAt(browser, 'mira');
+    await page.goto(`${testOrigin()}/sweeps`);
     await page.getByRole('heading', { level: 1 }).waitFor();
     await page.waitForLoadState('networkidle');
     const data = await page.evaluateHandle((content) => {
@@ -357,7 +364,7 @@ test(
     await page.dispatchEvent('body', 'dragover', { dataTransfer: data });
     await page.getByText('Drop to take these files in').waitFor();
     await page.dispatchEvent('body', 'drop', { dataTransfer: data });
-    await page.waitForURL('**/sweeps/new**', { timeout: 120_000 });
+    await page.waitForURL('**/sweeps/new**');
     await recognised(page, ['tp9_m0_h.csv', 'tp9_m0_v.csv']);
     await context.close();
   },
@@ -367,10 +374,10 @@ test(
 test(
   'the last file of a shape proposes for the next, says so, and has to be confirmed; a trial speaks for nothing',
   async () => {
-    const { page, context } = await openAs(browser, 'mira');
+    const { page, context } = await technicianAt(browser, 'mira');
     const mark = word();
     await drop(page, [asUpload('ld40_m2_h_100.csv', { mark, stated: false })]);
-    await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor({ timeout: 120_000 });
+    await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor();
     await page.getByLabel('Frequencies in').selectOption('MHz');
     await page.getByLabel('Level in').selectOption('dBuV');
     await page.getByLabel('Detector').selectOption('peak');
@@ -379,11 +386,11 @@ test(
     await page.getByText('A trial never speaks for its state: it counts for no verdict of the port.').waitFor();
     await say(page, 'full brightness');
     await page.getByRole('button', { name: /^Keep as a trial/ }).click();
-    await page.waitForURL(/\/sweeps\/[0-9a-z]{16}$/, { timeout: 120_000 });
+    await page.waitForURL(/\/sweeps\/[0-9a-z]{16}$/);
     await page.getByRole('heading', { level: 1, name: /trial foil on lid/ }).waitFor();
 
     await drop(page, [asUpload('ld40_m2_v_100.csv', { mark, stated: false, level: 22 })]);
-    await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor({ timeout: 120_000 });
+    await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor();
     const taken = page.getByText(/^Taken as in R-\d\d-\d{3}: frequencies in MHz, dBµV, peak, RBW 120 kHz\.$/);
     await taken.waitFor();
     expect(await page.getByLabel('Level in').inputValue()).toBe('dBuV');
@@ -404,10 +411,10 @@ test(
 test(
   'one of several sweeps is described by its own preamble once it is chosen',
   async () => {
-    const { page, context } = await openAs(browser, 'mira');
+    const { page, context } = await technicianAt(browser, 'mira');
     const two = `${text()}${text().replace('Detector;Peak', 'Detector;Average')}`;
     await drop(page, [{ name: 'ld40_m2_h_100.csv', mimeType: 'text/csv', buffer: Buffer.from(two) }]);
-    await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor({ timeout: 120_000 });
+    await page.getByRole('heading', { name: 'Recognise a sweep file' }).waitFor();
     expect(await page.getByLabel('Detector').inputValue()).toBe('');
     await page.getByLabel('Which sweep').selectOption('1');
     await page.waitForFunction(
@@ -423,12 +430,12 @@ test(
 test(
   'a name that would be something else is shown as it is',
   async () => {
-    const { page, context, complaints } = await openAs(browser, 'mira');
+    const { page, context, complaints } = await technicianAt(browser, 'mira');
     const name = `<img src=x onerror=alert(1)>\u202evsc.csv`;
     await drop(page, [asUpload(name), asUpload('second.csv')]);
-    await page.getByText('<img src=x onerror=alert(1)>·vsc.csv').first().waitFor({ timeout: 60_000 });
+    await page.getByText('<img src=x onerror=alert(1)>·vsc.csv').first().waitFor();
     expect(await page.locator('img[src=x]').count()).toBe(0);
-    await page.getByRole('button', { name: 'second.csv', exact: true }).waitFor({ timeout: 120_000 });
+    await page.getByRole('button', { name: 'second.csv', exact: true }).waitFor();
     expect(complaints.filter((line) => !/inline style/.test(line))).toEqual([]);
     await context.close();
   },
@@ -438,7 +445,7 @@ test(
 test(
   'on a phone: rows, the refused sheet and keeping, without a sideways scroll',
   async () => {
-    const { page, context } = await openAs(browser, 'mira', PHONE);
+    const { page, context } = await technicianAt(browser, 'mira', PHONE);
     const names = ['ld40_m2_h_110.csv', 'ld40_m2_v_110.csv'];
     await drop(page, [asUpload(names[0]!), asUpload(names[1]!, { cutAt: 200 })]);
     await recognised(page, names);
