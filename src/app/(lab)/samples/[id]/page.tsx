@@ -28,7 +28,7 @@ import { AddState } from './AddState';
 import { DropOnList } from '@/app/(lab)/sweeps/DropOnList';
 import { CorrectSample } from './CorrectSample';
 import { NothingMeasured } from './NothingMeasured';
-import { ResultMail } from './ResultMail';
+import { resultMailSection } from './resultMailSection';
 import { StateRuns } from './StateRuns';
 
 interface Props {
@@ -141,7 +141,7 @@ export default async function SamplePage({ params }: Props) {
         </section>
       )}
       {mayRole(actor.role, 'state.create') && <AddState sampleId={sample.id} next={`M${sample.states.length}`} />}
-      <ResultMail actor={actor} sample={sample} zone={zone} />
+      {await resultMailSection(actor, sample, zone)}
       {mayRole(actor.role, 'sample.change') && (
         <>
           <SectionHeading className="mt-6" remark="each change stands in the history">

@@ -17,7 +17,7 @@ const SHOWN = 20;
 const WIDE = 'max-pad:hidden';
 
 /** What was sent of this sample's results, to whom and what became of it; a manager sends more. For the lab's people. */
-export async function ResultMail({ actor, sample, zone }: { actor: Actor; sample: SampleView; zone: string }) {
+export async function resultMailSection(actor: Actor, sample: SampleView, zone: string) {
   if (!mayRole(actor.role, 'result-mail.list')) return null;
   const { items, next } = await listResultMails(actor, { sampleId: sample.id, limit: SHOWN });
   const measured = [...sample.states].reverse().filter(({ runs }) => runs > 0);
