@@ -110,7 +110,7 @@ describe('what the sheets say of the one run', () => {
     expect(text).toContain(world.run.number);
   });
   test('its chart is drawn from the kept layer and leads to the run', async () => {
-    const html = await markup(world.designer.actor, 'products/[id]');
+    const html = await markup(world.designer.actor, 'samples/[id]');
     const cells = html.matchAll(/<a[^>]*data-cell[^>]*href="([^"]+)"[^>]*><figure role="img" aria-label="([^"]+)"/g);
     const drawn = new Map([...cells].map(([, href, label]) => [href, label]));
     expect(drawn.get(`/sweeps/${world.run.id}`)).toBe('M0, enclosure: worst 6.2 over, needs a final');
