@@ -11,7 +11,7 @@ export function LetterText({ text }: { text: string }) {
         .split(ADDRESS)
         .map((piece, at) =>
           at % 2 === 1 ? (
-            <a key={at} href={piece} rel="noreferrer">
+            <a key={at} href={piece} rel="noreferrer" className="underline">
               {piece}
             </a>
           ) : (

@@ -57,9 +57,9 @@ export function LineUpload({ held, ...about }: LineUploadFor & { held: SweepFile
         }}
       >
         <p>One line per file, as text or CSV. Either a row per segment:</p>
-        <pre className="t-figure my-1.5 overflow-x-auto text-[0.8125rem]">{SEGMENTS}</pre>
+        <pre className="t-figure my-1.5 text-[0.8125rem] whitespace-pre-wrap">{SEGMENTS}</pre>
         <p>or a row per break point, where a repeated frequency is a step:</p>
-        <pre className="t-figure my-1.5 overflow-x-auto text-[0.8125rem]">{POINTS}</pre>
+        <pre className="t-figure my-1.5 text-[0.8125rem] whitespace-pre-wrap">{POINTS}</pre>
         <p>Decimal comma or point, semicolons, tabs or commas between. What the file does not say is asked.</p>
       </FileDrop>
     </Sheet>
