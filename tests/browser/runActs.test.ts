@@ -122,11 +122,6 @@ test('re-evaluated with nothing newer: the same figures, and the history lists b
   await history.getByRole('button').first().click();
   await history.getByText('The same figures as before, bit for bit.').waitFor();
   await history.getByText('Reason: the mast stood still').waitFor();
-  await history.getByRole('button', { name: 'Show its candidates' }).click();
-  await history
-    .getByText(/144\.000 MHz/)
-    .first()
-    .waitFor();
 }, 180_000);
 
 test('moving it to another client asks first, on the safe choice; then the first client finds it no more', async () => {
@@ -158,7 +153,3 @@ test('moving it to another client asks first, on the safe choice; then the first
   await first.context.close();
   await second.context.close();
 }, 180_000);
-
-test('the browser had nothing to complain of on the way', () => {
-  expect(technician.complaints).toEqual([]);
-});

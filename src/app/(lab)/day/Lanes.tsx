@@ -157,7 +157,6 @@ function Slip({ booking, view, scale, standing, chosen, onChoose }: SlipProps) {
             beyond && 'lane-slip-beyond',
           )}
           aria-pressed={chosen}
-          aria-label={said.filter(Boolean).join(', ')}
           title={said.filter(Boolean).join(', ')}
           onClick={() => onChoose(id)}
         >
@@ -173,6 +172,7 @@ function Slip({ booking, view, scale, standing, chosen, onChoose }: SlipProps) {
             {work}
             {standing === 'now' ? ', running' : `, ${own ? 'you' : technician.name.split(' ')[0]}`}
           </span>
+          <span className="sr-only">{said.filter(Boolean).join(', ')}</span>
         </button>
       </foreignObject>
     </svg>

@@ -5,7 +5,7 @@ import { Cell, HeadCell, KeyCell, Row, Table, TableHead } from '@/components/ui/
 import { VerdictWord } from '@/components/ui/VerdictWord';
 import { dayOf, formatShortDay } from '@/format/dates';
 import { formatFrequencyMhz } from '@/format/frequencies';
-import { ABSENT, formatDb, formatMargin, marginText, unitLabel } from '@/format/quantities';
+import { ABSENT, formatDb, marginText, unitLabel } from '@/format/quantities';
 import { DETECTOR_MARKS } from '@/format/words';
 import type { RetestItem } from '@/schemas/retest';
 import { placeWords, STATUS_WORDS, verdictOf, verdictWord } from './retestWords';
@@ -119,11 +119,8 @@ function Where({ item }: { item: RetestItem }) {
 function Margin({ marginDb }: { marginDb: number }) {
   const { figure, word } = marginText(marginDb);
   return (
-    <span className="inline-flex items-baseline justify-end whitespace-nowrap" aria-label={formatMargin(marginDb)}>
-      <span aria-hidden>{figure}</span>
-      <span aria-hidden className="ml-1.5 w-[2.9rem] text-left font-normal">
-        {word}
-      </span>
+    <span className="inline-flex items-baseline justify-end whitespace-nowrap">
+      {figure} <span className="ml-1.5 w-[2.9rem] text-left font-normal">{word}</span>
     </span>
   );
 }

@@ -95,7 +95,7 @@ export default async function RetestsPage({ searchParams }: { searchParams: Sear
               {emissions > 0 && (
                 <>
                   ; the frequencies also{' '}
-                  <a href={listAddress(search, 'txt')} download>
+                  <a href={listAddress(search, 'txt')} download className="underline">
                     as plain text
                   </a>
                 </>
