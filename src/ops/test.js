@@ -22,7 +22,7 @@ const { STATE, startTestDatabase } = require('./testDatabase');
 
 const PROJECTS = ['core', 'http', 'browser'];
 const DIST = '.stillfield-test/next';
-const PROJECT_LIMIT_MS = 10 * 60_000;
+const PROJECT_LIMIT_MS = 15 * 60_000;
 /** After its results are written jest only waits for what a test left open. */
 const LINGER_LIMIT_MS = 20_000;
 

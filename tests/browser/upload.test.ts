@@ -1,4 +1,4 @@
-import type { Browser, Page, Request, Route } from 'playwright-core';
+import type { Browser, Page, Route } from 'playwright-core';
 import { launchBrowser, testOrigin } from '../support/browser';
 import { openAs, PHONE, type Window } from './people';
 
@@ -81,9 +81,12 @@ describe('a drop of several files', () => {
       const { page } = technician;
       let flying = 0;
       let most = 0;
-      const isUpload = (request: Request) => request.method() === 'POST' && request.url().endsWith('/api/sweep-files');
-      page.on('request', (request) => isUpload(request) && (most = Math.max(most, ++flying)));
-      page.on('requestfinished', (request) => isUpload(request) && flying--);
+      await page.route('**/api/sweep-files', async (route) => {
+        most = Math.max(most, ++flying);
+        const response = await route.fetch({ timeout: 120_000 });
+        flying--;
+        await route.fulfill({ response });
+      });
       const cut = asUpload(names[3]!, { mark, cutAt: 300 });
       await drop(page, [...names.slice(0, 3).map((name) => asUpload(name, { mark })), cut]);
       await recognised(page, names);

@@ -24,7 +24,8 @@ interface Props {
 
 /** Every file of the drop in one row: how far it is, what is still to be said, what it was kept as. */
 export function DropList({ drop, notes, lists, onKeep, onChoose }: Props) {
-  const { shown, last } = drop;
+  const { shown } = drop;
+  const last = drop.lastBut();
   const of = (...standings: Standing[]) => shown.filter((entry) => standings.includes(standingOf(entry)));
   const ready = shown.filter(isReady);
   const keeping = of('keeping');
@@ -120,7 +121,14 @@ export function DropList({ drop, notes, lists, onKeep, onChoose }: Props) {
             height stay as each name proposes them.
           </p>
           <div className="mt-3">
-            <Button onClick={() => drop.sayAsLast(others.map(({ key }) => key))}>
+            <Button
+              onClick={() =>
+                drop.sayAs(
+                  last,
+                  others.map(({ key }) => key),
+                )
+              }
+            >
               Same as last for {files(others.length)}
             </Button>
           </div>

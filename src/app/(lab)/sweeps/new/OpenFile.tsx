@@ -60,18 +60,18 @@ export function OpenFile({ drop, entry, lists, onKeep, onChoose }: Props) {
         {...common}
         others={shown.filter((one) => one !== entry)}
         lists={lists}
-        onPartial={() => drop.say(entry.key, (before) => ({ ...before, keepPartial: true }))}
+        onPartial={() => drop.keepPartial(entry.key)}
         onChoose={onChoose}
       />
     );
-  const last = drop.last && drop.last.key !== entry.key ? drop.last : null;
+  const last = drop.lastBut(entry.key);
   return (
     <RecogniseSheet
       {...common}
       draft={draft}
       lists={lists}
       last={last}
-      onLast={() => drop.sayAsLast([entry.key])}
+      onLast={() => last && drop.sayAs(last, [entry.key])}
       onDraft={(change) => drop.say(entry.key, change)}
       onSweep={(index) => void drop.chooseSweep(entry.key, index)}
       onKeep={() => onKeep([entry.key])}

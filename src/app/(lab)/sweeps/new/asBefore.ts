@@ -40,9 +40,11 @@ export function asBefore(draft: Draft, file: SweepFileView, { paths, limitSets }
     next.frequencyUnit = before.frequencyUnit;
     took.add(`frequencies in ${before.frequencyUnit}`);
   }
+  // Of several sweeps each may state its own; that is read once one is chosen.
+  const several = file.recognition.sweeps.length > 1;
   next.traces = draft.traces.map((trace) => {
     const its = before.traces.find(({ index }) => index === trace.index);
-    return its && trace.use ? traceAsBefore(trace, its, took) : trace;
+    return its && trace.use && !several ? traceAsBefore(trace, its, took) : trace;
   });
   const unitsOpen = file.recognition.traces.every(({ unit, blank }) => blank || unit === null);
   if (unitsOpen && before.valuesHold !== draft.valuesHold) {

@@ -150,13 +150,15 @@ export function useDrop(held: readonly SweepFileView[], lists: UploadLists, stat
       ),
     );
 
-  const last = shown.reduce<DropEntry | null>(
-    (newest, entry) => (entry.touched > (newest?.touched ?? 0) ? entry : newest),
-    null,
-  );
-  /** What was said of the last file, for these; they do not become the last one by it. */
-  const sayAsLast = (keys: readonly string[]) => {
-    if (!last?.file || !last.draft) return;
+  /** The file that something was said of last, other than one. */
+  const lastBut = (key?: string) =>
+    shown.reduce<DropEntry | null>(
+      (newest, entry) => (entry.key !== key && entry.touched > (newest?.touched ?? 0) ? entry : newest),
+      null,
+    );
+  /** What was said of one file, for these; they do not become the last one by it. */
+  const sayAs = (last: DropEntry, keys: readonly string[]) => {
+    if (!last.file || !last.draft) return;
     const from = { draft: last.draft, file: last.file };
     change((before) =>
       before.map((entry) => {
@@ -218,15 +220,22 @@ export function useDrop(held: readonly SweepFileView[], lists: UploadLists, stat
   return {
     shown,
     open,
-    last,
+    lastBut,
     /** Named by the address, but held no longer. */
     gone: named.filter((id) => gone.has(id)).length,
     /** Dropped beyond what one drop takes. */
     left,
     take,
     say,
-    sayAsLast,
+    sayAs,
     chooseSweep,
+    /** Up to the broken line, on purpose; that alone says nothing of the file. */
+    keepPartial: (key: string) =>
+      change((before) =>
+        before.map((entry) =>
+          entry.key === key && entry.draft ? { ...entry, draft: { ...entry.draft, keepPartial: true } } : entry,
+        ),
+      ),
     keep,
     discard,
     sendAgain: (key: string) => {
