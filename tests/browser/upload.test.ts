@@ -96,7 +96,7 @@ describe('a drop of several files', () => {
       const said = await row(page, names[1]!).innerText();
       expect(said).toMatch(/400 points/);
       expect(said).toMatch(/V, 1 m/);
-      expect(said).toMatch(/LD-40\s*M2/);
+      expect(said).toMatch(/LD-40\s+(?:state\s+)?M2/);
       expect(said).toMatch(/still to say: the operating mode/);
       expect(await row(page, names[3]!).innerText()).toMatch(/refused at line 306; 300 points could be kept/);
     },
