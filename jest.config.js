@@ -35,6 +35,7 @@ const projects = [
     testMatch: below(WITH_BROWSER),
     globalSetup: '<rootDir>/tests/support/browserSetup.ts',
     globalTeardown: '<rootDir>/tests/support/browserTeardown.ts',
+    setupFilesAfterEnv: ['<rootDir>/tests/support/browserLab.ts'],
   },
 ];
 

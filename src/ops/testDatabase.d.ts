@@ -23,6 +23,13 @@ export function startTestDatabase(options?: {
 /** A schema as the migrations leave it, with the restricted account's rights. */
 export function freshSchema(urls: SchemaUrls, schema: string): Promise<SchemaUrls & { drop(): Promise<void> }>;
 
+/** A schema that holds what `from`, another one of the same migrations, holds. */
+export function copiedSchema(
+  urls: SchemaUrls,
+  schema: string,
+  from: string,
+): Promise<SchemaUrls & { drop(): Promise<void> }>;
+
 /** The migrated schema as data. */
 export function template(migrateUrl: string): Promise<{ name: string; create: string; inserts: string[] }[]>;
 

@@ -49,7 +49,7 @@ test('↓ chooses the next row, arrows in the chart go from emission to emission
   await page.locator('tr[data-chosen]', { hasText: '156.020' }).waitFor();
   await page.locator('[data-rank="1"]').focus();
   await page.keyboard.press('ArrowRight');
-  expect(await page.evaluate(() => document.activeElement?.getAttribute('data-rank'))).not.toBe('1');
+  await page.waitForFunction(() => !['1', null].includes(document.activeElement!.getAttribute('data-rank')));
   const finer = page.waitForResponse((response) => response.url().includes('/api/comparisons?'));
   await page.keyboard.press('+');
   await page.keyboard.press('+');

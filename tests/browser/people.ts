@@ -26,10 +26,28 @@ export async function openAs(browser: Browser, key: string | null, viewport = DE
     if (!answer.ok()) throw new Error(`${key} could not sign in: ${answer.status()} ${await answer.text()}`);
   }
   const page = await context.newPage();
+  awaken(page);
   const complaints: string[] = [];
   page.on('console', (message) => message.type() === 'error' && complaints.push(message.text()));
   page.on('pageerror', (error) => complaints.push(error.message));
   return { context, page, complaints };
+}
+
+/** Every `goto` of the page waits until its controls and keys are listened to: a key pressed before that goes nowhere. */
+function awaken(page: Page): void {
+  const go = page.goto.bind(page);
+  page.goto = async (...to) => {
+    const answer = await go(...to);
+    if (answer?.headers()['content-type']?.includes('text/html')) await page.waitForFunction(isAwake);
+    return answer;
+  };
+}
+
+function isAwake(): boolean {
+  const controls = [...document.querySelectorAll('button, input:not([type=hidden]), select, textarea')];
+  const heard = (element: Element) => Object.keys(element).some((key) => key.startsWith('__reactProps'));
+  const keys = document.querySelector('header.top') === null || document.documentElement.dataset.keys !== undefined;
+  return keys && controls.every(heard);
 }
 
 /** What a run of the demo lab is, in the words of the API's list. */

@@ -11,7 +11,7 @@ export function launchBrowser(): Promise<Browser> {
   return chromium.launch({ executablePath, args: [...args, '--disable-dev-shm-usage'] });
 }
 
-/** Address of the server that the browser tests share. */
+/** Address of the server that the test file has for itself. */
 export function testOrigin(): string {
   const origin = process.env.STILLFIELD_TEST_ORIGIN;
   if (!origin) throw new Error('browser tests run in the browser project: npx jest --selectProjects browser');

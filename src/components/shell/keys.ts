@@ -84,6 +84,7 @@ function listen(): void {
   if (listening) return;
   listening = true;
   document.addEventListener('keydown', onKeyDown);
+  document.documentElement.dataset.keys = 'heard';
 }
 
 /** Mounted once by the top line, so that keys in server-rendered buttons are real before anything registers one. */

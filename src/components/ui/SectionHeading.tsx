@@ -18,7 +18,7 @@ export function SectionHeading({
       <h2 className="t-section" id={id}>
         {children}
       </h2>
-      {remark && <div className="t-detail">{remark}</div>}
+      {remark && <div className="section-remark t-detail">{remark}</div>}
     </div>
   );
 }

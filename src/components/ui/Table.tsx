@@ -1,5 +1,6 @@
 import type { ComponentProps, ReactNode } from 'react';
 import { classes } from './classes';
+import { ScrollFrame } from './ScrollFrame';
 
 /**
  * The parts of a table, worst row first: `<Table caption="Candidates"><TableHead>…</TableHead><tbody>…`. Rows are 32 px
@@ -18,12 +19,12 @@ export function Table({
   children: ReactNode;
 }) {
   return (
-    <div className="tbl-scroll">
+    <ScrollFrame name={caption} className="tbl-scroll">
       <table className={classes('tbl', twoLine && 'tbl-two', className)}>
         <caption className="sr-only">{caption}</caption>
         {children}
       </table>
-    </div>
+    </ScrollFrame>
   );
 }
 
