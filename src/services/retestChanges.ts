@@ -7,7 +7,8 @@ import { Retest, type RetestStatus } from '@/models/retest';
 import { RetestChange, type RetestAction } from '@/models/retestChange';
 import { nextNumbers } from './counters';
 import { dayIn, labSettings } from './lab';
-import { factsOf, type RetestFacts } from './retestFacts';
+import { FACTS, factsOf, type RetestFacts } from './retestFacts';
+import { inParts } from './retestRows';
 import type { Wanted } from './retestWants';
 
 export interface Happening {
@@ -67,74 +68,87 @@ export type Tally = Partial<Record<RetestAction, string[]>>;
 /** Writes items as the runs want them, and a change for each that differs; answers what was done to which. */
 export async function writeWanted(actor: Actor, wanted: readonly Wanted[], happening: Happening): Promise<Tally> {
   const tally: Tally = {};
-  const changes: CreationAttributes<RetestChange>[] = [];
-  const note = (row: Retest, action: RetestAction, to: RetestStatus, reason: string, one: Wanted, before: Before) => {
-    (tally[action] ??= []).push(row.number);
-    changes.push({
-      retestId: row.id,
-      at: happening.at,
-      userId: actor.userId,
-      action,
-      fromStatus: before.status,
-      toStatus: to,
-      reason,
-      sweepId: one.runId,
-      marginFromDb: before.marginDb,
-      marginToDb: one.facts.marginDb,
-    });
-  };
-  const opened = await openItems(wanted, happening);
-  for (const one of wanted) {
-    const row = one.row ?? opened.get(one)!;
-    const turn = turnOf(one, happening);
-    if (!one.row) {
-      note(row, 'opened', 'waiting', one.says, one, { status: null, marginDb: null });
-      if (turn.status === 'waiting') continue;
+  const numbered = await numberNew(wanted, happening.at);
+  for (const part of inParts(wanted)) {
+    const opened = await openItems(part, numbered, happening);
+    const rows: CreationAttributes<Retest>[] = [];
+    const changes: CreationAttributes<RetestChange>[] = [];
+    for (const one of part) {
+      const row = one.row ?? opened.get(one)!;
+      for (const change of changesOf(one, row, happening)) {
+        (tally[change.action] ??= []).push(row.number);
+        changes.push({ ...change, retestId: row.id, at: happening.at, userId: actor.userId, sweepId: one.runId });
+        if (change.values) rows.push({ ...row.get({ plain: true }), ...change.values, version: row.version + 1 });
+      }
     }
-    const moved = row.status !== turn.status || row.carriedTo !== turn.carriedTo || turn.released;
-    const updated = one.status !== 'gone' && !sameFacts(factsOf(row), one.facts);
-    if (!moved && !updated && row.statusReason === turn.reason) continue;
-    const before = { status: row.status, marginDb: row.marginDb };
-    await changeRow(row, one, turn);
-    if (moved) note(row, ACTIONS[turn.status], turn.status, turn.reason, one, before);
-    else note(row, 'updated', turn.status, `${turn.reason}: ${happening.because}`, one, before);
+    if (rows.length > 0) await Retest.bulkCreate(rows, { updateOnDuplicate: [...CHANGING] });
+    await RetestChange.bulkCreate(changes);
   }
-  await RetestChange.bulkCreate(changes);
   return tally;
 }
 
-interface Before {
-  status: RetestStatus | null;
-  marginDb: number | null;
+const CHANGING = [
+  ...FACTS,
+  ...(['status', 'statusReason', 'carriedTo', 'scheduledOn', 'note', 'version'] as const),
+  ...(['withdrawnBy', 'withdrawnMarginDb', 'withdrawnVerdict'] as const),
+] as const;
+
+type Change = Pick<RetestChange, 'action' | 'fromStatus' | 'toStatus' | 'reason' | 'marginFromDb' | 'marginToDb'> & {
+  /** What the row becomes by it; absent where it was just entered so. */
+  values?: Record<string, unknown>;
+};
+
+function changesOf(one: Wanted, row: Retest, happening: Happening): Change[] {
+  const turn = turnOf(one, happening);
+  const { status, reason } = turn;
+  const margins = { marginFromDb: row.marginDb, marginToDb: one.facts.marginDb };
+  const changes: Change[] = [];
+  if (!one.row) {
+    const opened = { action: 'opened', fromStatus: null, toStatus: 'waiting', reason: one.says } as const;
+    changes.push({ ...opened, marginFromDb: null, marginToDb: margins.marginToDb });
+    if (status === 'waiting') return changes;
+  }
+  const moved = row.status !== status || row.carriedTo !== turn.carriedTo || turn.released;
+  const updated = one.status !== 'gone' && !sameFacts(factsOf(row), one.facts);
+  if (!moved && !updated && row.statusReason === reason) return changes;
+  const values = valuesOf(row, one, turn);
+  const said = moved
+    ? { action: ACTIONS[status], reason }
+    : { action: 'updated' as const, reason: `${reason}: ${happening.because}`.slice(0, 400) };
+  return [...changes, { ...said, fromStatus: row.status, toStatus: status, ...margins, values }];
 }
 
-async function changeRow(row: Retest, one: Wanted, { status, reason, carriedTo, released }: Turn): Promise<void> {
+function valuesOf(row: Retest, one: Wanted, { status, reason, carriedTo, released }: Turn): Record<string, unknown> {
   const facts = one.status === 'gone' ? {} : one.facts;
   const unplanned = row.status === 'scheduled' && status !== 'scheduled' ? { scheduledOn: null, note: null } : {};
   const free = released ? { withdrawnBy: null, withdrawnMarginDb: null, withdrawnVerdict: null } : {};
-  const values = { ...facts, ...unplanned, ...free, status, statusReason: reason.slice(0, 400), carriedTo };
-  await Retest.update({ ...values, version: row.version + 1 }, { where: { id: row.id } });
+  return { ...facts, ...unplanned, ...free, status, statusReason: reason, carriedTo };
 }
 
-/** The new items as rows, each waiting. */
-async function openItems(wanted: readonly Wanted[], { stateId, port, at }: Happening): Promise<Map<Wanted, Retest>> {
+/** Numbers of the lab's year for what is new, in a row. */
+async function numberNew(wanted: readonly Wanted[], at: Date): Promise<Map<Wanted, string>> {
   const fresh = wanted.filter(({ row }) => row === null);
   if (fresh.length === 0) return new Map();
   const year = dayIn((await labSettings()).zone, at).slice(0, 4);
   const first = await nextNumbers(`retest-${year}`, fresh.length);
+  return new Map(fresh.map((one, i) => [one, `T-${year.slice(2)}-${String(first + i).padStart(3, '0')}`]));
+}
+
+/** The new items as rows, each waiting. */
+async function openItems(
+  wanted: readonly Wanted[],
+  numbered: ReadonlyMap<Wanted, string>,
+  { stateId, port, at }: Happening,
+): Promise<Map<Wanted, Retest>> {
+  const fresh = wanted.filter(({ row }) => row === null);
+  if (fresh.length === 0) return new Map();
   const ids = fresh.map(() => newPublicId());
+  const entered = { stateId, port, status: 'waiting' as const, openedAt: at, createdAt: at };
   await Retest.bulkCreate(
-    fresh.map(({ facts, says }, i) => ({
-      ...facts,
-      publicId: ids[i]!,
-      number: `T-${year.slice(2)}-${String(first + i).padStart(3, '0')}`,
-      stateId,
-      port,
-      status: 'waiting',
-      statusReason: says,
-      openedAt: at,
-      createdAt: at,
-    })),
+    fresh.map((one, i) => {
+      const named = { publicId: ids[i]!, number: numbered.get(one)!, statusReason: one.says };
+      return { ...one.facts, ...entered, ...named };
+    }),
   );
   const rows = await Retest.findAll({ where: { publicId: ids } });
   const byId = new Map(rows.map((row) => [row.publicId, row]));
@@ -142,5 +156,7 @@ async function openItems(wanted: readonly Wanted[], { stateId, port, at }: Happe
 }
 
 function sameFacts(a: RetestFacts, b: RetestFacts): boolean {
-  return (Object.keys(a) as (keyof RetestFacts)[]).every((name) => JSON.stringify(a[name]) === JSON.stringify(b[name]));
+  const same = (one: unknown, other: unknown) =>
+    one === other || (typeof one === 'object' && JSON.stringify(one) === JSON.stringify(other));
+  return FACTS.every((name) => same(a[name], b[name]));
 }

@@ -5,7 +5,7 @@ import { severity } from '@/emc/verdict';
 import type { Retest } from '@/models/retest';
 import type { LoadedReading } from './retestRuns';
 
-const FACTS = [
+export const FACTS = [
   'kind',
   'reason',
   'lineKey',

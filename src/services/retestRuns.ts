@@ -8,6 +8,7 @@ import { LimitLineRevision } from '@/models/limitLineRevision';
 import { Sweep } from '@/models/sweep';
 import { readPieces } from '@/models/traceStore';
 import { lineView, toCoreLine } from './limitSets';
+import { ROWS_AT_A_TIME } from './retestRows';
 
 /** A candidate with all that a retest shows of it. */
 export interface LoadedReading extends Reading {
@@ -34,18 +35,23 @@ export async function speakingRuns(stateIds: readonly number[], port: Port): Pro
   const lineIds = [...new Set(rows.flatMap(({ evaluation }) => evaluation.inputs.limitLines))];
   const revisions = await LimitLineRevision.findAll({ where: { publicId: lineIds } });
   const lines = new Map(revisions.map((line) => [line.publicId, line]));
-  const candidates = await EvaluationCandidate.findAll({
-    where: { evaluationId: rows.map((row) => row.evaluation.id) },
-    order: [
-      ['evaluationId', 'ASC'],
-      ['rank', 'ASC'],
-    ],
-  });
-  const byEvaluation = new Map<number, EvaluationCandidate[]>(rows.map((row) => [row.evaluation.id, []]));
-  for (const candidate of candidates) byEvaluation.get(candidate.evaluationId)!.push(candidate);
   const runs: LoadedRun[] = [];
-  for (const row of rows) runs.push(await speaking(row, lines, byEvaluation.get(row.evaluation.id)!));
+  for (const row of rows) runs.push(await speaking(row, lines, await candidatesOf(row.evaluation.id)));
   return runs;
+}
+
+/** As many at a time as to keep nobody waiting while they are read. */
+async function candidatesOf(evaluationId: number): Promise<EvaluationCandidate[]> {
+  const candidates: EvaluationCandidate[] = [];
+  for (;;) {
+    const some = await EvaluationCandidate.findAll({
+      where: { evaluationId, rank: { [Op.gt]: candidates.at(-1)?.rank ?? 0 } },
+      order: [['rank', 'ASC']],
+      limit: ROWS_AT_A_TIME,
+    });
+    candidates.push(...some);
+    if (some.length < ROWS_AT_A_TIME) return candidates;
+  }
 }
 
 async function speaking(

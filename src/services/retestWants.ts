@@ -38,8 +38,11 @@ export interface Queue {
 
 type Seen = Sighting & { reading?: LoadedReading; row?: Retest; carried: boolean };
 
-/** Every item that a state's runs, and what was carried to it, ask for; and each it has that nothing asks for now. */
-export function wantedItems(queue: Queue): Wanted[] {
+/**
+ * Every item that a state's runs, and what was carried to it, ask for; and each it has that nothing asks for now. In
+ * turns, since a noisy prescan can leave thousands open.
+ */
+export function* wantedItems(queue: Queue): Generator<void, Wanted[]> {
   const { port, runs, carried, rows } = queue;
   const readings = runs.flatMap((run) => run.readings);
   const asking = readings.filter(({ verdict }) => verdict === 'over' || verdict === 'needs-final');
@@ -50,13 +53,14 @@ export function wantedItems(queue: Queue): Wanted[] {
   const needed = neededLines(queue);
   const swept = (lineKey: string) =>
     carried.length === 0 ? null : (position: RetestPosition) => sweptBy(port, runs, position, [lineKey]) !== null;
-  const emissions = [...keys].sort().flatMap((lineKey) => {
+  const emissions: Wanted[] = [];
+  for (const lineKey of [...keys].sort()) {
     const seen: Seen[] = [
       ...asking.filter(({ lineId }) => lineId === lineKey).map((reading) => ({ ...reading, reading, carried: false })),
       ...carried.filter((row) => row.lineKey === lineKey).map((row) => ({ ...sightingOf(row), row, carried: true })),
     ];
-    return ofOneLine(queue, lineKey, seen, swept(lineKey));
-  });
+    emissions.push(...(yield* ofOneLine(queue, lineKey, seen, swept(lineKey))));
+  }
   return [...emissions, ...repeats(queue, needed)];
 }
 
@@ -75,28 +79,41 @@ function saying({ from }: Queue, judged: Judgement<LoadedReading>) {
   return { status, says, runId: governing.runs.at(-1)?.id ?? null };
 }
 
-function ofOneLine(queue: Queue, lineKey: string, seen: Seen[], swept: ((p: RetestPosition) => boolean) | null) {
+/** Emissions judged before others get their turn. */
+const PER_TURN = 50;
+
+function* ofOneLine(
+  queue: Queue,
+  lineKey: string,
+  seen: Seen[],
+  swept: ((position: RetestPosition) => boolean) | null,
+): Generator<void, Wanted[]> {
   const { port, runs } = queue;
   const rows = queue.rows.filter((row) => row.lineKey === lineKey);
+  const known = rows.map(placeOf);
   const emissions = groupEmissions(seen);
-  const same = sameEmissions(rows.map(placeOf), emissions);
-  const voices = voicesOf(runs, lineKey, [...emissions, ...rows.map(placeOf)]);
-  const wanted = emissions.map((emission, i): Wanted => {
+  yield;
+  const same = sameEmissions(known, emissions);
+  yield;
+  const voices = voicesOf(runs, lineKey, [...emissions, ...known]);
+  const wanted: Wanted[] = [];
+  for (const [i, emission] of emissions.entries()) {
     const row = same[i] === null ? null : rows[same[i]!]!;
     const positions = [...new Set(emission.sightings.flatMap((one) => positionsAsked(port, one)))].sort(byName);
     const judged = judgeEmission(voices, { port, place: emission, positions, claimed: true, swept });
-    return wantOf(queue, row, emission, positions, judged);
-  });
-  const left = rows.filter((_, i) => !same.includes(i));
-  return [
-    ...wanted,
-    ...left.map((row): Wanted => {
-      const asked = { port, place: placeOf(row), positions: row.positions, claimed: false, swept };
-      const judged = judgeEmission(voices, asked);
-      const { finalId } = judged;
-      return { row, facts: { ...factsOf(row), waitsAt: [], finalId, originId: null }, ...saying(queue, judged) };
-    }),
-  ];
+    wanted.push(wantOf(queue, row, emission, positions, judged));
+    if (i % PER_TURN === 0) yield;
+  }
+  const taken = new Set(same);
+  for (const [i, row] of rows.entries()) {
+    if (taken.has(i)) continue;
+    const asked = { port, place: known[i]!, positions: row.positions, claimed: false, swept };
+    const judged = judgeEmission(voices, asked);
+    const { finalId } = judged;
+    wanted.push({ row, facts: { ...factsOf(row), waitsAt: [], finalId, originId: null }, ...saying(queue, judged) });
+    if (i % PER_TURN === 0) yield;
+  }
+  return wanted;
 }
 
 const byName = (a: RetestPosition, b: RetestPosition) => (String(a) < String(b) ? -1 : 1);

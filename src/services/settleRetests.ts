@@ -7,7 +7,9 @@ import { Retest } from '@/models/retest';
 import type { Sample } from '@/models/sample';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import { recordChange } from './audit';
+import { inTurns } from './inTurns';
 import { writeWanted, type Tally } from './retestChanges';
+import { retestRows } from './retestRows';
 import { speakingRuns } from './retestRuns';
 import { wantedItems } from './retestWants';
 
@@ -63,19 +65,19 @@ async function settleOne(
     order: [['position', 'ASC']],
   });
   const { planned } = state;
-  const ofState = (id: number) => Retest.findAll({ where: { stateId: id, port }, order: [['id', 'ASC']] });
-  const carried = planned ? [] : await Retest.findAll({ where: { carriedTo: state.id, port }, order: [['id', 'ASC']] });
+  const carried = planned ? [] : await retestRows({ carriedTo: state.id }, port);
   const earlier = carried.length > 0 ? before.map(({ id }) => id) : [];
   const from = before.at(-1);
-  const wanted = wantedItems({
+  const queue = {
     port,
     label: labelOf(state),
     runs: planned ? [] : await speakingRuns([state.id], port),
     earlier: earlier.length > 0 ? await speakingRuns(earlier, port) : [],
     carried,
     from: from ? labelOf(from) : null,
-    rows: await ofState(state.id),
-  });
+    rows: await retestRows({ stateId: state.id }, port),
+  };
+  const wanted = await inTurns(wantedItems(queue));
   const happening = { stateId: state.id, port, because, at, next: next && { id: next.id, label: labelOf(next) } };
   const tally = await writeWanted(actor, wanted, happening);
   if (Object.keys(tally).length > 0) await record(actor, state, { port, because, at }, tally);

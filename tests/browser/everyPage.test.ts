@@ -40,7 +40,9 @@ const tooWide = ({ page }: Window) =>
 /** Addresses of the records that the pages below show, looked up as the person who opens them. */
 async function pagesFor(window: Window, key: string): Promise<string[]> {
   const first = async (list: string) => {
-    const answer = await window.context.request.get(`${testOrigin()}/api/${list}?limit=1`);
+    const answer = await window.context.request.get(
+      `${testOrigin()}/api/${list}${list.includes('?') ? '&' : '?'}limit=1`,
+    );
     return ((await answer.json()) as { items: { id: string }[] }).items[0]!.id;
   };
   const over = await findRun(window, LD40_OVER);
@@ -69,12 +71,12 @@ async function pagesFor(window: Window, key: string): Promise<string[]> {
     '/sweeps/new',
     '/jobs/new',
     '/equipment',
-    `/equipment/${await first('equipment')}`,
+    `/equipment/${await first('equipment?find=ANT-02')}`,
     '/limits',
     `/limits/${await first('limit-lines')}`,
   ];
   if (key === 'mira') return lab;
-  const managers = [`/equipment/${await first('equipment')}/upload`, '/limits/new', '/limits/sets/new'];
+  const managers = [`/equipment/${await first('equipment?find=ANT-02')}/upload`, '/limits/new', '/limits/sets/new'];
   return [...lab, ...managers, '/people', '/people/new', `/people/${await first('people')}`];
 }
 
