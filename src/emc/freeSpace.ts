@@ -1,37 +1,41 @@
-/** Speed of light in vacuum, exact. Source: SI definition of the metre. */
-export const SPEED_OF_LIGHT_M_PER_S = 299_792_458;
+/** Speed of light in vacuum, m/s. Source: SI definition of the metre. */
+export const SPEED_OF_LIGHT = 299_792_458;
 
-/** Wave impedance of free space √(µ0/ε0). Source: CODATA 2018; printed as 376.73 Ω, and as 377 Ω or 120π Ω. */
-export const FREE_SPACE_IMPEDANCE_OHM = 376.730313668;
+/** Magnetic constant, H/m: 4π·10⁻⁷, which CODATA 2018 confirms to 1 part in 10⁹. */
+export const MAGNETIC_CONSTANT = 4e-7 * Math.PI;
 
-/** Free-space wavelength c/f in metres. Throws RangeError unless the frequency is finite and above zero. */
+/** Wave impedance of free space, ohm: μ0·c = 376.73. */
+export const WAVE_IMPEDANCE = MAGNETIC_CONSTANT * SPEED_OF_LIGHT;
+
+/**
+ * How the ground enters an estimate. `free-space`: the source alone. `ground-plane-doubled`: the reflected ray adds in
+ * phase and doubles the field, 6.02 dB, the most that a reflecting plane can do. Published formulas print either.
+ */
+export type GroundForm = 'free-space' | 'ground-plane-doubled';
+
+/** 1 or 2: what the form multiplies the field of the source alone by. */
+export function groundFactor(form: GroundForm): 1 | 2 {
+  return form === 'ground-plane-doubled' ? 2 : 1;
+}
+
+/** Wavelength in free space, m. Throws RangeError unless the frequency is finite and above zero. */
 export function wavelengthM(frequencyHz: number): number {
-  return SPEED_OF_LIGHT_M_PER_S / positive(frequencyHz, 'Hz', 'frequency');
+  return SPEED_OF_LIGHT / positive('Frequency', frequencyHz, 'Hz');
 }
 
 /**
- * Where the reactive field of a source that is small against the wavelength has faded: λ/2π, in metres. Source: field
- * of a short dipole, whose 1/r and 1/r² terms are equal there.
+ * Why the 1/r field of a small source does not hold at a distance, as a sentence, or null where it does: it needs at
+ * least λ/2π, where the near terms of a short dipole and a small loop are as large. Source: standard antenna theory
+ * texts, the fields of a Hertzian dipole.
  */
-export function smallSourceBoundaryM(frequencyHz: number): number {
-  return wavelengthM(frequencyHz) / (2 * Math.PI);
+export function nearFieldReason(frequencyHz: number, distanceM: number): string | null {
+  const boundaryM = wavelengthM(frequencyHz) / (2 * Math.PI);
+  if (positive('Distance', distanceM, 'm') >= boundaryM) return null;
+  return `${distanceM} m is nearer than a wavelength over 2π at ${frequencyHz} Hz, where the field does not fall as 1/r.`;
 }
 
-/** The frequency above which a distance lies beyond λ/2π: c/(2πd), in hertz. Throws RangeError on a distance of zero or less. */
-export function smallSourceBoundaryHz(distanceM: number): number {
-  return SPEED_OF_LIGHT_M_PER_S / (2 * Math.PI * positive(distanceM, 'm', 'distance'));
-}
-
-/**
- * Where the far field of a source of largest extent D begins: 2D²/λ, in metres. Source: the outer parts of the source
- * are then no more than λ/16 farther away than its middle. Throws RangeError on an extent of zero or less.
- */
-export function largeSourceBoundaryM(frequencyHz: number, extentM: number): number {
-  return (2 * positive(extentM, 'm', 'extent') ** 2) / wavelengthM(frequencyHz);
-}
-
-/** The figure itself. Throws RangeError, naming it, unless it is finite and above zero. */
-export function positive(figure: number, unit: string, what: string): number {
-  if (!(figure > 0 && Number.isFinite(figure))) throw new RangeError(`${figure} ${unit} is no ${what}.`);
-  return figure;
+/** The value itself. Throws RangeError, naming it, unless it is finite and above zero. */
+export function positive(name: string, value: number, unit: string): number {
+  if (!(value > 0 && Number.isFinite(value))) throw new RangeError(`${name} ${value} ${unit} is not above zero.`);
+  return value;
 }
