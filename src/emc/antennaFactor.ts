@@ -1,4 +1,4 @@
-import { FREE_SPACE_IMPEDANCE_OHM, positive, wavelengthM } from './freeSpace';
+import { positive, WAVE_IMPEDANCE, wavelengthM } from './freeSpace';
 
 /**
  * Antenna factor in dB/m of an antenna with gain G (dBi, mismatch and loss included) into a load: AF = √(4π Z0/(G R))/λ,
@@ -15,6 +15,6 @@ export function gainFromAntennaFactor(frequencyHz: number, antennaFactorDbPerM: 
 }
 
 function isotropicFactorDb(frequencyHz: number, loadOhm: number): number {
-  const ratio = (4 * Math.PI * FREE_SPACE_IMPEDANCE_OHM) / positive(loadOhm, 'ohm', 'load');
+  const ratio = (4 * Math.PI * WAVE_IMPEDANCE) / positive('Load', loadOhm, 'ohm');
   return 10 * Math.log10(ratio) - 20 * Math.log10(wavelengthM(frequencyHz));
 }

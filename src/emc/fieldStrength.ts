@@ -1,4 +1,4 @@
-import { FREE_SPACE_IMPEDANCE_OHM, positive } from './freeSpace';
+import { positive, WAVE_IMPEDANCE } from './freeSpace';
 
 // Far field in free space throughout: no ground reflection, beyond `smallSourceBoundaryM` and `largeSourceBoundaryM`.
 
@@ -11,7 +11,7 @@ const EIRP_AT_1_M_DB = 120 + 10 * Math.log10(30e-3);
 /** Gain of a half-wave dipole over an isotropic radiator as ERP counts it; computed 2.151 dBi, printed 2.15 or 2.14. */
 export const HALF_WAVE_DIPOLE_DBI = 2.15;
 
-const Z0_DB_OHM = 20 * Math.log10(FREE_SPACE_IMPEDANCE_OHM);
+const Z0_DB_OHM = 20 * Math.log10(WAVE_IMPEDANCE);
 
 /** EIRP in dBm to dBµV/m at a distance: E = √(30 P)/d. Throws RangeError on a distance of zero or less. */
 export function fieldFromEirp(eirpDbm: number, distanceM: number): number {
@@ -69,5 +69,5 @@ export function powerFluxFromField(fieldDbuvPerM: number): number {
 }
 
 function spreadingDb(distanceM: number): number {
-  return 20 * Math.log10(positive(distanceM, 'm', 'distance'));
+  return 20 * Math.log10(positive('Distance', distanceM, 'm'));
 }

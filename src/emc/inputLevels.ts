@@ -28,7 +28,7 @@ export function dbuvFromDbua(levelDbua: number, impedanceOhm: number): number {
 
 /** An impedance in dBΩ: 20 log10(Z/Ω). Source: definition. */
 export function impedanceDbOhm(impedanceOhm: number): number {
-  return 20 * Math.log10(positive(impedanceOhm, 'ohm', 'impedance'));
+  return 20 * Math.log10(positive('Impedance', impedanceOhm, 'ohm'));
 }
 
 /** 1 mW is 10⁹ pW. */
@@ -55,5 +55,5 @@ export function voltsFromDbuv(levelDbuv: number): number {
 }
 
 function dbmToDbuv(impedanceOhm: number): number {
-  return 90 + 10 * Math.log10(positive(impedanceOhm, 'ohm', 'impedance'));
+  return 90 + 10 * Math.log10(positive('Impedance', impedanceOhm, 'ohm'));
 }

@@ -48,8 +48,8 @@ describe('antenna factor and gain', () => {
   });
 
   test('what is no frequency or no load is refused', () => {
-    expect(() => antennaFactorFromGain(0, 0, 50)).toThrow(new RangeError('0 Hz is no frequency.'));
-    expect(() => antennaFactorFromGain(1e6, 0, -50)).toThrow(new RangeError('-50 ohm is no load.'));
-    expect(() => gainFromAntennaFactor(1e6, 0, 0)).toThrow(new RangeError('0 ohm is no load.'));
+    expect(() => antennaFactorFromGain(0, 0, 50)).toThrow(new RangeError('Frequency 0 Hz is not above zero.'));
+    expect(() => antennaFactorFromGain(1e6, 0, -50)).toThrow(new RangeError('Load -50 ohm is not above zero.'));
+    expect(() => gainFromAntennaFactor(1e6, 0, 0)).toThrow(new RangeError('Load 0 ohm is not above zero.'));
   });
 });

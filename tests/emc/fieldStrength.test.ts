@@ -69,7 +69,7 @@ describe('field strength from radiated power and back (free space, far field)', 
 
   test('a distance of zero or less is refused', () => {
     for (const distanceM of [0, -3, NaN]) {
-      expect(() => fieldFromEirp(0, distanceM)).toThrow(new RangeError(`${distanceM} m is no distance.`));
+      expect(() => fieldFromEirp(0, distanceM)).toThrow(new RangeError(`Distance ${distanceM} m is not above zero.`));
       expect(() => eirpFromField(0, distanceM)).toThrow(RangeError);
     }
   });

@@ -59,7 +59,7 @@ describe('voltage, current and power at an input', () => {
 
   test('an impedance of zero or less is refused, a voltage of zero has no level', () => {
     for (const ohm of [0, -50, NaN, Infinity]) {
-      expect(() => dbuvFromDbmAcross(0, ohm)).toThrow(new RangeError(`${ohm} ohm is no impedance.`));
+      expect(() => dbuvFromDbmAcross(0, ohm)).toThrow(new RangeError(`Impedance ${ohm} ohm is not above zero.`));
       expect(() => dbuaFromDbuv(0, ohm)).toThrow(RangeError);
     }
     expect(dbuvFromVolts(0)).toBeNull();

@@ -1,19 +1,14 @@
 import conversions from '@fixtures/published/conversions.json';
 import fc from 'fast-check';
-import {
-  FREE_SPACE_IMPEDANCE_OHM,
-  largeSourceBoundaryM,
-  smallSourceBoundaryHz,
-  smallSourceBoundaryM,
-  wavelengthM,
-} from '@/emc/freeSpace';
+import { WAVE_IMPEDANCE, wavelengthM } from '@/emc/freeSpace';
+import { largeSourceBoundaryM, smallSourceBoundaryHz, smallSourceBoundaryM } from '@/emc/nearField';
 
 const { nearField, constants } = conversions;
 
 describe('wavelength and the borders of the near field', () => {
   test('Z0 is 376.7303137 ohm (CODATA values, computed)', () => {
     const published = constants.rows.find((row) => row.name === 'Z0 free space')!.valueOhm!;
-    expect(FREE_SPACE_IMPEDANCE_OHM).toBeCloseTo(published, 6);
+    expect(WAVE_IMPEDANCE).toBeCloseTo(published, 6);
   });
 
   test.each(nearField.rows)('$freqMHz MHz: wavelength and lambda/2pi (computed table)', (row) => {
@@ -44,9 +39,9 @@ describe('wavelength and the borders of the near field', () => {
 
   test('what is no frequency, distance or extent is refused by name', () => {
     for (const figure of [0, -1, NaN, Infinity]) {
-      expect(() => wavelengthM(figure)).toThrow(new RangeError(`${figure} Hz is no frequency.`));
-      expect(() => smallSourceBoundaryHz(figure)).toThrow(new RangeError(`${figure} m is no distance.`));
-      expect(() => largeSourceBoundaryM(1e6, figure)).toThrow(new RangeError(`${figure} m is no extent.`));
+      expect(() => wavelengthM(figure)).toThrow(new RangeError(`Frequency ${figure} Hz is not above zero.`));
+      expect(() => smallSourceBoundaryHz(figure)).toThrow(new RangeError(`Distance ${figure} m is not above zero.`));
+      expect(() => largeSourceBoundaryM(1e6, figure)).toThrow(new RangeError(`Extent ${figure} m is not above zero.`));
     }
   });
 });
