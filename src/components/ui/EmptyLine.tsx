@@ -12,7 +12,7 @@ export function EmptyLine({
   className?: string;
 }) {
   return (
-    <div className={classes('border-b border-rule py-2', className)}>
+    <div className={classes('empty-line border-b border-rule py-2', className)}>
       <p className="t-text font-semibold">{lead}</p>
       {children && <p className="t-detail">{children}</p>}
     </div>
