@@ -1,5 +1,4 @@
-/** How long one scan takes: a dwell at each frequency, a time for the whole of it, or a rate. */
-export type ScanTime = { dwellS: number } | { scanS: number } | { secondsPerHz: number };
+import { scanSeconds, secondsOf, type ScanRange } from './scanTime';
 
 /** How often something is done, and how long it takes to go from one to the next. */
 export interface Positions {
@@ -8,15 +7,9 @@ export interface Positions {
 }
 
 /** One range that is scanned with one antenna or network; each position is scanned once. */
-export interface ScanPlan {
+export interface ScanPlan extends ScanRange {
   /** e.g. `30-300 MHz, biconical` */
   name: string;
-  startHz: number;
-  stopHz: number;
-  bandwidthHz: number;
-  /** Distance of the frequencies a dwell is spent at; half the bandwidth where a plan says so. */
-  step: { stepHz: number } | 'half the bandwidth';
-  time: ScanTime;
   /** Connecting and checking before the first scan. */
   setUpS: number;
   lines: Positions;
@@ -76,33 +69,6 @@ export interface BenchTime {
   totalS: number;
 }
 
-/** A step that is short of the stop by less than this part of itself has reached it. */
-const HAIR = 1e-9;
-
-/**
- * Frequencies from start to stop, both ends included; the last step may be shorter. Throws RangeError on no range and
- * on a step that is not above 0.
- */
-export function frequencyCount(startHz: number, stopHz: number, stepHz: number): number {
-  if (!(startHz > 0 && stopHz > startHz && Number.isFinite(stopHz))) {
-    throw new RangeError(`${startHz} to ${stopHz} Hz is no range.`);
-  }
-  if (!(stepHz > 0 && Number.isFinite(stepHz))) throw new RangeError(`A step of ${stepHz} Hz is none.`);
-  return Math.ceil((stopHz - startHz) / stepHz - HAIR) + 1;
-}
-
-/** Seconds of one scan of a range. Throws RangeError on a range, a step, a bandwidth or a time that is none. */
-export function scanSeconds(plan: Pick<ScanPlan, 'startHz' | 'stopHz' | 'bandwidthHz' | 'step' | 'time'>): number {
-  const { startHz, stopHz, bandwidthHz, step, time } = plan;
-  if (!(bandwidthHz > 0 && Number.isFinite(bandwidthHz))) {
-    throw new RangeError(`A bandwidth of ${bandwidthHz} Hz is none.`);
-  }
-  const points = frequencyCount(startHz, stopHz, step === 'half the bandwidth' ? bandwidthHz / 2 : step.stepHz);
-  if ('dwellS' in time) return points * someOf(time.dwellS, 'dwell');
-  if ('scanS' in time) return someOf(time.scanS, 'scan');
-  return (stopHz - startHz) * someOf(time.secondsPerHz, 'rate per hertz');
-}
-
 /**
  * Bench time of a plan as lines that add up. Every line, polarisation, height and azimuth is scanned with every other,
  * going back and forth, so that between two scans exactly one of them changes: lines outermost, azimuths innermost.
@@ -140,14 +106,4 @@ export function benchTime({ setUpS, scans, finals }: BenchPlan): BenchTime {
     add('final reading', name, count, readS);
   }
   return { lines, totalS: lines.reduce((sum, { seconds }) => sum + seconds, 0) };
-}
-
-function secondsOf(seconds: number, of: string): number {
-  if (seconds >= 0 && Number.isFinite(seconds)) return seconds;
-  throw new RangeError(`${seconds} s is no time (${of}).`);
-}
-
-function someOf(seconds: number, of: string): number {
-  if (secondsOf(seconds, of) > 0) return seconds;
-  throw new RangeError(`0 s is no time (${of}).`);
 }
