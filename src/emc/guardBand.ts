@@ -16,7 +16,7 @@ export interface Stated {
 
 /**
  * Probability that the true level is at or under an upper limit, given the level that was read: Φ((limit − level) / u)
- * with u = U / k, normal and without prior knowledge. Source: ISO/IEC Guide 98-4 (JCGM 106:2012) 7.4. Throws
+ * with u = U / k, normal and without prior knowledge. Source: ISO/IEC Guide 98-4 (JCGM 106:2012) clause 7. Throws
  * RangeError on figures that are none; without uncertainty there is no probability.
  */
 export function conformityProbability({ level, limit, expandedUDb, k = 2 }: Stated): number {
@@ -26,7 +26,7 @@ export function conformityProbability({ level, limit, expandedUDb, k = 2 }: Stat
   return normalCdf((limit - level) / standardOf(expandedUDb, k));
 }
 
-/** Specific risk that a level accepted as under is over: what is left of the probability. Source: JCGM 106:2012 9.3. */
+/** Specific risk that a level accepted as under is over: what is left of the probability. Source: JCGM 106:2012 clause 9. */
 export function falseAcceptRisk({ level, limit, expandedUDb, k = 2 }: Stated): number {
   // Mirrored instead of 1 − p, so that a small risk keeps its digits.
   return conformityProbability({ level: -level, limit: -limit, expandedUDb, k });

@@ -19,7 +19,7 @@ const THROUGH: TwoPort = { s11: 0, s21: 1, s22: 0 };
 
 /**
  * Bounds of the mismatch error between two reflection coefficients, as magnitudes from 0 to below 1:
- * 20 log10(1 ± |Γs||Γl|) (LAB34 3.4.3), and through a two-port
+ * 20 log10(1 ± |Γs||Γl|) (LAB34 3.4.3), and through a passive two-port
  * 20 log10(1 ± (|Γs||S11| + |Γl||S22| + |Γs||Γl||S11||S22| + |Γs||Γl||S21|²)) (CISPR 16-4-2 Annex A, from memory).
  * Throws RangeError on a magnitude outside, and where the sum reaches 1 and leaves no lower bound.
  */
