@@ -18,7 +18,7 @@ export const ENVELOPE_END = 13;
 const ENVELOPE_STEPS = 130;
 /** Steps per shorter time constant between pulses, and of the charge time. */
 const GAP_STEPS = 60;
-const CHARGE_STEPS = 400;
+const CHARGE_STEPS = 100;
 /** Longer time constants until the deflection repeats: e⁻⁹ is 10⁻⁴. */
 const SETTLED = 9;
 
