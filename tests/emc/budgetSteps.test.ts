@@ -69,6 +69,20 @@ describe('a prescan is never more certain than a final', () => {
     ]);
   });
 
+  test('a step of the prescan alone parts them too', () => {
+    expect(prescanBelowFinal([step(1, 6, 3), step(6, 10, 4)], [step(1, 10, 5)])).toEqual([
+      { fromHz: 1, toHz: 6, prescanDb: 3, finalDb: 5 },
+      { fromHz: 6, toHz: 10, prescanDb: 4, finalDb: 5 },
+    ]);
+  });
+
+  test('an edge between two such stretches is not named once more', () => {
+    expect(prescanBelowFinal([step(1, 6, 3), step(6, 10, 4)], [step(1, 6, 7), step(6, 10, 5)])).toEqual([
+      { fromHz: 1, toHz: 6, prescanDb: 3, finalDb: 7 },
+      { fromHz: 6, toHz: 10, prescanDb: 4, finalDb: 5 },
+    ]);
+  });
+
   test('a single frequency that only the two ends share is named too', () => {
     expect(prescanBelowFinal([step(1, 4, 4)], [step(4, 10, 5)])).toEqual([
       { fromHz: 4, toHz: 4, prescanDb: 4, finalDb: 5 },
