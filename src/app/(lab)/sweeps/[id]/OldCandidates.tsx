@@ -20,6 +20,7 @@ export function OldCandidates({ sweepId, evaluation }: { sweepId: string; evalua
     setWrong(!response?.ok);
     if (response?.ok) setCandidates(((await response.json()) as { items: CandidateView[] }).items);
   }
+  if (evaluation.candidates === 0) return <>No candidates.</>;
   if (!candidates) {
     return (
       <>
