@@ -1,5 +1,6 @@
-import { findClockFamilies, type ClockFamily } from './clockFamilies';
+import { findClockFamilies } from './clockFamilies';
 import { attributeHarmonics, type DeclaredClock, type HarmonicMatch, type SeenEmission } from './clockHarmonics';
+import type { ClockFamily } from './familyFit';
 import { findSidebands, type SidebandMatch, type SwitchingConverter } from './sidebands';
 
 export interface LikelySource {

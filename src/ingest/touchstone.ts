@@ -1,20 +1,6 @@
-import type { FactorColumn } from './factorTable';
-import { IngestError } from './ingestError';
-import { signOf } from './lossOrGain';
 import { shifted } from './numbers';
-import type { Question } from './types';
+import { AGAIN, numberOf, TouchstoneError, wordsOf, type Options, type Word } from './touchstoneWords';
 import { TO_HZ, type FrequencyUnit } from './units';
-
-/** A network-parameter file that cannot be had, with the 1-based column of the word that is wrong. */
-export class TouchstoneError extends IngestError {
-  readonly column: number | null;
-
-  constructor(at: { line: number; column: number } | null, found: string, expected: string, next: string) {
-    const where = at ? `Line ${at.line}, column ${at.column}: ` : '';
-    super(at?.line ?? null, found, expected, `${where}${found}. ${next}`);
-    this.column = at?.column ?? null;
-  }
-}
 
 /** One parameter over frequency. */
 export interface NetworkParameter {
@@ -34,21 +20,6 @@ export interface NetworkFile {
   /** Null for one port, which has no transmission. */
   s21: NetworkParameter | null;
 }
-
-interface Word {
-  text: string;
-  line: number;
-  column: number;
-}
-interface Options {
-  unit: FrequencyUnit;
-  format: 'DB' | 'MA' | 'RI';
-  referenceOhm: number;
-}
-
-const UNITS: Record<string, FrequencyUnit> = { HZ: 'Hz', KHZ: 'kHz', MHZ: 'MHz', GHZ: 'GHz' };
-const NUMBER = /^[+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d{1,3})?$/;
-const AGAIN = 'Export the file again.';
 
 /** Ports by the ending of a file's name, `.s1p` or `.s2p`; null for any other. */
 export function portsByName(name: string): 1 | 2 | null {
@@ -92,82 +63,6 @@ export function readTouchstone(text: string, ports: 1 | 2): NetworkFile {
   return { ports, referenceOhm: options.referenceOhm, frequencyHz, s11: parameter(0, 'S11'), s21 };
 }
 
-/**
- * S21 as a table of corrections, to be settled as every other (`settleFactor`). Figures all at or below zero are a
- * loss; whether positive ones are what a part gains or a loss written without its sign is asked.
- * @throws TouchstoneError for a one-port, which has no S21, and where S21 is zero, which has no decibels
- */
-export function touchstoneColumn(file: NetworkFile): FactorColumn {
-  if (!file.s21) throw new TouchstoneError(null, 'a one-port file', 'a two-port file', 'Only S21 is a loss or a gain.');
-  const writtenDb = file.s21.magnitudeDb.map((db, i) => {
-    if (db !== null) return db;
-    const found = `S21 is zero at ${file.frequencyHz[i]} Hz`;
-    throw new TouchstoneError(null, found, 'a magnitude above zero', 'It has no decibels. Measure the part again.');
-  });
-  const said = writtenDb.some((db) => db > 0) ? { quantity: null, negate: false } : signOf('S21', 'dB', writtenDb);
-  return { name: 'S21', frequencyHz: file.frequencyHz, writtenDb, said, unit: 'dB', unitStated: true, turned: false };
-}
-
-/** What has to be asked before the table is used: nothing for a loss, else loss or gain, with what is likelier. */
-export function touchstoneQuestions(column: FactorColumn): Question[] {
-  if (column.said.quantity !== null) return [];
-  const { writtenDb } = column;
-  const mixed = writtenDb.some((db) => db > 0) && writtenDb.some((db) => db < 0);
-  const text = `“S21” is ${mixed ? 'partly above' : 'above'} 0 dB, as through an amplifier, or as a loss written without its sign. Which is it?`;
-  return [{ key: 'lossOrGain', text, proposal: 'gain', traceIndex: 1 }];
-}
-
-function wordsOf(text: string): { options: Options; words: Word[] } {
-  let options: Options | null = null;
-  const words: Word[] = [];
-  text
-    .replace(/^\ufeff/, '')
-    .split(/\r\n|\r|\n/)
-    .forEach((written, i) => {
-      const onLine = [...written.replace(/!.*$/, '').matchAll(/\S+/g)].map((match): Word => ({
-        text: match[0],
-        line: i + 1,
-        column: match.index + 1,
-      }));
-      const [first] = onLine;
-      if (!first) return;
-      if (first.text.startsWith('#')) options ??= optionsOf(onLine);
-      else if (first.text.startsWith('[')) {
-        throw new TouchstoneError(first, `${first.text} is of version 2`, 'a version 1 file', 'Export as version 1.');
-      } else if (!options) {
-        throw new TouchstoneError(first, 'numbers without an option line', 'a line such as # GHz S MA R 50', AGAIN);
-      } else words.push(...onLine);
-    });
-  if (!options) throw new TouchstoneError(null, 'no option line', 'a line such as # GHz S MA R 50', AGAIN);
-  return { options, words };
-}
-
-/** `#` alone is GHz S MA R 50; each word replaces its own default. */
-function optionsOf([mark, ...rest]: Word[]): Options {
-  const options: Options = { unit: 'GHz', format: 'MA', referenceOhm: 50 };
-  const glued = mark!.text.length > 1 ? [{ ...mark!, text: mark!.text.slice(1), column: mark!.column + 1 }] : [];
-  const words = [...glued, ...rest];
-  for (let i = 0; i < words.length; i++) {
-    const word = words[i]!;
-    const upper = word.text.toUpperCase();
-    if (UNITS[upper]) options.unit = UNITS[upper];
-    else if (upper === 'DB' || upper === 'MA' || upper === 'RI') options.format = upper;
-    else if (upper === 'R') {
-      const ohm = words[++i];
-      const value = ohm ? numberOf(ohm) : 0;
-      if (!(value > 0)) {
-        throw new TouchstoneError(ohm ?? word, 'R without a resistance above zero', 'R and a number of ohms', AGAIN);
-      }
-      options.referenceOhm = value;
-    } else if (/^[YZGH]$/.test(upper)) {
-      throw new TouchstoneError(word, `${upper} parameters`, 'S parameters', 'Export S parameters.');
-    } else if (upper !== 'S') {
-      throw new TouchstoneError(word, `“${word.text}” is no option`, 'unit, S, DB, MA or RI, R and ohms', AGAIN);
-    }
-  }
-  return options;
-}
-
 /** Noise parameters follow a two-port's data, five to a line, from where the frequency no longer rises. */
 function withoutNoise(words: Word[], width: number): Word[] {
   for (let from = width; from < words.length; from += width) {
@@ -181,12 +76,6 @@ function withoutNoise(words: Word[], width: number): Word[] {
     }
   }
   return words;
-}
-
-function numberOf(word: Word): number {
-  const value = NUMBER.test(word.text) ? Number(word.text) : NaN;
-  if (Number.isFinite(value)) return value;
-  throw new TouchstoneError(word, `“${word.text}” is no number`, 'a number with a decimal point', AGAIN);
 }
 
 function frequencyOf(word: Word, unit: FrequencyUnit): number {

@@ -1,5 +1,6 @@
-import { findClockFamilies, LEAST_MEMBERS, MOST_BY_CHANCE, type ClockFamily } from '@/emc/clockFamilies';
+import { findClockFamilies, MOST_BY_CHANCE } from '@/emc/clockFamilies';
 import type { SeenEmission } from '@/emc/clockHarmonics';
+import { LEAST_MEMBERS, type ClockFamily } from '@/emc/familyFit';
 import { likelySources } from '@/emc/likelySources';
 import { repeatable } from './given';
 import { madeSpectrum, type SpectrumRecipe } from './spectra';

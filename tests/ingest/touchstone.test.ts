@@ -1,13 +1,9 @@
 import fc from 'fast-check';
 import { settleFactor } from '@/ingest/factorTable';
 import { IngestError } from '@/ingest/ingestError';
-import {
-  portsByName,
-  readTouchstone,
-  touchstoneColumn,
-  TouchstoneError,
-  touchstoneQuestions,
-} from '@/ingest/touchstone';
+import { portsByName, readTouchstone } from '@/ingest/touchstone';
+import { touchstoneColumn, touchstoneQuestions } from '@/ingest/touchstoneColumn';
+import { TouchstoneError } from '@/ingest/touchstoneWords';
 
 const DATA = '100 0.1 10 0.5 -90 0.5 -90 0.2 5\n200 0.1 11 0.25 -180 0.25 -180 0.2 6\n';
 const two = (text: string) => readTouchstone(text, 2);
