@@ -54,6 +54,12 @@ describe('noise floor against the limit', () => {
     expect(found.figures.leastAtHz).toBe(500e3);
   });
 
+  test('a piece that ends within a slope is held against the limit there: 60.2428 dBuV at 0.3 MHz (class B mains)', () => {
+    const { leastDistanceDb, leastAtHz } = floorFinding(mains, [piece(0.2, 0.3, 50)]).figures;
+    expect(leastDistanceDb).toBeCloseTo(10.2428, 4);
+    expect(leastAtHz).toBe(300e3);
+  });
+
   test('a rising limit and one straight in frequency are near below their crossing', () => {
     const rising = lineOf([[30, 300, 45, 55]]);
     const straight = { ...rising, segments: rising.segments.map((s) => ({ ...s, over: 'linear-frequency' as const })) };
