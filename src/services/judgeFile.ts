@@ -125,9 +125,19 @@ export interface Gathered {
   lines: LimitLineView[];
 }
 
+/** The set, null where the lab has none of that id. Throws Invalid for one withdrawn, naming what stands in its place. */
+async function limitSetInUse(publicId: string): Promise<LimitSet | null> {
+  const limitSet = await LimitSet.findOne({ where: { publicId } });
+  if (!limitSet?.withdrawnAt) return limitSet;
+  const { name, port, revision } = limitSet;
+  const now = await LimitSet.findOne({ where: { name, port, withdrawnAt: null }, order: [['revision', 'DESC']] });
+  const instead = now ? `; revision ${now.revision} of ${name} stands now, choose it` : '; choose another set';
+  throw new Invalid([{ pointer: '/limitSetId', message: `was withdrawn (revision ${revision})${instead}` }]);
+}
+
 /** What a choice refers to, checked; queries only. `at` decides which revision of the path applies. Throws Invalid. */
 export async function gather(recognition: Recognition, choice: SweepChoice, at: Date): Promise<Gathered> {
-  const limitSet = await LimitSet.findOne({ where: { publicId: choice.limitSetId, withdrawnAt: null } });
+  const limitSet = await limitSetInUse(choice.limitSetId);
   const path = await pathAt(choice.pathId, at);
   check(choice, recognition, limitSet, path);
   const lines = (await linesOf([limitSet])).get(limitSet.id)!;

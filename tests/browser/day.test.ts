@@ -138,7 +138,7 @@ test(
     await page.getByText('An AMN passes a large leakage current to protective earth.', { exact: false }).waitFor();
     await page.getByRole('button', { name: /TP-9 M0, .*, you, position A/ }).click();
     await page.getByText('Chamber door').waitFor();
-    const upload = page.getByRole('link', { name: /Upload to TP-9 M0/ });
+    const upload = page.getByRole('link', { name: /Start a run of TP-9 M0/ });
     expect(await upload.getAttribute('href')).toMatch(/^\/sweeps\/new\?state=[0-9a-z]{16}$/);
     expect([...(await violations(window)), ...window.complaints]).toEqual([]);
     await window.context.close();

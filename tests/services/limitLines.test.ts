@@ -110,7 +110,9 @@ test('a revised line: chosen sets follow, the old set leaves the choice and stay
   expect((await readSweep(manager.actor, world.run.id)).limitSet.lines.map(({ id }) => id)).toEqual([old().publicId]);
   const file = await createSweepFile(technician.actor, sweepFile());
   const run = { ...world.choice, ...world.about, fileId: file.id };
-  await expect(keepSweep(technician.actor, run)).rejects.toMatchObject({ issues: [{ pointer: '/limitSetId' }] });
+  await expect(keepSweep(technician.actor, run)).rejects.toMatchObject({
+    issues: [{ pointer: '/limitSetId', message: expect.stringContaining('revision 2 of CISPR 32 class B radiated') }],
+  });
   const later = await keepSweep(technician.actor, { ...run, limitSetId: entered.sets[0]!.id });
   expect(later.limitSet.lines.map(({ id }) => id)).toEqual([entered.line.id]);
 

@@ -88,10 +88,10 @@ export function ChosenBooking({ booking, standing, view, nowMs, choices, upload 
         {upload && (
           <ButtonLink
             kind={choices ? 'plain' : 'primary'}
-            keyName="U"
+            keyName={fitted ? 'S' : 'U'}
             href={fitted ? `/sweeps/new?state=${state.id}` : '/sweeps/new'}
           >
-            {fitted ? `Upload to ${product.code} ${state.label}` : 'Upload sweep files'}
+            {fitted ? `Start a run of ${product.code} ${state.label}` : 'Upload sweep files'}
           </ButtonLink>
         )}
       </div>

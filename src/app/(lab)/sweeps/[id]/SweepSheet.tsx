@@ -6,7 +6,7 @@ import type { ListedRun } from '@/app/(lab)/compare/runLabel';
 import type { HistoryLine } from '@/app/(lab)/jobs/HistoryLines';
 import type { NotesPage } from '@/app/(lab)/notes/Notes';
 import { notesSection } from '@/app/(lab)/notes/notesSection';
-import { retestsSection } from '@/app/(lab)/retests/runRetests';
+import { finalsToMeasure, retestsSection } from '@/app/(lab)/retests/runRetests';
 import { ChartLegend } from '@/components/charts/ChartLegend';
 import { chartSubject } from '@/components/charts/chartSubject';
 import type { ChartMode } from '@/components/charts/marginSeries';
@@ -110,6 +110,7 @@ export function SweepSheet(props: Props) {
   useKey('W', () => void (selected && show(selected)), { says: 'working', when: selected !== null });
   useKey('Enter', () => void (selected && show(selected)), { when: selected !== null, weak: true });
 
+  const finals = finalsToMeasure(retests, sweep.id);
   const current = selected ? `${formatMargin(selected.marginDb)} at ${formatFrequency(selected.frequencyHz)}` : null;
 
   return (
@@ -139,9 +140,20 @@ export function SweepSheet(props: Props) {
           finding={runFinding(sweep, zone)}
           actions={
             lab ? (
-              <ButtonLink kind="primary" keyName="U" href={`/sweeps/new?state=${sweep.state.id}`}>
-                Upload sweep files
-              </ButtonLink>
+              <>
+                <ButtonLink
+                  kind={finals ? undefined : 'primary'}
+                  keyName="U"
+                  href={`/sweeps/new?state=${sweep.state.id}`}
+                >
+                  Upload sweep files
+                </ButtonLink>
+                {finals && (
+                  <ButtonLink kind="primary" keyName="F" href={finals.href}>
+                    {finals.act}
+                  </ButtonLink>
+                )}
+              </>
             ) : undefined
           }
         />
