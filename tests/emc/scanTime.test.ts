@@ -69,3 +69,30 @@ describe('one scan', () => {
       expect(scanSeconds({ ...bandOf('C'), step: { stepHz }, time: { scanS: 12.5 } })).toBe(12.5);
   });
 });
+
+test('what binary leaves of decimals is no step more', () => {
+  expect((1.1 - 0.8) / 0.1).toBeGreaterThan(3);
+  expect(frequencyCount(0.8, 1.1, 0.1)).toBe(4);
+});
+
+describe('what is no scan is refused by name', () => {
+  const range = { ...bandOf('C'), step: { stepHz: 60e3 }, time: { scanS: 1 } };
+
+  test('ranges, steps and bandwidths', () => {
+    for (const startHz of [0, -1, NaN, 300e6])
+      expect(() => scanSeconds({ ...range, startHz })).toThrow(`${startHz} to`);
+    expect(() => scanSeconds({ ...range, stopHz: Infinity })).toThrow('to Infinity Hz');
+    for (const wrong of [0, -1, NaN, Infinity]) {
+      expect(() => scanSeconds({ ...range, step: { stepHz: wrong } })).toThrow(`step of ${wrong} Hz`);
+      expect(() => scanSeconds({ ...range, bandwidthHz: wrong })).toThrow(`bandwidth of ${wrong} Hz`);
+    }
+  });
+
+  test('times: a scan takes some', () => {
+    for (const wrong of [0, -1, NaN, Infinity]) {
+      expect(() => scanSeconds({ ...range, time: { dwellS: wrong } })).toThrow(`${wrong} s is no time (dwell)`);
+      expect(() => scanSeconds({ ...range, time: { scanS: wrong } })).toThrow(`${wrong} s is no time (scan)`);
+      expect(() => scanSeconds({ ...range, time: { secondsPerHz: wrong } })).toThrow(`${wrong} s is no time`);
+    }
+  });
+});
