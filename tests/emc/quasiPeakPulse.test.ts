@@ -6,14 +6,15 @@ import {
   quasiPeakBelowPeakDb,
   quasiPeakOfPulsesDbuv,
   relativePulseResponseDb,
+  type PulseRate,
 } from '@/emc/quasiPeakPulse';
 
 const of = (band: string) => QUASI_PEAK_RECEIVERS[band as keyof typeof QUASI_PEAK_RECEIVERS];
-const rateOf = (key: string) => (key === 'isolated' ? key : Number(key));
+const rateOf = (key: string): PulseRate => (key === 'isolated' ? 'isolated' : Number(key));
 const RESPONSES = receiver.qpPulseResponse.tables.flatMap(({ band, tableDb, toleranceDb, modelDb }) =>
   Object.entries(modelDb).map(([key, model]) => {
-    const [tabulated, tolerance] = [tableDb, toleranceDb].map((table) => (table as Record<string, number>)[key]!);
-    return { band, key, rate: rateOf(key), tabulated: tabulated!, tolerance: tolerance!, model };
+    const entry = (table: Record<string, number | undefined>) => table[key]!;
+    return { band, key, rate: rateOf(key), tabulated: entry(tableDb), tolerance: entry(toleranceDb), model: model! };
   }),
 );
 
