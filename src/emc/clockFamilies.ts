@@ -55,9 +55,7 @@ function mostCertain(lines: readonly Line[], found: readonly ClockFamily[]): Clo
     const usual = fundamentalHz <= lowestLineHz ? widthsHz / fundamentalHz : 0;
     if (harmonics - 1 <= usual + 2 * Math.sqrt(usual)) return Infinity;
     // One emission lies right because the fundamental was taken from it.
-    return (
-      tried.length * tried[octaveOf(fundamentalHz)]! * atLeastByChance(harmonics - 1, chancesAt(lines, fundamentalHz))
-    );
+    return octaves * tried[octaveOf(fundamentalHz)]! * atLeastByChance(harmonics - 1, chancesAt(lines, fundamentalHz));
   };
 
   let best: { range: Range; byChance: number } | null = null;

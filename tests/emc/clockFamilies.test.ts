@@ -50,6 +50,15 @@ describe('unknown families of harmonics', () => {
     expect(findClockFamilies([at(75e6), at(75.02e6), at(125e6), at(175e6)])).toEqual([]);
   });
 
+  test('half the bandwidth counts as within it: members may leave one single fundamental', () => {
+    const of = (apartHz: number) =>
+      findClockFamilies([at(75e6 + apartHz), at(125e6 - apartHz), at(175e6), at(200e6)]).map(
+        ({ lowestHz, highestHz, members }) => [lowestHz, highestHz, members.length],
+      );
+    expect(of(60e3)).toEqual([[25e6, 25e6, 4]]);
+    expect(of(60_001)).toEqual([]);
+  });
+
   test('odd harmonics are of the fundamental, even ones alone of its double', () => {
     const of = (harmonics: number[]) => findClockFamilies(harmonics.map((n) => at(n * 20e6)));
     expect(of([3, 5, 7, 9, 11, 13, 15])[0]!.fundamentalHz).toBeCloseTo(20e6, 3);
@@ -152,6 +161,9 @@ describe('likely sources together', () => {
     expect(said.map(({ families: of }) => of.length)).toEqual([0, 0, 1, 1, 1, 1, 1, 1, 0, 0, 0]);
     expect(said.map(({ harmonics }) => harmonics.length)).toEqual([1, 1, 0, 0, 0, 0, 0, 0, 1, 1, 1]);
     expect(likelySources(emissions, []).families).toHaveLength(2);
+    // 925 MHz is both 37 times 25 MHz and 25 times 37 MHz: the declared clock explains it.
+    const both = likelySources([...emissions, at(925e6)], [clock]);
+    expect(both.emissions[11]).toMatchObject({ harmonics: [{ harmonic: 37 }], families: [] });
   });
 
   test('mirrored sidebands are explained and join no family, single ones are not', () => {
@@ -168,5 +180,8 @@ describe('likely sources together', () => {
     const single = likelySources([...carriers, ...besides], [], [converter]);
     expect(single.emissions[6]!.sidebands).toMatchObject([{ carrier: 2, order: 1, mirrored: false }]);
     expect(single.families[0]!.members).toHaveLength(6);
+    // 148 MHz lies beside something higher at 147.6 MHz and stays the family's.
+    const beside = likelySources([...carriers, narrow(37e6 * 4 - 400e3, 50)], [], [converter]);
+    expect(beside.emissions[2]).toMatchObject({ sidebands: [{ carrier: 6, mirrored: false }], families: [0] });
   });
 });

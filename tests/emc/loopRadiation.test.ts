@@ -74,7 +74,7 @@ describe('where the small-loop form holds', () => {
     const perimeterM = wavelengthM(300e6) / 4;
     const loop: LoopPlace = { form: 'free-space', frequencyHz: 300e6, areaM2: 1e-3, perimeterM, distanceM: 3 };
     expect(smallLoopField(loop, 1e-3).because).toBeNull();
-    const larger = { ...loop, perimeterM: perimeterM * 1.0001 };
+    const larger = { ...loop, perimeterM: perimeterM * (1 + 1e-9) };
     expect(smallLoopField(larger, 1e-3)).toEqual({ fieldVPerM: null, because: expect.stringContaining('not small') });
     expect(smallLoopCurrentAt(larger, 1e-3)).toMatchObject({ currentA: null });
     const near = { ...loop, distanceM: 0.159 };

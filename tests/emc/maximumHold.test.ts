@@ -157,6 +157,48 @@ describe('maximum hold over positions (common practice)', () => {
     ]);
   });
 
+  test('an edge that stands twice has the step to its next neighbour', () => {
+    const joined = held([
+      [100, 30],
+      [110, 20],
+      [110, 22],
+      [120, 5],
+    ]);
+    const shifted = held([
+      [112, 40],
+      [122, 1],
+    ]);
+    expect(entries([joined, shifted])).toEqual([
+      [100, 30, 0, 0, 1],
+      [112, 40, 1, 0, 3],
+      [120, 5, 0, 3, 2],
+    ]);
+  });
+
+  test('what is at one frequency stays together, whichever trace comes first', () => {
+    const coarse = held([
+      [100, 30],
+      [110, 20],
+    ]);
+    const shifted = held([
+      [102, 20],
+      [112, 10],
+    ]);
+    const fine = held([
+      [102, 25],
+      [105, 1],
+    ]);
+    const levels = (traces: HeldTrace[]) => entries(traces).map(([hz, level, , , compared]) => [hz, level, compared]);
+    const expected = [
+      [100, 30, 1],
+      [102, 25, 2],
+      [105, 1, 1],
+      [110, 20, 2],
+    ];
+    expect(levels([coarse, shifted, fine])).toEqual(expected);
+    expect(levels([fine, coarse, shifted])).toEqual(expected);
+  });
+
   test('a point without a level is not there', () => {
     expect(
       entries([

@@ -95,6 +95,8 @@ describe('network-parameter files (Touchstone file format specification, revisio
 
   test('noise parameters after the data are left out', () => {
     expect(two(`# MHz\n${DATA}! noise\n100 1.2 0.3 40 0.4\n150 1.3 0.3 41 0.4\n`)).toEqual(two(`# MHz\n${DATA}`));
+    // It may begin at the very frequency at which the data end.
+    expect(two(`# MHz\n${DATA}200 1.2 0.3 40 0.4\n`)).toEqual(two(`# MHz\n${DATA}`));
     // Nine such rows are as many numbers as five rows of data.
     const noise = Array.from({ length: 9 }, (_, i) => `${100 + i} 1 0.3 40 0.4\n`).join('');
     expect(two(`# MHz\n${DATA}${noise}`)).toEqual(two(`# MHz\n${DATA}`));
