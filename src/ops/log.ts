@@ -9,3 +9,15 @@ export function errorDetails(error: unknown): Record<string, unknown> {
     ? { error: error.name, message: error.message, stack: error.stack }
     : { error: 'unknown', message: String(error) };
 }
+
+/**
+ * Whoever collects the output may end first: from then on lines are dropped and the process goes on. Without this the
+ * failed write is an error that is logged, which fails again, without end.
+ */
+export function outliveReader(): void {
+  for (const stream of [process.stdout, process.stderr]) {
+    stream.on('error', (error: NodeJS.ErrnoException) => {
+      if (error.code !== 'EPIPE') throw error;
+    });
+  }
+}

@@ -8,7 +8,7 @@ import { env, EnvError } from '@/config/env';
 import { closeDatabase } from '@/models/database';
 import { keepLetter } from '@/services/mailbox';
 import { onStop } from './drain';
-import { errorDetails, logLine } from './log';
+import { errorDetails, logLine, outliveReader } from './log';
 
 const MOST_BYTES = 1024 * 1024;
 
@@ -50,6 +50,7 @@ function main(): void {
   server.on('error', (error) => logLine('warn', 'mail catcher', errorDetails(error)));
   server.server.once('error', () => process.exit(1));
   server.listen(port, '127.0.0.1', () => logLine('info', 'mail catcher running', { port }));
+  outliveReader();
   onStop((reason) => {
     logLine('info', 'mail catcher draining', { reason });
     server.close(() => {

@@ -9,7 +9,7 @@ import { addressRanges } from '@/config/addresses';
 import { env, EnvError } from '@/config/env';
 import { drain, onStop } from './drain';
 import { forwarded, overwriteForwarded, sameMachineElsewhere } from './forwarded';
-import { errorDetails, logLine } from './log';
+import { errorDetails, logLine, outliveReader } from './log';
 
 const DRAIN_LIMIT_MS = 20_000;
 /** A 100 MB file over a 2 Mbit/s line takes 400 s. */
@@ -64,6 +64,7 @@ async function main(): Promise<void> {
   server.headersTimeout = HEADERS_LIMIT_MS;
   server.keepAliveTimeout = KEEP_ALIVE_MS;
 
+  outliveReader();
   onStop((reason) => {
     stopping = true;
     logLine('info', 'draining', { reason });

@@ -4,7 +4,7 @@ import { randomUUID } from 'node:crypto';
 import { env, EnvError } from '@/config/env';
 import { closeDatabase } from '@/models/database';
 import { onStop } from '@/ops/drain';
-import { errorDetails, logLine } from '@/ops/log';
+import { errorDetails, logLine, outliveReader } from '@/ops/log';
 import { scheduleRecurring } from './handlers';
 import { workOnce } from './worker';
 
@@ -17,6 +17,7 @@ async function main(): Promise<void> {
   const owner = randomUUID();
   let stopping = false;
   let wake: () => void = () => {};
+  outliveReader();
   onStop((reason) => {
     stopping = true;
     logLine('info', 'outbox draining', { reason });
