@@ -45,6 +45,7 @@ export function candidatesOf(
     const facts = { marginDb: pair.marginDb[point]!, uncertaintyDb: pair.uncertaintyDb[point]! };
     const verdict = readingVerdict({
       ...facts,
+      guard: { db: pair.guardDb[point]!, between: pair.between },
       detector: trace.detector,
       rbwHz: trace.rbwHz,
       vbwHz: trace.vbwHz,

@@ -66,9 +66,9 @@ export function verdictOfMargin(
       return marginDb < -expandedUDb ? 'over' : 'inconclusive';
     case 'cispr-16-4-2':
       if (expandedUDb === null || ucisprDb === null) return null;
-      return marginDb - ucisprExcessDb(expandedUDb, ucisprDb) >= -EQUAL_WITHIN_DB ? 'under' : 'over';
+      return marginDb - ucisprExcessDb(expandedUDb, ucisprDb) > -EQUAL_WITHIN_DB ? 'under' : 'over';
     case 'simple-acceptance':
-      return marginDb >= -EQUAL_WITHIN_DB ? 'under' : 'over';
+      return marginDb > -EQUAL_WITHIN_DB ? 'under' : 'over';
     default:
       throw new RangeError(`${String(rule)} is no decision rule.`);
   }

@@ -2,16 +2,17 @@ import { axisRange, axisSteps, onAxis } from './axis';
 import { candidatesOf, LISTED_AT_LEAST, rankCandidates, type Unranked } from './candidates';
 import { columnAccumulator, LAYER_COLUMNS } from './columns';
 import { gapsOf, spansOf, type Span } from './coverage';
+import { guardSteps, leavesBetween } from './guard';
 import { VERDICTS, type Purpose, type Verdict } from './kinds';
 import { prepareLine, type PreparedLine } from './limitLine';
 import { POINTS_PER_TURN } from './pace';
-import { JUDGED, judgeInto, pairPoints, type PairPoints } from './pair';
+import { JUDGED, judgeInto, pairPoints, type PairPoints, type PreparedGuard } from './pair';
 import { tracesFor, type PairableTrace } from './pairing';
 import { governed } from './repeats';
 import { findCandidates } from './search';
 import { hangTrace, judgeSegment, logarithmsInto, type HungTrace } from './segment';
 import type { Columns, Evaluation, EvaluationInput, JudgedPair, LimitLine, Trace } from './types';
-import { prepareUncertainty, type PreparedUncertainty } from './uncertainty';
+import { prepareUncertainty } from './uncertainty';
 import { reachOf, worstVerdict } from './verdict';
 
 /** Named in every evaluation. A change that moves any figure or verdict raises the number. */
@@ -28,7 +29,10 @@ export const ENGINE = 'stillfield-emc 2';
  */
 export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
   const steps = input.purpose === 'final' ? input.uncertainty.final : input.uncertainty.prescan;
-  const uncertainty = prepareUncertainty(steps);
+  const guarded: PreparedGuard = {
+    uncertainty: prepareUncertainty(steps),
+    guard: leavesBetween(input.rule) ? null : prepareUncertainty(guardSteps(input.rule, steps, input.ucispr ?? [])),
+  };
   const sweeps = input.traces.map((trace) => sweepOf(trace, input));
   const asked = input.lines.map((line) => ({ line: prepareLine(line), by: tracesFor(line, sweeps) }));
 
@@ -40,7 +44,7 @@ export function* evaluate(input: EvaluationInput): Generator<void, Evaluation> {
     const { frequencyHz } = sweep.trace;
     const axis = axes.get(frequencyHz) ?? { logHz: new Float64Array(frequencyHz.length), known: 0, steps: new Map() };
     axes.set(frequencyHz, axis);
-    layers.push(yield* judgeSweep(sweep, axis, lines, uncertainty, input, judgements));
+    layers.push(yield* judgeSweep(sweep, axis, lines, guarded, input, judgements));
   }
 
   const of = (line: LimitLine) => judgements.filter((judgement) => judgement.line === line);
@@ -117,7 +121,7 @@ function* judgeSweep(
   { trace, hung, lowestHz, highestHz }: Sweep,
   axis: SharedAxis,
   lines: readonly PreparedLine[],
-  uncertainty: PreparedUncertainty,
+  guarded: PreparedGuard,
   kind: { purpose: Purpose; partial?: boolean },
   judgements: PairJudgement[],
 ): Generator<void, Columns> {
@@ -126,7 +130,11 @@ function* judgeSweep(
   const layer = points > 0 ? columnAccumulator(lowestHz, highestHz, LAYER_COLUMNS) : columnAccumulator(1, 1, 1);
   const pairs = lines.map((line) => {
     const bandwidthHz = trace.rbwHz ?? line.line.bandwidthHz;
-    return { line, bandwidthHz, points: pairPoints(frequencyHz, stepsOf(axis, frequencyHz, bandwidthHz)) };
+    return {
+      line,
+      bandwidthHz,
+      points: pairPoints(frequencyHz, stepsOf(axis, frequencyHz, bandwidthHz), guarded.guard === null),
+    };
   });
   for (let from = 0; from < points; from += POINTS_PER_TURN) {
     const to = Math.min(from + POINTS_PER_TURN, points);
@@ -136,7 +144,7 @@ function* judgeSweep(
     axis.known = Math.max(axis.known, to);
     const segment = judgeSegment(hung, hz, reading.subarray(from, to), logHz);
     layer.add(segment);
-    for (const pair of pairs) judgeInto(pair.points, segment, pair.line, uncertainty, from);
+    for (const pair of pairs) judgeInto(pair.points, segment, pair.line, guarded, from);
     yield;
   }
   for (const pair of pairs) {

@@ -1,10 +1,11 @@
 import { normalCdf, normalQuantile } from './normalDistribution';
 
 /**
- * Two decimals that are equal on paper are equal here: 0.1 + 37.2 is a little more than 37.3 in binary. Only where a level on the
- * limit is accepted; it is a million times finer than any reading.
+ * Two decimals that are equal on paper are equal here: 0.1 + 37.2 is a little more than 37.3 in binary, and a reading
+ * is kept as a Float32, which holds 39.4 to within 2e-6. Only where a level on the limit is accepted; it is a thousand
+ * times finer than any reading.
  */
-export const EQUAL_WITHIN_DB = 1e-9;
+export const EQUAL_WITHIN_DB = 1e-5;
 
 /** A level, its limit, and the expanded uncertainty that was stated with coverage factor k. */
 export interface Stated {

@@ -1,4 +1,5 @@
 import { POINT } from './correction';
+import { EQUAL_WITHIN_DB } from './guardBand';
 import { limitsInto, type PreparedLine } from './limitLine';
 import type { JudgedSegment } from './segment';
 import { expandedInto, type PreparedUncertainty } from './uncertainty';
@@ -19,17 +20,31 @@ export interface PairPoints {
   /** limit − level. */
   marginDb: Float64Array;
   uncertaintyDb: Float64Array;
+  /** What the margin has to be larger than to be under; U itself where the rule is guarded by U. */
+  guardDb: Float64Array;
+  /** Whether the rule leaves anything between under and over. */
+  between: boolean;
+}
+
+/** Uncertainty and the guard a rule makes of it, ready for many points. */
+export interface PreparedGuard {
+  uncertainty: PreparedUncertainty;
+  /** null where it is U. */
+  guard: PreparedUncertainty | null;
 }
 
 /** Arrays for a trace, to be filled piece by piece with `judgeInto`. */
-export function pairPoints(frequencyHz: Float64Array, steps: Uint8Array): PairPoints {
+export function pairPoints(frequencyHz: Float64Array, steps: Uint8Array, between: boolean): PairPoints {
   const points = frequencyHz.length;
+  const uncertaintyDb = new Float64Array(points);
   return {
     frequencyHz,
     steps,
     judged: new Uint8Array(points),
     marginDb: new Float64Array(points),
-    uncertaintyDb: new Float64Array(points),
+    uncertaintyDb,
+    guardDb: between ? uncertaintyDb : new Float64Array(points),
+    between,
   };
 }
 
@@ -38,7 +53,7 @@ export function judgeInto(
   pair: PairPoints,
   segment: JudgedSegment,
   line: PreparedLine,
-  uncertainty: PreparedUncertainty,
+  { uncertainty, guard }: PreparedGuard,
   from: number,
 ): void {
   const { frequencyHz, logHz, level, state } = segment;
@@ -48,6 +63,11 @@ export function judgeInto(
   const hasExpanded = new Uint8Array(points);
   limitsInto(line, frequencyHz, logHz, limit, hasLimit);
   expandedInto(uncertainty, frequencyHz, pair.uncertaintyDb.subarray(from, from + points), hasExpanded);
+  if (guard) {
+    const guardDb = pair.guardDb.subarray(from, from + points);
+    expandedInto(guard, frequencyHz, guardDb, hasExpanded);
+    for (let i = 0; i < points; i++) guardDb[i]! -= EQUAL_WITHIN_DB;
+  }
   const marginDb = pair.marginDb.subarray(from, from + points);
   const judged = pair.judged.subarray(from, from + points);
   for (let i = 0; i < points; i++) {

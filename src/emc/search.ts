@@ -27,7 +27,7 @@ export const PROMINENCE_DB = CLEAR_OF_FLOOR_DB;
  *
  * A local maximum is a local minimum of the margin: corrections and limit steps move the margin, so the highest
  * reading need not be the nearest to its limit. It is sought within runs of points that hang together: all judged, the
- * axis neither turning nor broken by a hole, one uncertainty. Within a run a smaller margin is never a better verdict,
+ * axis neither turning nor broken by a hole, one guard of the rule. Within a run a smaller margin is never a better verdict,
  * so every point that is not proven under lies in a listed floor stretch or falls, margin by margin, to a listed peak,
  * and the worst verdict of any point is the verdict of something listed.
  */
@@ -54,12 +54,12 @@ export function* findCandidates(
   return found;
 }
 
-function hangsTogether({ judged, steps, uncertaintyDb }: PairPoints, i: number): boolean {
-  return judged[i] === yes && steps[i] === joined && uncertaintyDb[i] === uncertaintyDb[i - 1];
+function hangsTogether({ judged, steps, guardDb }: PairPoints, i: number): boolean {
+  return judged[i] === yes && steps[i] === joined && guardDb[i] === guardDb[i - 1];
 }
 
 function* searchRun(
-  { frequencyHz, marginDb, uncertaintyDb }: PairPoints,
+  { frequencyHz, marginDb, guardDb }: PairPoints,
   run: PointRange,
   reach: Reach,
   bandwidthHz: number,
@@ -67,7 +67,7 @@ function* searchRun(
   found: Found,
 ): Generator<void, void> {
   const judges = reach.otherwise !== 'not-covered';
-  const provenAbove = reach.under ? uncertaintyDb[run.from]! : Infinity;
+  const provenAbove = reach.under ? guardDb[run.from]! : Infinity;
   const unproven = (i: number) => judges && marginDb[i]! <= provenAbove;
   const prominent = yield* prominentMinima(marginDb, run.from, run.to, PROMINENCE_DB);
   for (const i of prominent) if (!unproven(i)) keepNearest(found.others, i, frequencyHz, marginDb, nearest);

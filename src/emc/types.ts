@@ -1,3 +1,4 @@
+import type { DecisionRule } from './decisionRule';
 import type { Detector, FactorQuantity, LevelUnit, LineDetector, LineUnit, Port, Purpose, Verdict } from './kinds';
 
 /** One revision of one table of corrections. Rows ascend in frequency; interpolation is linear in dB over log f. */
@@ -72,7 +73,9 @@ export interface EvaluationInput {
   uncertainty: { prescan: readonly UncertaintyStep[]; final: readonly UncertaintyStep[] };
   purpose: Purpose;
   port: Port;
-  rule: 'guarded-by-u';
+  rule: DecisionRule;
+  /** Ucispr over frequency, for the rule that compares U with it. */
+  ucispr?: readonly UncertaintyStep[];
   /** Read from a file that breaks off, kept so on purpose: nothing of it is under, and it covers nothing. */
   partial?: boolean;
 }

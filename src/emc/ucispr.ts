@@ -1,3 +1,6 @@
+import type { Port } from './kinds';
+import type { UncertaintyStep } from './types';
+
 export const UCISPR_EDITIONS = ['CISPR 16-4-2:2003', 'CISPR 16-4-2:2011'] as const;
 export type UcisprEdition = (typeof UCISPR_EDITIONS)[number];
 
@@ -33,6 +36,27 @@ const UCISPR_DB: Record<UcisprMeasurement, [of2003: number | null, of2011: numbe
   'radiated, FAR, 1-6 GHz': [null, 5.2],
   'radiated, FAR, 6-18 GHz': [null, 5.5],
 };
+
+/** The measurement that Ucispr is stated for, by port and range; an open-area site or semi-anechoic chamber below 1 GHz. */
+const BY_PORT: Record<Port, readonly [startHz: number, stopHz: number, UcisprMeasurement][]> = {
+  enclosure: [
+    [30e6, 1e9, 'radiated, OATS or SAC, 30-1000 MHz'],
+    [1e9, 6e9, 'radiated, FAR, 1-6 GHz'],
+    [6e9, 18e9, 'radiated, FAR, 6-18 GHz'],
+  ],
+  'ac-mains': [
+    [9e3, 150e3, 'AMN, mains port, 9-150 kHz'],
+    [150e3, 30e6, 'AMN, mains port, 150 kHz-30 MHz'],
+  ],
+  'wired-network': [[150e3, 30e6, 'AAN, telecom port, 150 kHz-30 MHz']],
+};
+
+/** Ucispr over frequency for a port, in the 2011 edition; the rule of CISPR 16-4-2 compares with it. */
+export function ucisprSteps(port: Port): UncertaintyStep[] {
+  return BY_PORT[port].map(([startHz, stopHz, measurement]) => {
+    return { startHz, stopHz, expandedDb: UCISPR_DB[measurement][1] };
+  });
+}
 
 /** Ucispr of a measurement in an edition; null where that edition states none. */
 export function ucisprDbOf(measurement: UcisprMeasurement, edition: UcisprEdition): number | null {

@@ -6,6 +6,7 @@ import {
   isVideoAverage,
   widestAt6DbHz,
 } from './detectors';
+import type { Guard } from './guard';
 import { detectorOrder, provesOver, provesUnder, readAsAsked, type AskedFor, type ReadWith } from './detectors';
 import { VERDICTS, type Detector, type LineDetector, type Purpose, type Verdict } from './kinds';
 
@@ -16,6 +17,8 @@ const PARTIAL = 'The file breaks off and was kept in part; nothing of it is show
 export interface ReadingFacts {
   marginDb: number | null;
   uncertaintyDb: number | null;
+  /** What the decision rule asks; left out it is guarded by U. Null where the rule misses a figure. */
+  guard?: Guard | null;
   detector: Detector;
   rbwHz: number | null;
   vbwHz?: number | null;
@@ -56,12 +59,15 @@ export function reachOf(trace: ReadWith, line: AskedFor, purpose: Purpose): Reac
   };
 }
 
-/** Guarded by U: under beyond the guard band, over beyond it, otherwise what the reach leaves. Source: JCGM 106:2012. */
-export function decide(reach: Reach, marginDb: number, uncertaintyDb: number): Verdict {
-  if (reach.under && marginDb > uncertaintyDb) return 'under';
-  if (reach.over && marginDb < -uncertaintyDb) return 'over';
+/** By the rule's guard: under beyond it, over beyond it, otherwise what the reach leaves. Source: JCGM 106:2012. */
+export function decide(reach: Reach, marginDb: number, guard: Guard): Verdict {
+  if (reach.under && isUnder(marginDb, guard)) return 'under';
+  if (reach.over && isOver(marginDb, guard)) return 'over';
   return reach.otherwise;
 }
+
+const isUnder = (marginDb: number, { db }: Guard) => marginDb > db;
+const isOver = (marginDb: number, { db, between }: Guard) => (between ? marginDb < -db : !(marginDb > db));
 
 /** The verdict of one reading. Throws RangeError when a margin or an uncertainty is given that is not a figure. */
 export function readingVerdict(facts: ReadingFacts): ReadingVerdict {
@@ -77,9 +83,12 @@ export function readingVerdict(facts: ReadingFacts): ReadingVerdict {
     throw new RangeError(`Expanded uncertainty ${uncertaintyDb} dB is no figure.`);
   }
   const line = { detector: facts.lineDetector, bandwidthHz: facts.requiredBandwidthHz };
-  const verdict = decide(reachOf(facts, line, purpose), marginDb, uncertaintyDb);
+  const guard = facts.guard === undefined ? { db: uncertaintyDb, between: true } : facts.guard;
+  if (guard === null)
+    return { verdict: 'not-covered', because: 'The decision rule needs Ucispr, and none is stated here.' };
+  const verdict = decide(reachOf(facts, line, purpose), marginDb, guard);
   if (facts.partial && verdict === 'under') return { verdict: 'not-covered', because: PARTIAL };
-  return { verdict, because: becauseOf(verdict, facts, marginDb, uncertaintyDb) };
+  return { verdict, because: becauseOf(verdict, facts, marginDb, guard) };
 }
 
 /** The worse of verdicts first: over, needs a final, inconclusive, not covered, under. Null for an empty list. */
@@ -94,7 +103,7 @@ export function severity(verdict: Verdict): number {
   return VERDICTS.indexOf(verdict);
 }
 
-function becauseOf(verdict: Verdict, facts: ReadingFacts, marginDb: number, uncertaintyDb: number): string | null {
+function becauseOf(verdict: Verdict, facts: ReadingFacts, marginDb: number, guard: Guard): string | null {
   if (verdict === 'under' || verdict === 'over') return null;
   if (verdict === 'inconclusive') {
     return 'The margin is within the expanded uncertainty; another reading would not settle it.';
@@ -111,7 +120,7 @@ function becauseOf(verdict: Verdict, facts: ReadingFacts, marginDb: number, unce
     return `VBW ${bandwidthText(vbwHz)} is ${than}, so the reading is a video average.`;
   }
   const stated = `RBW ${bandwidthText(rbwHz)}${rbwShape === '3 dB' ? ' at 3 dB' : ''}`;
-  if (marginDb > uncertaintyDb) {
+  if (isUnder(marginDb, guard)) {
     if (!detectorAtOrAbove(detector, lineDetector)) {
       return `A reading in ${detector} can lie below ${lineDetector}, so it does not show under.`;
     }
@@ -119,7 +128,7 @@ function becauseOf(verdict: Verdict, facts: ReadingFacts, marginDb: number, unce
       return `${stated} is narrower than the ${required} required, so the level may read low.`;
     }
   }
-  if (marginDb < -uncertaintyDb) {
+  if (isOver(marginDb, guard)) {
     if (!detectorAtOrBelow(detector, lineDetector)) {
       return `A reading in ${detector} can lie above ${lineDetector}, so it does not show over.`;
     }

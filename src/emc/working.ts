@@ -4,6 +4,7 @@ import { factorAt } from './factorTable';
 import { limitAt } from './limitLine';
 import { hangTrace, judgeSegment, type HungTrace } from './segment';
 import type { EvaluationInput, LimitLine, Trace, Working } from './types';
+import { guardAt, type Guard } from './guard';
 import { expandedAt } from './uncertainty';
 import { readingVerdict } from './verdict';
 import { pathTerms, readingTerms } from './workingTerms';
@@ -40,6 +41,7 @@ export function workingAt(
     .reduce((worst, one) => (worse(one, worst) ? one : worst));
   const steps = input.purpose === 'final' ? input.uncertainty.final : input.uncertainty.prescan;
   const uncertaintyDb = expandedAt(steps, hz);
+  const guard = guardAt(input.rule, steps, input.ucispr ?? [], hz);
 
   return {
     traceIndex,
@@ -51,7 +53,7 @@ export function workingAt(
     limit,
     marginDb,
     uncertaintyDb,
-    ...judgement(input, trace, line, { marginDb, uncertaintyDb, level, hz, comparable: comparable !== null }),
+    ...judgement(input, trace, line, { marginDb, uncertaintyDb, guard, level, hz, comparable: comparable !== null }),
   };
 }
 
@@ -87,7 +89,14 @@ function judgement(
   input: EvaluationInput,
   trace: Trace,
   line: LimitLine | null,
-  at: { marginDb: number | null; uncertaintyDb: number | null; level: number | null; hz: number; comparable: boolean },
+  at: {
+    marginDb: number | null;
+    uncertaintyDb: number | null;
+    guard: Guard | null;
+    level: number | null;
+    hz: number;
+    comparable: boolean;
+  },
 ): Pick<Working, 'verdict' | 'because'> {
   const without = (because: string) => ({ verdict: 'not-covered' as const, because });
   if (at.level === null) return without(noLevelBecause(input, trace, at.hz));
@@ -97,6 +106,7 @@ function judgement(
   return readingVerdict({
     marginDb: at.marginDb,
     uncertaintyDb: at.uncertaintyDb,
+    guard: at.guard,
     detector: trace.detector,
     rbwHz: trace.rbwHz,
     vbwHz: trace.vbwHz,

@@ -69,7 +69,7 @@ describe('the statement by counting', () => {
     ).toMatchObject({ over: 0 });
     expect(
       byCount(
-        Array.from({ length: 8 }, () => 37.3 + 1e-6),
+        Array.from({ length: 8 }, () => 37.3 + 1e-4),
         37.3,
         'strict',
       ),

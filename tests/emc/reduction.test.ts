@@ -19,7 +19,7 @@ describe('the reduction an emission needs', () => {
       const marginDb = limit - reading;
       const needed = reductionNeeded(marginDb, { uncertaintyDb: expandedUDb });
       if (Math.abs(marginDb - expandedUDb) > 1e-9) expect(!needed.moreThan).toBe(guardedAcceptance === 'pass');
-      expect(!needed.moreThan).toBe(decide(decisive, marginDb, expandedUDb) === 'under');
+      expect(!needed.moreThan).toBe(decide(decisive, marginDb, { db: expandedUDb, between: true }) === 'under');
     },
   );
 
@@ -36,8 +36,11 @@ describe('the reduction an emission needs', () => {
     fc.assert(
       fc.property(db, fc.double({ min: 0, max: 10, noNaN: true }), (marginDb, uncertaintyDb) => {
         const { reductionDb, moreThan, factor } = reductionNeeded(marginDb, { uncertaintyDb });
-        expect(decide(decisive, marginDb + reductionDb! + 1e-9, uncertaintyDb)).toBe('under');
-        if (moreThan) expect(decide(decisive, marginDb + reductionDb! - 1e-9, uncertaintyDb)).not.toBe('under');
+        expect(decide(decisive, marginDb + reductionDb! + 1e-9, { db: uncertaintyDb, between: true })).toBe('under');
+        if (moreThan)
+          expect(decide(decisive, marginDb + reductionDb! - 1e-9, { db: uncertaintyDb, between: true })).not.toBe(
+            'under',
+          );
         expect(20 * Math.log10(factor!)).toBeCloseTo(-reductionDb!, 9);
       }),
     );

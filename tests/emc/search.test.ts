@@ -13,12 +13,15 @@ function pairOf(
   more: { frequencyHz?: number[]; uncertaintyDb?: number[]; judged?: number[] } = {},
 ): PairPoints {
   const frequencyHz = Float64Array.from(more.frequencyHz ?? marginDb.map((_, i) => 1e6 + i * 4500));
+  const uncertaintyDb = Float64Array.from(more.uncertaintyDb ?? marginDb.map(() => 4));
   return {
     frequencyHz,
     steps: axisSteps(frequencyHz, RBW),
     judged: Uint8Array.from(more.judged ?? marginDb.map(() => JUDGED.yes)),
     marginDb: Float64Array.from(marginDb),
-    uncertaintyDb: Float64Array.from(more.uncertaintyDb ?? marginDb.map(() => 4)),
+    uncertaintyDb,
+    guardDb: uncertaintyDb,
+    between: true,
   };
 }
 const find = (pair: PairPoints, reach = REACH, nearest = 12): Found =>
@@ -233,7 +236,7 @@ describe('whatever the margins (property)', () => {
     otherwise: fc.constantFrom('inconclusive', 'needs-final'),
   });
   const verdictOf = (pair: PairPoints, reach: Reach, i: number) =>
-    decide(reach, pair.marginDb[i]!, pair.uncertaintyDb[i]!);
+    decide(reach, pair.marginDb[i]!, { db: pair.guardDb[i]!, between: true });
   const judgedPoints = (pair: PairPoints) =>
     Array.from(pair.judged).flatMap((state, i) => (state === JUDGED.yes ? [i] : []));
 
