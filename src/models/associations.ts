@@ -54,6 +54,7 @@ export function associate(): void {
   LimitLineRevision.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   SignalPath.hasMany(SignalPathRevision, { as: 'revisions', foreignKey: 'signalPathId' });
   SignalPathRevision.belongsTo(SignalPath, { as: 'path', foreignKey: 'signalPathId' });
+  SignalPathRevision.belongsTo(User, { as: 'user', foreignKey: 'userId' });
 
   Sweep.belongsTo(ModificationState, { as: 'state', foreignKey: 'stateId' });
   ModificationState.hasMany(Sweep, { as: 'sweeps', foreignKey: 'stateId' });

@@ -6,7 +6,7 @@ import {
   Model,
   type Sequelize,
 } from 'sequelize';
-import type { StoredPathItem, StoredUncertainty } from './stored';
+import type { StoredBudget, StoredPathItem, StoredUncertainty } from './stored';
 
 export class SignalPathRevision extends Model<
   InferAttributes<SignalPathRevision>,
@@ -19,6 +19,10 @@ export class SignalPathRevision extends Model<
   declare items: StoredPathItem[];
   declare uncertainty: StoredUncertainty;
   declare uncertaintySource: string;
+  /** What `uncertainty` was computed from; null where its figures are stated. */
+  declare budget: CreationOptional<StoredBudget | null>;
+  declare reason: CreationOptional<string | null>;
+  declare userId: CreationOptional<number | null>;
   declare createdAt: CreationOptional<Date>;
 }
 
@@ -32,6 +36,9 @@ export function defineSignalPathRevision(sequelize: Sequelize): void {
       items: { type: DataTypes.JSON, allowNull: false },
       uncertainty: { type: DataTypes.JSON, allowNull: false },
       uncertaintySource: { type: DataTypes.STRING(300), field: 'uncertainty_source', allowNull: false },
+      budget: { type: DataTypes.JSON, allowNull: true },
+      reason: { type: DataTypes.STRING(300), allowNull: true },
+      userId: { type: DataTypes.BIGINT.UNSIGNED, field: 'user_id', allowNull: true },
       createdAt: { type: DataTypes.DATE(3), field: 'created_at', allowNull: false },
     },
     {

@@ -20,6 +20,28 @@ export interface StoredUncertainty {
   final: UncertaintyStep[];
 }
 
+/** One contribution to an uncertainty budget, as `Contribution` of the core. */
+export interface StoredContribution {
+  name: string;
+  valueDb: number;
+  distribution: { shape: 'normal'; k: number } | { shape: 'rectangular' | 'triangular' | 'U-shaped' };
+  sensitivity: number;
+  source: string;
+  degreesOfFreedom: number | null;
+}
+
+export interface StoredBudgetRange {
+  startHz: number;
+  stopHz: number;
+  contributions: StoredContribution[];
+}
+
+/** What the steps of an uncertainty were computed from. */
+export interface StoredBudget {
+  prescan: StoredBudgetRange[];
+  final: StoredBudgetRange[];
+}
+
 /** How the file was read when it was kept: enough to read it again to the same numbers. */
 export interface StoredReading {
   frequencyUnit: 'Hz' | 'kHz' | 'MHz' | 'GHz';
