@@ -46,6 +46,7 @@ const RIGHTS = {
   counters: ['SELECT', 'INSERT', 'UPDATE'],
   settings: ['SELECT', 'INSERT', 'UPDATE'],
   products: ['SELECT', 'INSERT', 'UPDATE'],
+  product_clocks: ['SELECT', 'INSERT', 'UPDATE'],
   jobs: ['SELECT', 'INSERT', 'UPDATE'],
   samples: ['SELECT', 'INSERT', 'UPDATE'],
   modification_states: ['SELECT', 'INSERT', 'UPDATE'],

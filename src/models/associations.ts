@@ -15,6 +15,7 @@ import { OneTimeLink } from './oneTimeLink';
 import { Organisation } from './organisation';
 import { Photo } from './photo';
 import { Product } from './product';
+import { ProductClock } from './productClock';
 import { ResultMail } from './resultMail';
 import { Retest } from './retest';
 import { RetestChange } from './retestChange';
@@ -37,6 +38,9 @@ export function associate(): void {
   AuditEntry.belongsTo(User, { as: 'actor', foreignKey: 'actorId' });
 
   Product.belongsTo(Organisation, { as: 'organisation', foreignKey: 'organisationId' });
+  ProductClock.belongsTo(Product, { as: 'product', foreignKey: 'productId' });
+  ProductClock.belongsTo(User, { as: 'user', foreignKey: 'userId' });
+  ProductClock.belongsTo(User, { as: 'withdrawer', foreignKey: 'withdrawnBy' });
   Job.belongsTo(Organisation, { as: 'organisation', foreignKey: 'organisationId' });
   Job.belongsTo(Product, { as: 'product', foreignKey: 'productId' });
   Job.hasMany(Sample, { as: 'samples', foreignKey: 'jobId' });

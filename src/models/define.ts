@@ -27,6 +27,7 @@ import { defineOutboxMessage } from './outboxMessage';
 import { definePhoto } from './photo';
 import { definePhotoPart } from './photoPart';
 import { defineProduct } from './product';
+import { defineProductClock } from './productClock';
 import { defineResultMail } from './resultMail';
 import { defineRetest } from './retest';
 import { defineRetestChange } from './retestChange';
@@ -64,6 +65,7 @@ export function defineModels(sequelize: Sequelize): void {
   defineCounter(sequelize);
   defineSetting(sequelize);
   defineProduct(sequelize);
+  defineProductClock(sequelize);
   defineImportTurn(sequelize);
   defineJob(sequelize);
   defineSample(sequelize);
