@@ -25,6 +25,8 @@ export const PERMISSIONS = {
   'product.read': { roles: everyone, token: 'read' },
   'product.create': { roles: lab, token: null },
   'product.change': { roles: lab, token: null },
+  'clock.list': { roles: everyone, token: 'read' },
+  'clock.write': { roles: everyone, token: null },
   'job.list': { roles: everyone, token: 'read' },
   'job.read': { roles: everyone, token: 'read' },
   'job.create': { roles: lab, token: null },

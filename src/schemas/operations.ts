@@ -1,5 +1,6 @@
 import * as bench from './bench';
 import * as booking from './booking';
+import * as clock from './clock';
 import * as comparison from './comparison';
 import * as job from './job';
 import type { Operation } from './operation';
@@ -24,6 +25,7 @@ export const OPERATIONS: readonly Operation[] = [
   session,
   people,
   job,
+  clock,
   bench,
   tables,
   sweepFile,

@@ -5,6 +5,7 @@ import { mayRole } from '@/auth/permissions';
 import type { RouteHandler } from '@/http/handle';
 import type { Operation } from '@/schemas/operation';
 import { OPERATIONS } from '@/schemas/operations';
+import { addProductClock } from '@/services/clocks';
 import { keepSweep } from '@/services/keepSweep';
 import { previewResultMail } from '@/services/resultMails';
 import { listRetests } from '@/services/retests';
@@ -27,6 +28,7 @@ beforeAll(async () => {
   schema = await freshDatabase();
   world = await enterWorld();
   retestId = await enterRetest(world);
+  clockIds = await enterClocks(world);
   for (const file of readdirSync(API, { recursive: true, encoding: 'utf8' })) {
     if (!file.endsWith('route.ts')) continue;
     const module = (await import(path.join(API, file))) as Record<string, RouteHandler>;
@@ -65,6 +67,19 @@ async function enterRetest({ technician, job, choice, about }: World): Promise<s
   return (await listRetests(technician.actor, { limit: 1, sampleId: sample.id })).items[0]!.id;
 }
 
+/** Declared clocks: the first is read and changed, each other one is withdrawn by one role. */
+let clockIds: string[] = [];
+
+async function enterClocks({ technician, product }: World): Promise<string[]> {
+  const clock = { kind: 'clock' as const, tolerancePpm: 100, spread: null, note: '' };
+  const ids: string[] = [];
+  for (const mhz of [12, 16, 24, 25]) {
+    const body = { ...clock, name: `${mhz} MHz`, frequencyHz: mhz * 1e6 };
+    ids.push((await addProductClock(technician.actor, product.id, body)).id);
+  }
+  return ids;
+}
+
 /** What makes each operation do something when the asker may; a missing row fails the test below. */
 const SAMPLES: Record<string, Sample> = {
   signIn: { body: () => ({ email: 'nobody@harrowlane.example', password: 'wrong' }) },
@@ -96,6 +111,14 @@ const SAMPLES: Record<string, Sample> = {
   readProduct: { params: (w) => w.product.id },
   createProduct: { body: (w) => ({ organisationId: w.client.publicId, code: `X-${Math.random()}`, name: 'X' }) },
   changeProduct: { params: (w) => w.product.id, body: () => ({ description: 'changed' }) },
+  listProductClocks: { params: (w) => w.product.id },
+  addProductClock: {
+    params: (w) => w.product.id,
+    body: () => ({ name: 'converter', kind: 'converter', frequencyHz: 65e3, tolerancePpm: 20e3 }),
+  },
+  readProductClock: { params: () => clockIds[0]! },
+  changeProductClock: { params: () => clockIds[0]!, body: () => ({ note: 'on the main board' }) },
+  withdrawProductClock: { params: () => clockIds[1 + (turn++ % 3)]!, body: () => ({ reason: 'not fitted any more' }) },
   listJobs: {},
   readJob: { params: (w) => w.job.id },
   createJob: { body: (w) => ({ productId: w.product.id, title: 'another' }) },
@@ -226,6 +249,8 @@ async function versionFor(op: Operation, id: string | undefined): Promise<string
     changePhoto: ['readPhoto', id!],
     withdrawPhoto: ['readPhoto', id!],
     changeRetest: ['readRetest', id!],
+    changeProductClock: ['readProductClock', id!],
+    withdrawProductClock: ['readProductClock', id!],
   };
   const [read, record] = reader[op.id]!;
   const answer = await handlers.get(read)!(new Request(`${ORIGIN}/x`, { headers: { cookie: world.manager.cookie } }), {
