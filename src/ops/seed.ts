@@ -13,6 +13,7 @@ import { unitOfWork } from '@/models/unitOfWork';
 import { dayIn } from '@/services/lab';
 import { seedJobs, seedRuns } from './seedJobs';
 import { seedEquipment, seedPaths } from './seedBench';
+import { seedClocks } from './seedClocks';
 import { seedBookings, seedPositions, seedResultMails } from './seedBookings';
 import { enterPublishedLimits } from './publishedLimits';
 import { seedPeople } from './seedPeople';
@@ -33,6 +34,7 @@ async function seed(): Promise<void> {
     const items = await seedEquipment(manager, demoEquipment, (day) => dateOf(seedDay, day), at);
     await seedPaths(manager, items, at);
     const seeded = await seedJobs(people, at);
+    await seedClocks(people, at);
     const runs = await seedRuns(people, seeded, sets, seedDay);
     const { states } = seeded;
     await seedSetups(people, states, at);
