@@ -47,6 +47,22 @@ export async function readPieces(sweepId: number, range?: { fromHz: number; toHz
   }));
 }
 
+/** The axis of a sweep in file order, each piece unpacked when it is asked for. */
+export async function readAxis(sweepId: number): Promise<(() => Float64Array)[]> {
+  const segments = await SweepSegment.findAll({ where: { sweepId }, order: [['seq', 'ASC']] });
+  return segments.map((segment) => () => axisOf(segment));
+}
+
+/** The highest reading of each trace as it was read, by trace index; a trace without any reading is not there. */
+export async function highestReadings(sweepId: number): Promise<Map<number, number>> {
+  const rows = await TraceSegment.findAll({ where: { sweepId }, attributes: ['traceIndex', 'seq', 'highLevel'] });
+  const highest = new Map<number, number>();
+  for (const { traceIndex, highLevel } of rows) {
+    if (highLevel !== null) highest.set(traceIndex, Math.max(highLevel, highest.get(traceIndex) ?? -Infinity));
+  }
+  return highest;
+}
+
 function axisOf({ points, startHz, stepHz, packing, axis }: SweepSegment): Float64Array {
   if (axis) return unpackAxis({ packing, bytes: axis });
   return Float64Array.from({ length: points }, (_, i) => startHz! + i * stepHz!);

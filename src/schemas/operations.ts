@@ -3,15 +3,19 @@ import * as booking from './booking';
 import * as clock from './clock';
 import * as comparison from './comparison';
 import * as job from './job';
+import * as finals from './finals';
 import type { Operation } from './operation';
 import * as find from './find';
 import * as note from './note';
+import * as paths from './paths';
 import * as people from './people';
+import * as receiver from './receiver';
 import * as resultMail from './resultMail';
 import * as retest from './retest';
 import * as runActs from './runActs';
 import * as session from './session';
 import * as setup from './setup';
+import * as sources from './sources';
 import * as sweep from './sweep';
 import * as sweepFile from './sweepFile';
 import * as tables from './tables';
@@ -28,12 +32,16 @@ export const OPERATIONS: readonly Operation[] = [
   clock,
   bench,
   tables,
+  paths,
   sweepFile,
   sweep,
   runActs,
+  receiver,
+  sources,
   comparison,
   setup,
   retest,
+  finals,
   note,
   find,
   booking,

@@ -105,7 +105,9 @@ export async function addProductClock(
     // Two at once are counted one after the other.
     await Product.findByPk(product.id, { lock: currentTransaction().LOCK.UPDATE });
     if ((await ProductClock.count({ where: { productId: product.id, withdrawnAt: null } })) >= MOST_CLOCKS) {
-      throw new Conflict(`${product.code} has ${MOST_CLOCKS} declared clocks. Withdraw one before you declare another.`);
+      throw new Conflict(
+        `${product.code} has ${MOST_CLOCKS} declared clocks. Withdraw one before you declare another.`,
+      );
     }
     const { spread, ...rest } = body;
     const row = await ProductClock.create({

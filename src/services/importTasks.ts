@@ -1,5 +1,8 @@
+import type { DeclaredClock, SeenEmission } from '@/emc/clockHarmonics';
 import { evaluate } from '@/emc/evaluate';
+import { likelySources, type LikelySources } from '@/emc/likelySources';
 import type { TraceHead } from '@/emc/segment';
+import type { SwitchingConverter } from '@/emc/sidebands';
 import type { Evaluation, EvaluationInput, Trace } from '@/emc/types';
 import { IngestError } from '@/ingest/ingestError';
 import { readSweepSteps } from '@/ingest/read';
@@ -70,16 +73,27 @@ export interface EvaluateTask {
   input: EvaluationInput;
 }
 
-export type ImportTask = RecogniseTask | JudgeTask | EvaluateTask;
+/** The search for what emissions may come from, which cannot be done in turns. */
+export interface SourcesTask {
+  kind: 'sources';
+  emissions: SeenEmission[];
+  clocks: DeclaredClock[];
+  converters: SwitchingConverter[];
+}
+
+export type ImportTask = RecogniseTask | JudgeTask | EvaluateTask | SourcesTask;
 export type ResultOf<T extends ImportTask> = T extends RecogniseTask
   ? Recognised
   : T extends JudgeTask
     ? JudgedFile | Refused | NoFrequency
-    : Evaluation;
+    : T extends SourcesTask
+      ? LikelySources
+      : Evaluation;
 
 /** @param file null for the task that brings its points along */
 export function* taskSteps(file: ScannedFile | null, task: ImportTask): Generator<void, ResultOf<ImportTask>> {
   if (task.kind === 'evaluate') return yield* evaluate(task.input);
+  if (task.kind === 'sources') return likelySources(task.emissions, task.clocks, task.converters);
   if (file === null) throw new Error('This task needs a file');
   if (task.kind === 'judge') return yield* judgeSteps(file, task);
   const recognition = yield* recogniseSteps(file, task.name, task.sweepIndex ?? undefined);

@@ -1,11 +1,12 @@
 import { AsyncResource } from 'node:async_hooks';
 import { availableParallelism } from 'node:os';
 import { Worker } from 'node:worker_threads';
+import type { LikelySources } from '@/emc/likelySources';
 import type { Evaluation, EvaluationInput } from '@/emc/types';
 import { Throttled } from '@/errors';
 import { ScannedFile } from '@/ingest/scannedFile';
 import { FairTurns } from './fairTurns';
-import { taskSteps, type ImportTask, type ResultOf } from './importTasks';
+import { taskSteps, type ImportTask, type ResultOf, type SourcesTask } from './importTasks';
 import type { FileSource, FromWorker, ToWorker } from './importWorker';
 import { inTurns } from './inTurns';
 
@@ -78,6 +79,19 @@ export async function evaluateApart(person: number, input: EvaluationInput): Pro
   const task = { kind: 'evaluate' as const, input };
   const points = input.traces.reduce((sum, { reading }) => sum + reading.length, 0);
   if (points <= INLINE_POINTS) return runHere(null, task);
+  return runApart(person, task, null, () => Promise.reject(new Error('This task has no file')));
+}
+
+/** Emissions times the highest frequency over the widest bandwidth; what is below takes a few milliseconds. */
+const INLINE_SEARCH = 40_000;
+
+/** Searches for likely sources: a small search here, a long one on a worker's thread. @throws {Throttled} */
+export async function sourcesApart(person: number, input: Omit<SourcesTask, 'kind'>): Promise<LikelySources> {
+  const task = { kind: 'sources' as const, ...input };
+  const { emissions } = input;
+  const highestHz = emissions.reduce((most, { frequencyHz }) => Math.max(most, frequencyHz), 0);
+  const widestHz = emissions.reduce((most, { bandwidthHz }) => Math.max(most, bandwidthHz), 0);
+  if (emissions.length === 0 || (emissions.length * highestHz) / widestHz <= INLINE_SEARCH) return runHere(null, task);
   return runApart(person, task, null, () => Promise.reject(new Error('This task has no file')));
 }
 

@@ -8,7 +8,7 @@ import { OPERATIONS } from '@/schemas/operations';
 import { addProductClock } from '@/services/clocks';
 import { keepSweep } from '@/services/keepSweep';
 import { previewResultMail } from '@/services/resultMails';
-import { listRetests } from '@/services/retests';
+import { listRetests, readRetest } from '@/services/retests';
 import { createSample } from '@/services/samples';
 import { createSweepFile } from '@/services/sweepFiles';
 import { PASSWORD } from '../auth/people';
@@ -80,6 +80,19 @@ async function enterClocks({ technician, product }: World): Promise<string[]> {
   return ids;
 }
 
+/** A final for that retest. */
+async function typedFinals(w: World) {
+  const { state } = await readRetest(w.technician.actor, retestId);
+  return {
+    ...{ stateId: state.id, port: 'enclosure', polarisation: 'horizontal', distanceM: 3 },
+    ...{ pathId: w.choice.pathId, limitSetId: w.choice.limitSetId, operatingMode: 'full light' },
+    ...{ valuesHold: 'receiver-input', unit: 'dBuV' },
+    finals: [
+      { retestIds: [retestId], frequencyHz: 144e6, rbwHz: 120e3, readings: [{ detector: 'quasi-peak', level: 47 }] },
+    ],
+  };
+}
+
 /** What makes each operation do something when the asker may; a missing row fails the test below. */
 const SAMPLES: Record<string, Sample> = {
   signIn: { body: () => ({ email: 'nobody@harrowlane.example', password: 'wrong' }) },
@@ -130,6 +143,15 @@ const SAMPLES: Record<string, Sample> = {
   createState: { params: (w) => w.sample.id, body: () => ({ description: 'ferrite' }) },
   changeState: { params: (w) => stateOf(w).id, body: () => ({ description: 'as received, lid on' }) },
   listPaths: {},
+  readPath: { params: (w) => w.choice.pathId! },
+  reviseUncertainty: {
+    params: (w) => w.choice.pathId!,
+    body: () => {
+      const site = { name: 'site', valueDb: 5, distribution: { shape: 'triangular' }, source: 'made for tests' };
+      const ranges = [{ startHz: 30e6, stopHz: 1e9, contributions: [site] }];
+      return { budget: { prescan: ranges, final: ranges }, uncertaintySource: 'made for tests', reason: 'a sample' };
+    },
+  },
   listLimitSets: {},
   listEquipment: {},
   readEquipment: { params: (w) => w.items[1]!.equipmentId },
@@ -198,6 +220,8 @@ const SAMPLES: Record<string, Sample> = {
   readWindow: { params: (w) => w.run.id, query: '?fromHz=100e6&toHz=200e6&columns=64' },
   listCandidates: { params: (w) => w.run.id },
   readWorking: { params: (w) => w.run.id, query: '?frequencyHz=144e6&trace=0' },
+  readReceiverCheck: { params: (w) => w.run.id },
+  readLikelySources: { params: (w) => w.run.id },
   downloadSweepFile: { params: (w) => w.run.id },
   refileSweep: { params: spareOf, body: (w) => ({ stateId: stateOf(w).id, reason: 'dropped on the wrong sample' }) },
   voidSweep: { params: spareOf, body: () => ({ reason: 'the mast stood still' }) },
@@ -218,6 +242,8 @@ const SAMPLES: Record<string, Sample> = {
   readRetest: { params: () => retestId },
   changeRetest: { params: () => retestId, body: () => ({ act: 'schedule', note: 'beside the next samples' }) },
   downloadFrequencyList: {},
+  previewFinals: { body: typedFinals },
+  keepFinals: { body: typedFinals },
 };
 
 /** A run can be voided while it has a voice, and restored while it has none. */
@@ -249,6 +275,7 @@ async function versionFor(op: Operation, id: string | undefined): Promise<string
     changePhoto: ['readPhoto', id!],
     withdrawPhoto: ['readPhoto', id!],
     changeRetest: ['readRetest', id!],
+    reviseUncertainty: ['readPath', id!],
     changeProductClock: ['readProductClock', id!],
     withdrawProductClock: ['readProductClock', id!],
   };

@@ -21,8 +21,10 @@ import { SectionHeading } from '@/components/ui/SectionHeading';
 import { formatDay } from '@/format/dates';
 import { formatCount } from '@/format/quantities';
 import type { SampleView } from '@/schemas/job';
+import { listProductClocks } from '@/services/clocks';
 import { labZone } from '@/services/lab';
 import { readProduct } from '@/services/products';
+import { Clocks } from './Clocks';
 import { CorrectProduct } from './CorrectProduct';
 import { productRecord } from './productRecord';
 import { SampleTable } from './SampleTable';
@@ -42,6 +44,7 @@ export default async function ProductPage({ params }: Props) {
   const actor = await requireActor();
   const product = await found(readProduct(actor, (await params).id));
   const zone = await labZone();
+  const clocks = await listProductClocks(actor, product.id, { limit: 200 });
   const { jobs, samples, more } = await productRecord(actor, product.id);
   const shown = samples.find(({ states }) => states.some(({ runs }) => runs > 0)) ?? samples[0];
   const record = shown && (await sampleRecord(actor, shown, zone));
@@ -133,6 +136,7 @@ export default async function ProductPage({ params }: Props) {
         <EmptyLine lead="No job was opened for it yet." />
       )}
       {more && <p className="t-detail mt-2">Jobs from further back are in the list of all jobs.</p>}
+      <Clocks productId={product.id} clocks={clocks.items} zone={zone} />
       {mayRole(actor.role, 'product.change') ? (
         <>
           <SectionHeading className="mt-6">This product</SectionHeading>

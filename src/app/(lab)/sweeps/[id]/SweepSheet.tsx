@@ -18,6 +18,7 @@ import { useKey } from '@/components/shell/keys';
 import { ButtonLink } from '@/components/ui/Button';
 import { Id } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
+import type { ReceiverCheckView } from '@/schemas/receiver';
 import type { RetestItem } from '@/schemas/retest';
 import type { EvaluationItem } from '@/schemas/runActs';
 import type { PhotoView, SetupView } from '@/schemas/setup';
@@ -29,13 +30,16 @@ import { PURPOSE_WORDS } from '@/format/words';
 import { Coverage } from './Coverage';
 import { History } from './History';
 import { NewerRevisions } from './NewerRevisions';
+import { receiverSection } from './receiverSection';
 import { Record } from './Record';
 import { RunActs } from './RunActs';
 import { runFinding, runTitle } from './runFinding';
 import { orientationOf, runWords } from './runWords';
 import { setUpSection } from './setUpSection';
 import { SettingsLine } from './SettingsLine';
+import { sourcesSection } from './sourcesSection';
 import { useCandidates, type CandidatePage } from './useCandidates';
+import { useSources } from './useSources';
 import { useWindow } from './useWindow';
 import { useWorking } from './useWorking';
 import { Working } from './Working';
@@ -55,6 +59,7 @@ interface Props {
   photos: { items: PhotoView[]; next: string | null };
   /** What this run asked for or settled. */
   retests: { items: RetestItem[]; next: string | null };
+  receiver: ReceiverCheckView;
   zone: string;
   /** Whether the reader is one of the lab's people. */
   lab: boolean;
@@ -68,7 +73,8 @@ interface Open {
 
 /** The sheet of one run: finding, chart, candidates, and beside them how each figure came about. */
 export function SweepSheet(props: Props) {
-  const { sweep, overview, first, history, evaluations, others, notes, setup, photos, retests, zone, lab } = props;
+  const { sweep, overview, first, history, evaluations, others, notes, setup, photos, retests, receiver, zone, lab } =
+    props;
   const tableId = useId();
   const legend = useRef<HTMLDivElement>(null);
   const [mode, setMode] = useState<ChartMode>('margin');
@@ -78,6 +84,7 @@ export function SweepSheet(props: Props) {
   const { candidates, total, more, busy: loadingMore } = useCandidates(sweep.id, first);
   const { window, ask } = useWindow(sweep.id, overview);
   const { working, busy, problem, load, clear } = useWorking(sweep.id);
+  const sources = useSources(sweep.id, sweep.evaluation.id);
   const subject = useMemo(() => chartSubject(sweep, orientationOf(sweep)), [sweep]);
 
   const show = useCallback(
@@ -191,6 +198,8 @@ export function SweepSheet(props: Props) {
           summary: <Coverage.Summary sweep={sweep} />,
           children: <Coverage sweep={sweep} />,
         },
+        sourcesSection(sources, { clockHz, onClock: setClockHz }),
+        receiverSection(receiver),
         ...retestsSection(retests, sweep.id),
         setUpSection({ sweep, setup, photos, zone, lab }),
         notesSection({ sweepId: sweep.id }, notes, zone, lab),

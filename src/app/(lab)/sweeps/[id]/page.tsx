@@ -8,6 +8,7 @@ import { listEvaluations } from '@/services/evaluations';
 import { labZone } from '@/services/lab';
 import { listNotes } from '@/services/notes';
 import { listPhotos } from '@/services/photos';
+import { readReceiverCheck } from '@/services/receiverCheck';
 import { listRetests } from '@/services/retests';
 import { readSetup } from '@/services/setup';
 import { listCandidates, listSweeps, readSweep } from '@/services/sweeps';
@@ -38,7 +39,7 @@ export default async function SweepPage({ params }: Props) {
   const actor = await requireActor();
   const { id } = await params;
   const sweep = await readOnce(actor, id);
-  const [window, candidates, zone, notes, evaluations, others, setup, photos, retests] = await Promise.all([
+  const [window, candidates, zone, notes, evaluations, others, setup, photos, retests, receiver] = await Promise.all([
     readOverview(actor, id),
     listCandidates(actor, id, { limit: FIRST_CANDIDATES }),
     labZone(),
@@ -48,6 +49,7 @@ export default async function SweepPage({ params }: Props) {
     readSetup(actor, id),
     listPhotos(actor, id, { limit: PHOTOS }),
     listRetests(actor, { limit: RETESTS, runId: id }),
+    readReceiverCheck(actor, id),
   ]);
   const history = actor.role === 'designer' ? null : await historyOf(actor, 'sweep', id);
   return (
@@ -63,6 +65,7 @@ export default async function SweepPage({ params }: Props) {
       setup={setup}
       photos={photos}
       retests={retests}
+      receiver={receiver}
       zone={zone}
       lab={actor.role !== 'designer'}
     />
