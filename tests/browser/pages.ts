@@ -56,6 +56,9 @@ async function pagesFor(window: Window, key: string): Promise<string[]> {
     `/products/${await first('products')}`,
     '/find?q=LD-40',
     '/retests',
+    '/calculator',
+    '/calculator?pane=field&unit=dBuV&reading=52.1&af=14.3&loss=2.1&gain=x&rule=20&f=10&from=3&to=10',
+    '/calculator?pane=mismatch&as=vswr&vs=2&vl=1.5&show=low',
     '/account',
   ];
   if (key === 'teo') return shared;
@@ -63,6 +66,7 @@ async function pagesFor(window: Window, key: string): Promise<string[]> {
     ...shared,
     '/day',
     '/sweeps/new',
+    `/finals?state=${over.stateId}&port=enclosure`,
     '/jobs/new',
     '/equipment',
     `/equipment/${await first('equipment?find=ANT-02')}`,

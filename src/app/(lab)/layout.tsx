@@ -15,7 +15,7 @@ const LAB_SECTIONS: Section[] = [
   { href: '/day', name: 'Day' },
   { href: '/jobs', name: 'Jobs', also: ['/samples', '/products'] },
   { href: '/sweeps', name: 'Sweeps', onPhone: true },
-  { href: '/equipment', name: 'Equipment', also: ['/limits'] },
+  { href: '/equipment', name: 'Equipment', also: ['/limits', '/paths'] },
 ];
 
 /** What is over stands above the line; what only needs a final, or a prescan again, lies across it. */
@@ -56,6 +56,7 @@ export default async function LabLayout({ children }: { children: ReactNode }) {
         room={room}
         menu={
           <>
+            <Link href="/calculator">Calculator</Link>
             <Link href="/account">Your account</Link>
             {lettersShown() && <Link href="/letters">Letters of the demo</Link>}
             <SignOutButton />
