@@ -83,7 +83,7 @@ export async function evaluateApart(person: number, input: EvaluationInput): Pro
 }
 
 /** Emissions times the highest frequency over the widest bandwidth; what is below takes a few milliseconds. */
-const INLINE_SEARCH = 40_000;
+const INLINE_SEARCH = 30_000;
 
 /** Searches for likely sources: a small search here, a long one on a worker's thread. @throws {Throttled} */
 export async function sourcesApart(person: number, input: Omit<SourcesTask, 'kind'>): Promise<LikelySources> {

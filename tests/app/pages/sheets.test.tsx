@@ -91,15 +91,21 @@ describe('a designer', () => {
     expect(words(await markup(world.designer.actor, name))).toContain('LD-40');
     expect(words(await markup(world.outsider.actor, name))).not.toContain('LD-40');
   });
-  test.each(['jobs/[id]', 'samples/[id]', 'products/[id]', 'sweeps', 'jobs'] as const)(
+  const acts = (html: string) =>
+    html.match(/<button[^>]*class="btn (?!btn-plain column-opener)[^>]*>[^<]*|sweeps\/new|jobs\/new/g) ?? [];
+  test.each(['jobs/[id]', 'samples/[id]', 'sweeps', 'jobs'] as const)(
     'reads /%s without anything to change and without the history',
     async (name) => {
       const html = await markup(world.designer.actor, name);
-      const acts = html.match(/<button[^>]*class="btn (?!btn-plain column-opener)[^>]*>|sweeps\/new|jobs\/new/g);
-      expect(acts ?? []).toEqual([]);
+      expect(acts(html)).toEqual([]);
       expect(words(html)).not.toContain('History');
     },
   );
+  test('changes nothing of an own product but what it is declared to run at', async () => {
+    const html = await markup(world.designer.actor, 'products/[id]');
+    expect(acts(html).map((act) => act.replace(/<[^>]*>/, ''))).toEqual(['Declare a clock']);
+    expect(words(html)).not.toContain('History');
+  });
 });
 
 describe('what the sheets say of the one run', () => {
