@@ -1,5 +1,7 @@
-import { addFactor, factorAt, prepareFactorTable, type PreparedTable } from './factorTable';
-import type { FactorQuantity, LevelUnit, LineUnit } from './kinds';
+import { levelUnitAfter, signOf } from './factorQuantity';
+import { addFactor, prepareFactorTable, type PreparedTable } from './factorTable';
+import type { LevelUnit, LineUnit } from './kinds';
+import { stretchAt, stretchBelow, stretchesOf, sumAt, type PathStretch } from './pathStretches';
 import type { PathTerm } from './types';
 import { DBM_TO_DBUV_50_OHM, isLinear, isReceiverInput, toReceiverLevel } from './units';
 
@@ -11,19 +13,22 @@ export interface PreparedPath {
   readingUnit: LevelUnit;
   /** Null when the readings are relative and can never be a level. */
   levelUnit: LineUnit | null;
-  terms: { sign: 1 | -1; rows: PreparedTable }[];
+  /** As `stretchesOf`, with each stretch's terms made ready. */
+  stretches: (PathStretch & { ready: PreparedTerm[] })[];
 }
-
-/** + for what is lost between the sample and the receiver, − for what is gained. Source: E = reading + AF + loss − gain. */
-export function signOf(quantity: FactorQuantity): 1 | -1 {
-  return quantity === 'gain' ? -1 : 1;
+interface PreparedTerm {
+  sign: 1 | -1;
+  rows: PreparedTable;
 }
 
 /**
- * The unit a level has after its applied terms: dBµV with an antenna factor is dBµV/m, dBµV without stays dBµV, and a
- * reading in dBµV/m, dBµA, dBµA/m or dBpW stays what it is. Null for a relative reading.
- * Throws RangeError when a term is applied to a reading that holds its corrections already, or two antenna factors
- * are applied: that would count something twice.
+ * The unit a level has after its applied terms. A reading at the receiver's input becomes what its transducer says:
+ * dBµV/m by an antenna factor, dBµV by a voltage division factor or without any, dBµA by a transfer impedance, dBµA/m by
+ * a magnetic antenna factor, dBpW by a clamp factor. A reading in dBµV/m, dBµA, dBµA/m or dBpW stays what it is. Null
+ * for a relative reading.
+ * Throws RangeError when a term is applied to a reading that holds its corrections already, or two transducers are
+ * applied at one frequency: that would count something twice. Also when the transducers of a path split by frequency
+ * end in different units, and as `stretchesOf` does.
  */
 export function levelUnitOf(readingUnit: LevelUnit, terms: readonly PathTerm[]): LineUnit | null {
   const applied = terms.filter((term) => term.applied);
@@ -34,39 +39,52 @@ export function levelUnitOf(readingUnit: LevelUnit, terms: readonly PathTerm[]):
     }
     return readingUnit as LineUnit;
   }
-  const antennaFactors = applied.filter((term) => term.table.quantity === 'antenna-factor');
-  if (antennaFactors.length > 1) {
-    throw new RangeError(
-      `Two antenna factors in one path: ${antennaFactors.map((term) => term.table.name).join(', ')}.`,
-    );
+  const units = new Set<LineUnit>();
+  for (const stretch of stretchesOf(applied)) {
+    const transducers = (stretch.terms ?? []).filter(({ table }) => levelUnitAfter(table.quantity) !== null);
+    if (transducers.length > 1) throw new RangeError(twice(transducers));
+    const [transducer] = transducers;
+    if (stretch.terms) units.add((transducer && levelUnitAfter(transducer.table.quantity)) ?? 'dBuV');
   }
-  return antennaFactors.length === 1 ? 'dBuV/m' : 'dBuV';
+  const [unit, ...others] = units;
+  if (unit === undefined) throw new RangeError('The ranges of this path leave no frequency with all of its items.');
+  if (others.length > 0) {
+    throw new RangeError(`One path ends in ${[unit, ...others].join(' and in ')}; each unit needs a path of its own.`);
+  }
+  return unit;
+}
+
+function twice(transducers: readonly PathTerm[]): string {
+  const names = transducers.map((term) => term.table.name).join(', ');
+  const same = transducers.every((term) => term.table.quantity === 'antenna-factor');
+  return same
+    ? `Two antenna factors in one path: ${names}.`
+    : `Two transducers at one frequency of one path: ${names}.`;
 }
 
 /** Throws as `levelUnitOf` and `checkFactorTable` do. */
 export function preparePath(readingUnit: LevelUnit, terms: readonly PathTerm[]): PreparedPath {
   const levelUnit = levelUnitOf(readingUnit, terms);
-  const applied = levelUnit === null ? [] : terms.filter((term) => term.applied);
+  const stretches = stretchesOf(levelUnit === null ? [] : terms);
+  const ready = new Map<PathTerm, PreparedTerm>();
+  for (const term of stretches.flatMap((stretch) => stretch.terms ?? [])) {
+    const { table } = term;
+    if (!ready.has(term)) ready.set(term, { sign: signOf(table.quantity), rows: prepareFactorTable(table) });
+  }
   return {
     readingUnit,
     levelUnit,
-    terms: applied.map(({ table }) => ({ sign: signOf(table.quantity), rows: prepareFactorTable(table) })),
+    stretches: stretches.map((one) => ({ ...one, ready: (one.terms ?? []).map((term) => ready.get(term)!) })),
   };
 }
 
 /**
- * What the applied terms add to a reading at a frequency, in dB: antenna factor + losses − gains. Zero without terms;
- * null when any applied table has no value there.
+ * What the applied terms add to a reading at a frequency, in dB: antenna factor + losses − gains, and so on by
+ * `signOf`. Zero without terms; null where the path has no factor or any applied table has no value.
  */
 export function correctionAt(terms: readonly PathTerm[], frequencyHz: number): number | null {
-  let sum = 0;
-  for (const { applied, table } of terms) {
-    if (!applied) continue;
-    const factor = factorAt(table, frequencyHz);
-    if (factor === null) return null;
-    sum += signOf(table.quantity) * factor.valueDb;
-  }
-  return sum;
+  const { terms: governing } = stretchAt(stretchesOf(terms), frequencyHz);
+  return governing && sumAt(governing, frequencyHz);
 }
 
 /**
@@ -96,7 +114,40 @@ export function levelsInto(
       state[i] = Number.isFinite(value) ? POINT.known : POINT.notRead;
     }
   }
-  for (const { sign, rows } of path.terms) {
-    addFactor(rows, sign, frequencyHz, logHz, level, state, POINT.noFactor);
+  const { stretches } = path;
+  if (stretches.length === 1) addStretch(stretches[0]!, frequencyHz, logHz, level, state);
+  else addStretches(stretches, frequencyHz, logHz, level, state);
+}
+
+function addStretch(
+  { terms, ready }: PreparedPath['stretches'][number],
+  frequencyHz: Float64Array,
+  logHz: Float64Array,
+  level: Float64Array,
+  state: Uint8Array,
+): void {
+  if (terms === null) state.fill(POINT.noFactor);
+  for (const { sign, rows } of ready) addFactor(rows, sign, frequencyHz, logHz, level, state, POINT.noFactor);
+}
+
+/** Runs of neighbouring points within one stretch go through together; a point on an edge goes by what governs there. */
+function addStretches(
+  stretches: PreparedPath['stretches'],
+  frequencyHz: Float64Array,
+  logHz: Float64Array,
+  level: Float64Array,
+  state: Uint8Array,
+): void {
+  for (let first = 0; first < frequencyHz.length;) {
+    const hz = frequencyHz[first]!;
+    const within = stretches[stretchBelow(stretches, hz)]!;
+    let end = first + 1;
+    if (hz !== within.toHz) {
+      while (end < frequencyHz.length && frequencyHz[end]! > within.fromHz && frequencyHz[end]! < within.toHz) end++;
+    }
+    const stretch = end > first + 1 ? within : stretches.find((one) => one === stretchAt(stretches, hz))!;
+    const of = <T extends Float64Array | Uint8Array>(points: T) => points.subarray(first, end) as T;
+    addStretch(stretch, of(frequencyHz), of(logHz), of(level), of(state));
+    first = end;
   }
 }

@@ -52,5 +52,23 @@ export type MainsLine = (typeof MAINS_LINES)[number];
 export const POLARISATIONS = ['horizontal', 'vertical'] as const;
 export type Polarisation = (typeof POLARISATIONS)[number];
 
-export const FACTOR_QUANTITIES = ['antenna-factor', 'loss', 'gain'] as const;
+/**
+ * What a table of corrections can hold. A loss is a cable's, an attenuator's or a transient limiter's. The others that
+ * are not a gain belong to what stands between the sample and the receiver's cable: an antenna, a loop, an artificial
+ * network, a current probe or an absorbing clamp.
+ */
+export const FACTOR_QUANTITIES = [
+  'antenna-factor',
+  'loss',
+  'gain',
+  'amn-voltage-division',
+  'aan-voltage-division',
+  'transfer-impedance',
+  'magnetic-antenna-factor',
+  'clamp-factor',
+] as const;
 export type FactorQuantity = (typeof FACTOR_QUANTITIES)[number];
+
+/** In what a factor is stated, as it is written. */
+export const FACTOR_UNITS = ['dB/m', 'dB', 'dBΩ', 'dB(S/m)', 'dB(pW/µV)'] as const;
+export type FactorUnit = (typeof FACTOR_UNITS)[number];

@@ -8,7 +8,7 @@ export interface FactorTable {
   name: string;
   quantity: FactorQuantity;
   frequencyHz: readonly number[];
-  /** dB/m for an antenna factor, dB (positive) for a loss or a gain. */
+  /** In the quantity's unit (`factorUnitOf`); a loss, a gain and a voltage division factor are positive figures. */
   valueDb: readonly number[];
 }
 
@@ -20,6 +20,9 @@ export interface PathTerm {
   table: FactorTable;
   applied: boolean;
   notAppliedBecause?: string;
+  /** Where its item is in the path, both ends included; an end that is absent or null is open. */
+  fromHz?: number | null;
+  toHz?: number | null;
 }
 
 export interface LimitSegment {

@@ -1,13 +1,12 @@
 import { isFrequency } from './axis';
 import { POINT } from './correction';
-import { factorAt } from './factorTable';
 import { limitAt } from './limitLine';
 import { hangTrace, judgeSegment, type HungTrace } from './segment';
 import type { EvaluationInput, LimitLine, Trace, Working } from './types';
 import { guardAt, type Guard } from './guard';
 import { expandedAt } from './uncertainty';
 import { readingVerdict } from './verdict';
-import { pathTerms, readingTerms } from './workingTerms';
+import { noFactorBecause, pathTerms, readingTerms } from './workingTerms';
 
 /**
  * The column addition behind one figure: the measured point of a trace nearest to a frequency, its reading, every term
@@ -120,8 +119,7 @@ function judgement(
 
 function noLevelBecause(input: EvaluationInput, trace: Trace, hz: number): string {
   if (trace.unit === 'dB') return 'Readings in relative dB are no level.';
-  const lacking = input.terms.find((term) => term.applied && factorAt(term.table, hz) === null);
-  return lacking ? `${lacking.table.name} has no value at this frequency.` : 'The reading is no level.';
+  return noFactorBecause(input.terms, hz) ?? 'The reading is no level.';
 }
 
 function lineAt(lines: HungTrace['lines'], hz: number): LimitLine | null {

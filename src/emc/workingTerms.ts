@@ -1,5 +1,6 @@
-import { signOf } from './correction';
+import { factorUnitOf, signOf } from './factorQuantity';
 import { factorAt } from './factorTable';
+import { isInRange, stretchAt, stretchesOf } from './pathStretches';
 import type { PathTerm, Trace, WorkingTerm } from './types';
 import { DBM_TO_DBUV_50_OHM, isReceiverInput, powerAsDbm, toReceiverLevel } from './units';
 
@@ -28,23 +29,43 @@ export function readingTerms(trace: Trace, reading: number): WorkingTerm[] {
   return [notAdded, { ...PLAIN, figure: dbm, unit: 'dBm', name: 'reading as a level' }, conversion];
 }
 
-/** Every term of the path that has a value at a frequency, applied or not, with the rows it was interpolated from. */
+/**
+ * Every term of the path that has a value at a frequency, applied or not, with the rows it was interpolated from. An
+ * item whose range lies elsewhere is left out; on the edge of two ranges the terms of the smaller correction stand there
+ * as not applied.
+ */
 export function pathTerms(terms: readonly PathTerm[], hz: number): WorkingTerm[] {
+  const governing = stretchAt(stretchesOf(terms), hz).terms;
   return terms.flatMap((term): WorkingTerm[] => {
-    const factor = factorAt(term.table, hz);
+    const factor = isInRange(term, hz) ? factorAt(term.table, hz) : null;
     if (factor === null) return [];
     const { valueDb, ...rows } = factor;
+    const { quantity } = term.table;
+    const applied = term.applied && (governing === null || governing.includes(term));
     return [
       {
-        sign: signOf(term.table.quantity) > 0 ? '+' : '−',
+        sign: signOf(quantity) > 0 ? '+' : '−',
         figure: valueDb,
-        unit: term.table.quantity === 'antenna-factor' ? 'dB/m' : 'dB',
+        unit: factorUnitOf(quantity),
         name: term.name,
         termId: term.id,
-        applied: term.applied,
-        notAppliedBecause: term.applied ? null : (term.notAppliedBecause ?? null),
+        applied,
+        notAppliedBecause: applied ? null : whyNot(term),
         rows,
       },
     ];
   });
+}
+
+/** Why the path gives no factor at a frequency, as a sentence; null where it gives one. */
+export function noFactorBecause(terms: readonly PathTerm[], hz: number): string | null {
+  const governing = stretchAt(stretchesOf(terms), hz).terms;
+  if (governing === null) return 'No range of the signal path reaches this frequency.';
+  const lacking = governing.find((term) => factorAt(term.table, hz) === null);
+  return lacking ? `${lacking.table.name} has no value at this frequency.` : null;
+}
+
+function whyNot(term: PathTerm): string | null {
+  if (!term.applied) return term.notAppliedBecause ?? null;
+  return 'two ranges meet at this frequency and the larger correction governs';
 }

@@ -1,4 +1,5 @@
-import type { FactorQuantity } from '@/emc/kinds';
+import { factorUnitOf } from '@/emc/factorQuantity';
+import { FACTOR_QUANTITIES, type FactorQuantity } from '@/emc/kinds';
 import { formatFrequencyRange } from './frequencies';
 import { formatDb, formatDistance } from './quantities';
 
@@ -34,12 +35,31 @@ export const QUANTITY_WORDS: Record<FactorQuantity, string> = {
   'antenna-factor': 'antenna factor',
   loss: 'loss',
   gain: 'gain',
+  'amn-voltage-division': 'AMN voltage division factor',
+  'aan-voltage-division': 'AAN voltage division factor',
+  'transfer-impedance': 'transfer impedance',
+  'magnetic-antenna-factor': 'magnetic antenna factor',
+  'clamp-factor': 'absorbing clamp factor',
 };
 
-/** `dB/m` for an antenna factor, else `dB`. */
+/** What a quantity does to a reading, for whoever has to say which one a table holds. */
+export const QUANTITY_USES: Record<FactorQuantity, string> = {
+  'antenna-factor': 'added, dBµV to dBµV/m',
+  loss: 'added: cable, attenuator, transient limiter',
+  gain: 'subtracted',
+  'amn-voltage-division': 'added, the level stays dBµV',
+  'aan-voltage-division': 'added, the level stays dBµV',
+  'transfer-impedance': 'subtracted, dBµV to dBµA',
+  'magnetic-antenna-factor': 'added, dBµV to dBµA/m',
+  'clamp-factor': 'added, dBµV to dBpW',
+};
+
+/** `dB/m` for an antenna factor, `dBΩ` for a transfer impedance; `dB` while the quantity is not said. */
 export function quantityUnit(quantity: FactorQuantity | null): string {
-  return quantity === 'antenna-factor' ? 'dB/m' : 'dB';
+  return quantity === null ? 'dB' : factorUnitOf(quantity);
 }
+
+const quantityNamed = (words: string) => FACTOR_QUANTITIES.find((one) => QUANTITY_WORDS[one] === words) ?? null;
 
 export interface Remark {
   kind: string;
@@ -65,11 +85,11 @@ export function remarkWords({ kind, fromHz, toHz, db }: Remark, what: string): s
     case 'negated':
       return 'No figure in the file is above zero: read as a loss and turned over, since no loss is a gain.';
     case 'unit-not-stated':
-      return `The file states no unit; the figures are read as ${what === 'antenna factor' ? 'dB/m' : 'dB'}.`;
+      return `The file states no unit; the figures are read as ${quantityUnit(quantityNamed(what))}.`;
     case 'not-said-to-be-factors':
       return 'Nothing in the file says that these are corrections. Look at the chart before you enter them.';
     case 'mixed-signs':
-      return `Some figures are above zero and some below; a ${what} of less than nothing is the opposite.`;
+      return `Some figures are above zero and some below; ${/^A/.test(what) ? 'an' : 'a'} ${what} of less than nothing is the opposite.`;
     case 'distance-differs':
       return 'The distance is another than before; runs at the other distance find no table.';
     default:

@@ -16,6 +16,8 @@ const THINGS: [RegExp, string][] = [
     'preamplifier',
   ],
   [/\b(?:amn|lisn|isn|artificial (?:mains )?network|voltage division)\b/, 'network factor'],
+  [/current probe|transfer impedance/, 'transfer impedance'],
+  [/absorbing clamp|clamp factor/, 'clamp factor'],
   [/ref(?:erence)? ?(?:level)? ?offset|level offset|amplitude offset/, 'level offset'],
   [/amplitude correction|correction factors?|user correction|^corrections?$/, 'correction'],
 ];

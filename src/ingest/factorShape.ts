@@ -1,7 +1,8 @@
 import type { CleanBytes } from './bytes';
 import { statsOf } from './columnStats';
 import type { AxisUnit } from './frequency';
-import { signOf } from './lossOrGain';
+import { factorOnlyUnitIn, factorUnitIn, type WrittenFactorUnit } from './factorUnits';
+import { signOf, signQuestion } from './lossOrGain';
 import { networkTraces } from './network';
 import { moved } from './numbers';
 import type { OptionLine } from './prepare';
@@ -10,16 +11,17 @@ import type { Table } from './table';
 import type { Question, Recognition, RecognisedTrace } from './types';
 import { levelUnitIn } from './units';
 
-const FACTOR_WORD = /factor|\baf\b|loss|atten|gain|correction|transducer|\bdiff\b|insertion|voltage division/i;
+const FACTOR_WORD =
+  /factor|\baf\b|loss|atten|gain|correction|transducer|\bdiff\b|insertion|voltage division|transfer ?imp|\bz ?t\b/i;
 const LEVEL_WORD = /level|ampl|trace|magnitude|spectrum|pegel|peak|average|\bqp\b|\bdata\b/i;
 
 /** Unit of a column of factors: what the heading says, else what the preamble says of all. */
-export function factorUnit(table: Table, column: number): { unit: 'dB' | 'dB/m'; stated: boolean } {
-  const heading = levelUnitIn(table.headings.cells[column] ?? '')?.unit;
-  if (heading === 'dB' || heading === 'dB/m') return { unit: heading, stated: true };
+export function factorUnit(table: Table, column: number): { unit: WrittenFactorUnit; stated: boolean } {
+  const heading = factorUnitIn(table.headings.cells[column] ?? '');
+  if (heading) return { unit: heading, stated: true };
   for (const { values, key } of [...table.entries].reverse()) {
-    const unit = /unit/.test(key) ? levelUnitIn(values[0] ?? '', true)?.unit : null;
-    if (unit === 'dB' || unit === 'dB/m') return { unit, stated: true };
+    const unit = /unit/.test(key) ? factorUnitIn(values[0] ?? '', true) : null;
+    if (unit) return { unit, stated: true };
   }
   return { unit: 'dB', stated: false };
 }
@@ -33,6 +35,7 @@ export function isFactorTable(table: Table, option: OptionLine | null): boolean 
   if (set.some((value) => value !== null)) return false;
   const headings = table.levelColumns.map((column) => table.headings.cells[column] ?? '');
   return headings.every((heading, i) => {
+    if (factorOnlyUnitIn(heading)) return true;
     const unit = levelUnitIn(heading);
     if (LEVEL_WORD.test(heading) && !FACTOR_WORD.test(heading)) return false;
     if (unit !== null) return unit.unit === 'dB' || unit.unit === 'dB/m';
@@ -92,9 +95,10 @@ export function factorQuestions(
     if (/^S(?:11|21|12|22)$/.test(name)) continue;
     const heading = table.headings.cells[column] ?? name;
     const values = table.pieces.flatMap((piece) => [...levelsOf(table, piece, column)]);
-    if (signOf(heading, factorUnit(table, column).unit, values).quantity !== null) continue;
-    const text = `“${name}” does not say whether its figures are lost or gained. Which is it?`;
-    questions.push({ key: 'lossOrGain', text, proposal: 'loss', traceIndex: index });
+    const said = signOf(heading, factorUnit(table, column).unit, values);
+    if (said.quantity !== null) continue;
+    const text = signQuestion(name, said);
+    questions.push({ key: 'lossOrGain', text, proposal: said.among?.[0] ?? 'loss', traceIndex: index });
   }
   return questions;
 }

@@ -1,8 +1,9 @@
-import type { FactorQuantity } from '@/emc/kinds';
+import type { FactorQuantity, FactorUnit } from '@/emc/kinds';
 import { runThrough } from './bytes';
 import { factorUnit } from './factorShape';
 import { IngestError } from './ingestError';
-import { signOf, type Sign } from './lossOrGain';
+import { factorOnlyUnitIn } from './factorUnits';
+import { signOf, signQuestion, turnsOver, type Sign } from './lossOrGain';
 import { networkTraces } from './network';
 import { moved } from './numbers';
 import { prepareSteps } from './prepare';
@@ -29,7 +30,7 @@ export interface FactorColumn {
   /** As written: a loss may still stand there as a negative difference. */
   writtenDb: number[];
   said: Sign;
-  unit: 'dB' | 'dB/m';
+  unit: FactorUnit;
   unitStated: boolean;
   /** The frequencies fall in the file and were turned round. */
   turned: boolean;
@@ -42,11 +43,14 @@ export interface ReadFactorTable {
   frequencyHz: number[];
   /** Positive figures are what `quantity` says: a loss written as −1.9 dB reads 1.9. */
   valueDb: number[];
-  unit: 'dB' | 'dB/m';
+  unit: FactorUnit;
   unitStated: boolean;
 }
 
-/** What was chosen, else what the table says; a loss given all in negative figures is turned over. Null: nobody says. */
+/**
+ * What was chosen, else what the table says; a loss or a voltage division given all in negative figures is turned over,
+ * and so is a transfer admittance. Null: nobody says.
+ */
 export function settleFactor(
   { said, writtenDb }: Pick<FactorColumn, 'said' | 'writtenDb'>,
   choice: FactorChoice = {},
@@ -54,7 +58,7 @@ export function settleFactor(
   const quantity = choice.quantity ?? choice.lossOrGain ?? said.quantity;
   if (!quantity) return null;
   const allBelow = writtenDb.every((value) => value <= 0) && writtenDb.some((value) => value < 0);
-  const negated = quantity === said.quantity ? said.negate : quantity === 'loss' && allBelow;
+  const negated = quantity === said.quantity ? said.negate : turnsOver(quantity) && allBelow;
   // From zero, so that 0 turned over is no negative zero.
   return { quantity, negated, valueDb: negated ? writtenDb.map((value) => 0 - value) : [...writtenDb] };
 }
@@ -83,23 +87,24 @@ function rising(name: string, frequencyHz: number[], writtenDb: number[], lineOf
     : { turned, frequencyHz, writtenDb };
 }
 
-function refuseImpedance(heading: string, line: number | null): void {
-  if (!/ohm|\u03a9|\u2126|transfer ?imp|\bz ?t\b/i.test(heading)) return;
-  const message = `“${heading}” is a transfer impedance. The lab holds antenna factors, losses and gains; a current in dBµA needs a quantity of its own, which is not held yet.`;
-  throw new IngestError(line, 'a transfer impedance', 'an antenna factor, a loss or a gain', message);
+function refuseLinear(heading: string, line: number | null): void {
+  if (factorOnlyUnitIn(heading) !== 'ohm') return;
+  const message = `“${heading}” is in ohm. A transfer impedance is entered in dBΩ, which is 20 log10 of the figures in ohm.`;
+  throw new IngestError(line, 'a transfer impedance in ohm', 'a transfer impedance in dBΩ', message);
 }
 
 /** Headings that name something else than a factor in dB or dB/m. */
 function refuseOther(heading: string, line: number | null): void {
+  if (factorOnlyUnitIn(heading)) return;
   const unit = levelUnitIn(heading);
   if (unit === null || unit.unit === 'dB' || unit.unit === 'dB/m') return;
-  const message = `“${heading}” is in ${unit.written}, which is a level or another quantity and no correction. Upload a table in dB or dB/m.`;
+  const message = `“${heading}” is in ${unit.written}, which is a level or another quantity and no correction. Upload a table in dB, dB/m, dBΩ, dB(S/m) or dB(pW/µV).`;
   throw new IngestError(line, unit.written, 'dB or dB/m', message);
 }
 
 /** @throws IngestError when the file was refused or lies otherwise than a table of corrections does */
 function refuseRecognised({ refusal, layout, firstDataLine, columns, headerLine }: Recognition): void {
-  for (const { heading } of columns) if (heading !== null) refuseImpedance(heading, headerLine);
+  for (const { heading } of columns) if (heading !== null) refuseLinear(heading, headerLine);
   if (refusal) throw new IngestError(refusal.line, refusal.found, refusal.expected, refusal.message);
   if (layout === 'pairs') return;
   const message = `Line ${firstDataLine}: a row holds a whole sweep. A table of corrections has a row per frequency.`;
@@ -148,7 +153,8 @@ export function factorColumns(
       const line = (row: number) => lineOfRow(clean, scan, piece.firstRow + row);
       const rows = rising(name, inHz(axisOf(table, piece)), [...levelsOf(table, piece, column)], line);
       const all = table.pieces.flatMap((one) => [...levelsOf(table, one, column)]);
-      return { name, ...rows, said: signOf(heading, unitDb, all), unit: unitDb, unitStated: stated };
+      const unitHeld = unitDb === 'dBS' || unitDb === 'ohm' ? 'dBΩ' : unitDb;
+      return { name, ...rows, said: signOf(heading, unitDb, all), unit: unitHeld, unitStated: stated };
     }),
   );
 }
@@ -166,8 +172,8 @@ export function readFactorTable(
     const { name, frequencyHz, unit, unitStated } = column;
     const settled = settleFactor(column, choice);
     if (!settled) {
-      const message = `“${name}” does not say whether its figures are lost or gained. Say which before it is read.`;
-      throw new IngestError(null, 'no word on loss or gain', 'loss or gain', message);
+      const message = signQuestion(name, column.said).replace('Which is it?', 'Say which before it is read.');
+      throw new IngestError(null, 'no word on what the figures are', 'what the figures are', message);
     }
     const { quantity, valueDb } = settled;
     return { name, quantity, frequencyHz, valueDb, unit, unitStated };

@@ -9,6 +9,7 @@ import {
 import { countsRows } from './columnStats';
 import type { NoAxis } from './context';
 import { detectorInHeading } from './detectors';
+import { factorOnlyUnitIn } from './factorUnits';
 import type { Content } from './template';
 import type { Recognition } from './types';
 import { levelUnitIn } from './units';
@@ -61,6 +62,7 @@ export function sortColumns(
       remarks.push({ text, line });
       return false;
     }
+    if (factorOnlyUnitIn(heading ?? '')) return true;
     return unit !== null || !(countsRows(values) || (values.length >= 10 && evenSteps(values)));
   });
   return { levelColumns: levels.map(({ column }) => column), secondAxis, remarks };

@@ -24,6 +24,11 @@ const QUANTITY_HEADINGS: Record<FactorQuantity, string> = {
   'antenna-factor': 'Antenna factor (dB/m)',
   loss: 'Loss (dB)',
   gain: 'Gain (dB)',
+  'amn-voltage-division': 'AMN voltage division factor (dB)',
+  'aan-voltage-division': 'AAN voltage division factor (dB)',
+  'transfer-impedance': 'Transfer impedance (dBohm)',
+  'magnetic-antenna-factor': 'Magnetic antenna factor (dB(S/m))',
+  'clamp-factor': 'Clamp factor (dB(pW/uV))',
 };
 
 export interface WrittenFactorTable {
@@ -41,7 +46,7 @@ export function factorTableText(table: WrittenFactorTable): string {
   return text(
     [
       ['Table', name],
-      ['Quantity', quantity.replace('-', ' ')],
+      ['Quantity', quantity.replaceAll('-', ' ')],
       ['Polarisation', polarisation],
       ['Distance', distanceM === null ? null : `${distanceM} m`],
       ['Source', source],

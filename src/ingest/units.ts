@@ -35,7 +35,9 @@ function decibelUnit(text: string): WrittenUnit | null {
   const micro = prefix === 'µ' || prefix === 'u';
   if (micro && quantity === 'v') return { unit: perMetre ? 'dBuV/m' : 'dBuV', written };
   if (micro && quantity === 'a') return { unit: perMetre ? 'dBuA/m' : 'dBuA', written };
-  if (prefix === 'p' && quantity === 'w' && !perMetre) return { unit: 'dBpW', written };
+  // `dB(pW/µV)` is the factor of an absorbing clamp.
+  const ratio = /^\s*\/\s*[µu]?v/.test(text.slice(found.index + found[0].length));
+  if (prefix === 'p' && quantity === 'w' && !perMetre && !ratio) return { unit: 'dBpW', written };
   return { unit: null, written };
 }
 

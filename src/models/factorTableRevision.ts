@@ -6,6 +6,7 @@ import {
   Model,
   type Sequelize,
 } from 'sequelize';
+import { FACTOR_QUANTITIES, type FactorQuantity } from '@/emc/kinds';
 
 export class FactorTableRevision extends Model<
   InferAttributes<FactorTableRevision>,
@@ -17,7 +18,7 @@ export class FactorTableRevision extends Model<
   declare calibrationId: CreationOptional<number | null>;
   declare name: string;
   declare revision: number;
-  declare quantity: 'antenna-factor' | 'loss' | 'gain';
+  declare quantity: FactorQuantity;
   declare polarisation: CreationOptional<'horizontal' | 'vertical' | null>;
   declare distanceM: CreationOptional<number | null>;
   declare frequenciesHz: number[];
@@ -40,7 +41,7 @@ export function defineFactorTableRevision(sequelize: Sequelize): void {
       calibrationId: { type: DataTypes.BIGINT.UNSIGNED, field: 'calibration_id', allowNull: true },
       name: { type: DataTypes.STRING(120), allowNull: false },
       revision: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
-      quantity: { type: DataTypes.ENUM('antenna-factor', 'loss', 'gain'), allowNull: false },
+      quantity: { type: DataTypes.ENUM(...FACTOR_QUANTITIES), allowNull: false },
       polarisation: { type: DataTypes.ENUM('horizontal', 'vertical'), allowNull: true },
       distanceM: { type: DataTypes.DOUBLE, field: 'distance_m', allowNull: true },
       frequenciesHz: { type: DataTypes.JSON, field: 'frequencies_hz', allowNull: false },

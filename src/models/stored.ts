@@ -13,6 +13,9 @@ export interface StoredPathItem {
   term: string | null;
   quantity: FactorQuantity | null;
   tables: { horizontal: string | null; vertical: string | null; any: string | null };
+  /** Where it is in the path, in a path split by frequency; absent or null is an open end. */
+  fromHz?: number | null;
+  toHz?: number | null;
 }
 
 export interface StoredUncertainty {

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { FACTOR_QUANTITIES } from '@/emc/kinds';
+import { FACTOR_QUANTITIES, FACTOR_UNITS } from '@/emc/kinds';
 import { day, instant, lineDetector, lineUnit, pageOf, pageQuery, person, polarisation, publicId } from './common';
 import { operation } from './operation';
 import { limitSegment } from './sweep';
@@ -151,9 +151,9 @@ const tableInFile = z.strictObject({
   index: z.int(),
   /** Heading or stack name as written. */
   heading: z.string(),
-  /** As the table says; null: loss or gain has to be asked. */
+  /** As the table says; null: what its figures are has to be asked. */
   quantity: factorQuantity.nullable(),
-  unit: z.enum(['dB', 'dB/m']),
+  unit: z.enum(FACTOR_UNITS),
   rows: z.int(),
   firstHz: z.number(),
   lastHz: z.number(),
@@ -195,7 +195,12 @@ export const factorTablePreview = z.strictObject({
   tablesInFile: z.array(tableInFile),
   tables: z.array(previewedTable),
   questions: z.array(
-    z.strictObject({ key: z.enum(['frequencyUnit', 'lossOrGain']), tableIndex: z.int().nullable(), text: z.string() }),
+    z.strictObject({
+      /** `quantity` asks more than loss or gain. */
+      key: z.enum(['frequencyUnit', 'lossOrGain', 'quantity']),
+      tableIndex: z.int().nullable(),
+      text: z.string(),
+    }),
   ),
   source: z.string().nullable(),
   /** Paths that use the newest revision now and would get their next revision with these. */

@@ -3,6 +3,7 @@ import { authorise, type Actor } from '@/auth/actor';
 import { Conflict, Invalid, Unreadable, type Issue } from '@/errors';
 import { settleFactor } from '@/ingest/factorTable';
 import { IngestError } from '@/ingest/ingestError';
+import { contradiction } from '@/ingest/lossOrGain';
 import { Calibration } from '@/models/calibration';
 import { Equipment } from '@/models/equipment';
 import { FactorTableRevision } from '@/models/factorTableRevision';
@@ -116,10 +117,12 @@ function refuseChoice(body: Body, { columns }: TableFile, named: readonly Factor
     const column = columns[table.index];
     if (!column) return say('index', 'is no table of this file');
     const settled = settleFactor(column, table.quantity ? { quantity: table.quantity } : {});
-    if (!settled) say('quantity', 'is needed: the table does not say whether its figures are lost or gained');
-    if (column.unit === 'dB/m' && settled && settled.quantity !== 'antenna-factor') {
-      say('quantity', 'is an antenna factor: the table is in dB/m');
+    if (!settled) {
+      const open = column.said.among ? 'what its figures are' : 'whether its figures are lost or gained';
+      say('quantity', `is needed: the table does not say ${open}`);
     }
+    const otherwise = settled && contradiction(column, settled.quantity);
+    if (otherwise) say('quantity', `is ${otherwise}: the table is in ${column.unit}`);
     if (body.tables.findIndex(({ name }) => name === table.name) !== i) say('name', 'is used for two tables');
     if (body.tables.findIndex(({ index }) => index === table.index) !== i) say('index', 'is chosen twice');
     const before = named.find(({ name }) => name === table.name) ?? null;
@@ -128,7 +131,7 @@ function refuseChoice(body: Body, { columns }: TableFile, named: readonly Factor
       throw new Conflict(`${table.name} ${now}, otherwise than in the preview. Look at the difference again.`);
     }
     if (!before) return;
-    const words = (value: string | null) => value?.replace('-', ' ') ?? 'either polarisation';
+    const words = (value: string | null) => value?.replaceAll('-', ' ') ?? 'either polarisation';
     if (settled && settled.quantity !== before.quantity) {
       say(
         'quantity',

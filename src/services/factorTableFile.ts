@@ -1,10 +1,11 @@
 import { authorise, type Actor } from '@/auth/actor';
-import type { Polarisation } from '@/emc/kinds';
+import type { FactorQuantity, Polarisation } from '@/emc/kinds';
 import { factorDifference } from '@/emc/revisionDifference';
 import { Invalid, TooLarge } from '@/errors';
 import { decode } from '@/ingest/bytes';
 import { factorColumns, settleFactor, type FactorColumn } from '@/ingest/factorTable';
 import { IngestError } from '@/ingest/ingestError';
+import { signQuestion, turnsOver } from '@/ingest/lossOrGain';
 import { statedIn, statedQuantity, type Stated } from '@/ingest/stated';
 import type { Recognition } from '@/ingest/types';
 import { readUpload } from '@/models/blobs';
@@ -65,10 +66,13 @@ function polarisationIn(text: string): Polarisation | null {
   return /vertical|\bver\b|\bV\b/.test(text) ? 'vertical' : null;
 }
 
+/** What only takes away or only adds; a factor that turns one quantity into another has figures of either sign. */
+const isOneWay = (quantity: FactorQuantity) => quantity === 'gain' || turnsOver(quantity);
+
 /** What is worth a look: jumps, a range that ends earlier than before, figures that were turned over. */
 export function factorRemarks(
   column: FactorColumn,
-  settled: { quantity: string; negated: boolean; valueDb: readonly number[] } | null,
+  settled: { quantity: FactorQuantity; negated: boolean; valueDb: readonly number[] } | null,
   before: FactorTableRevision | null,
   recognition: Recognition,
   distanceM: number | null,
@@ -86,7 +90,7 @@ export function factorRemarks(
   }
   if (column.turned) say('turned');
   if (settled?.negated) say('negated');
-  else if (settled?.quantity !== 'antenna-factor' && db.some((one) => one < 0) && db.some((one) => one > 0))
+  else if (isOneWay(settled?.quantity ?? 'loss') && db.some((one) => one < 0) && db.some((one) => one > 0))
     say('mixed-signs');
   if (!column.unitStated) say('unit-not-stated');
   if (recognition.kind === 'sweep') say('not-said-to-be-factors');
@@ -164,8 +168,9 @@ export async function previewFactorTable(actor: Actor | null, choice: FactorTabl
       if (!column) throw new Invalid([{ pointer: `/tables/${i}/index`, message: 'is no table of this file' }]);
       const settled = settleFactor(column, table.quantity ? { quantity: table.quantity } : {});
       if (!settled) {
-        const text = `“${column.name}” does not say whether its figures are lost or gained. Which is it?`;
-        preview.questions.push({ key: 'lossOrGain', tableIndex: table.index, text });
+        const text = signQuestion(column.name, column.said);
+        const key = column.said.among ? 'quantity' : 'lossOrGain';
+        preview.questions.push({ key, tableIndex: table.index, text });
       }
       const before = await newestTable(equipment.id, table.name);
       if (before) revised.push(before.publicId);

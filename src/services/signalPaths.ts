@@ -1,4 +1,5 @@
 import { authorise, type Actor } from '@/auth/actor';
+import { signOf } from '@/emc/factorQuantity';
 import type { Polarisation } from '@/emc/kinds';
 import type { FactorTable, PathTerm } from '@/emc/types';
 import { Invalid } from '@/errors';
@@ -123,6 +124,8 @@ export function termsOf(path: LoadedPath, setup: Setup, notApplied: Map<string, 
           table: toCoreTable(table),
           applied: because === undefined,
           ...(because !== undefined && { notAppliedBecause: because }),
+          fromHz: item.stored.fromHz ?? null,
+          toHz: item.stored.toHz ?? null,
         },
       },
     ];
@@ -143,11 +146,35 @@ export async function currentRevisions(paths: SignalPath[]): Promise<SignalPathR
   return paths.flatMap((path) => all.find((revision) => revision.signalPathId === path.id) ?? []);
 }
 
+/**
+ * From the lowest to the highest frequency that a path has a factor at, whatever the polarisation: what all its items
+ * cover, where those of one quantity that have ranges stand in for each other. There may be gaps between.
+ */
+function rangeOf(adding: readonly LoadedItem[]): { lowHz: number | null; highHz: number | null } {
+  const reach = adding.map(({ stored, tables }) => {
+    const ranged = (stored.fromHz ?? stored.toHz ?? null) !== null;
+    return {
+      // Items with a range in the path stand in for each other; each of the others has to be there by itself.
+      as: ranged ? stored.quantity : stored.equipmentId,
+      // A gain that is in the path only for a range limits nothing outside of it.
+      limits: !(ranged && stored.quantity === 'gain'),
+      lowHz: Math.max(stored.fromHz ?? 0, ...tables.map((table) => table.frequenciesHz[0]!)),
+      highHz: Math.min(stored.toHz ?? Infinity, ...tables.map((table) => table.frequenciesHz.at(-1)!)),
+    };
+  });
+  const needed = reach.filter(({ limits }) => limits);
+  if (needed.length === 0) return { lowHz: null, highHz: null };
+  const groups = [...new Set(needed.map(({ as }) => as))].map((as) => needed.filter((one) => one.as === as));
+  return {
+    lowHz: Math.max(...groups.map((group) => Math.min(...group.map(({ lowHz }) => lowHz)))),
+    highHz: Math.min(...groups.map((group) => Math.max(...group.map(({ highHz }) => highHz)))),
+  };
+}
+
 function pathViewOf(loaded: LoadedPath, day: string): PathView {
   const { path, revision, items } = loaded;
   const adding = items.filter((item) => item.stored.term !== null);
-  const firsts = adding.flatMap((item) => item.tables.map((table) => table.frequenciesHz[0]!));
-  const lasts = adding.flatMap((item) => item.tables.map((table) => table.frequenciesHz.at(-1)!));
+  const { lowHz, highHz } = rangeOf(adding);
   return {
     id: path.publicId,
     code: path.code,
@@ -155,14 +182,14 @@ function pathViewOf(loaded: LoadedPath, day: string): PathView {
     port: path.port,
     position: path.position,
     revision: revision.revision,
-    lowHz: firsts.length ? Math.max(...firsts) : null,
-    highHz: lasts.length ? Math.min(...lasts) : null,
+    lowHz,
+    highHz,
     items: items.map((item) => itemView(item, day)),
     terms: adding.map((item) => ({
       id: item.equipment.identifier,
       name: item.stored.term!,
       identifier: item.equipment.identifier,
-      sign: item.stored.quantity === 'gain' ? ('−' as const) : ('+' as const),
+      sign: item.stored.quantity && signOf(item.stored.quantity) < 0 ? ('−' as const) : ('+' as const),
     })),
   };
 }

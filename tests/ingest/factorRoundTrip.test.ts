@@ -4,7 +4,7 @@ import fc from 'fast-check';
 import * as demo from '@fixtures/demo/tables';
 import type { DemoTable } from '@fixtures/demo/types';
 import { latin1, utf16, utf8, utf8WithMark } from '@fixtures/shapes/build';
-import type { FactorQuantity } from '@/emc/kinds';
+import { FACTOR_QUANTITIES, type FactorQuantity } from '@/emc/kinds';
 import { factorColumns, readFactorTable, settleFactor, type ReadFactorTable } from '@/ingest/factorTable';
 import { IngestError } from '@/ingest/ingestError';
 import { recognise } from '@/ingest/recognise';
@@ -18,8 +18,9 @@ const read = (bytes: Uint8Array, quantity?: FactorQuantity): ReadFactorTable[] =
   readFactorTable(bytes, recognise(bytes), quantity && { quantity });
 const about = { name: 'ANT-02 vertical, table 4', polarisation: 'vertical', distanceM: 3, source: 'certificate 12' };
 
-const quantity = fc.constantFrom('antenna-factor', 'loss', 'gain') as fc.Arbitrary<FactorQuantity>;
-/** As an upload can enter it: losses and gains hold positive figures, an antenna factor any. */
+const quantity = fc.constantFrom(...FACTOR_QUANTITIES);
+/** Losses, gains and voltage divisions as an upload can enter them hold positive figures; any other quantity either. */
+const isPositive = (of: FactorQuantity) => of === 'loss' || of === 'gain' || of.endsWith('voltage-division');
 const rows = (of: FactorQuantity) =>
   fc
     .uniqueArray(
@@ -31,7 +32,7 @@ const rows = (of: FactorQuantity) =>
     )
     .chain((hz) =>
       fc
-        .array(fc.double({ min: of === 'antenna-factor' ? -30 : 1e-9, max: 80, noNaN: true }), {
+        .array(fc.double({ min: isPositive(of) ? 1e-9 : -30, max: 80, noNaN: true }), {
           minLength: hz.length,
           maxLength: hz.length,
         })
@@ -64,12 +65,11 @@ test('a table of any quantity, rows and words is the same when it is uploaded ag
 
 const demoTables = (Object.values(demo) as unknown[])
   .filter((value): value is DemoTable[] => Array.isArray(value))
-  .flat()
-  .filter(({ quantity: of }) => ['antenna-factor', 'loss', 'gain'].includes(of));
+  .flat();
 test.each(demoTables.map((table) => [table.name, table] as const))('the demo lab’s %s', (_name, table) => {
   const frequencyHz = table.rows.map(([hz]) => hz);
   const valueDb = table.rows.map(([, db]) => db);
-  const of = table.quantity as FactorQuantity;
+  const of = table.quantity;
   const [again] = read(utf8(factorTableText({ ...about, ...table, quantity: of, frequencyHz, valueDb })));
   expect(again).toMatchObject({ quantity: of, frequencyHz, valueDb });
 });
@@ -117,7 +117,7 @@ describe('what is refused, with its line', () => {
       4,
       '200000000 Hz after 300000000 Hz',
     ],
-    ['a transfer impedance', 'Frequency (MHz);Zt (dBohm)\n30;1\n100;2\n300;3\n', 1, 'a transfer impedance'],
+    ['a transfer impedance in ohm', 'Frequency (MHz);Zt (ohm)\n30;1\n100;2\n300;3\n', 1, 'a transfer impedance in ohm'],
     ['levels', 'Frequency (MHz);Peak (dBuV)\n30;1\n100;2\n300;3\n', 1, 'dbuv'],
     ['a row that breaks off', 'Frequency (MHz);Loss (dB)\n30;1\n100;2\n200\n300;3\n400;4\n', 4, '1 column'],
   ])('%s', (_what, text, line, found) => {

@@ -1,12 +1,13 @@
 import type { FindingRun } from '@/format/finding';
 import { daysBetween, formatDay, formatDue } from '@/format/dates';
+import { QUANTITY_WORDS } from '@/format/revisions';
 import type { EquipmentView } from '@/schemas/bench';
 
 type Item = Pick<EquipmentView, 'identifier' | 'state' | 'calibratedOn' | 'dueOn' | 'due'>;
 type Verdict = 'over' | 'inconclusive' | 'under' | 'not-covered';
 
 const KINDS: Record<string, string> = { amn: 'AMN', aan: 'AAN', site: 'test site' };
-const QUANTITIES: Record<string, string> = { 'antenna-factor': 'antenna factor', loss: 'loss', gain: 'gain' };
+const QUANTITIES: Record<string, string> = QUANTITY_WORDS;
 
 /** `current-probe` is written current probe. */
 export function kindOf(role: string): string {

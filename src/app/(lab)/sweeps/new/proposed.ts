@@ -38,7 +38,9 @@ const TERM_WORDS: [RegExp, RegExp][] = [
   [/limiter/i, /limiter/i],
   [/cable/i, /cable/i],
   [/amplifier|preamp/i, /preamplifier/i],
-  [/network|voltage division|AMN|LISN/i, /voltage division|AMN/i],
+  [/network|voltage division|AMN|LISN/i, /voltage division|AMN|AAN/i],
+  [/transfer impedance/i, /transfer impedance|probe/i],
+  [/clamp factor/i, /clamp/i],
   [/attenuator|external attenuation/i, /attenuat/i],
 ];
 

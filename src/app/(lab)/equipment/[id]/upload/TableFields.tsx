@@ -5,8 +5,8 @@ import { CheckField } from '@/components/ui/CheckField';
 import { Field, SelectField } from '@/components/ui/Field';
 import { formatFrequencyRange } from '@/format/frequencies';
 import { formatCount } from '@/format/quantities';
-import { QUANTITY_WORDS } from '@/format/revisions';
-import type { FactorTablePreview, FactorTableSummary } from '@/schemas/tables';
+import { QUANTITY_USES, QUANTITY_WORDS } from '@/format/revisions';
+import { factorQuantity, type FactorTablePreview, type FactorTableSummary } from '@/schemas/tables';
 import type { ChosenDraft } from './tableDraft';
 
 interface Props {
@@ -15,8 +15,8 @@ interface Props {
   /** The file holds more than this one. */
   several: boolean;
   named: readonly FactorTableSummary[];
-  /** The table does not say whether it is lost or gained. */
-  asks: boolean;
+  /** What is asked where the table does not say what its figures are. */
+  asks: string | null;
   errors: FieldErrors;
   /** Among the tables that are entered, for the errors of its fields. */
   place: number;
@@ -88,13 +88,13 @@ export function TableFields({ draft, inFile, several, named, asks, errors, place
               label="Its figures are"
               value={draft.quantity}
               error={error('quantity', 'The quantity')}
-              hint={asks ? 'The table does not say whether they are lost or gained.' : undefined}
+              hint={asks ?? undefined}
               onChange={(event) => onChange({ quantity: event.target.value as ChosenDraft['quantity'] })}
             >
               {draft.quantity === '' && <option value="">say which</option>}
-              {(['loss', 'gain', 'antenna-factor'] as const).map((quantity) => (
+              {factorQuantity.options.map((quantity) => (
                 <option key={quantity} value={quantity}>
-                  {QUANTITY_WORDS[quantity]}
+                  {QUANTITY_WORDS[quantity]}, {QUANTITY_USES[quantity]}
                 </option>
               ))}
             </SelectField>

@@ -52,7 +52,7 @@ export function TablePreviewed({ table, zone }: { table: Previewed; zone: string
       <p className="t-text mt-2" aria-live="polite">
         {before ? (
           quantity === null ? (
-            'Loss or gain has to be said before the two can be compared. '
+            'What its figures are has to be said before the two can be compared. '
           ) : (
             <>
               <b>{capitalised(differenceWords(before.difference, `revision ${before.revision}`))}.</b>{' '}

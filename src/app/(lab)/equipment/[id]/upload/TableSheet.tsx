@@ -69,6 +69,7 @@ export function TableSheet({ file, item, named, zone, onDiscard, onEntered }: Pr
     ...(drafts && used.length === 0 ? ['a table'] : []),
     ...(used.some((draft) => nameOf(draft) === '') ? ['the name'] : []),
     ...(questions.some(({ key }) => key === 'lossOrGain') ? ['loss or gain'] : []),
+    ...(questions.some(({ key }) => key === 'quantity') ? ['what the figures are'] : []),
     ...missingOf(calibration, said, reason),
   ];
   const shown = preview?.tables.filter(({ index }) => used.some((draft) => draft.index === index)) ?? [];
@@ -164,7 +165,7 @@ export function TableSheet({ file, item, named, zone, onDiscard, onEntered }: Pr
               inFile={preview!.tablesInFile.find(({ index }) => index === draft.index)!}
               several={drafts.length > 1}
               named={named}
-              asks={questions.some(({ key, tableIndex }) => key === 'lossOrGain' && tableIndex === draft.index)}
+              asks={questions.find(({ tableIndex }) => tableIndex === draft.index)?.text ?? null}
               errors={fieldErrors}
               place={used.indexOf(draft)}
               onChange={(change) =>

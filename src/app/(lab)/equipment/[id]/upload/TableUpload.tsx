@@ -48,8 +48,9 @@ export function TableUpload({ held, ...about }: UploadFor & { held: SweepFileVie
           }}
         >
           <p>
-            Antenna factor, cable loss, gain, AMN voltage division or limiter: a row per frequency with its decibels, or
-            S21 of a two-port file. What the file does not say is asked before anything is entered.
+            Antenna factor, loss of a cable or limiter, gain, AMN or AAN voltage division, transfer impedance of a
+            current probe, loop or clamp factor: a row per frequency with its decibels, or S21 of a two-port file. What
+            the file does not say is asked before anything is entered.
           </p>
         </FileDrop>
       </Sheet>
