@@ -131,18 +131,50 @@ export interface MicrovoltRecord {
 
 /**
  * The quasi-peak part of a µV/m record in dBµV/m: up to 1000 MHz in 120 kHz (47 CFR 15.35(a)). Above that the same
- * figures are average limits in 1 MHz (15.35(b)), which is another line.
+ * figures are limits of another detector (`toMicrovoltLinesAbove`).
  */
 export function toMicrovoltLine(record: MicrovoltRecord): LimitLine {
-  const segments = record.rows.map(({ startMHz, stopMHz, limitUvPerM }): LimitSegment => {
-    const limit = dbuvFromMicrovolts(limitUvPerM);
-    if (limit === null) throw new RangeError(`${record.id}: ${limitUvPerM} uV/m is no limit.`);
-    const stopHz = hertz(Math.min(stopMHz ?? 1000, 1000));
-    return { startHz: hertz(startMHz), stopHz, startLimit: limit, stopLimit: limit, over: 'log-frequency' };
+  return microvoltLine(record, record.id, 'quasi-peak', 120_000, (hz) => Math.min(hz, GIGAHERTZ), 0);
+}
+
+/**
+ * What a µV/m record asks above 1000 MHz, in 1 MHz: its figures as average limits, and 20 dB more for peak (47 CFR
+ * 15.35(b)). An open row is drawn to 40 GHz, as far as 15.33 asks at most for most devices (from memory). Empty where no
+ * row reaches above 1000 MHz.
+ */
+export function toMicrovoltLinesAbove(record: MicrovoltRecord): LimitLine[] {
+  if (record.rows.every(({ stopMHz }) => stopMHz !== null && stopMHz <= 1000)) return [];
+  const above = (hz: number) => Math.max(hz, GIGAHERTZ);
+  return [
+    microvoltLine(record, `${record.id}-1g-av`, 'average', 1e6, above, 0),
+    microvoltLine(record, `${record.id}-1g-pk`, 'peak', 1e6, above, PEAK_OVER_AVERAGE_DB),
+  ];
+}
+
+const GIGAHERTZ = 1e9;
+const OPEN_END_MHZ = 40_000;
+const PEAK_OVER_AVERAGE_DB = 20;
+
+function microvoltLine(
+  record: MicrovoltRecord,
+  id: string,
+  detector: LineDetector,
+  bandwidthHz: number,
+  within: (hz: number) => number,
+  moreDb: number,
+): LimitLine {
+  const segments = record.rows.flatMap(({ startMHz, stopMHz, limitUvPerM }): LimitSegment[] => {
+    const microvolts = dbuvFromMicrovolts(limitUvPerM);
+    if (microvolts === null) throw new RangeError(`${record.id}: ${limitUvPerM} uV/m is no limit.`);
+    const startHz = within(hertz(startMHz));
+    const stopHz = within(hertz(stopMHz ?? OPEN_END_MHZ));
+    const limit = microvolts + moreDb;
+    return startHz < stopHz ? [{ startHz, stopHz, startLimit: limit, stopLimit: limit, over: 'log-frequency' }] : [];
   });
-  const name = lineName({ ...record, portText: 'enclosure', limitUnit: 'dBuV/m' }, 'quasi-peak');
-  const { id, distanceM } = record;
-  return { id, name, detector: 'quasi-peak', bandwidthHz: 120_000, unit: 'dBuV/m', distanceM, segments };
+  const { document, class: of, distanceM } = record;
+  const portText = bandwidthHz === 1e6 ? 'enclosure, above 1 GHz' : 'enclosure';
+  const name = lineName({ document, class: of, portText, limitUnit: 'dBuV/m', distanceM }, detector);
+  return { id, name, detector, bandwidthHz, unit: 'dBuV/m', distanceM, segments };
 }
 
 function lineName(of: Omit<LimitRecord, 'id' | 'detector' | 'bandwidthHz' | 'segments'>, detector: string): string {
