@@ -107,7 +107,9 @@ export function chooseAxis(candidates: readonly AxisCandidate[], declared: Decla
   for (const [index, { heading, values, column }] of candidates.entries()) {
     const stats = statsOf(values);
     const named = headingIsFrequency(heading);
-    if (stats.holes > 0 || (stats.rising === 0 && stats.falling === 0)) continue;
+    const flat = stats.rising === 0 && stats.falling === 0;
+    // A list of one frequency goes nowhere; several rows at one are a sweep over time.
+    if (stats.holes > 0 || (flat && !(named && stats.count === 1))) continue;
     if (!named && steadiness(stats) < 0.9) continue;
     if (headingIsTime(heading)) {
       other ??= `column ${column + 1} is time (“${heading}”)`;

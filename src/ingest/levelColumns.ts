@@ -50,7 +50,7 @@ export function sortColumns(
     const { heading, values, column } = one;
     if (one === along || contents[column] === 'sparse') return false;
     if (headingIsPhase(heading) || headingIsOther(heading) || headingIsTime(heading)) return false;
-    if (along && values.every((value, i) => value === along.values[i])) return false;
+    if (along && values.length > 1 && values.every((value, i) => value === along.values[i])) return false;
     if (along && headingIsFrequency(heading)) {
       const [left, right] = [along.column, column].sort((a, b) => a - b);
       secondAxis ??= { found: `columns ${left! + 1} and ${right! + 1} are both frequencies, and they differ`, line };

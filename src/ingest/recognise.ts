@@ -129,7 +129,7 @@ export function* recogniseSteps(
   let table: Table;
   try {
     const scan = yield* scanned.scan();
-    if (scan.rows < 2) return refused(prepared, noTable(prepared), null);
+    if (scan.rows < (template.alone ? 1 : 2)) return refused(prepared, noTable(prepared), null);
     table = yield* tableSteps(prepared, scan);
   } catch (error) {
     if (!(error instanceof IngestError)) throw error;

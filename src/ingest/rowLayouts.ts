@@ -18,6 +18,7 @@ export interface HopRows {
 }
 
 export function hopRowsIn(scan: Scan, block: Block): HopRows | null {
+  if (block.rows < 2) return null;
   const wide = scan.columns.length;
   const { data } = scan;
   const from = block.firstRow;

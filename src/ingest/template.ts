@@ -1,6 +1,8 @@
+import { headingIsFrequency } from './axis';
 import { isComment, splitCells } from './cells';
 import { textNumberReader, type NumberStyle, type TextNumberReader } from './numbers';
 import type { Line } from './sample';
+import { frequencyUnitIn, levelUnitIn } from './units';
 
 /** What a column of the rows holds: numbers, nothing, text, or numbers with holes. */
 export type Content = 'number' | 'empty' | 'text' | 'sparse';
@@ -11,6 +13,8 @@ export interface Template extends NumberStyle {
   contents: Content[];
   /** Cells of the widest row, trailing empty ones included. */
   fileWidth: number;
+  /** The file holds one row, and its headings say what it is. */
+  alone?: boolean;
 }
 
 const DELIMITERS = [';', '\t', '|', ',', ' '];
@@ -107,7 +111,7 @@ function contentsOf({ kinds, all, rows }: Found, headed: readonly number[]): Con
 /**
  * Delimiter, decimal mark and row shape that explain most lines of the sample.
  * @param announced the delimiter that a `sep=` line names
- * @returns null when no two lines hold two numbers in the same way
+ * @returns null when no two lines hold two numbers in the same way, and the last is no row with headings of its own
  */
 export function findTemplate(sample: readonly Line[], announced: string | null): Template | null {
   const lines = sample.filter(({ text }) => text.trim() !== '' && /\d/.test(text) && !isComment(text));
@@ -138,7 +142,7 @@ export function findTemplate(sample: readonly Line[], announced: string | null):
       best = found;
     }
   }
-  if (best === null) return null;
+  if (best === null) return loneRow(sample, announced);
   const contents = contentsOf(best, headedBeyond(sample, best));
   return {
     delimiter: best.delimiter,
@@ -147,6 +151,29 @@ export function findTemplate(sample: readonly Line[], announced: string | null):
     contents,
     fileWidth: Math.max(best.fileWidth, contents.length),
   };
+}
+
+/**
+ * One row says nothing of its own shape. As the last line, under one of as many cells that name a frequency and a level
+ * with their units, it is a list of one final.
+ */
+function loneRow(sample: readonly Line[], announced: string | null): Template | null {
+  const [heading, row] = sample.filter(({ text }) => text.trim() !== '').slice(-2);
+  if (!heading || !row) return null;
+  for (const delimiter of announced === null ? DELIMITERS.filter((one) => one !== ' ') : [announced]) {
+    const names = splitCells(heading.text, delimiter);
+    const cells = splitCells(row.text, delimiter);
+    const isAxis = (name: string) => headingIsFrequency(name) && frequencyUnitIn(name) !== null;
+    const isLevel = (name: string) => (levelUnitIn(name)?.unit ?? null) !== null;
+    if (cells.length < 2 || cells.length !== names.length || !names.some(isAxis) || !names.some(isLevel)) continue;
+    for (const style of stylesFor(delimiter, row.text)) {
+      const kinds = signature(cells, textNumberReader(style));
+      if (kinds.includes('X') || numbersIn(kinds) < 2) continue;
+      const contents = [...kinds].map((kind): Content => (kind === 'N' ? 'number' : kind === 'T' ? 'text' : 'empty'));
+      return { delimiter, ...style, contents, fileWidth: cells.length, alone: true };
+    }
+  }
+  return null;
 }
 
 /**
