@@ -2,6 +2,7 @@ import { apartHz, isOneEmission, peaksByFrequency, type Place, type Sighting } f
 import { without, type Interval } from './intervals';
 import type { MainsLine, Polarisation, Port, Verdict } from './kinds';
 import { heightMissing, leftOpen, type PortRun } from './port';
+import type { CoverageGap } from './types';
 import { severity } from './verdict';
 
 export type RetestPosition = Polarisation | MainsLine | null;
@@ -165,10 +166,18 @@ function isTuned(frequencyHz: number, bandwidthHz: number, { fromHz, bandwidthHz
 function covers<R extends Reading>({ run, lineId, asked }: Voice<R>, place: Place): boolean {
   if (run.partial || without([place], asked).length > 0 || !asked.some((range) => apart(range, place) === 0))
     return false;
-  const gaps = run.gaps.filter((gap) => gap.lineId === lineId && apart(gap, place) === 0);
-  if (gaps.length === 0) return true;
-  if (place.kind !== 'peak' || gaps.some(({ because }) => because !== 'gap')) return false;
-  return run.spotsHz.some((spotHz) => isTuned(spotHz, place.bandwidthHz, place));
+  const gaps = run.gaps.filter((gap) => gap.lineId === lineId);
+  if (!gaps.some((gap) => apart(gap, place) === 0)) return true;
+  if (place.kind !== 'peak') return false;
+  return run.spotsHz.some((spotHz) => isTuned(spotHz, place.bandwidthHz, place) && isJudgedSpot(gaps, spotHz));
+}
+
+/** Between two spots lies a gap, and beyond the first and the last no trace at all; a spot that lacks more was not judged. */
+function isJudgedSpot(gaps: readonly CoverageGap[], spotHz: number): boolean {
+  const there = gaps.filter(({ fromHz, toHz }) => fromHz <= spotHz && spotHz <= toHz);
+  const isEnd = ({ because, fromHz, toHz }: CoverageGap) =>
+    because === 'no-trace' && (fromHz === spotHz || toHz === spotHz);
+  return there.some(({ because }) => because === 'gap') && there.every((gap) => gap.because === 'gap' || isEnd(gap));
 }
 
 function apart(a: Interval, b: Interval): number {

@@ -101,6 +101,30 @@ describe('how an emission stands at a position', () => {
       'under',
     ],
     [
+      'the first spot, beyond which nothing was traced, settles it',
+      [
+        prescan('needs-final'),
+        run('final', [], { gaps: [gap(30e6, 144.02e6), gap(144.02e6, 1e9, 'gap')], spotsHz: [144.02e6] }),
+      ],
+      'under',
+    ],
+    [
+      'a spot of a detector that the line was not traced with settles nothing',
+      [prescan('needs-final'), run('final', [], { gaps: [gap(30e6, 1e9)], spotsHz: [144e6] })],
+      'waits',
+    ],
+    [
+      'a spot without a factor beside a gap settles nothing',
+      [
+        prescan('needs-final'),
+        run('final', [], {
+          gaps: [gap(30e6, 144e6, 'gap'), gap(144e6, 1e9, 'no-factor')],
+          spotsHz: [144e6],
+        }),
+      ],
+      'waits',
+    ],
+    [
       'a spot without a factor settles nothing',
       [prescan('needs-final'), run('final', [], { gaps: [gap(100e6, 200e6, 'no-factor')], spotsHz: [144e6] })],
       'waits',
