@@ -5,6 +5,7 @@ import { ProblemMessage } from '@/components/forms/ProblemMessage';
 import { useKey } from '@/components/shell/keys';
 import { Sheet } from '@/components/shell/Sheet';
 import { useSheet } from '@/components/shell/sheetState';
+import { ButtonLink } from '@/components/ui/Button';
 import { formatMargin } from '@/format/quantities';
 import type { RetestItem } from '@/schemas/retest';
 import { RetestActs } from './RetestActs';
@@ -44,6 +45,11 @@ export function RetestSheet({ header, filters, items, zone, change, children }: 
                 children: (
                   <>
                     <RetestRecord item={chosen} />
+                    {change && isToMeasure(chosen) && (
+                      <ButtonLink size="table" keyName="F" className="mt-2" href={finalsAddress(chosen)}>
+                        Measure finals of {chosen.sample.code} {chosen.state.label}
+                      </ButtonLink>
+                    )}
                     {change && <RetestActs key={chosen.id} item={chosen} />}
                   </>
                 ),
@@ -94,6 +100,13 @@ export function RetestSheet({ header, filters, items, zone, change, children }: 
     </Sheet>
   );
 }
+
+/** A repeated prescan is a sweep; what is measured or settled waits for nobody. */
+function isToMeasure({ kind, status }: RetestItem): boolean {
+  return kind !== 'repeat-prescan' && (status === 'waiting' || status === 'scheduled');
+}
+
+const finalsAddress = ({ state, port }: RetestItem) => `/finals?state=${state.id}&port=${port}`;
 
 /** Inside the sheet, so that choosing a row can draw the column out. */
 function Rows({

@@ -26,14 +26,14 @@ export function retestsSection(retests: { items: readonly RetestItem[]; next: st
   ];
 }
 
-/** Finals the run left to measure, and where they stand as a list to work from; null when it left none. */
+/** Finals the run left to measure, and the sheet they are typed in; null when it left none. */
 export function finalsToMeasure(retests: { items: readonly RetestItem[]; next: string | null }, sweepId: string) {
   const open = retests.items.filter(
     ({ kind, status }) => kind !== 'repeat-prescan' && (status === 'waiting' || status === 'scheduled'),
   ).length;
   if (open === 0) return null;
   const many = retests.next === null ? (open === 1 ? '1 final' : `${open} finals`) : `over ${open} finals`;
-  return { act: `Measure ${many}`, href: addressOf({ status: 'open', run: sweepId }) };
+  return { act: `Measure ${many}`, href: `/finals?run=${sweepId}` };
 }
 
 function RunRetests({ items, href, many }: { items: readonly RetestItem[]; href: string; many: string }) {
