@@ -88,6 +88,28 @@ export function againstUcispr(
   return { ...given, excessDb, statement: excessDb > 0 ? 'above Ucispr' : 'at most Ucispr' };
 }
 
+/** A step of uncertainty beside Ucispr where the two share a range. */
+export interface BesideUcispr extends UcisprComparison {
+  fromHz: number;
+  toHz: number;
+  ucisprDb: number;
+  excessDb: number;
+}
+
+/**
+ * A step of a port's uncertainty beside Ucispr of the 2011 edition, by measurement, ascending; empty where none is
+ * stated. Compares as `againstUcispr` does.
+ */
+export function besideUcispr({ startHz, stopHz, expandedDb }: UncertaintyStep, port: Port): BesideUcispr[] {
+  return BY_PORT[port].flatMap(([lowHz, highHz, measurement]) => {
+    const [fromHz, toHz] = [Math.max(startHz, lowHz), Math.min(stopHz, highHz)];
+    if (toHz <= fromHz) return [];
+    const compared = againstUcispr(expandedDb, measurement, 'CISPR 16-4-2:2011');
+    const { ucisprDb, excessDb } = compared;
+    return ucisprDb === null || excessDb === null ? [] : [{ ...compared, ucisprDb, excessDb, fromHz, toHz }];
+  });
+}
+
 /** max(0, Ulab − Ucispr). Source: CISPR 16-4-2:2011 clause 4.1. Throws RangeError on a figure below zero or none. */
 export function ucisprExcessDb(expandedDb: number, ucisprDb: number): number {
   for (const figure of [expandedDb, ucisprDb]) {

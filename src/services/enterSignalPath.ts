@@ -1,11 +1,13 @@
 import { authorise, type Actor } from '@/auth/actor';
 import type { Port } from '@/emc/kinds';
+import { Invalid } from '@/errors';
 import { newPublicId } from '@/models/publicId';
 import { SignalPath } from '@/models/signalPath';
 import { SignalPathRevision } from '@/models/signalPathRevision';
-import type { StoredPathItem, StoredUncertainty } from '@/models/stored';
+import type { StoredBudget, StoredPathItem, StoredUncertainty } from '@/models/stored';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import { recordChange } from './audit';
+import { stepsOf } from './uncertaintyBudget';
 
 export interface NewPathRevision {
   code: string;
@@ -13,23 +15,31 @@ export interface NewPathRevision {
   port: Port;
   position: string;
   items: StoredPathItem[];
-  uncertainty: StoredUncertainty;
+  /** Stated where there is no budget; with one it is computed from it. */
+  uncertainty?: StoredUncertainty;
+  budget?: StoredBudget | null;
   uncertaintySource: string;
 }
 
-/** Enters the next revision of a path, and the path itself when its code is new. Earlier revisions stay as they are. */
+/**
+ * Enters the next revision of a path, and the path itself when its code is new. Earlier revisions stay as they are.
+ * Throws Invalid as `stepsOf` does, and where uncertainty is neither stated nor budgeted.
+ */
 export async function enterSignalPath(
   actor: Actor | null,
   path: NewPathRevision,
   at = new Date(),
 ): Promise<SignalPathRevision> {
   authorise(actor, 'path.enter');
-  const { code, name, port, position, items, uncertainty, uncertaintySource } = path;
+  const { code, name, port, position, items, budget = null, uncertaintySource } = path;
   return unitOfWork(async () => {
     const row =
       (await SignalPath.findOne({ where: { code } })) ??
       (await SignalPath.create({ publicId: newPublicId(), code, name, port, position, createdAt: at }));
+    const uncertainty = budget ? stepsOf(budget, port, row.publicId) : path.uncertainty;
+    if (!uncertainty) throw new Invalid([{ pointer: '/uncertainty', message: 'is needed, stated or from a budget' }]);
     const revision = (await SignalPathRevision.count({ where: { signalPathId: row.id } })) + 1;
+    if (revision > 1) await row.increment('version');
     const entered = await SignalPathRevision.create({
       publicId: newPublicId(),
       signalPathId: row.id,
@@ -37,6 +47,8 @@ export async function enterSignalPath(
       items,
       uncertainty,
       uncertaintySource,
+      budget,
+      userId: actor.userId,
       createdAt: at,
     });
     recordChange(actor, {
@@ -45,7 +57,7 @@ export async function enterSignalPath(
       subjectType: 'path',
       subjectId: row.publicId,
       before: null,
-      after: { revision: entered.publicId, items, uncertainty },
+      after: { revision: entered.publicId, items, uncertainty, ...(budget && { budget }) },
       at,
     });
     return entered;
@@ -54,7 +66,7 @@ export async function enterSignalPath(
 
 /**
  * The next revision of every path whose newest one names a table that was replaced (old public id to new): the same
- * items and uncertainty, the new tables. Call inside the unit that enters them.
+ * items, uncertainty and budget, the new tables. Call inside the unit that enters them.
  */
 export async function followTables(
   actor: Actor,
@@ -77,7 +89,8 @@ export async function followTables(
       return { ...item, tables: { horizontal: now(horizontal), vertical: now(vertical), any: now(any) } };
     });
     if (JSON.stringify(items) === JSON.stringify(newest.items)) continue;
-    const { uncertainty, uncertaintySource } = newest;
+    const { uncertainty, uncertaintySource, budget } = newest;
+    await path.increment('version');
     const revision = await SignalPathRevision.create({
       publicId: newPublicId(),
       signalPathId: path.id,
@@ -85,6 +98,9 @@ export async function followTables(
       items,
       uncertainty,
       uncertaintySource,
+      budget,
+      reason: because.slice(0, 300),
+      userId: actor.userId,
       createdAt: at,
     });
     followed.push({ path, revision });

@@ -24,6 +24,8 @@ export interface DrawnRevision {
 export interface RevisionChartProps {
   after: DrawnRevision;
   before: DrawnRevision | null;
+  /** What the line is made of, drawn thin, each with its name at its end. */
+  parts?: readonly DrawnRevision[];
   difference: DifferenceView | null;
   span: Span;
   /** Written over the axis: dB/m, dBµV. */
@@ -37,12 +39,13 @@ const STRIP_PX = 104;
 const MOST_MARKS = 80;
 
 /** A new revision in ink beside the one before in grey, and under them the difference between the two. */
-export function RevisionChart({ after, before, difference, span, unit, sentence }: RevisionChartProps) {
+export function RevisionChart(props: RevisionChartProps) {
+  const { after, before, parts = [], difference, span, unit, sentence } = props;
   const box = useRef<HTMLDivElement>(null);
   const { width } = useBoxSize(box, { width: 640, height: PLOT_PX });
   const left = width < NARROW_PX ? NARROW_LEFT_PX : PREVIEW_INSETS.left;
   const frame: Frame = { ...PREVIEW_INSETS, left, width, height: PLOT_PX };
-  const values = [after, before].flatMap((one) => one?.stretches.flat().map(({ value }) => value) ?? []);
+  const values = [after, before, ...parts].flatMap((one) => one?.stretches.flat().map(({ value }) => value) ?? []);
   const range = revisionRange(values);
   const scale = plotScale(frame, span, range);
   const { gridHz, labels } = frequencyTicks(span, scale.right - scale.left);
@@ -68,6 +71,9 @@ export function RevisionChart({ after, before, difference, span, unit, sentence 
             {unit}
           </text>
           <Ruler scale={scale} span={span} />
+          {parts.map((part) => (
+            <path key={part.name} d={drawn(part)} className="stroke-ink3" fill="none" strokeWidth="1" />
+          ))}
           {before && (
             <path d={drawn(before)} className="stroke-ink3" fill="none" strokeWidth="1.4" strokeDasharray="5 3" />
           )}
@@ -75,6 +81,7 @@ export function RevisionChart({ after, before, difference, span, unit, sentence 
           {rows.map(({ hz, value }) => (
             <rect key={hz} x={scale.x(hz) - 2} y={scale.y(value) - 2} width="4" height="4" className="fill-ink" />
           ))}
+          <PartNames parts={parts} x={scale.x} y={scale.y} />
           <path d={`M${scale.left} ${scale.bottom}H${scale.right}`} className="stroke-ink3" />
           <FrequencyNumbers labels={labels} scale={scale} y={scale.bottom + 18} />
         </svg>
@@ -96,6 +103,37 @@ function Key({ name, className, width, dash }: { name: string; className: string
       </svg>
       {name}
     </span>
+  );
+}
+
+const NAME_PX = 14;
+
+/** Each part's name over its last point, apart from the one below it. */
+function PartNames({
+  parts,
+  x,
+  y,
+}: {
+  parts: readonly DrawnRevision[];
+  x: (hz: number) => number;
+  y: (value: number) => number;
+}) {
+  const ends = parts.flatMap(({ name, stretches }) => {
+    const end = stretches.at(-1)?.at(-1);
+    return end ? [{ name, x: x(end.hz) - 4, y: y(end.value) - 5 }] : [];
+  });
+  let above = Infinity;
+  const placed = ends
+    .sort((a, b) => b.y - a.y)
+    .map((end) => ({ ...end, y: (above = Math.min(end.y, above - NAME_PX)) }));
+  return (
+    <g fontSize="12" textAnchor="end" strokeWidth="4" className={`fill-ink2 ${HALO}`}>
+      {placed.map((end) => (
+        <text key={end.name} x={end.x} y={end.y}>
+          {end.name}
+        </text>
+      ))}
+    </g>
   );
 }
 

@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import { SignalPath } from '@/components/charts/SignalPath';
 import { EmptyLine } from '@/components/ui/EmptyLine';
 import { Pager } from '@/components/ui/Pager';
@@ -29,7 +30,13 @@ export function SignalPaths({ paths, today, firstHref, nextHref }: Props) {
         {paths.map((path) => (
           <li key={path.id} className="border-b border-rule pt-3 pb-3">
             <p className="flex flex-wrap items-baseline gap-x-[18px] text-ink2">
-              <span className="t-id font-semibold">{path.code}</span>
+              <Link
+                href={`/paths/${path.id}`}
+                prefetch={false}
+                className="t-id inline-flex items-center font-semibold text-pen hover:underline max-pad:min-h-11"
+              >
+                {path.code}
+              </Link>
               <span className="text-ink">{path.name}</span>
               <span>
                 {PORT_WORDS[path.port]}, {PORT_METHODS[path.port]}
