@@ -4,6 +4,7 @@ import { FACTOR_QUANTITIES } from '@/emc/kinds';
 import { Conflict, Invalid } from '@/errors';
 import { Equipment } from '@/models/equipment';
 import { polarisation, port } from '@/schemas/common';
+import { uncertaintyBudget } from '@/schemas/paths';
 import { enterCalibration, enterEquipment } from '@/services/enterEquipment';
 import { enterSignalPath } from '@/services/enterSignalPath';
 
@@ -60,7 +61,9 @@ export const benchFile = z.strictObject({
           }),
         }),
       ),
-      uncertainty: z.strictObject({ prescan: steps, final: steps }),
+      /** Stated where there is no budget to compute it from. */
+      uncertainty: z.strictObject({ prescan: steps, final: steps }).optional(),
+      budget: uncertaintyBudget.optional(),
       uncertaintySource: z.string().max(300),
     }),
   ),

@@ -1,6 +1,6 @@
 import { calibrationOn, itemOf } from '@fixtures/demo/equipment';
 import { paths as demoPaths } from '@fixtures/demo/paths';
-import type { DemoEquipment, DemoPath, DemoTable } from '@fixtures/demo/types';
+import type { DemoContribution, DemoEquipment, DemoPath, DemoTable } from '@fixtures/demo/types';
 import type { Actor } from '@/auth/actor';
 import { FACTOR_QUANTITIES, type FactorQuantity } from '@/emc/kinds';
 import type { Equipment } from '@/models/equipment';
@@ -79,13 +79,14 @@ export async function seedPaths(
 }
 
 function revisionOf(path: DemoPath, items: Map<string, SeededItem>, day: number) {
-  const { code, name, port, position, uncertainty, uncertaintyBasis } = path;
+  const { code, name, port, position, fromHz, toHz, uncertainty, budget, uncertaintyBasis } = path;
+  const whole = (contributions: DemoContribution[]) => [{ startHz: fromHz, stopHz: toHz, contributions }];
   return {
     code,
     name,
     port,
     position,
-    uncertainty,
+    ...(budget ? { budget: { prescan: whole(budget.prescan), final: whole(budget.final) } } : { uncertainty }),
     uncertaintySource: uncertaintyBasis,
     items: path.items.map(({ identifier, term }): StoredPathItem => {
       const item = itemOf(identifier);
