@@ -1,6 +1,6 @@
 import { distanceTerm, type Conversion, type DistanceTerm, type Doubt } from '@/emc/distance';
 import { formatDistance } from '@/format/quantities';
-import { add, level, type Given, type PaneField, type Term } from './pane';
+import { level, shift, type Given, type PaneField, type Term } from './pane';
 
 const RULES = [
   { value: '20', word: '20 dB per decade' },
@@ -56,7 +56,11 @@ export const RULE_SOURCE: Readonly<Record<Conversion['rule'], string>> = {
 export function conversionTerm(conversion: Conversion): Term {
   const { correctionDb, dbPerDecade, fromM, toM, rule } = distanceTerm(conversion);
   const from = `${formatDistance(fromM)} to ${formatDistance(toM)}`;
-  return add(level(correctionDb), `distance correction, ${from}`, `${dbPerDecade} dB per decade, ${RULE_SOURCE[rule]}`);
+  return shift(
+    level(correctionDb),
+    `distance correction, ${from}`,
+    `${dbPerDecade} dB per decade, ${RULE_SOURCE[rule]}`,
+  );
 }
 
 /** What a converted level may conclude, as sentences. */

@@ -106,16 +106,23 @@ export const start = (quantity: Quantity, name: string, source: string | null = 
   name,
   source,
 });
-/** A term of a sum, its sign drawn from its value. */
-export const add = (quantity: Quantity, name: string, source: string | null = TYPED): Term =>
-  quantity.value < 0
-    ? { sign: '−', quantity: { ...quantity, value: -quantity.value }, name, source }
-    : { sign: '+', quantity, name, source };
+/** What is added in a sum. Its name is of the figure as it stands: 20 log10(0.5) is added as −6.02. */
+export const add = (quantity: Quantity, name: string, source: string | null = TYPED): Term => ({
+  sign: '+',
+  quantity,
+  name,
+  source,
+});
 /** What is taken off a sum. */
-export const less = (quantity: Quantity, name: string, source: string | null = TYPED): Term =>
-  quantity.value < 0
-    ? add({ ...quantity, value: -quantity.value }, name, source)
-    : { sign: '−', quantity, name, source };
+export const less = (quantity: Quantity, name: string, source: string | null = TYPED): Term => ({
+  sign: '−',
+  quantity,
+  name,
+  source,
+});
+/** A correction whose name says no sign: it is drawn from the figure. */
+export const shift = (quantity: Quantity, name: string, source: string | null): Term =>
+  quantity.value < 0 ? less({ ...quantity, value: -quantity.value }, name, source) : add(quantity, name, source);
 export const times = (quantity: Quantity, name: string, source: string | null = TYPED): Term => ({
   sign: '×',
   quantity,

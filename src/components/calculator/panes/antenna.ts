@@ -1,5 +1,5 @@
 import { antennaFactorFromGain, gainFromAntennaFactor } from '@/emc/antennaFactor';
-import { add, answer, hertz, less, level, ratio, resultOf, say, start, type Pane, type Term } from '../pane';
+import { answer, hertz, less, level, ratio, resultOf, say, shift, start, type Pane, type Term } from '../pane';
 
 const SOURCE = 'effective aperture Gλ²/4π, free space';
 
@@ -31,7 +31,11 @@ export const antenna: Pane = {
       const constantDb = antennaFactorFromGain(1e6, 0, loadOhm);
       return [
         start(level(antennaFactorFromGain(frequencyHz, 0, loadOhm) - constantDb), '20 log10(f / 1 MHz)', SOURCE),
-        add(level(constantDb), '10 log10(4π Z0 / R) − 20 log10(λ at 1 MHz)', 'Z0 = 376.73 ohm'),
+        shift(
+          level(constantDb),
+          'constant of free space and load',
+          '10 log10(4π Z0 / R) − 20 log10(λ at 1 MHz), Z0 = 376.73 ohm',
+        ),
       ];
     };
     const inputs = (frequencyHz: number, loadOhm: number): Term[] => [

@@ -28,16 +28,16 @@ export const eirp: Pane = {
     const have = given.choice('have');
     const eirpOf = (figure: number, d: number) =>
       have === 'field' ? eirpFromField(figure, d) : have === 'erp' ? eirpFromErp(figure) : figure;
-    const distanceTerms = (d: number, sign: 1 | -1): Term[] => {
+    const distanceTerms = (d: number, toField: boolean): Term[] => {
       const at1m = fieldFromEirp(0, 1);
-      const spread = at1m - fieldFromEirp(0, d);
+      const [onto, off] = toField ? [add, less] : [less, add];
       return [
-        add(level(sign * at1m), 'field of 0 dBm EIRP at 1 m', '120 + 10 log10(0.030), E = √(30 P) / d'),
-        add(level(-sign * spread), '20 log10(d / 1 m)', 'spreading in free space'),
+        onto(level(at1m), 'field of 0 dBm EIRP at 1 m', '120 + 10 log10(0.030), E = √(30 P) / d'),
+        off(level(at1m - fieldFromEirp(0, d)), '20 log10(d / 1 m)', 'spreading in free space'),
       ];
     };
     const eirpTerms = (figure: number, d: number): Term[] => {
-      if (have === 'field') return [start(level(figure, 'dBµV/m'), 'field strength'), ...distanceTerms(d, -1)];
+      if (have === 'field') return [start(level(figure, 'dBµV/m'), 'field strength'), ...distanceTerms(d, false)];
       if (have === 'eirp') return [start(level(figure, 'dBm'), 'EIRP')];
       return [
         start(level(figure, 'dBm'), 'ERP'),
@@ -52,7 +52,7 @@ export const eirp: Pane = {
         terms:
           have === 'field'
             ? [start(level(figure!, 'dBµV/m'), 'field strength')]
-            : [...eirpTerms(figure!, d!), ...distanceTerms(d!, 1)],
+            : [...eirpTerms(figure!, d!), ...distanceTerms(d!, true)],
         result: level(have === 'field' ? figure! : fieldFromEirp(eirpOf(figure!, d!), d!), 'dBµV/m'),
         resultName: 'field strength',
         source: have === 'field' ? 'as typed here' : SOURCE,

@@ -1,7 +1,7 @@
 import { distanceTerm } from '@/emc/distance';
 import { dbuvFromDbm } from '@/emc/units';
 import { formatMarginDb } from '@/format/quantities';
-import { add, answer, left, less, level, resultOf, say, start, type Given, type Pane, type Term } from '../pane';
+import { add, answer, left, less, level, resultOf, say, shift, start, type Given, type Pane, type Term } from '../pane';
 import { conversionFields, conversionOf, conversionTerm, standingSays } from '../distanceGiven';
 
 /** What a reading at the receiver means in front of the antenna, each correction a term of its own. */
@@ -125,7 +125,7 @@ function termsOf(given: Given): Term[] {
     given.choice('unit') === 'dBm'
       ? [
           start(level(reading, 'dBm'), 'reading'),
-          add(level(dbuvFromDbm(reading) - reading), 'dBm in 50 ohm as dBµV', 'definitions'),
+          shift(level(dbuvFromDbm(reading) - reading), 'dBm in 50 ohm as dBµV', 'definitions'),
         ]
       : [start(level(reading, 'dBµV'), 'reading')];
   const [loss, gain] = [given.figure('loss'), given.figure('gain')];

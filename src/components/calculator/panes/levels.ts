@@ -77,7 +77,7 @@ export const levels: Pane = {
           given: [start(entered(unit!, figure!), 'level'), start(ratio(ohm!, 'ohm'), 'Z, impedance')],
           terms: [
             start(level(dbuv, 'dBµV'), 'voltage level', fromLevel(unit!)),
-            add(level(dbm - dbuv), '90 + 10 log10(Z / 1 ohm)', DEFINITION),
+            less(level(dbuv - dbm), '90 + 10 log10(Z / 1 ohm)', DEFINITION),
           ],
           result: level(dbm, 'dBm'),
           resultName: 'power level',

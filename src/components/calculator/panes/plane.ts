@@ -5,7 +5,7 @@ import {
   magneticFromElectric,
   powerFluxFromField,
 } from '@/emc/fieldStrength';
-import { add, answer, level, resultOf, say, start, type Pane } from '../pane';
+import { answer, level, resultOf, say, shift, start, type Pane } from '../pane';
 
 const UNITS = [
   { value: 'e', word: 'dBµV/m' },
@@ -49,7 +49,7 @@ export const plane: Pane = {
         return {
           formula: null,
           given: [],
-          terms: same ? [from(figure!)] : [from(figure!), add(level(result - figure!), how, source)],
+          terms: same ? [from(figure!)] : [from(figure!), shift(level(result - figure!), how, source)],
           result: level(result, toUnit),
           resultName: name.toLowerCase(),
           source: same ? 'as typed here' : source,
