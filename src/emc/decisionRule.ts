@@ -1,9 +1,6 @@
 import { EQUAL_WITHIN_DB } from './guardBand';
-import type { Verdict } from './kinds';
+import type { DecisionRule, Verdict } from './kinds';
 import { ucisprExcessDb } from './ucispr';
-
-export const DECISION_RULES = ['guarded-by-u', 'cispr-16-4-2', 'simple-acceptance'] as const;
-export type DecisionRule = (typeof DECISION_RULES)[number];
 
 /** What a rule can say of one level. */
 export type Decided = Extract<Verdict, 'under' | 'inconclusive' | 'over'>;

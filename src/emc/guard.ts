@@ -1,4 +1,4 @@
-import type { DecisionRule } from './decisionRule';
+import type { DecisionRule } from './kinds';
 import { EQUAL_WITHIN_DB } from './guardBand';
 import type { UncertaintyStep } from './types';
 import { ucisprExcessDb } from './ucispr';
@@ -34,6 +34,17 @@ export function guardSteps(
       return [{ startHz, stopHz, expandedDb: ucisprExcessDb(own.expandedDb, published.expandedDb) }];
     }),
   );
+}
+
+/** What a rule adds to a level at one frequency, dB; null where it misses a figure. */
+export function addedAt(
+  rule: DecisionRule,
+  uncertainty: readonly UncertaintyStep[],
+  ucispr: readonly UncertaintyStep[],
+  frequencyHz: number,
+): number | null {
+  const db = expandedAt(guardSteps(rule, uncertainty, ucispr), frequencyHz);
+  return db !== null && leavesBetween(rule) ? 0 : db;
 }
 
 /** The guard at one frequency; null where the rule has none. */

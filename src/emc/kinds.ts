@@ -72,3 +72,12 @@ export type FactorQuantity = (typeof FACTOR_QUANTITIES)[number];
 /** In what a factor is stated, as it is written. */
 export const FACTOR_UNITS = ['dB/m', 'dB', 'dBΩ', 'dB(S/m)', 'dB(pW/µV)'] as const;
 export type FactorUnit = (typeof FACTOR_UNITS)[number];
+
+/** How a level, its limit and the uncertainty become a verdict; `@/emc/decisionRule` says how each does. */
+export const DECISION_RULES = ['guarded-by-u', 'cispr-16-4-2', 'simple-acceptance'] as const;
+export type DecisionRule = (typeof DECISION_RULES)[number];
+export const RULE_NAMES: Record<DecisionRule, string> = {
+  'guarded-by-u': 'guarded by U',
+  'cispr-16-4-2': 'CISPR 16-4-2',
+  'simple-acceptance': 'simple acceptance',
+};

@@ -1,5 +1,14 @@
-import type { DecisionRule } from './decisionRule';
-import type { Detector, FactorQuantity, LevelUnit, LineDetector, LineUnit, Port, Purpose, Verdict } from './kinds';
+import type {
+  DecisionRule,
+  Detector,
+  FactorQuantity,
+  LevelUnit,
+  LineDetector,
+  LineUnit,
+  Port,
+  Purpose,
+  Verdict,
+} from './kinds';
 
 /** One revision of one table of corrections. Rows ascend in frequency; interpolation is linear in dB over log f. */
 export interface FactorTable {
@@ -167,6 +176,8 @@ export interface Working {
   limit: number | null;
   marginDb: number | null;
   uncertaintyDb: number | null;
+  /** What the decision rule adds to the level before it is compared; null where it has no say here. */
+  addedDb: number | null;
   verdict: Verdict;
   because: string | null;
 }

@@ -3,7 +3,7 @@ import { POINT } from './correction';
 import { limitAt } from './limitLine';
 import { hangTrace, judgeSegment, type HungTrace } from './segment';
 import type { EvaluationInput, LimitLine, Trace, Working } from './types';
-import { guardAt, type Guard } from './guard';
+import { addedAt, guardAt, type Guard } from './guard';
 import { expandedAt } from './uncertainty';
 import { readingVerdict } from './verdict';
 import { noFactorBecause, pathTerms, readingTerms } from './workingTerms';
@@ -52,6 +52,7 @@ export function workingAt(
     limit,
     marginDb,
     uncertaintyDb,
+    addedDb: addedAt(input.rule, steps, input.ucispr ?? [], hz),
     ...judgement(input, trace, line, { marginDb, uncertaintyDb, guard, level, hz, comparable: comparable !== null }),
   };
 }

@@ -6,6 +6,7 @@ import {
   Model,
   type Sequelize,
 } from 'sequelize';
+import type { DecisionRule } from '@/emc/kinds';
 import type { Verdict } from '@/emc/kinds';
 import type { CoverageGap, JudgedPair } from '@/emc/types';
 import type { StoredInputs } from './stored';
@@ -15,7 +16,7 @@ export class Evaluation extends Model<InferAttributes<Evaluation>, InferCreation
   declare publicId: string;
   declare sweepId: number;
   declare engine: string;
-  declare decisionRule: string;
+  declare decisionRule: DecisionRule;
   declare inputs: StoredInputs;
   declare verdict: 'over' | 'needs-final' | 'inconclusive' | 'not-covered' | 'under';
   declare worstFrequencyHz: CreationOptional<number | null>;

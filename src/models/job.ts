@@ -6,6 +6,7 @@ import {
   Model,
   type Sequelize,
 } from 'sequelize';
+import { DECISION_RULES, type DecisionRule } from '@/emc/kinds';
 
 export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job>> {
   declare id: CreationOptional<number>;
@@ -14,7 +15,7 @@ export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job
   declare organisationId: number;
   declare productId: number;
   declare title: string;
-  declare decisionRule: 'guarded-by-u';
+  declare decisionRule: DecisionRule;
   declare state: CreationOptional<'open' | 'declined' | 'closed'>;
   declare stateReason: CreationOptional<string | null>;
   declare version: CreationOptional<number>;
@@ -31,7 +32,7 @@ export function defineJob(sequelize: Sequelize): void {
       organisationId: { type: DataTypes.BIGINT.UNSIGNED, field: 'organisation_id', allowNull: false },
       productId: { type: DataTypes.BIGINT.UNSIGNED, field: 'product_id', allowNull: false },
       title: { type: DataTypes.STRING(160), allowNull: false },
-      decisionRule: { type: DataTypes.ENUM('guarded-by-u'), field: 'decision_rule', allowNull: false },
+      decisionRule: { type: DataTypes.ENUM(...DECISION_RULES), field: 'decision_rule', allowNull: false },
       state: { type: DataTypes.ENUM('open', 'declined', 'closed'), allowNull: false, defaultValue: 'open' },
       stateReason: { type: DataTypes.STRING(500), field: 'state_reason', allowNull: true },
       version: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false, defaultValue: 1 },

@@ -15,6 +15,7 @@ export const purpose = z.enum(kinds.PURPOSES);
 export const port = z.enum(kinds.PORTS);
 export const mainsLine = z.enum(kinds.MAINS_LINES);
 export const polarisation = z.enum(kinds.POLARISATIONS);
+export const decisionRule = z.enum(kinds.DECISION_RULES);
 export const role = z.enum(['manager', 'technician', 'designer']);
 
 /** Keyset page: `after` is the cursor of the page before, `next` the one to ask for, null at the end. */

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { instant, organisationRef, pageOf, pageQuery, publicId, version } from './common';
+import { decisionRule, instant, organisationRef, pageOf, pageQuery, publicId, version } from './common';
 import { operation } from './operation';
 
 export const idParams = z.strictObject({ id: publicId });
@@ -88,7 +88,6 @@ export const changeProduct = operation({
 
 /* Jobs. */
 
-export const decisionRule = z.enum(['guarded-by-u']);
 export const jobView = z.strictObject({
   id: publicId,
   version,
@@ -112,6 +111,8 @@ export const changeJobBody = z.strictObject({
   title: text(160).optional(),
   state: z.enum(['open', 'declined', 'closed']).optional(),
   stateReason: z.string().trim().max(500).nullable().optional(),
+  /** Runs judged before keep the rule they were judged by until they are judged again. */
+  decisionRule: decisionRule.optional(),
 });
 export const listJobs = operation({
   id: 'listJobs',
@@ -148,7 +149,7 @@ export const changeJob = operation({
   id: 'changeJob',
   method: 'PATCH',
   path: '/api/jobs/{id}',
-  summary: 'Rename, close, decline or reopen a job',
+  summary: 'Rename, close, decline or reopen a job, or choose its decision rule',
   permission: 'job.change',
   status: 200,
   params: idParams,

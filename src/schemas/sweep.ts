@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { operation } from './operation';
 import { setupBrief } from './setup';
 import {
+  decisionRule,
   detector,
   instant,
   day,
@@ -54,6 +55,8 @@ export const sweepChoice = z.strictObject({
     .max(6),
 });
 export type SweepChoice = z.infer<typeof sweepChoice>;
+/** Judged by the rule of the job of that state; while no state is said, guarded by U. */
+export const previewBody = z.strictObject({ ...sweepChoice.shape, stateId: publicId.nullable().default(null) });
 
 /** What a technician says of a file when keeping it as a run. */
 export const keepSweep = z.strictObject({
@@ -148,7 +151,7 @@ export const evaluationView = z.strictObject({
   gaps: z.array(gapView),
   /** Expanded uncertainty of this run as steps over frequency. */
   uncertainty: z.array(z.strictObject({ startHz: z.number(), stopHz: z.number(), expandedDb: z.number() })),
-  decisionRule: z.string(),
+  decisionRule,
 });
 
 /** Kept up to a broken line of its file, on purpose. */
@@ -242,6 +245,7 @@ export const previewView = z.strictObject({
   traces: z.array(traceView),
   lines: z.array(limitLineView),
   uncertainty: evaluationView.shape.uncertainty,
+  decisionRule,
   verdict,
   counts: evaluationView.shape.counts,
   worst: candidateView.nullable(),
@@ -288,6 +292,9 @@ export const workingView = z.strictObject({
   limitSource: z.string().nullable(),
   marginDb: z.number().nullable(),
   uncertaintyDb: z.number().nullable(),
+  decisionRule,
+  /** What the rule adds to the level before it is compared; null where it says nothing here. */
+  addedDb: z.number().nullable(),
   verdict,
   because: z.string().nullable(),
 });
@@ -339,7 +346,7 @@ export const previewSweepFile = operation({
   permission: 'sweep-file.read',
   status: 200,
   params: sweepParams,
-  body: sweepChoice,
+  body: previewBody,
   reply: previewView,
   repeatable: true,
 });

@@ -1,3 +1,4 @@
+import { RULE_NAMES, type DecisionRule } from '@/emc/kinds';
 import { FactorTableRevision } from '@/models/factorTableRevision';
 import { LimitLineRevision } from '@/models/limitLineRevision';
 import { LimitSet } from '@/models/limitSet';
@@ -27,6 +28,7 @@ export function inputsOf(used: {
 /** Engine and revisions of one evaluation. */
 export interface Used {
   engine: string;
+  decisionRule: DecisionRule;
   inputs: StoredInputs;
 }
 
@@ -96,6 +98,9 @@ export function changesBetween(before: Used, now: Used, names: ReadonlyMap<strin
     // What was written before sets were named says nothing of its set.
     ...(before.inputs.limitSet ? pairedChanges([before.inputs.limitSet], listed(now.inputs.limitSet), names) : []),
   ];
+  if (before.decisionRule !== now.decisionRule) {
+    changes.push({ what: 'decision rule', now: RULE_NAMES[now.decisionRule], before: RULE_NAMES[before.decisionRule] });
+  }
   if (before.engine !== now.engine) changes.push({ what: 'engine', now: now.engine, before: before.engine });
   return changes;
 }

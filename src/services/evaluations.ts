@@ -201,11 +201,11 @@ function changeText({ what, now, before }: InputChange): string {
 
 async function newerFor(run: Run): Promise<string[]> {
   const context = await contextNow(run);
-  const now: Used = { engine: ENGINE, inputs: inputsOf(context) };
+  const now: Used = { engine: ENGINE, decisionRule: context.judged.rule, inputs: inputsOf(context) };
   const names = await nameInputs([run.evaluation.inputs, now.inputs]);
   return changesBetween(run.evaluation, now, names).map(({ what, now: revision }) =>
-    what === 'engine'
-      ? `The engine is ${revision} now.`
+    what === 'engine' || what === 'decision rule'
+      ? `The ${what} is ${revision} now.`
       : `${what[0]!.toUpperCase()}${what.slice(1)} ${revision} is newer.`,
   );
 }

@@ -124,7 +124,8 @@ export async function changeJob(
   return unitOfWork(async () => {
     const { id } = await findJob(actor, publicId);
     const row = await Job.findByPk(id, { lock: currentTransaction().LOCK.UPDATE, rejectOnEmpty: true });
-    const before = { title: row.title, state: row.state, stateReason: row.stateReason };
+    const { title, state, stateReason, decisionRule } = row;
+    const before = { title, state, stateReason, decisionRule };
     const after = { ...before, ...body };
     if (after.state === 'declined' && !after.stateReason) {
       throw new Invalid([{ pointer: '/stateReason', message: 'says why the job is declined' }]);

@@ -1,17 +1,22 @@
 import { Op } from 'sequelize';
 import { authorise, type Actor } from '@/auth/actor';
 import { LAYER_COLUMNS } from '@/emc/columns';
+import type { DecisionRule } from '@/emc/kinds';
 import type { TraceHead } from '@/emc/segment';
 import type { Evaluation } from '@/emc/types';
+import { ucisprSteps } from '@/emc/ucispr';
 import { isReceiverInput } from '@/emc/units';
 import { Conflict, Invalid, Unreadable, type Issue } from '@/errors';
 import type { Answers, Recognition } from '@/ingest/types';
+import type { Job } from '@/models/job';
 import { LimitSet } from '@/models/limitSet';
+import { ModificationState } from '@/models/modificationState';
 import { SignalPath } from '@/models/signalPath';
 import { SignalPathRevision } from '@/models/signalPathRevision';
 import { unitOfWork } from '@/models/unitOfWork';
 import type { Upload } from '@/models/upload';
-import type { LimitLineView, PreviewView, SweepChoice } from '@/schemas/sweep';
+import type { z } from 'zod';
+import type { LimitLineView, previewBody, PreviewView, SweepChoice } from '@/schemas/sweep';
 import { dueOnDay } from './calibrationState';
 import type { JudgedFile, Judging } from './importTasks';
 import { dayIn, labSettings } from './lab';
@@ -155,7 +160,7 @@ export async function judge(
   upload: Upload,
   choice: SweepChoice,
   gathered: Gathered,
-  { store }: { store: boolean },
+  { store, rule }: { store: boolean; rule: DecisionRule },
 ): Promise<Judged & JudgedFile> {
   const { path, terms, lines } = gathered;
   const recognition = recognitionOf(upload);
@@ -180,7 +185,8 @@ export async function judge(
     uncertainty: path?.revision.uncertainty ?? { prescan: [], final: [] },
     purpose: choice.purpose,
     port: choice.port,
-    rule: 'guarded-by-u',
+    rule,
+    ucispr: ucisprSteps(choice.port),
     partial: choice.keepPartial,
   };
   const { traces } = choice;
@@ -197,15 +203,28 @@ export async function judge(
   return { ...gathered, ...result, input: { ...judging, traces: result.heads } };
 }
 
+/** The rule of the job that a state belongs to. Throws Invalid for a state the lab does not have. */
+async function ruleOfState(publicId: string): Promise<DecisionRule> {
+  const sample = { association: 'sample', include: ['job'] };
+  const state = await ModificationState.findOne({ where: { publicId }, include: [sample] });
+  if (!state) throw new Invalid([{ pointer: '/stateId', message: 'is not a modification state of this lab' }]);
+  return (state as ModificationState & { sample: { job: Job } }).sample.job.decisionRule;
+}
+
 /** A held file judged as it would be kept now; nothing is stored. */
-export async function previewSweepFile(actor: Actor | null, fileId: string, choice: SweepChoice): Promise<PreviewView> {
+export async function previewSweepFile(
+  actor: Actor | null,
+  fileId: string,
+  { stateId, ...choice }: z.infer<typeof previewBody>,
+): Promise<PreviewView> {
   authorise(actor, 'sweep-file.read');
-  const { upload, gathered } = await unitOfWork(async () => {
+  const { upload, rule, gathered } = await unitOfWork(async () => {
     const upload = await findUpload(fileId);
-    return { upload, gathered: await gather(recognitionOf(upload), choice, new Date()) };
+    const rule = stateId === null ? 'guarded-by-u' : await ruleOfState(stateId);
+    return { upload, rule, gathered: await gather(recognitionOf(upload), choice, new Date()) };
   });
   // Nothing of the database is held while the file is read and judged.
-  const { evaluation, input, lines, axis } = await judge(actor, upload, choice, gathered, { store: false });
+  const { evaluation, input, lines, axis } = await judge(actor, upload, choice, gathered, { store: false, rule });
   const { firstHz, lastHz } = axis;
   const worst = evaluation.candidates[0];
   return {
@@ -218,6 +237,7 @@ export async function previewSweepFile(actor: Actor | null, fileId: string, choi
     traces: traceViews(input.traces, { firstHz, lastHz }, input),
     lines,
     uncertainty: [...input.uncertainty[input.purpose === 'final' ? 'final' : 'prescan']],
+    decisionRule: rule,
     verdict: evaluation.verdict,
     counts: evaluation.counts,
     worst: worst ? candidateOf(worst, input.traces) : null,

@@ -8,16 +8,17 @@ import { contextWith, type Run, type RunContext } from './runs';
 /** What a run would be judged with today. */
 export async function contextNow(run: Run): Promise<RunContext & { limitSet: LimitSet }> {
   const limitSet = await limitSetNow(run.limitSet);
+  const { decisionRule } = run.state.sample.job;
   for (const revision of await pathRevisionsNow(run)) {
     try {
-      return { ...(await contextWith(run, revision, limitSet)), limitSet };
+      return { ...(await contextWith(run, revision, limitSet, decisionRule)), limitSet };
     } catch (error) {
       // A revision made for another distance or polarisation cannot serve this run; the one before it may.
       if (!(error instanceof Invalid)) throw error;
     }
   }
   const used = run.pathRevisionId === null ? null : await SignalPathRevision.findByPk(run.pathRevisionId);
-  return { ...(await contextWith(run, used, limitSet)), limitSet };
+  return { ...(await contextWith(run, used, limitSet, decisionRule)), limitSet };
 }
 
 /** The newest revision of the same-named set that is not withdrawn; the set itself where there is none. */

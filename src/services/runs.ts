@@ -1,6 +1,8 @@
 import type { IncludeOptions } from 'sequelize';
 import { visibleOrganisation, type Actor } from '@/auth/actor';
+import type { DecisionRule } from '@/emc/kinds';
 import type { EvaluationInput } from '@/emc/types';
+import { ucisprSteps } from '@/emc/ucispr';
 import type { TraceHead } from '@/emc/segment';
 import { NotFound } from '@/errors';
 import type { Evaluation } from '@/models/evaluation';
@@ -68,17 +70,18 @@ export interface RunContext {
   judged: Omit<EvaluationInput, 'traces'>;
 }
 
-/** What a run is judged with: the revisions its current evaluation used. */
+/** What a run is judged with: the revisions and the rule its current evaluation used. */
 export async function contextOf(run: Run): Promise<RunContext> {
   const revision = run.pathRevisionId === null ? null : await SignalPathRevision.findByPk(run.pathRevisionId);
-  return contextWith(run, revision, run.limitSet);
+  return contextWith(run, revision, run.limitSet, run.evaluation.decisionRule);
 }
 
-/** The same with any revision of its path and any limit set. Throws Invalid where the path cannot serve this run. */
+/** The same with any revision of its path, any limit set and any rule. Throws Invalid where the path cannot serve this run. */
 export async function contextWith(
   run: Run,
   revision: SignalPathRevision | null,
   limitSet: LimitSet,
+  rule: DecisionRule,
 ): Promise<RunContext> {
   const day = dayIn((await labSettings()).zone, run.measuredAt ?? run.createdAt);
   const path = revision ? (await loadPaths([revision], day))[0]! : null;
@@ -99,7 +102,8 @@ export async function contextWith(
       uncertainty: revision?.uncertainty ?? { prescan: [], final: [] },
       purpose,
       port,
-      rule: 'guarded-by-u',
+      rule,
+      ucispr: ucisprSteps(port),
       partial: run.partial !== null,
     },
   };

@@ -57,7 +57,7 @@ export async function stageSweep(actor: Actor | null, body: Body, at = new Date(
       }
       return { state, upload, gathered: await gather(recognitionOf(upload), body, measuredAt) };
     });
-    const judged = await judge(actor, upload, body, gathered, { store: true });
+    const judged = await judge(actor, upload, body, gathered, { store: true, rule: state.rule });
     const { id, fileId } = await unitOfWork(() => writeRun(actor, body, { state: state.row, upload, judged, at }));
     const { jobId, jobPublicId } = state;
     const pending = { id, fileId, state: { id: state.row.id, jobId, jobPublicId }, upload, judged, at };
@@ -179,7 +179,7 @@ async function findState(actor: Actor, publicId: string) {
   const { sample } = state as ModificationState & { sample: { publicId: string } };
   const { job } = await findSample(actor, sample.publicId);
   if (job.state !== 'open') throw new Conflict(`Job ${job.number} is ${job.state}. Reopen it first.`);
-  return { row: state, jobId: job.id, jobPublicId: job.publicId };
+  return { row: state, jobId: job.id, jobPublicId: job.publicId, rule: job.decisionRule };
 }
 
 export function refusePlanned({ planned, position }: ModificationState): void {

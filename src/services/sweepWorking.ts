@@ -54,6 +54,7 @@ export async function readWorking(
     return {
       ...working,
       terms: working.terms.map((term) => sourced(term, run, context)),
+      decisionRule: context.judged.rule,
       limitSource: judgedBy ? `${judgedBy.document}, ${judgedBy.source}, revision ${judgedBy.revision}` : null,
     };
   });

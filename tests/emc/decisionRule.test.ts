@@ -1,6 +1,7 @@
 import uncertainties from '@fixtures/published/uncertainty.json';
 import fc from 'fast-check';
-import { DECISION_RULES, decide, verdictOfMargin, type DecisionFacts } from '@/emc/decisionRule';
+import { decide, verdictOfMargin, type DecisionFacts } from '@/emc/decisionRule';
+import { DECISION_RULES } from '@/emc/kinds';
 import { readingVerdict } from '@/emc/verdict';
 
 const facts = (more: Partial<DecisionFacts>): DecisionFacts => {

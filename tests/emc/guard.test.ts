@@ -1,8 +1,9 @@
 import uncertainties from '@fixtures/published/uncertainty.json';
 import fc from 'fast-check';
-import { DECISION_RULES, type DecisionRule, verdictOfMargin } from '@/emc/decisionRule';
+import { verdictOfMargin } from '@/emc/decisionRule';
 import { evaluateNow } from '@/emc/evaluate';
 import { guardAt, guardSteps } from '@/emc/guard';
+import { DECISION_RULES, type DecisionRule } from '@/emc/kinds';
 import type { EvaluationInput } from '@/emc/types';
 import { ucisprSteps } from '@/emc/ucispr';
 import { workingAt } from '@/emc/working';

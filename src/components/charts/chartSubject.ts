@@ -9,6 +9,7 @@ export interface ChartSubject {
   limitName: string;
   lines: readonly LimitLineView[];
   traces: SweepView['traces'];
+  /** U where the rule is guarded by it. */
   uncertainty: SweepView['evaluation']['uncertainty'];
   gaps: SweepView['evaluation']['gaps'];
   /** `H`, `V`, `L1`…, for the tooltip; empty when it does not apply. */
@@ -28,10 +29,18 @@ export function chartSubject(
     limitName: sweep.limitSet.name,
     lines: sweep.limitSet.lines,
     traces: sweep.traces,
-    uncertainty: sweep.evaluation.uncertainty,
+    uncertainty: leftBetween(sweep.evaluation),
     gaps: sweep.evaluation.gaps,
     orientation,
   };
+}
+
+/** The band about the limit within which nothing is concluded; a rule that always decides leaves none. */
+export function leftBetween({
+  decisionRule,
+  uncertainty,
+}: Pick<SweepView['evaluation'], 'decisionRule' | 'uncertainty'>): ChartSubject['uncertainty'] {
+  return decisionRule === 'guarded-by-u' ? uncertainty : [];
 }
 
 const UPPERMOST: Detector[] = ['peak', 'quasi-peak'];

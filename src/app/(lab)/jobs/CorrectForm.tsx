@@ -7,7 +7,7 @@ import type { Submittable } from '@/components/forms/send';
 import { useSubmit } from '@/components/forms/useSubmit';
 import { useKey } from '@/components/shell/keys';
 import { Button } from '@/components/ui/Button';
-import { AreaField, Field } from '@/components/ui/Field';
+import { AreaField, Field, SelectField } from '@/components/ui/Field';
 import { Message } from '@/components/ui/Message';
 import { showToast } from '@/components/ui/Toast';
 
@@ -18,6 +18,8 @@ export interface CorrectField {
   /** As it stands now. */
   value: string;
   area?: boolean;
+  /** One of these instead of text. */
+  choices?: readonly { value: string; word: string }[];
   hint?: string;
 }
 
@@ -72,7 +74,7 @@ export function CorrectForm({ what, operation, id, version, fields, fixed, act, 
   const stale = problem?.status === 412;
   return (
     <form onSubmit={save} noValidate className="grid max-w-[33rem] gap-3 py-3" aria-label={act}>
-      {fields.map(({ name, label, value, area, hint }, at) => {
+      {fields.map(({ name, label, value, area, choices, hint }, at) => {
         const now =
           held === null && !loading && value !== opened[name]
             ? `Now “${value}”; saving puts yours in its place.`
@@ -86,6 +88,17 @@ export function CorrectForm({ what, operation, id, version, fields, fixed, act, 
           hint: now ?? hint,
         };
         const type = (text: string) => setTyped((before) => ({ ...before, [name]: text }));
+        if (choices) {
+          return (
+            <SelectField key={name} {...shared} onChange={(event) => type(event.target.value)}>
+              {choices.map((choice) => (
+                <option key={choice.value} value={choice.value}>
+                  {choice.word}
+                </option>
+              ))}
+            </SelectField>
+          );
+        }
         return area ? (
           <AreaField key={name} {...shared} onChange={(event) => type(event.target.value)} />
         ) : (

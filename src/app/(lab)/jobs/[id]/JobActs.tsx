@@ -1,5 +1,6 @@
 'use client';
 
+import { RULE_CHOICES } from '@/format/decisionRules';
 import type { JobView } from '@/schemas/job';
 import { CorrectForm } from '../CorrectForm';
 import { InPlace, type InPlaceAct } from '../InPlace';
@@ -7,7 +8,7 @@ import { WRITES } from '../writes';
 
 /** What a manager does with a job: rename it, end it with its reason, open it again. */
 export function JobActs({ job }: { job: JobView }) {
-  const { id, version, number, title, state } = job;
+  const { id, version, number, title, state, decisionRule } = job;
   const shared = { what: 'job', operation: WRITES.changeJob, id, version };
   const rename: InPlaceAct = {
     id: 'rename',
@@ -18,6 +19,27 @@ export function JobActs({ job }: { job: JobView }) {
         fields={[{ name: 'title', label: 'Title', value: title }]}
         act="Save the title"
         done={`${number} has its new title`}
+        onClose={close}
+      />
+    ),
+  };
+  const rule: InPlaceAct = {
+    id: 'rule',
+    word: 'Choose the decision rule',
+    form: (close) => (
+      <CorrectForm
+        {...shared}
+        fields={[
+          {
+            name: 'decisionRule',
+            label: 'Decision rule',
+            value: decisionRule,
+            choices: RULE_CHOICES,
+            hint: 'Agreed with the client. Runs judged before keep their rule until they are judged again.',
+          },
+        ]}
+        act="Save the rule"
+        done={`${number} has its decision rule`}
         onClose={close}
       />
     ),
@@ -76,7 +98,7 @@ export function JobActs({ job }: { job: JobView }) {
   ];
   return (
     <div className="mt-2">
-      <InPlace acts={[rename, ...(state === 'open' ? end : [reopen])]} />
+      <InPlace acts={[rename, rule, ...(state === 'open' ? end : [reopen])]} />
     </div>
   );
 }

@@ -24,6 +24,7 @@ import { AddSample } from './AddSample';
 import { JobActs } from './JobActs';
 import { JobSample } from './JobSample';
 import { stateStandings } from './stateStandings';
+import { RULE_NAMES } from '@/format/decisionRules';
 
 interface Props {
   params: Promise<{ id: string }>;
@@ -72,6 +73,7 @@ export default async function JobPage({ params }: Props) {
                 {job.product.name} {job.product.code}
               </Link>
               <span>opened {formatDay(job.createdAt, zone)}</span>
+              <span>decided by {RULE_NAMES[job.decisionRule]}</span>
               <span>{stateLine(job.state, job.stateReason, history, zone)}</span>
             </>
           }

@@ -5,9 +5,12 @@ import { useRouter } from 'next/navigation';
 import { ProblemMessage } from '@/components/forms/ProblemMessage';
 import { useSubmit } from '@/components/forms/useSubmit';
 import { Button, ButtonLink } from '@/components/ui/Button';
-import { Field } from '@/components/ui/Field';
+import { Field, SelectField } from '@/components/ui/Field';
 import { Switch } from '@/components/ui/Switch';
+import { RULE_CHOICES, RULE_SAYS } from '@/format/decisionRules';
 import type { JobView, ProductView } from '@/schemas/job';
+
+type DecisionRule = JobView['decisionRule'];
 import { WRITES } from '../writes';
 import { NewProductFields, type NewProduct } from './NewProductFields';
 import { ProductField, type ProductPage } from './ProductField';
@@ -23,13 +26,14 @@ const NONE: NewProduct = { organisationId: '', code: '', name: '', description: 
 /** A job of a product that is known or is entered with it: the product first, then the job, each at most once. */
 export function NewJobForm({ products, clients, chosen }: Props) {
   const router = useRouter();
-  const job = useSubmit<{ productId: string; title: string }, JobView>(WRITES.createJob);
+  const job = useSubmit<{ productId: string; title: string; decisionRule: DecisionRule }, JobView>(WRITES.createJob);
   const enter = useSubmit<NewProduct, ProductView>(WRITES.createProduct);
   const [known, setKnown] = useState(products);
   const [from, setFrom] = useState<'known' | 'new'>(products.items.length > 0 ? 'known' : 'new');
   const [productId, setProductId] = useState(chosen ?? '');
   const [entered, setEntered] = useState(NONE);
   const [title, setTitle] = useState('');
+  const [rule, setRule] = useState<DecisionRule>('guarded-by-u');
   const [missing, setMissing] = useState<{ product?: string; title?: string }>({});
   const [leaving, setLeaving] = useState(false);
 
@@ -49,7 +53,7 @@ export function NewJobForm({ products, clients, chosen }: Props) {
       setFrom('known');
       setEntered(NONE);
     }
-    const answer = await job.submit({ productId: id, title });
+    const answer = await job.submit({ productId: id, title, decisionRule: rule });
     if (!answer.ok) return;
     setLeaving(true);
     router.push(`/jobs/${answer.reply.id}`);
@@ -88,13 +92,18 @@ export function NewJobForm({ products, clients, chosen }: Props) {
         hint="What is asked for, as in: LD-40, CISPR 32 class B, mains and radiated"
         error={missing.title ?? (job.fieldErrors.title && `Title ${job.fieldErrors.title}.`)}
       />
-      <div>
-        <p className="field-label">Decision rule</p>
-        <p className="t-text">
-          Guarded by U: a reading is under when its margin is larger than the expanded uncertainty U, over when it is
-          over by more than U, and inconclusive in between.
-        </p>
-      </div>
+      <SelectField
+        label="Decision rule"
+        value={rule}
+        onChange={(event) => setRule(event.target.value as DecisionRule)}
+        hint={RULE_SAYS[rule]}
+      >
+        {RULE_CHOICES.map(({ value, word }) => (
+          <option key={value} value={value}>
+            {word}
+          </option>
+        ))}
+      </SelectField>
       <ProblemMessage problem={wrong} />
       <div className="flex flex-wrap gap-2">
         <Button kind="primary" type="submit" busy={enter.busy || job.busy || leaving}>

@@ -4,6 +4,7 @@ import { formatDay, formatDayTime } from '@/format/dates';
 import { formatBandwidth, formatFrequencyRange } from '@/format/frequencies';
 import { formatBytes, formatUncertainty } from '@/format/quantities';
 import { DETECTOR_WORDS } from '@/format/words';
+import { RULE_NAMES, RULE_SAYS } from '@/format/decisionRules';
 
 /** Where everything on this sheet comes from: file, settings, path, limits, uncertainty, decision rule, engine. */
 export function Record({ sweep, zone }: { sweep: SweepView; zone: string }) {
@@ -64,7 +65,10 @@ export function Record({ sweep, zone }: { sweep: SweepView; zone: string }) {
               </span>
             ))}
       </Pair>
-      <Pair name="Decision rule">guarded by U: under when the margin is larger than U</Pair>
+      <Pair name="Decision rule">
+        {RULE_NAMES[evaluation.decisionRule]}
+        <Quiet>{RULE_SAYS[evaluation.decisionRule]}</Quiet>
+      </Pair>
       <Pair name="Computed">
         {formatDayTime(evaluation.at, zone)} by {evaluation.engine}
       </Pair>

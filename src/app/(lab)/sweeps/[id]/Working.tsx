@@ -10,6 +10,7 @@ import {
   unitLabel,
 } from '@/format/quantities';
 import { formatDay } from '@/format/dates';
+import { RULE_NAMES } from '@/format/decisionRules';
 import { levelUnit } from '@/schemas/common';
 import { VERDICT_WORDS } from '@/format/words';
 
@@ -17,7 +18,7 @@ type Term = WorkingView['terms'][number];
 
 /** The column addition behind a figure: each term with its source, a line above the level, a double one above the margin. */
 export function Working({ working }: { working: WorkingView }) {
-  const { terms, level, levelUnit, limit, limitSource, marginDb, uncertaintyDb, verdict, because } = working;
+  const { terms, level, levelUnit, limit, limitSource, marginDb, verdict, because } = working;
   const slips = terms.filter((term) => term.applied && term.table !== null);
   return (
     <>
@@ -36,12 +37,7 @@ export function Working({ working }: { working: WorkingView }) {
           </Line>
         ) : null}
         {marginDb !== null ? (
-          <Line
-            figure={marginText(marginDb).figure}
-            rule="double"
-            tone={verdict}
-            source={interval(marginDb, uncertaintyDb)}
-          >
+          <Line figure={marginText(marginDb).figure} rule="double" tone={verdict} source={interval(working)}>
             dB <b>{marginText(marginDb).word}</b>, <VerdictGlyph verdict={verdict} /> {VERDICT_WORDS[verdict]}
           </Line>
         ) : null}
@@ -57,10 +53,13 @@ export function Working({ working }: { working: WorkingView }) {
 }
 
 /** What U leaves open, in words and not in signs. */
-function interval(marginDb: number, uncertaintyDb: number | null): string {
+function interval({ marginDb, uncertaintyDb, decisionRule, addedDb }: WorkingView): string {
   if (uncertaintyDb === null) return 'No uncertainty is stated here, so nothing is concluded.';
-  const range = formatMarginInterval(marginDb, uncertaintyDb);
-  return `${formatUncertainty(uncertaintyDb)}: 95 % interval, instrumentation only, ${range}`;
+  const range = formatMarginInterval(marginDb!, uncertaintyDb);
+  const stated = `${formatUncertainty(uncertaintyDb)}: 95 % interval, instrumentation only, ${range}`;
+  if (decisionRule === 'guarded-by-u') return stated;
+  const adds = addedDb ? `, which adds ${formatDb(addedDb)} dB to the level` : '';
+  return `${stated}. Decided by ${RULE_NAMES[decisionRule]}${adds}`;
 }
 
 function SumRow({ term }: { term: Term }) {

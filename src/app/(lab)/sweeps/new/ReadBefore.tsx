@@ -1,7 +1,7 @@
 'use client';
 
 import { useMemo } from 'react';
-import type { ChartSubject } from '@/components/charts/chartSubject';
+import { leftBetween, type ChartSubject } from '@/components/charts/chartSubject';
 import { SweepChart } from '@/components/charts/SweepChart';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { formatFrequencyRange } from '@/format/frequencies';
@@ -19,7 +19,7 @@ export function ReadBefore({ file, draft, lists }: { file: SweepFileView; draft:
   const { firstHz, lastHz, notRead } = spanOf(file, draft, limitSet);
   const drawn = drawable(draft);
   const choice = choiceOf(drawn, file);
-  const { preview } = usePreview(file.id, choice);
+  const { preview } = usePreview(file.id, choice, draft.stateId);
   const subject = useMemo<ChartSubject>(
     () => ({
       firstHz,
@@ -28,7 +28,7 @@ export function ReadBefore({ file, draft, lists }: { file: SweepFileView; draft:
       limitName: limitSet?.name ?? '',
       lines: limitSet?.lines ?? [],
       traces: preview?.traces ?? [],
-      uncertainty: preview?.uncertainty ?? [],
+      uncertainty: preview ? leftBetween(preview) : [],
       gaps: [],
       orientation: '',
       notRead: notRead ?? undefined,

@@ -1,7 +1,7 @@
 'use client';
 
 import { useMemo } from 'react';
-import type { ChartSubject } from '@/components/charts/chartSubject';
+import { leftBetween, type ChartSubject } from '@/components/charts/chartSubject';
 import { SweepChart } from '@/components/charts/SweepChart';
 import { fieldErrorsOf } from '@/components/forms/problem';
 import { ProblemMessage } from '@/components/forms/ProblemMessage';
@@ -45,7 +45,7 @@ export function RecogniseSheet(props: Props) {
   const { entry, draft, lists, place, margin, keys, last, onLast, onDraft, onSweep, onKeep, onDiscard } = props;
   const file = entry.file!;
   const choice = choiceOf(draft, file);
-  const { preview, problem: previewProblem, busy: judging } = usePreview(file.id, choice);
+  const { preview, problem: previewProblem, busy: judging } = usePreview(file.id, choice, draft.stateId);
   const read = rangeOf(draft, file);
   const limitSet = lists.limitSets.find(({ id }) => id === draft.limitSetId);
   const path = lists.paths.find(({ id }) => id === draft.pathId);
@@ -64,7 +64,7 @@ export function RecogniseSheet(props: Props) {
       limitName: limitSet?.name ?? '',
       lines: limitSet?.lines ?? [],
       traces: preview?.traces ?? [],
-      uncertainty: preview?.uncertainty ?? [],
+      uncertainty: preview ? leftBetween(preview) : [],
       gaps: preview?.gaps ?? [],
       orientation: '',
       notRead: notRead ?? undefined,

@@ -13,8 +13,8 @@ export interface PreviewState {
 }
 
 /** Asks how a file would be judged as chosen, a moment after the last change; only the newest answer counts. */
-export function usePreview(fileId: string, choice: SweepChoice | null): PreviewState {
-  const asked = choice === null ? null : JSON.stringify(choice);
+export function usePreview(fileId: string, choice: SweepChoice | null, stateId: string): PreviewState {
+  const asked = choice === null ? null : JSON.stringify({ ...choice, stateId: stateId || null });
   const [answer, setAnswer] = useState<{ asked: string; preview: PreviewView | null; problem: Problem | null } | null>(
     null,
   );
