@@ -14,7 +14,7 @@ const steps = z.array(
 );
 
 /**
- * A lab's bench as one file: equipment with its calibrations and tables (rows of Hz and dB, antenna factors in dB/m),
+ * A lab's bench as one file: equipment with its calibrations and tables (rows of Hz and dB, each quantity in its own unit),
  * and signal paths from the sample to the receiver that name those tables.
  */
 export const benchFile = z.strictObject({
@@ -54,6 +54,9 @@ export const benchFile = z.strictObject({
         z.strictObject({
           identifier: z.string(),
           term: z.string().nullable(),
+          /** Where it is in a path split by frequency; left out, it is in the path at every frequency. */
+          fromHz: z.number().positive().nullable().default(null),
+          toHz: z.number().positive().nullable().default(null),
           tables: z.strictObject({
             horizontal: z.string().nullable(),
             vertical: z.string().nullable(),
@@ -101,7 +104,7 @@ export async function enterBench(actor: Actor, file: BenchFile): Promise<void> {
     };
     await enterSignalPath(actor, {
       ...path,
-      items: path.items.map(({ identifier, term, tables: own }, i) => {
+      items: path.items.map(({ identifier, term, fromHz, toHz, tables: own }, i) => {
         const item = items.get(identifier);
         const at = `/items/${i}`;
         if (!item)
@@ -121,6 +124,8 @@ export async function enterBench(actor: Actor, file: BenchFile): Promise<void> {
             vertical: vertical?.publicId ?? null,
             any: any?.publicId ?? null,
           },
+          fromHz,
+          toHz,
         };
       }),
     });

@@ -2,7 +2,6 @@ import { calibrationOn, itemOf } from '@fixtures/demo/equipment';
 import { paths as demoPaths } from '@fixtures/demo/paths';
 import type { DemoContribution, DemoEquipment, DemoPath, DemoTable } from '@fixtures/demo/types';
 import type { Actor } from '@/auth/actor';
-import { FACTOR_QUANTITIES, type FactorQuantity } from '@/emc/kinds';
 import type { Equipment } from '@/models/equipment';
 import type { FactorTableRevision } from '@/models/factorTableRevision';
 import type { StoredPathItem } from '@/models/stored';
@@ -13,11 +12,6 @@ export interface SeededItem {
   row: Equipment;
   /** Tables by the key the demo gives them. */
   tables: Map<string, FactorTableRevision>;
-}
-
-/** A table that a signal path can add; transfer impedances and magnetic factors are not among them. */
-function isFactor(table: DemoTable): table is DemoTable & { quantity: FactorQuantity } {
-  return (FACTOR_QUANTITIES as readonly string[]).includes(table.quantity);
 }
 
 export async function seedEquipment(
@@ -32,7 +26,7 @@ export async function seedEquipment(
     const row = await enterEquipment(actor, { identifier, role, description, state }, at(-390));
     const tables = new Map<string, FactorTableRevision>();
     for (const calibration of item.calibrations) {
-      const own = calibration.tables.filter(isFactor);
+      const own = calibration.tables;
       const entered = await enterCalibration(
         actor,
         row,
@@ -88,10 +82,10 @@ function revisionOf(path: DemoPath, items: Map<string, SeededItem>, day: number)
     position,
     ...(budget ? { budget: { prescan: whole(budget.prescan), final: whole(budget.final) } } : { uncertainty }),
     uncertaintySource: uncertaintyBasis,
-    items: path.items.map(({ identifier, term }): StoredPathItem => {
+    items: path.items.map(({ identifier, term, range }): StoredPathItem => {
       const item = itemOf(identifier);
       const { row, tables } = items.get(identifier)!;
-      const own = term === null ? [] : (calibrationOn(item, day)?.tables.filter(isFactor) ?? []);
+      const own = term === null ? [] : (calibrationOn(item, day)?.tables ?? []);
       const idOf = (polarisation: DemoTable['polarisation']) => {
         const table = own.find((candidate) => candidate.polarisation === polarisation);
         return table ? tables.get(table.key)!.publicId : null;
@@ -102,6 +96,7 @@ function revisionOf(path: DemoPath, items: Map<string, SeededItem>, day: number)
         term,
         quantity: own[0]?.quantity ?? null,
         tables: { horizontal: idOf('horizontal'), vertical: idOf('vertical'), any: idOf(null) },
+        ...(range && { fromHz: range.fromHz, toHz: range.toHz }),
       };
     }),
   };

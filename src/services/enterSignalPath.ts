@@ -7,6 +7,7 @@ import { SignalPathRevision } from '@/models/signalPathRevision';
 import type { StoredBudget, StoredPathItem, StoredUncertainty } from '@/models/stored';
 import { currentTransaction, unitOfWork } from '@/models/unitOfWork';
 import { recordChange } from './audit';
+import { refuseItems } from './pathCheck';
 import { stepsOf } from './uncertaintyBudget';
 
 export interface NewPathRevision {
@@ -23,7 +24,7 @@ export interface NewPathRevision {
 
 /**
  * Enters the next revision of a path, and the path itself when its code is new. Earlier revisions stay as they are.
- * Throws Invalid as `stepsOf` does, and where uncertainty is neither stated nor budgeted.
+ * Throws Invalid as `refuseItems` and `stepsOf` do, and where uncertainty is neither stated nor budgeted.
  */
 export async function enterSignalPath(
   actor: Actor | null,
@@ -33,6 +34,7 @@ export async function enterSignalPath(
   authorise(actor, 'path.enter');
   const { code, name, port, position, items, budget = null, uncertaintySource } = path;
   return unitOfWork(async () => {
+    await refuseItems(items);
     const row =
       (await SignalPath.findOne({ where: { code } })) ??
       (await SignalPath.create({ publicId: newPublicId(), code, name, port, position, createdAt: at }));
