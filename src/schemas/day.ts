@@ -10,6 +10,8 @@ export interface DayBooking extends BookingView {
   runs: number;
   /** Waiting or scheduled for its state, or for any state of its sample where none is named. */
   openRetests: number;
+  /** What came up after it was booked and stands in its way, as sentences; of one that is over there is none. */
+  clashes: string[];
 }
 
 /** One day of the lab: every position with what is booked there. */

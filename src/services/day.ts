@@ -13,7 +13,7 @@ import { User } from '@/models/user';
 import type { BookingChoices, DayBooking, DayView } from '@/schemas/day';
 import { addDays, dayBounds } from '@/schemas/labTime';
 import { overlapping } from './bookingSlots';
-import { BOOKING_INCLUDE, bookingView } from './bookingViews';
+import { BOOKING_INCLUDE, bookingView, type WholeBooking } from './bookingViews';
 import { dayIn, labSettings } from './lab';
 import { positionView } from './positions';
 import { stateLabel } from './samples';
@@ -55,12 +55,12 @@ export async function readDay(actor: Actor | null, asked: string | null, at = ne
       from: from.toISOString(),
       to: to.toISOString(),
       positions: positions.map(positionView),
-      bookings: await withWhatCame(actor, rows),
+      bookings: await withWhatCame(actor, rows, at),
     };
   });
 }
 
-async function withWhatCame(actor: Actor, rows: Booking[]): Promise<DayBooking[]> {
+async function withWhatCame(actor: Actor, rows: Booking[], at: Date): Promise<DayBooking[]> {
   const states = await ModificationState.findAll({
     where: { sampleId: [...new Set(rows.map((row) => row.sampleId))] },
   });
@@ -83,8 +83,19 @@ async function withWhatCame(actor: Actor, rows: Booking[]): Promise<DayBooking[]
       verdict: VERDICTS.find((verdict) => verdicts.includes(verdict)) ?? null,
       runs: within.length,
       openRetests: own.reduce((sum, { id }) => sum + (retests.get(id) ?? 0), 0),
+      clashes: row.endsAt > at ? clashesOf(row as WholeBooking) : [],
     };
   });
+}
+
+/** What of a booking does not hold any more. */
+function clashesOf({ technician, position, sample }: WholeBooking): string[] {
+  const { job } = sample;
+  return [
+    ...(technician.disabledAt ? [`${technician.name} is disabled and cannot come.`] : []),
+    ...(position.state === 'retired' ? [`Position ${position.code} is retired.`] : []),
+    ...(job.state === 'open' ? [] : [`Job ${job.number} is ${job.state}.`]),
+  ];
 }
 
 /** Retests that wait or are scheduled, by the state (row id) they are of. */

@@ -14,6 +14,7 @@ import { main as positionAdd } from '@/ops/commands/position-add';
 import type { BookingView, PositionView } from '@/schemas/booking';
 import { verifyChain } from '@/services/audit';
 import { changeJob, createJob, readJob } from '@/services/jobs';
+import { readDay } from '@/services/day';
 import { createSample, createState } from '@/services/samples';
 import { freshDatabase, type TestDatabase } from '../support/database';
 import { enterWorld, type Somebody, type World } from '../support/world';
@@ -200,6 +201,28 @@ test('a cancelled booking keeps its reason, gives its time back and is not moved
   await booked(ask(book, { body: slot('2032-01-14T10:00:00Z', '2032-01-14T11:00:00Z') }));
   expect((await ask(change, { id: made.id, version: 2, body: { work: 'again' } })).status).toBe(409);
   expect(await booked(ask(read, { id: made.id }), 200)).toMatchObject({ cancelled: { reason: 'the sample is late' } });
+});
+
+test('what stands in the way of a booking since it was made is named on its day: the person, the position, the job', async () => {
+  const { manager } = world;
+  const job = await createJob(manager.actor, {
+    productId: world.product.id,
+    title: 'clash',
+    decisionRule: 'guarded-by-u',
+  });
+  const sample = await createSample(manager.actor, job.id, { serial: 'C-1', firmware: '', description: '' });
+  const more = { sampleId: sample.id, stateId: sample.states[0]!.id };
+  const made = await ask(book, { body: slot('2031-05-05T09:00:00Z', '2031-05-05T11:00:00Z', more) });
+  const { id } = (await made.json()) as BookingView;
+  const clashes = async (at?: Date) =>
+    (await readDay(manager.actor, '2031-05-05', at)).bookings.find((one) => one.id === id)!.clashes;
+  expect(await clashes()).toEqual([]);
+  const { version } = await readJob(manager.actor, job.id);
+  await changeJob(manager.actor, job.id, version, { state: 'closed', stateReason: 'reported' });
+  await unitOfWork(() => User.update({ disabledAt: new Date() }, { where: { publicId: world.slot.technicianId } }));
+  expect(await clashes()).toEqual(['technician is disabled and cannot come.', `Job ${job.number} is closed.`]);
+  expect(await clashes(new Date('2031-05-05T11:00:00Z'))).toEqual([]);
+  await unitOfWork(() => User.update({ disabledAt: null }, { where: { publicId: world.slot.technicianId } }));
 });
 
 test('the list follows the clock, page by page, without cancelled ones unless asked', async () => {

@@ -59,7 +59,7 @@ test(
     const words = await shown.locator('pre').innerText();
     expect(words).toMatch(/^Over by 6\.\d dB at 144\.0\d\d MHz, enclosure\. AC mains is under\.$/m);
     expect(words).toMatch(/^Left out: .*trial runs/m);
-    await shown.getByRole('button', { name: 'Send to Teo Lind' }).dblclick();
+    await shown.getByRole('button', { name: 'Approve and send to Teo Lind' }).dblclick();
     await page.getByText('The result is on its way to Teo Lind').waitFor();
     const sent = await count();
     expect(sent.length).toBe(before + 1);

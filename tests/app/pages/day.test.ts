@@ -33,6 +33,7 @@ function booking(id: string, startsAt: string, endsAt: string, more: Partial<Day
     verdict: null,
     runs: 0,
     openRetests: 0,
+    clashes: [],
     ...more,
   };
 }
@@ -72,6 +73,12 @@ describe('the sentence of the day', () => {
   test.each([
     ['nothing', day([]), '12:10', 'Nothing is booked today.'],
     ['next', day([noon]), '12:10', 'Next is TP-9 M0 at position A, 3 m chamber, at 13:00, in 50 min.'],
+    [
+      'a booking that does not hold any more',
+      day([{ ...noon, clashes: ['Job HL-2614 is closed.'] }]),
+      '12:10',
+      'Next is TP-9 M0 at position A, 3 m chamber, at 13:00, in 50 min. One cannot go on as booked.',
+    ],
     [
       'now and next for the reader',
       day([noon, own]),

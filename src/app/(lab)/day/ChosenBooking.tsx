@@ -7,6 +7,7 @@ import { ButtonLink } from '@/components/ui/Button';
 import { Figure } from '@/components/ui/Figure';
 import { Id, IdentityLine } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
+import { Message } from '@/components/ui/Message';
 import { StateTag } from '@/components/ui/StateTag';
 import { formatCount } from '@/format/quantities';
 import { capitalised } from '@/format/words';
@@ -34,7 +35,7 @@ const TITLES: Record<Standing, string> = {
 
 /** The chosen booking with what is needed at the bench: sample, state, product, client, and the way to its upload. */
 export function ChosenBooking({ booking, standing, view, nowMs, choices, upload }: Props) {
-  const { product, state, sample, organisation, job, position, technician, own, work, openRetests } = booking;
+  const { product, state, sample, organisation, job, position, technician, own, work, openRetests, clashes } = booking;
   const lengthMs = Date.parse(booking.endsAt) - Date.parse(booking.startsAt);
   const fitted = state !== null && !state.planned;
   return (
@@ -95,6 +96,13 @@ export function ChosenBooking({ booking, standing, view, nowMs, choices, upload 
           </ButtonLink>
         )}
       </div>
+      {clashes.length > 0 && (
+        <Message tone="over" lead={clashes.join(' ')}>
+          {choices
+            ? 'Move it, give it to somebody else, or cancel it with a reason.'
+            : 'A manager moves or cancels it.'}
+        </Message>
+      )}
       {choices && (
         <div className="mt-3">
           <InPlace

@@ -40,6 +40,12 @@ export function DaySheet({ view, choices, upload }: Props) {
   };
   useKey('ArrowDown', () => step(1), { says: 'next booking', weak: true });
   useKey('ArrowUp', () => step(-1), { says: 'booking before', weak: true });
+  const clashing = view.bookings.filter(({ clashes }) => clashes.length > 0);
+  const nextClash = () => {
+    const at = clashing.findIndex(({ id }) => id === chosen?.id);
+    setAsked(clashing[(at + 1) % clashing.length]!.id);
+  };
+  useKey('!', nextClash, { says: 'next clash', when: clashing.length > 0 });
   const position = view.positions.find(({ id }) => id === chosen?.position.id) ?? null;
   const count = view.bookings.length;
 
@@ -64,6 +70,7 @@ export function DaySheet({ view, choices, upload }: Props) {
       keys={[
         { keys: ['ArrowLeft', 'ArrowRight'], does: 'days' },
         { keys: ['ArrowUp', 'ArrowDown'], does: 'bookings' },
+        ...(clashing.length > 0 ? [{ keys: ['!'], does: 'next clash' }] : []),
         ...(choices ? [{ keys: ['B'], does: 'book' }] : []),
         { keys: ['?'], does: 'all keys' },
       ]}

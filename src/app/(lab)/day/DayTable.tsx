@@ -78,7 +78,8 @@ export function DayTable({
 
 const whoOf = ({ own, technician }: DayBooking) => (own ? 'you' : technician.name);
 
-function SoFar({ booking: { verdict, runs }, standing }: { booking: DayBooking; standing: Standing }) {
+function SoFar({ booking: { verdict, runs, clashes }, standing }: { booking: DayBooking; standing: Standing }) {
+  if (clashes.length > 0) return <span className="text-madder">{clashes.join(' ')}</span>;
   if (!verdict) return <span className="text-ink2">{STANDING_WORDS[standing]}</span>;
   return (
     <>

@@ -133,13 +133,21 @@ interface SlipProps {
 }
 
 function Slip({ booking, view, scale, standing, chosen, onChoose }: SlipProps) {
-  const { id, product, state, work, technician, own, verdict, position } = booking;
+  const { id, product, state, work, technician, own, verdict, position, clashes } = booking;
   const [from, to] = [percentAt(booking.startsAt, scale), percentAt(booking.endsAt, scale)];
   const [before, beyond] = [booking.startsAt < view.from, booking.endsAt > view.to];
   const who = own ? 'you' : technician.name;
   const named = `${product.code}${state ? ` ${state.label}` : ''}`;
   const word = { done: verdict ? VERDICT_WORDS[verdict] : 'done', now: 'running', next: 'next', later: '' }[standing];
-  const said = [spanWords(booking, view.day, view.zone), named, work, who, `position ${position.code}`, word];
+  const said = [
+    spanWords(booking, view.day, view.zone),
+    named,
+    work,
+    who,
+    `position ${position.code}`,
+    word,
+    ...clashes,
+  ];
   return (
     <svg x={at(from)} y="1" width={at(to - from)} height="60" overflow="visible">
       {!before && <line x1="7" x2="7" y1="0" y2="8" className="stroke-ink" strokeWidth="1" />}
@@ -153,6 +161,7 @@ function Slip({ booking, view, scale, standing, chosen, onChoose }: SlipProps) {
             'lane-slip',
             `lane-slip-${standing}`,
             own && 'lane-slip-own',
+            clashes.length > 0 && 'lane-slip-clash',
             before && 'lane-slip-before',
             beyond && 'lane-slip-beyond',
           )}
@@ -165,7 +174,7 @@ function Slip({ booking, view, scale, standing, chosen, onChoose }: SlipProps) {
             {state && <span className="t-figure">{state.label}</span>}
             <span className="lane-slip-mark">
               {standing === 'done' && verdict && <VerdictGlyph verdict={verdict} />}
-              {standing === 'next' && 'next'}
+              {clashes.length > 0 ? 'clash' : standing === 'next' && 'next'}
             </span>
           </span>
           <span className="lane-slip-work">

@@ -74,7 +74,9 @@ export function dayFinding(
       ? [plain(' All of the day’s verdicts are under.')]
       : [];
   const verdict = open?.[0] ?? (judged.length > 0 ? 'under' : 'not-covered');
-  return { verdict, runs: [...(day === today ? todays() : another()), ...said] };
+  const clashing = bookings.filter(({ clashes }) => clashes.length > 0).length;
+  const clash = clashing > 0 ? [plain(` ${capitalised(countInWords(clashing))} cannot go on as booked.`)] : [];
+  return { verdict, runs: [...(day === today ? todays() : another()), ...clash, ...said] };
 
   function todays(): FindingRun[] {
     if (bookings.length === 0) return [plain('Nothing is booked today.')];

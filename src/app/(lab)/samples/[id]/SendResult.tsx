@@ -98,8 +98,10 @@ function SendForm({ organisation, states, recipients, onClose }: Props & { onClo
         </p>
         {send.problem && <ProblemMessage problem={send.problem} />}
         <div className="flex flex-wrap gap-2">
-          <Button kind="primary" busy={send.busy} autoFocus onClick={() => void sendIt()}>
-            {preview.to.length === 1 ? `Send to ${namesOf(preview)}` : `Send to ${preview.to.length} designers`}
+          <Button kind="primary" keyName="A" busy={send.busy} autoFocus onClick={() => void sendIt()}>
+            {preview.to.length === 1
+              ? `Approve and send to ${namesOf(preview)}`
+              : `Approve and send to ${preview.to.length} designers`}
           </Button>
           <Button onClick={() => setPreview(null)}>Change it</Button>
           <Button kind="quiet" onClick={onClose}>
