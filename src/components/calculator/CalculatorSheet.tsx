@@ -62,23 +62,22 @@ export function CalculatorSheet({ query }: { query: string }) {
         <PaneList calculator={calculator} />
         <section className="calc-pane" aria-labelledby="calc-title">
           <SectionHeading id="calc-title">{pane.title}</SectionHeading>
-          <p className="t-detail">{pane.about}</p>
+          {/* what a pane is for stands where its figures will be said */}
+          <p className="finding calc-says" role="status">
+            <span>{outcome.says ? <Runs runs={outcome.says} /> : pane.about}</span>
+          </p>
           <PaneFields key={pane.id} calculator={calculator} />
-          <div role="status">
-            {outcome.says && (
-              <p className="finding calc-says">
-                <span>
-                  <Runs runs={outcome.says} />
-                </span>
-              </p>
-            )}
-          </div>
           <AnswerTable calculator={calculator} />
           {outcome.cautions.length > 0 && (
             <Message tone="inconclusive" className="mt-3">
               {outcome.cautions.join(' ')}
             </Message>
           )}
+          {outcome.notes?.map((note) => (
+            <p key={note} className="t-detail mt-2">
+              {note}
+            </p>
+          ))}
           <p className="t-detail mt-4">An aid at the bench, not a record: what counts is on the sheet of a run.</p>
         </section>
       </div>

@@ -13,6 +13,7 @@ const SWITCH_ROOM = 26;
 export function PaneFields({ calculator }: { calculator: Calculator }) {
   const { pane, read, entries, enter, clear } = calculator;
   const filled = read.fields.filter(({ name }) => (entries[name] ?? '') !== '').length;
+  const unitsExplained = read.fields.find(({ kind }) => kind === 'frequency');
   return (
     <form
       action="/calculator"
@@ -21,16 +22,22 @@ export function PaneFields({ calculator }: { calculator: Calculator }) {
       onSubmit={(event) => event.preventDefault()}
     >
       <input type="hidden" name="pane" value={pane.id} />
-      <div className="calc-fields">
-        {read.fields.map((field) => (
-          <OneField
-            key={field.name}
-            field={field}
-            calculator={calculator}
-            onEnter={(text) => enter(field.name, text)}
-          />
-        ))}
-      </div>
+      {groupsOf(read.fields).map(([group, fields]) => (
+        <div key={group} className="calc-group" {...(group !== '' && { role: 'group', 'aria-label': group })}>
+          {group !== '' && <p className="calc-group-name">{group}</p>}
+          <div className="calc-fields">
+            {fields.map((field) => (
+              <OneField
+                key={field.name}
+                field={field}
+                calculator={calculator}
+                explains={field === unitsExplained}
+                onEnter={(text) => enter(field.name, text)}
+              />
+            ))}
+          </div>
+        </div>
+      ))}
       {filled > 0 && (
         <Button kind="quiet" size="table" onClick={clear}>
           {filled === 1 ? 'Clear 1 field' : `Clear ${filled} fields`}
@@ -40,13 +47,22 @@ export function PaneFields({ calculator }: { calculator: Calculator }) {
   );
 }
 
+/** The fields under their headings, in their order. */
+function groupsOf(fields: readonly PaneField[]): [string, PaneField[]][] {
+  const groups = new Map<string, PaneField[]>();
+  for (const field of fields) groups.set(field.group ?? '', [...(groups.get(field.group ?? '') ?? []), field]);
+  return [...groups];
+}
+
 interface OneProps {
   field: PaneField;
   calculator: Calculator;
+  /** Says once on a pane that a frequency may carry its own unit. */
+  explains: boolean;
   onEnter: (text: string) => void;
 }
 
-function OneField({ field, calculator, onEnter }: OneProps) {
+function OneField({ field, calculator, explains, onEnter }: OneProps) {
   const { read, outcome, entries } = calculator;
   const error = read.problems[field.name] ?? outcome.wrong?.[field.name] ?? null;
   if (field.kind === 'choice') {
@@ -92,12 +108,11 @@ function OneField({ field, calculator, onEnter }: OneProps) {
         name={field.name}
         value={text}
         onChange={(event) => onEnter(event.currentTarget.value)}
-        inputMode={field.kind === 'frequency' ? undefined : 'text'}
         autoComplete="off"
         maxLength={40}
         figure
         unit={ownUnit || field.unit === '' ? undefined : field.unit}
-        hint={field.hint ?? (field.kind === 'frequency' ? 'Another unit may be typed: kHz, MHz, GHz.' : undefined)}
+        hint={field.hint ?? (explains ? 'Or with its unit: 65 kHz, 2.4 GHz.' : undefined)}
         error={error}
       />
       {field.picks && (

@@ -39,7 +39,7 @@ function Formula({ text }: { text: string }) {
   return (
     <div className="sum-row">
       <dt className="sr-only">formula</dt>
-      <dd className="calc-formula t-figure">{text}</dd>
+      <dd className="calc-formula">{text}</dd>
     </div>
   );
 }

@@ -63,17 +63,21 @@ export function conversionTerm(conversion: Conversion): Term {
   );
 }
 
-/** What a converted level may conclude, as sentences. */
-export function standingSays({ standing, fromM, toM, extentM }: DistanceTerm): string[] {
-  if (fromM === toM) return ['Both distances are the same; nothing is converted.'];
+interface Standing {
+  cautions: string[];
+  notes: string[];
+}
+
+/** What a converted level may conclude, as sentences: what it may not in `cautions`, what it may in `notes`. */
+export function standingSays({ standing, fromM, toM, extentM }: DistanceTerm): Standing {
+  if (fromM === toM) return { cautions: [], notes: ['Both distances are the same; nothing is converted.'] };
   if (standing.shows === 'at-most-over') {
     const doubts = standing.doubts.map((doubt) => doubtSays(doubt, fromM, toM));
-    return [...doubts, 'A level converted so may show over; it never shows under.'];
+    return { cautions: [...doubts, 'A level converted so may show over; it never shows under.'], notes: [] };
   }
   const small = extentM === null ? ' as far as a small source goes; its extent was not given' : '';
-  return [
-    `Both distances lie in the far field${small}, so the level may show under and over. A limit tabulated at the measured distance is better still.`,
-  ];
+  const far = `Both distances lie in the far field${small}, so the level may show under and over.`;
+  return { cautions: [], notes: [far, 'A limit tabulated at the measured distance is better still.'] };
 }
 
 function doubtSays(doubt: Doubt, fromM: number, toM: number): string {

@@ -6,6 +6,8 @@ import type { Range } from './typedFigure';
 export interface FigureField {
   kind: 'figure';
   name: string;
+  /** Heading of the fields it stands among; without one it stands with the first. */
+  group?: string;
   label: string;
   unit: string;
   range: Range;
@@ -22,6 +24,7 @@ export interface FrequencyField extends Omit<FigureField, 'kind' | 'range' | 'un
 export interface ChoiceField {
   kind: 'choice';
   name: string;
+  group?: string;
   label: string;
   choices: readonly { value: string; word: string }[];
   /** What an answer says it waits for: `unit of the level`. */
@@ -64,6 +67,8 @@ export interface Outcome {
   says: readonly FindingRun[] | null;
   /** What the figures may not be used for, shown beside them. */
   cautions: readonly string[];
+  /** What goes with them and cautions nobody. */
+  notes?: readonly string[];
   /** Fields that contradict one another, by name. */
   wrong?: Readonly<Record<string, string>>;
 }

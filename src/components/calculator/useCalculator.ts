@@ -1,6 +1,6 @@
 'use client';
 
-import { useCallback, useEffect, useMemo, useState } from 'react';
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { calculatorHref, readAddress, type CalculatorAddress } from './calculatorAddress';
 import { readPane, type Entries, type ReadPane } from './givenOf';
 import type { Answer, Outcome, Pane } from './pane';
@@ -31,8 +31,12 @@ export function useCalculator(query: string): Calculator {
   const [kept, setKept] = useState<Readonly<Record<string, CalculatorAddress>>>({});
   const { pane, entries } = address;
   const href = calculatorHref(address);
+  const opened = useRef(href);
 
   useEffect(() => {
+    // An address that is only looked at stays as it came.
+    if (href === opened.current) return;
+    opened.current = '';
     const settle = setTimeout(() => {
       const now = `${window.location.pathname}${window.location.search}`;
       if (now !== href) window.history.replaceState(null, '', href);

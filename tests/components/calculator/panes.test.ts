@@ -94,7 +94,8 @@ describe('field strength from a reading', () => {
     expect(asked('field', typed).figure('level')).toBe(60);
     const far = asked('field', { ...typed, rule: '20' });
     expect(far.figure('level')).toBeCloseTo(70.4576, 4);
-    expect(far.cautions.join(' ')).toContain('may show under and over');
+    expect(far.notes!.join(' ')).toContain('may show under and over');
+    expect(far.cautions).toEqual([]);
     const near = asked('field', { ...typed, f: 1, from: 30, to: 3, rule: '47cfr' });
     expect(near.figure('level')).toBeCloseTo(100, 9);
     expect(near.cautions.join(' ')).toMatch(/30 m lies in the near field.*never shows under/);

@@ -55,7 +55,7 @@ export const addition: Pane = {
       })),
       answer('raised', 'Signal reads high by', given, ['signal', 'ambient'], (signal, ambient) => ({
         formula: '10 log10(1 + 10^(−d / 10))',
-        given: [start(level(signal! - ambient!), 'd, signal above noise or ambient', 'signal less ambient')],
+        given: [start(level(signal! - ambient!), 'signal above noise or ambient, d', 'signal less ambient')],
         terms: [],
         result: level(raisedByNoiseDb(signal! - ambient!)),
         resultName: 'the reading above the signal alone',

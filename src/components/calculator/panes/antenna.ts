@@ -39,8 +39,8 @@ export const antenna: Pane = {
       ];
     };
     const inputs = (frequencyHz: number, loadOhm: number): Term[] => [
-      start(hertz(frequencyHz), 'f, frequency'),
-      start(ratio(loadOhm, 'ohm'), 'R, load'),
+      start(hertz(frequencyHz), 'frequency f'),
+      start(ratio(loadOhm, 'ohm'), 'load R'),
     ];
     const answers = [
       fromGain || given.choice('have') === null

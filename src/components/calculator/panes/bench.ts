@@ -9,20 +9,31 @@ const POSITIONS = [
   { name: 'azimuths', label: 'Azimuths', one: 'azimuth' },
 ] as const;
 
+/** Stands above the fields of the bench. */
+const GROUP = 'At the bench';
+
 /** Counts of positions, the time each change takes, and the set-up. */
 export function benchFields(): PaneField[] {
   return [
     ...POSITIONS.flatMap(({ name, label, one }): PaneField[] => [
-      { kind: 'figure', name, label, unit: 'in all', range: 'count' },
+      { kind: 'figure', name, group: GROUP, label, unit: 'in all', range: 'count' },
       {
         kind: 'figure',
         name: `${name}-s`,
+        group: GROUP,
         label: `Each change of ${one}`,
         unit: 's',
         range: 'not-negative',
       },
     ]),
-    { kind: 'figure', name: 'setup', label: 'Set-up before the first scan', unit: 'min', range: 'not-negative' },
+    {
+      kind: 'figure',
+      name: 'setup',
+      group: GROUP,
+      label: 'Set-up before the first scan',
+      unit: 'min',
+      range: 'not-negative',
+    },
   ];
 }
 
@@ -34,14 +45,20 @@ export function benchNeeds(given: Given): string[] {
   ];
 }
 
-const PART_WORDS: Partial<Record<BenchPart, string>> = {
-  'set-up': 'set-up',
-  scan: 'scans',
-  'line change': 'changes of line',
-  'polarisation change': 'changes of polarisation',
-  'height change': 'changes of height',
-  'azimuth change': 'changes of azimuth',
+/** One of them, and several. */
+const PART_WORDS: Partial<Record<BenchPart, readonly [string, string]>> = {
+  'set-up': ['set-up', 'set-ups'],
+  scan: ['scan', 'scans'],
+  'line change': ['change of line', 'changes of line'],
+  'polarisation change': ['change of polarisation', 'changes of polarisation'],
+  'height change': ['change of height', 'changes of height'],
+  'azimuth change': ['change of azimuth', 'changes of azimuth'],
 };
+
+function partName(part: BenchPart, times: number): string {
+  const [one, several] = PART_WORDS[part] ?? [part, part];
+  return times === 1 ? one : `${formatCount(times)} ${several}`;
+}
 
 /** The time at the bench as lines that add up. `scanS` is one scan. */
 export function benchWorking(given: Given, scanS: number): Working {
@@ -69,10 +86,7 @@ export function benchWorking(given: Given, scanS: number): Working {
     terms: lines.map((line, at): Term => ({
       sign: at === 0 ? '' : '+',
       quantity: seconds(line.seconds),
-      name:
-        line.count > 1
-          ? `${formatCount(line.count)} ${PART_WORDS[line.part] ?? line.part}`
-          : (PART_WORDS[line.part] ?? line.part),
+      name: partName(line.part, line.count),
       source: line.part === 'scan' ? 'one scan worked out above' : 'as typed here',
     })),
     result: seconds(totalS),

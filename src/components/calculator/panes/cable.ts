@@ -87,9 +87,9 @@ export const cable: Pane = {
         return {
           formula: '20 log10((kL / 2) / tan(kL / 4))',
           given: [
-            start(hertz(f!), 'f, frequency'),
-            start(scaled(length!, 'm'), 'L, cable length'),
-            start(scaled(wavelengthM(f!), 'm'), '2π/k, wavelength', 'c / f'),
+            start(hertz(f!), 'frequency f'),
+            start(scaled(length!, 'm'), 'cable length L'),
+            start(scaled(wavelengthM(f!), 'm'), 'wavelength 2π/k', 'c / f'),
           ],
           terms: [],
           result: level(excess),
@@ -111,15 +111,16 @@ export const cable: Pane = {
         : second
           ? say`At most ${second} on half a wave of cable.`
           : null,
-      cautions: [
+      cautions:
+        parts !== null && parts > 0.5
+          ? ['Beyond half a wave neither form bounds the field: a whole wave reaches 6 dB more.']
+          : [],
+      notes: [
         ...(parts === null
           ? []
           : [
               `The cable is ${formatSignificant(parts)} of a wavelength long; the short form is answered up to a quarter.`,
             ]),
-        ...(parts !== null && parts > 0.5
-          ? ['Beyond half a wave neither form bounds the field: a whole wave reaches 6 dB more.']
-          : []),
         ...(excess && first
           ? [
               'The short form takes the current as even along the cable. A real one falls to none at an open end, so the figure is on the safe side.',
@@ -158,20 +159,17 @@ function product(given: Given, currentA: number, perAmpere: number, form: 'short
   const doubled = given.choice('form') === 'ground-plane-doubled';
   const inputs: Term[] = [
     start(level(given.figure('limit')!, 'dBµV/m'), 'limit'),
-    start(scaled(given.figure('d')!, 'm'), 'r, distance'),
+    start(scaled(given.figure('d')!, 'm'), 'distance r'),
     ...(form === 'short'
-      ? [
-          start(hertz(given.figure('f')!), 'f, frequency'),
-          start(scaled(given.figure('length')!, 'm'), 'L, cable length'),
-        ]
+      ? [start(hertz(given.figure('f')!), 'frequency f'), start(scaled(given.figure('length')!, 'm'), 'cable length L')]
       : []),
   ];
-  const bare = form === 'short' ? 'Z0 L f / 2 c r' : 'Z0 / 2π r';
+  const [short, half] = doubled ? ['E c r / (Z0 L f)', 'π r E / Z0'] : ['2 E c r / (Z0 L f)', '2π r E / Z0'];
   return {
-    formula: `I = E / (${doubled ? '2 ' : ''}${bare})`,
+    formula: `I = ${form === 'short' ? short : half}`,
     given: inputs,
     terms: [
-      start(scaled(currentA * perAmpere, 'V/m'), 'limit as a field', '20 log10(E / 1 µV/m)'),
+      start(scaled(currentA * perAmpere, 'V/m'), 'limit as a field', '1 µV/m × 10^(limit / 20)'),
       over(
         ratio(perAmpere, 'V/m per A'),
         `field per ampere, ${doubled ? 'doubled' : 'free space'}`,

@@ -57,7 +57,7 @@ export const distance: Pane = {
         formula: 'λ / 2π',
         given: [
           start(hertz(frequencyHz!), 'frequency'),
-          start(scaled(wavelengthM(frequencyHz!), 'm'), 'λ, wavelength', 'c / f'),
+          start(scaled(wavelengthM(frequencyHz!), 'm'), 'wavelength λ', 'c / f'),
         ],
         terms: [],
         result: scaled(smallSourceBoundaryM(frequencyHz!), 'm'),
@@ -67,8 +67,8 @@ export const distance: Pane = {
       answer('large', 'Far field of a source so large from', given, ['f', 'extent'], (frequencyHz, extentM) => ({
         formula: '2 D² / λ',
         given: [
-          start(scaled(extentM!, 'm'), 'D, largest extent'),
-          start(scaled(wavelengthM(frequencyHz!), 'm'), 'λ, wavelength', 'c / f'),
+          start(scaled(extentM!, 'm'), 'largest extent D'),
+          start(scaled(wavelengthM(frequencyHz!), 'm'), 'wavelength λ', 'c / f'),
         ],
         terms: [],
         result: scaled(largeSourceBoundaryM(frequencyHz!, extentM!), 'm'),
@@ -77,7 +77,7 @@ export const distance: Pane = {
       })),
       answer('lowest', 'Measuring distance in the far field from', given, ['from'], (fromM) => ({
         formula: 'c / (2π d)',
-        given: [start(scaled(fromM!, 'm'), 'd, measured at')],
+        given: [start(scaled(fromM!, 'm'), 'measuring distance d')],
         terms: [],
         result: hertz(smallSourceBoundaryHz(fromM!)),
         resultName: 'where the distance is λ/2π',
@@ -89,7 +89,7 @@ export const distance: Pane = {
     return {
       answers,
       says: !conversion || !correction ? null : sentence(conversion, correction.value, found),
-      cautions: conversion && correction ? standingSays(distanceTerm(conversion)) : [],
+      ...(conversion && correction ? standingSays(distanceTerm(conversion)) : { cautions: [] }),
     };
   },
   holds: [

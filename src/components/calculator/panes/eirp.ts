@@ -44,7 +44,7 @@ export const eirp: Pane = {
         add(level(HALF_WAVE_DIPOLE_DBI), 'gain of a half-wave dipole', 'definition of ERP'),
       ];
     };
-    const inputs = (d: number): Term[] => [start(scaled(d, 'm'), 'd, distance')];
+    const inputs = (d: number): Term[] => [start(scaled(d, 'm'), 'distance d')];
     const answers = [
       answer('field', 'Field strength', given, ['level', 'd', 'have'], (figure, d) => ({
         formula: null,

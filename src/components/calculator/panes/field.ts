@@ -77,8 +77,7 @@ export const field: Pane = {
         const { terms, dbuvPerM } = sum();
         return {
           formula: null,
-          given:
-            given.choice('unit') === 'dBm' ? [start(level(given.figure('reading')!, 'dBm'), 'reading in 50 ohm')] : [],
+          given: [],
           terms: conversion ? terms : [...terms, left('distance correction', 'not chosen, nothing added')],
           result: level(dbuvPerM, 'dBµV/m'),
           resultName: 'field strength',
@@ -103,12 +102,14 @@ export const field: Pane = {
     ];
     const found = resultOf(answers, 'level');
     const margin = resultOf(answers, 'margin');
+    const standing = conversion && found ? standingSays(distanceTerm(conversion)) : null;
     return {
       answers,
       says:
         found && (margin ? say`The field is ${found}: ${formatMarginDb(margin.value)}.` : say`The field is ${found}.`),
-      cautions: [
-        ...(conversion && found ? standingSays(distanceTerm(conversion)) : []),
+      cautions: standing?.cautions ?? [],
+      notes: [
+        ...(standing?.notes ?? []),
         ...(margin ? ['No uncertainty is counted here, so nothing is concluded from the margin.'] : []),
       ],
     };
@@ -125,7 +126,7 @@ function termsOf(given: Given): Term[] {
     given.choice('unit') === 'dBm'
       ? [
           start(level(reading, 'dBm'), 'reading'),
-          shift(level(dbuvFromDbm(reading) - reading), 'dBm in 50 ohm as dBµV', 'definitions'),
+          shift(level(dbuvFromDbm(reading) - reading), 'from dBm to dBµV in 50 ohm', 'definitions'),
         ]
       : [start(level(reading, 'dBµV'), 'reading')];
   const [loss, gain] = [given.figure('loss'), given.figure('gain')];

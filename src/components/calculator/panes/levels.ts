@@ -74,7 +74,7 @@ export const levels: Pane = {
         if (unit === 'dBm') return typed(level(dbm, 'dBm'), 'power level');
         return {
           formula: 'P = U² / Z',
-          given: [start(entered(unit!, figure!), 'level'), start(ratio(ohm!, 'ohm'), 'Z, impedance')],
+          given: [start(entered(unit!, figure!), 'level'), start(ratio(ohm!, 'ohm'), 'impedance Z')],
           terms: [
             start(level(dbuv, 'dBµV'), 'voltage level', fromLevel(unit!)),
             less(level(dbuv - dbm), '90 + 10 log10(Z / 1 ohm)', DEFINITION),
@@ -89,7 +89,7 @@ export const levels: Pane = {
         const dbuv = asDbuv(unit!, figure!, ohm!);
         return {
           formula: 'I = U / Z',
-          given: [start(entered(unit!, figure!), 'level'), start(ratio(ohm!, 'ohm'), 'Z, impedance')],
+          given: [start(entered(unit!, figure!), 'level'), start(ratio(ohm!, 'ohm'), 'impedance Z')],
           terms: [
             start(level(dbuv, 'dBµV'), 'voltage level', fromLevel(unit!)),
             less(level(impedanceDbOhm(ohm!), 'dB'), '20 log10(Z / 1 ohm)', DEFINITION),
@@ -162,7 +162,7 @@ function voltageLevel(unit: string, figure: number, ohm: number | null): Working
   if (unit in IN_VOLTS) {
     return {
       formula: '20 log10(U / 1 µV)',
-      given: [start(scaled(figure * IN_VOLTS[unit]!, 'V'), 'U, voltage')],
+      given: [start(scaled(figure * IN_VOLTS[unit]!, 'V'), 'voltage U')],
       terms: [],
       result: level(asDbuv(unit, figure, NaN), 'dBµV'),
       resultName: 'voltage level',
@@ -176,7 +176,7 @@ function voltageLevel(unit: string, figure: number, ohm: number | null): Working
       : add(level(dbuv - figure), '20 log10(Z / 1 ohm)', 'Ohm’s law');
   return {
     formula: null,
-    given: [start(ratio(ohm!, 'ohm'), 'Z, impedance')],
+    given: [start(ratio(ohm!, 'ohm'), 'impedance Z')],
     terms: [start(entered(unit, figure), unit === 'dBm' ? 'power level' : 'current level'), shift],
     result: level(dbuv, 'dBµV'),
     resultName: 'voltage level',

@@ -111,10 +111,10 @@ function inputs(given: Given, figures: number[], reflections: number[]): Term[] 
   const how = vswr ? '(VSWR − 1) / (VSWR + 1)' : 'as typed here';
   return [
     ...(vswr ? [start(ratio(figures[0]!), 'VSWR of the source'), start(ratio(figures[1]!), 'VSWR of the load')] : []),
-    start(ratio(reflections[0]!), '|Γs|, source', how),
-    start(ratio(reflections[1]!), '|Γl|, load', how),
+    start(ratio(reflections[0]!), 'source |Γs|', how),
+    start(ratio(reflections[1]!), 'load |Γl|', how),
     pad === null
-      ? { sign: '', quantity: null, name: 'A, attenuation in between', source: 'not given, ports joined directly' }
-      : start(level(pad), 'A, attenuation in between'),
+      ? { sign: '', quantity: null, name: 'attenuation A in between', source: 'not given, ports joined directly' }
+      : start(level(pad), 'attenuation A in between'),
   ];
 }
