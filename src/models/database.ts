@@ -22,8 +22,9 @@ const namespace = {
 };
 
 /** A person waits this long for a free connection, and no longer than that to hear that there is none. */
-const ACQUIRE_MS = 6000;
-const CONNECT_MS = 3000;
+const ACQUIRE_MS = 10_000;
+/** A database that is gone refuses at once; a busy process may need seconds to see that its connection stands. */
+const CONNECT_MS = 8000;
 /** A line that went without a word; longer than the 50 s a query may wait for a row lock. */
 const SILENCE_MS = 90_000;
 /** The pool looks for idle connections this often; one that died is found when it is taken as well. */
