@@ -2,13 +2,13 @@ import { z } from 'zod';
 import { pageQuery, publicId } from './common';
 import { operation } from './operation';
 
-export const FOUND_KINDS = ['job', 'sample', 'run', 'product', 'equipment'] as const;
+export const FOUND_KINDS = ['job', 'sample', 'run', 'product', 'equipment', 'path'] as const;
 export const foundKind = z.enum(FOUND_KINDS);
 export type FoundKind = z.infer<typeof foundKind>;
 
 export const foundItem = z.strictObject({
   id: publicId,
-  /** The number or code people say: HL-2611, S-047, R-26-032, LD-40, ANT-02. */
+  /** The number or code people say: HL-2611, S-047, R-26-032, LD-40, ANT-02, P-3. */
   name: z.string(),
   /** What it is, in a few words. */
   says: z.string(),
@@ -30,7 +30,7 @@ export const findEverywhere = operation({
   id: 'findEverywhere',
   method: 'GET',
   path: '/api/find',
-  summary: 'Jobs, samples, runs, products and equipment by number or words, newest first',
+  summary: 'Jobs, samples, runs, products, equipment and signal paths by number or words, newest first',
   permission: 'find.everywhere',
   status: 200,
   query: findQuery,

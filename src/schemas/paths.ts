@@ -137,7 +137,7 @@ export const correctionView = z.strictObject({
   lines: z.array(z.array(z.strictObject({ frequencyHz: z.number(), totalDb: z.number() }))),
   /** Where it is known, and where not by the items that have no value. */
   stretches: z.array(z.strictObject({ fromHz: z.number(), toHz: z.number(), missing: z.array(z.string()) })),
-  /** At round frequencies and at the one that was asked for. */
+  /** At round frequencies from the lowest to the highest it is known at, both included, and at the one asked for. */
   at: z.array(correctionAt),
 });
 export type CorrectionView = z.infer<typeof correctionView>;

@@ -6,6 +6,7 @@ import { Job } from '@/models/job';
 import type { Organisation } from '@/models/organisation';
 import { Product } from '@/models/product';
 import { Sample } from '@/models/sample';
+import { SignalPath } from '@/models/signalPath';
 import { Sweep } from '@/models/sweep';
 import { unitOfWork } from '@/models/unitOfWork';
 import { FOUND_KINDS, type Found, type FoundItem, type FoundKind, type findQuery } from '@/schemas/find';
@@ -133,6 +134,16 @@ const SEARCHES: Readonly<Record<FoundKind, Search>> = {
       name: row.identifier,
       says: row.state === 'in-use' ? row.description : `${row.description}, ${row.state}`,
     }));
+  },
+  path: async (own, q, page) => {
+    if (own !== null) return { items: [], next: null };
+    const rows = await SignalPath.findAll({
+      where: { [Op.and]: [olderThan(page), wordsIn(q, ['code', 'name'])] },
+      ...paged(page),
+    });
+    return pageFrom(rows, page, (row) => {
+      return { id: row.publicId, name: row.code, says: `signal path, ${row.name}, test position ${row.position}` };
+    });
   },
 };
 

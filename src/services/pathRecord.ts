@@ -129,7 +129,8 @@ function correctionsOf(path: LoadedPath, atHz?: number): CorrectionView[] {
     const loaded = termsOf(path, { polarisation, distanceM: distanceOf(path, polarisation) }, new Map());
     const terms = loaded.map(({ term }) => term);
     const stretches = correctionStretches(terms);
-    const [first, last] = [stretches[0], stretches.at(-1)];
+    const known = stretches.filter(({ missing }) => missing.length === 0);
+    const [first, last] = [known[0] ?? stretches[0], known.at(-1) ?? stretches.at(-1)];
     return {
       polarisation,
       terms: loaded.map(({ item, table, term }) => ({

@@ -126,6 +126,12 @@ describe('find', () => {
     expect(names(await found(world.designer, 'ANT'))).toEqual([]);
   });
 
+  test('a signal path is found by the lab and by no designer', async () => {
+    const kinds = await found(world.technician, 'P-1');
+    expect(names(kinds.filter(({ kind }) => kind === 'path'))).toEqual(['P-1']);
+    expect(names(await found(world.designer, 'P-1'))).toEqual([]);
+  });
+
   test('% and _ are letters, not wildcards', async () => {
     expect(names(await found(world.technician, '%'))).toEqual([]);
     expect(names(await found(world.technician, '_'))).not.toContain(world.product.code);

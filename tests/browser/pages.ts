@@ -1,31 +1,11 @@
-import { readFileSync } from 'node:fs';
 import type { Browser } from 'playwright-core';
 import { testOrigin } from '../support/browser';
+import { COLOURS, violations } from './axe';
 import { type DESK, findRun, LD40_OVER, openAs, type Window } from './people';
 
 /* Every page as each role that may see it, looked at in both rooms. */
 
-const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
-
-const EVERY_RULE = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
-/** The rules that can find in one room what they do not find in the other. */
-const COLOURS = ['color-contrast', 'link-in-text-block'];
 type Room = 'paper' | 'dim';
-
-interface Violation {
-  id: string;
-  nodes: { html: string; failureSummary: string }[];
-}
-
-/** What axe-core finds against WCAG 2.2 A and AA. Its own script is injected past the page's policy, as an extension would. */
-async function violations({ page }: Window, runOnly: readonly string[]): Promise<string[]> {
-  if (!(await page.evaluate(() => 'axe' in window))) await page.evaluate(AXE);
-  const found = await page.evaluate(async (rules) => {
-    const { axe } = window as unknown as { axe: { run(options: object): Promise<{ violations: Violation[] }> } };
-    return (await axe.run({ runOnly: rules, resultTypes: ['violations'] })).violations;
-  }, runOnly);
-  return found.flatMap(({ id, nodes }) => nodes.map((node) => `${id}: ${node.html.slice(0, 160)}`));
-}
 
 /** Whether the page is wider than its window; content may scroll inside its own frame, the page may not. */
 const tooWide = ({ page }: Window) =>
@@ -70,6 +50,7 @@ async function pagesFor(window: Window, key: string): Promise<string[]> {
     '/jobs/new',
     '/equipment',
     `/equipment/${await first('equipment?find=ANT-02')}`,
+    `/paths/${await first('signal-paths')}`,
     '/limits',
     `/limits/${await first('limit-lines')}`,
   ];
@@ -96,10 +77,10 @@ export async function wrongOnPages(browser: Browser, key: string, viewport: type
     const answer = await window.page.goto(testOrigin() + path, { waitUntil: 'load' });
     if (answer!.status() !== 200) wrong.push(`${path}: ${answer!.status()}`);
     if (/^\/sweeps\/[0-9a-z]{16}$|^\/compare\?a/.test(path)) await window.page.locator('canvas').first().waitFor();
-    for (const found of await violations(window, EVERY_RULE)) wrong.push(`${path}: ${found}`);
+    for (const found of await violations(window.page)) wrong.push(`${path}: ${found}`);
     if (await tooWide(window)) wrong.push(`${path}: wider than its window`);
     await enterRoom(window, rooms[1]);
-    for (const found of await violations(window, COLOURS)) wrong.push(`${path}, ${rooms[1]}: ${found}`);
+    for (const found of await violations(window.page, COLOURS)) wrong.push(`${path}, ${rooms[1]}: ${found}`);
     await enterRoom(window, rooms[0]);
   }
   await window.context.close();
@@ -115,7 +96,7 @@ export async function wrongSignedOut(browser: Browser, viewport: typeof DESK): P
     const window = await openAs(browser, null, viewport, room);
     for (const path of SIGNED_OUT) {
       await window.page.goto(testOrigin() + path);
-      for (const found of await violations(window, EVERY_RULE)) wrong.push(`${path}: ${found}`);
+      for (const found of await violations(window.page)) wrong.push(`${path}: ${found}`);
       if (await tooWide(window)) wrong.push(`${path}: wider than its window`);
     }
     wrong.push(...window.complaints);

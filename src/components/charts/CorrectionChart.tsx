@@ -3,8 +3,9 @@
 import { formatFrequencyRange } from '@/format/frequencies';
 import { formatFigure } from '@/format/quantities';
 import type { CorrectionView, PathItemRecord } from '@/schemas/paths';
+import type { PathPoint } from './limitPath';
 import { RevisionChart } from './RevisionChart';
-import { wholeSpan } from './scale';
+import { wholeSpan, type Span } from './scale';
 
 interface Props {
   correction: CorrectionView;
@@ -18,14 +19,12 @@ interface Props {
 export function CorrectionChart({ correction, other, items, unit }: Props) {
   const { lines, stretches, terms } = correction;
   const line = lines.flat();
-  const [first, last] = [stretches[0], stretches.at(-1)];
+  const known = stretches.filter(({ missing }) => missing.length === 0);
+  const [first, last] = [known[0] ?? stretches[0], known.at(-1) ?? stretches.at(-1)];
   if (!first || !last) return null;
-  const parts = terms.map(({ identifier, name, sign, tableId }) => {
-    const table = items.flatMap(({ tables }) => tables).find(({ id }) => id === tableId)!;
-    const points = table.frequencyHz.map((hz, i) => {
-      return { hz, value: sign === '−' ? -table.valueDb[i]! : table.valueDb[i]! };
-    });
-    return { name: `${identifier} ${name}`, stretches: [points] };
+  const span = wholeSpan(first.fromHz, last.toHz);
+  const parts = terms.map(({ identifier, name }, i) => {
+    return { name: `${identifier} ${name}`, stretches: partOf(correction, i, items, span) };
   });
   const totals = line.map(({ totalDb }) => totalDb);
   const range = line.length > 0 ? formatFrequencyRange(line[0]!.frequencyHz, line.at(-1)!.frequencyHz) : null;
@@ -38,11 +37,29 @@ export function CorrectionChart({ correction, other, items, unit }: Props) {
       before={other && drawn(other)}
       parts={parts}
       difference={null}
-      span={wholeSpan(first.fromHz, last.toHz)}
+      span={span}
       unit={unit}
       sentence={sentence}
     />
   );
+}
+
+/** What one term gives inside the span: its rows there, and at both ends of the correction its share. */
+function partOf(correction: CorrectionView, at: number, items: readonly PathItemRecord[], span: Span): PathPoint[][] {
+  const { sign, tableId } = correction.terms[at]!;
+  const item = items.find(({ tables }) => tables.some(({ id }) => id === tableId))!;
+  const table = item.tables.find(({ id }) => id === tableId)!;
+  const fromHz = Math.max(span.fromHz, item.fromHz ?? 0);
+  const toHz = Math.min(span.toHz, item.toHz ?? Infinity);
+  const rows = table.frequencyHz.map((hz, i) => ({ hz, value: sign === '−' ? -table.valueDb[i]! : table.valueDb[i]! }));
+  const shares = correction.at.flatMap(({ frequencyHz, shares }) => {
+    const { shareDb } = shares[at]!;
+    return shareDb === null ? [] : [{ hz: frequencyHz, value: shareDb }];
+  });
+  const points = new Map(
+    [...shares, ...rows].filter(({ hz }) => hz >= fromHz && hz <= toHz).map((one) => [one.hz, one]),
+  );
+  return points.size > 0 ? [[...points.values()].sort((a, b) => a.hz - b.hz)] : [];
 }
 
 function nameOf({ polarisation }: CorrectionView): string {

@@ -9,7 +9,16 @@ import { frequencyTicks } from './frequencyTicks';
 import type { PathPoint } from './limitPath';
 import { rangeTicks, revisionRange, stripRange } from './revisionScale';
 import { FrequencyNumbers, Ruler } from './Ruler';
-import { NARROW_LEFT_PX, NARROW_PX, plotScale, PREVIEW_INSETS, type Frame, type Range, type Span } from './scale';
+import {
+  NARROW_LEFT_PX,
+  NARROW_PX,
+  plotScale,
+  PREVIEW_INSETS,
+  type Frame,
+  type PlotScale,
+  type Range,
+  type Span,
+} from './scale';
 import { figureWidthPx } from './textWidth';
 import { useBoxSize } from './useBoxSize';
 
@@ -47,7 +56,7 @@ export function RevisionChart(props: RevisionChartProps) {
   const frame: Frame = { ...PREVIEW_INSETS, left, width, height: PLOT_PX };
   const values = [after, before, ...parts].flatMap((one) => one?.stretches.flat().map(({ value }) => value) ?? []);
   const range = revisionRange(values);
-  const scale = plotScale(frame, span, range);
+  const scale = wholeHundredths(plotScale(frame, span, range));
   const { gridHz, labels } = frequencyTicks(span, scale.right - scale.left);
   const ticks = rangeTicks(range, scale.bottom - scale.top);
   const path = (points: PathPoint[]) =>
@@ -93,6 +102,12 @@ export function RevisionChart(props: RevisionChartProps) {
       </figcaption>
     </figure>
   );
+}
+
+/** A browser's logarithm may differ from the server's in its last bit; a drawing made by both has to be the same. */
+function wholeHundredths(scale: PlotScale): PlotScale {
+  const whole = (px: number) => Math.round(px * 100) / 100;
+  return { ...scale, x: (hz) => whole(scale.x(hz)), y: (value) => whole(scale.y(value)) };
 }
 
 function Key({ name, className, width, dash }: { name: string; className: string; width: string; dash?: string }) {
@@ -160,7 +175,7 @@ interface StripProps {
 function DifferenceStrip({ difference, frame, span, gridHz }: StripProps) {
   const { stretches, largestDb, atHz } = difference;
   const range: Range = stripRange(largestDb);
-  const scale = plotScale({ ...frame, height: STRIP_PX, top: 22, bottom: 8 }, span, range);
+  const scale = wholeHundredths(plotScale({ ...frame, height: STRIP_PX, top: 22, bottom: 8 }, span, range));
   const line = stretches
     .map((points) => `M${points.map(({ hz, db }) => `${scale.x(hz)} ${scale.y(db)}`).join('L')}`)
     .join('');

@@ -45,7 +45,7 @@ export function FindField({ q, lab }: { q: string; lab: boolean }) {
         className="w-full max-w-[33rem] grow"
         hint={
           lab
-            ? 'Such as HL-2611, S-047, R-26-032, a serial, LD-40, ANT-02, a file name; LISN finds the AMN.'
+            ? 'Such as HL-2611, S-047, R-26-032, a serial, LD-40, ANT-02, P-3, a file name; LISN finds the AMN.'
             : 'Such as a job, sample or run number, a serial, a product code, a file name.'
         }
       />

@@ -20,6 +20,7 @@ const KINDS: Readonly<Record<FoundKind, { many: string; href: (id: string) => st
   run: { many: 'Runs', href: (id) => `/sweeps/${id}` },
   product: { many: 'Products', href: (id) => `/products/${id}` },
   equipment: { many: 'Equipment', href: (id) => `/equipment/${id}` },
+  path: { many: 'Signal paths', href: (id) => `/paths/${id}` },
 };
 
 /** `/` from anywhere: one field over every number and word the reader may see. */

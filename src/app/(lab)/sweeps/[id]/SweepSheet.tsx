@@ -1,5 +1,6 @@
 'use client';
 
+import Link from 'next/link';
 import { useCallback, useId, useMemo, useRef, useState } from 'react';
 import { LayOver } from '@/app/(lab)/compare/LayOver';
 import type { ListedRun } from '@/app/(lab)/compare/runLabel';
@@ -137,7 +138,14 @@ export function SweepSheet(props: Props) {
               </span>
               {sweep.path && (
                 <span>
-                  path <Id>{sweep.path.code}</Id>
+                  path{' '}
+                  {lab ? (
+                    <Link href={`/paths/${sweep.path.id}?revision=${sweep.path.revision}`} className="t-id text-pen">
+                      {sweep.path.code}
+                    </Link>
+                  ) : (
+                    <Id>{sweep.path.code}</Id>
+                  )}
                 </span>
               )}
               <span>{formatDayTime(sweep.measuredAt ?? sweep.keptAt, zone)}</span>
