@@ -1,4 +1,3 @@
-import { readFileSync } from 'node:fs';
 import type { Browser, BrowserContext, Page } from 'playwright-core';
 import { closeDatabase } from '@/models/database';
 import { closePasswordWorkers } from '@/auth/passwordWorker';
@@ -7,10 +6,10 @@ import { launchBrowser } from '../support/browser';
 import { goneDatabase, type GoneDatabase } from '../support/goneDatabase';
 import { type RunningServer, startServer } from '../support/server';
 import { enterWorld, pixel, type World } from '../support/world';
+import { violations } from './axe';
 
 /* A server and a database of this file's own: what a person sees while the database is gone, and when it is back. */
 
-const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
 /** From the database's first answer to the page; the longest wait between two questions is 8 s. */
 const BACK_WITHIN_MS = 30_000;
 
@@ -72,14 +71,7 @@ test('a page says what is certain, shows nothing of the inside, and comes back b
       expect(words).toMatch(/Nothing that was acknowledged is lost/);
       expect(words).toMatch(/you stay signed in/);
       expect(words).not.toMatch(/Sequelize|ECONN|SQLState| at .*\.[jt]s|mariadb/i);
-      await page.evaluate(AXE);
-      const found = await page.evaluate(async () => {
-        const { axe } = window as unknown as { axe: { run(o: object): Promise<{ violations: { id: string }[] }> } };
-        return (await axe.run({ runOnly: ['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa'] })).violations.map(
-          ({ id }) => id,
-        );
-      });
-      expect(found).toEqual([]);
+      expect(await violations(page)).toEqual([]);
       for (const width of [1440, 390]) {
         await page.setViewportSize({ width, height: 844 });
         expect(await page.evaluate(() => document.documentElement.scrollWidth <= window.innerWidth)).toBe(true);

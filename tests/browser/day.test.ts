@@ -1,10 +1,9 @@
 import type { Browser, Page } from 'playwright-core';
-import { readFileSync } from 'node:fs';
 import { addDays } from '@/schemas/labTime';
 import { launchBrowser, testOrigin } from '../support/browser';
+import { violations } from './axe';
 import { openAs, PHONE, type Window } from './people';
 
-const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
 const SLOW = 120_000;
 
 let browser: Browser;
@@ -19,18 +18,6 @@ const today = async (page: Page) =>
   (await page.locator('nav[aria-label="Days"] a').first().getAttribute('href'))!.split('=')[1]!;
 /** A day nobody else books, and another one for each run of this test against a demo lab that stays. */
 const quietDay = addDays(new Date().toISOString().slice(0, 10), 60 + (Math.floor(Date.now() / 60_000) % 300));
-
-async function violations({ page }: Window): Promise<string[]> {
-  await page.evaluate(AXE);
-  return page.evaluate(async () => {
-    interface Found {
-      violations: { id: string; nodes: { html: string }[] }[];
-    }
-    const { axe } = window as unknown as { axe: { run(options: object): Promise<Found> } };
-    const found = await axe.run({ runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'] });
-    return found.violations.flatMap(({ id, nodes }) => nodes.map(({ html }) => `${id}: ${html.slice(0, 160)}`));
-  });
-}
 
 test(
   'the wordmark leads the lab’s people to their day; every booking stands in a lane and in the table',
@@ -84,7 +71,7 @@ test(
       await form.getByLabel('What is to be done').fill('magnetic field');
       await form.getByLabel('Start, time').selectOption('10:15');
       expect(await form.getByLabel('End, time').inputValue()).toBe('12:15');
-      expect(await violations(manager)).toEqual([]);
+      expect(await violations(manager.page)).toEqual([]);
       await form.getByRole('button', { name: 'Book it' }).click();
       return form;
     };
@@ -140,7 +127,7 @@ test(
     await page.getByText('Chamber door').waitFor();
     const upload = page.getByRole('link', { name: /Start a run of TP-9 M0/ });
     expect(await upload.getAttribute('href')).toMatch(/^\/sweeps\/new\?state=[0-9a-z]{16}$/);
-    expect([...(await violations(window)), ...window.complaints]).toEqual([]);
+    expect([...(await violations(window.page)), ...window.complaints]).toEqual([]);
     await window.context.close();
   },
   SLOW,
@@ -160,7 +147,7 @@ test(
     expect(
       await page.evaluate(() => document.documentElement.scrollWidth <= document.documentElement.clientWidth + 1),
     ).toBe(true);
-    expect([...(await violations(window)), ...window.complaints]).toEqual([]);
+    expect([...(await violations(window.page)), ...window.complaints]).toEqual([]);
     await window.context.close();
   },
   SLOW,

@@ -1,4 +1,3 @@
-import { readFileSync } from 'node:fs';
 import { users } from '@fixtures/demo/people';
 import type { Browser, Page } from 'playwright-core';
 import { launchBrowser, testOrigin } from '../support/browser';
@@ -6,8 +5,6 @@ import { type DESK, openAs, PHONE, type Window } from './people';
 
 /* E-mail end to end, read where the demo catches it. Needs the outbox and the catcher beside the server. */
 
-const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
-const TAGS = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 const PASSWORD = 'a lantern on the quiet mole';
 const AGAIN = 'seven kelp lines at low water';
 
@@ -34,17 +31,6 @@ async function open(key: string | null, ...how: [viewport?: typeof DESK, room?: 
   const window = await openAs(browser, key, ...how);
   window.page.setDefaultTimeout(PATIENCE_MS);
   return window;
-}
-
-async function violations(page: Page): Promise<string[]> {
-  await page.evaluate(AXE);
-  const found = await page.evaluate(async (runOnly) => {
-    const { axe } = window as unknown as {
-      axe: { run(o: object): Promise<{ violations: { id: string; nodes: { html: string }[] }[] }> };
-    };
-    return (await axe.run({ runOnly })).violations;
-  }, TAGS);
-  return found.flatMap(({ id, nodes }) => nodes.map(({ html }) => `${id}: ${html.slice(0, 160)}`));
 }
 
 /** Opens the letters until one to that address with that subject is there, and answers the address of its link. */

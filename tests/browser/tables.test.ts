@@ -1,11 +1,11 @@
 import { readFileSync } from 'node:fs';
 import type { Browser, Page } from 'playwright-core';
 import { launchBrowser, testOrigin } from '../support/browser';
+import { violations } from './axe';
 import { openAs, PHONE, type Window } from './people';
 
 /* Factor tables and limit lines: dropped, looked at beside the revision before, entered as the next one. */
 
-const AXE = readFileSync(require.resolve('axe-core/axe.min.js'), 'utf8');
 const SLOW = 240_000;
 const WAIT = { timeout: SLOW / 2 };
 
@@ -31,15 +31,6 @@ async function itemId({ context }: Window, identifier: string): Promise<string> 
   return ((await answer.json()) as { items: { id: string }[] }).items[0]!.id;
 }
 
-async function violations(page: Page): Promise<string[]> {
-  await page.evaluate(AXE);
-  return page.evaluate(async () => {
-    type Found = { violations: { id: string; nodes: { html: string }[] }[] };
-    const { axe } = window as unknown as { axe: { run(options: object): Promise<Found> } };
-    const found = await axe.run({ runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'] });
-    return found.violations.flatMap(({ id, nodes }) => nodes.map(({ html }) => `${id}: ${html.slice(0, 160)}`));
-  });
-}
 const tooWide = (page: Page) =>
   page.evaluate(() => document.documentElement.scrollWidth > document.documentElement.clientWidth + 1);
 
