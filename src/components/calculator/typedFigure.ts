@@ -31,7 +31,7 @@ export function outside(value: number, range: Range, text: string): string | nul
   if (range === 'level') {
     return Math.abs(value) <= MOST_DB ? null : `${text} is beyond ${MOST_DB} dB either way.`;
   }
-  if (value < 0) return `${text} is below zero, which this cannot be.`;
+  if (value < 0) return `${text} is below zero. Type it without the sign.`;
   if (range === 'not-negative') return value <= MOST_DB ? null : `${text} is beyond ${MOST_DB}.`;
   if (range === 'reflection') {
     return value < 1 ? null : `${text} reflects everything or more. A reflection coefficient lies from 0 to below 1.`;
