@@ -61,6 +61,8 @@ export function quantityUnit(quantity: FactorQuantity | null): string {
 
 const quantityNamed = (words: string) => FACTOR_QUANTITIES.find((one) => QUANTITY_WORDS[one] === words) ?? null;
 
+const articled = (words: string) => `${/^[Aa]/.test(words) ? 'an' : 'a'} ${words}`;
+
 export interface Remark {
   kind: string;
   fromHz: number | null;
@@ -83,13 +85,15 @@ export function remarkWords({ kind, fromHz, toHz, db }: Remark, what: string): s
     case 'turned':
       return 'The frequencies fall in the file; the rows were turned round.';
     case 'negated':
-      return 'No figure in the file is above zero: read as a loss and turned over, since no loss is a gain.';
+      return what === QUANTITY_WORDS['transfer-impedance']
+        ? 'The file gives a transfer admittance; turned over, it is the transfer impedance.'
+        : `No figure in the file is above zero: read as ${articled(what)} and turned over, since no loss is a gain.`;
     case 'unit-not-stated':
       return `The file states no unit; the figures are read as ${quantityUnit(quantityNamed(what))}.`;
     case 'not-said-to-be-factors':
       return 'Nothing in the file says that these are corrections. Look at the chart before you enter them.';
     case 'mixed-signs':
-      return `Some figures are above zero and some below; ${/^A/.test(what) ? 'an' : 'a'} ${what} of less than nothing is the opposite.`;
+      return `Some figures are above zero and some below; ${articled(what)} of less than nothing is the opposite.`;
     case 'distance-differs':
       return 'The distance is another than before; runs at the other distance find no table.';
     default:

@@ -1,4 +1,12 @@
-import { differenceWords, formatDifference, remarkWords, tableConditions } from '@/format/revisions';
+import { FACTOR_QUANTITIES } from '@/emc/kinds';
+import {
+  differenceWords,
+  formatDifference,
+  QUANTITY_WORDS,
+  quantityUnit,
+  remarkWords,
+  tableConditions,
+} from '@/format/revisions';
 
 const at = (largestDb: number) => differenceWords({ largestDb, atHz: 144e6 }, 'revision 1');
 
@@ -26,4 +34,32 @@ test.each([
 test('what a table was measured for', () => {
   expect(tableConditions('horizontal', 3)).toBe('horizontal, 3 m');
   expect(tableConditions(null, null)).toBe('');
+});
+
+test('each quantity is named and stands in its own unit', () => {
+  expect(FACTOR_QUANTITIES.map((one) => `${QUANTITY_WORDS[one]}, ${quantityUnit(one)}`)).toEqual([
+    'antenna factor, dB/m',
+    'loss, dB',
+    'gain, dB',
+    'AMN voltage division factor, dB',
+    'AAN voltage division factor, dB',
+    'transfer impedance, dBΩ',
+    'magnetic antenna factor, dB(S/m)',
+    'absorbing clamp factor, dB(pW/µV)',
+  ]);
+  expect(quantityUnit(null)).toBe('dB');
+});
+
+test.each([
+  ['unit-not-stated', 'transfer impedance', 'The file states no unit; the figures are read as dBΩ.'],
+  ['unit-not-stated', 'factor', 'The file states no unit; the figures are read as dB.'],
+  ['negated', 'transfer impedance', 'The file gives a transfer admittance; turned over, it is the transfer impedance.'],
+  [
+    'negated',
+    'AMN voltage division factor',
+    'No figure in the file is above zero: read as an AMN voltage division factor and turned over, since no loss is a gain.',
+  ],
+  ['mixed-signs', 'gain', 'Some figures are above zero and some below; a gain of less than nothing is the opposite.'],
+])('%s of a %s', (kind, what, sentence) => {
+  expect(remarkWords({ kind, fromHz: null, toHz: null, db: null }, what)).toBe(sentence);
 });
