@@ -1,6 +1,6 @@
 import type { Browser } from 'playwright-core';
 import { launchBrowser, testOrigin } from '../support/browser';
-import { openAs, PHONE, type Window } from './people';
+import { DESK, openAs, PHONE, type Window } from './people';
 
 /* The calculator as it is used: typed, linked, walked through by keys, and on a phone. */
 
@@ -10,13 +10,19 @@ beforeAll(async () => {
 }, 60_000);
 afterAll(() => browser.close());
 
+/** A development server compiles what is asked for first. */
+async function opened(key: string, viewport = DESK): Promise<Window> {
+  const window = await openAs(browser, key, viewport);
+  window.context.setDefaultTimeout(90_000);
+  return window;
+}
+
 const finding = ({ page }: Window) => page.locator('.calc-says').innerText();
 const heading = ({ page }: Window, name: string) => page.getByRole('heading', { level: 2, name }).waitFor();
 
 test('from the menu under the name: a level is typed with a comma, its working opens, and the address holds it', async () => {
-  const window = await openAs(browser, 'teo');
+  const window = await opened('teo');
   const { page } = window;
-  window.context.setDefaultTimeout(90_000);
   await page.goto(`${testOrigin()}/account`);
   await page.getByRole('button', { name: /^Teo Lind/ }).click();
   await page.getByRole('link', { name: 'Calculator' }).click();
@@ -38,7 +44,7 @@ test('from the menu under the name: a level is typed with a comma, its working o
 }, 180_000);
 
 test('↓ goes to the next calculation, Back comes back to what was typed, and a link opens it elsewhere', async () => {
-  const window = await openAs(browser, 'mira');
+  const window = await opened('mira');
   const { page } = window;
   await page.goto(`${testOrigin()}/calculator?pane=eirp&have=field&level=43.5`);
   await page.getByLabel('Distance, in m').fill('3');
@@ -53,7 +59,7 @@ test('↓ goes to the next calculation, Back comes back to what was typed, and a
   await heading(window, 'EIRP, ERP and field strength');
   expect(await page.getByLabel('Distance, in m').inputValue()).toBe('3');
   expect(await finding(window)).toMatch(/is [−-]51\.73\s*dBm EIRP\.$/);
-  const other = await openAs(browser, 'anselm');
+  const other = await opened('anselm');
   await other.page.goto(page.url());
   expect(await finding(other)).toBe(await finding(window));
   await other.context.close();
@@ -61,7 +67,7 @@ test('↓ goes to the next calculation, Back comes back to what was typed, and a
 }, 120_000);
 
 test('on a phone one calculation at a time is chosen from a field, and the drawer shows its working', async () => {
-  const window = await openAs(browser, 'mira', PHONE);
+  const window = await opened('mira', PHONE);
   const { page } = window;
   await page.goto(`${testOrigin()}/calculator`);
   expect(await page.locator('.calc-list').isVisible()).toBe(false);
