@@ -24,32 +24,52 @@ export async function readReceiverCheck(actor: Actor | null, publicId: string): 
     const parts = partsOf(run, context.lines);
     const steps = await largestSteps(run, context, parts);
     const layers = await readLayers(run.evaluation.id);
-    const highest = await highestReadings(run.id);
-    const times = timesOf(run);
-    const traces = context.heads.map((head) => {
-      const lines = context.lines.filter(({ id }) =>
-        run.evaluation.pairs.some((pair) => pair.traceIndex === head.index && pair.lineId === id),
-      );
-      const stepAt = (hz: number) => steps[parts.findIndex(({ fromHz, toHz }) => hz >= fromHz && hz <= toHz)] ?? null;
-      const layer = layers.find(({ index }) => index === head.index)?.layer;
-      return {
-        index: head.index,
-        name: head.name,
-        detector: head.detector,
-        parts: parts.map((part, i) => ({
-          band: part.band?.band ?? null,
-          fromHz: part.fromHz,
-          toHz: part.toHz,
-          findings: settingsFindings(head, part, lines, { stepHz: steps[i] ?? null, ...times.of(part) }),
-        })),
-        whole: [
-          ...(layer ? noiseFloor(run, layer, lines, stepAt) : []),
-          inputFinding(run, head, highest.get(head.index) ?? null),
-        ],
-      };
-    });
+    const traces = await inTurns(
+      tracesChecked(run, context, { parts, steps, layers, highest: await highestReadings(run.id) }),
+    );
     return { counts: countsOf(traces), traces };
   });
+}
+
+interface Kept {
+  parts: readonly BandPart[];
+  /** The largest step in each part. */
+  steps: readonly (number | null)[];
+  layers: Awaited<ReturnType<typeof readLayers>>;
+  highest: ReadonlyMap<number, number>;
+}
+
+/** One trace per turn: each floor is a thousand medians. */
+function* tracesChecked(
+  run: Run,
+  context: RunContext,
+  { parts, steps, layers, highest }: Kept,
+): Generator<void, ReceiverCheckView['traces']> {
+  const times = timesOf(run);
+  const stepAt = (hz: number) => steps[parts.findIndex(({ fromHz, toHz }) => hz >= fromHz && hz <= toHz)] ?? null;
+  const traces: ReceiverCheckView['traces'] = [];
+  for (const head of context.heads) {
+    const judgedBy = run.evaluation.pairs.filter(({ traceIndex }) => traceIndex === head.index);
+    const lines = context.lines.filter(({ id }) => judgedBy.some(({ lineId }) => lineId === id));
+    const layer = layers.find(({ index }) => index === head.index)?.layer;
+    traces.push({
+      index: head.index,
+      name: head.name,
+      detector: head.detector,
+      parts: parts.map((part, i) => ({
+        band: part.band?.band ?? null,
+        fromHz: part.fromHz,
+        toHz: part.toHz,
+        findings: settingsFindings(head, part, lines, { stepHz: steps[i] ?? null, ...times.of(part) }),
+      })),
+      whole: [
+        ...(layer ? noiseFloor(run, layer, lines, stepAt) : []),
+        inputFinding(run, head, highest.get(head.index) ?? null),
+      ],
+    });
+    yield;
+  }
+  return traces;
 }
 
 /** The bands the run goes through where one of its lines has a limit: beside the limits nothing is judged. */

@@ -42,7 +42,7 @@ const drawing = { clockHz: null, onClock: () => undefined };
 
 test('the part folds to what is not in order first, and says each setting with its figures', async () => {
   const part = receiverSection(await readReceiverCheck(world.technician.actor, world.run.id));
-  expect(words(renderToStaticMarkup(part.summary))).toContain('step too wide, band C, 1 more');
+  expect(words(renderToStaticMarkup(part.summary))).toContain('step too wide, bands C and D');
   const text = said(part);
   expect(text).toContain('bands C and D, 30–1000 MHz');
   expect(text).toContain('RBW 120 kHz, as asked (120 kHz).');

@@ -28,7 +28,7 @@ export function SourceClock({
     <div className="source">
       <h3>
         {name}
-        {kind === 'converter' && ', converter'}
+        {kind === 'converter' && !/converter/i.test(name) && ', converter'}
       </h3>
       <DrawButton frequencyHz={frequencyHz} drawing={drawing} />
       {harmonics.length > 0 && (

@@ -34,7 +34,7 @@ function Receiver({ check }: { check: ReceiverCheckView }) {
         <div key={index}>
           {traces.length > 1 && (
             <h3 className="font-semibold">
-              {name}, {DETECTOR_WORDS[detector]}
+              {name.toLowerCase() === DETECTOR_WORDS[detector] ? name : `${name}, ${DETECTOR_WORDS[detector]}`}
             </h3>
           )}
           {partGroups(parts).map(({ heading, findings }) => (
@@ -63,7 +63,11 @@ function Findings({ findings }: { findings: readonly ReceiverFindingView[] }) {
   return (
     <ul>
       {sorted.map((finding, i) => (
-        <li key={i} className={`receiver-finding ${finding.outcome === 'ok' ? '' : OUT[finding.outcome]}`}>
+        <li
+          key={i}
+          title={finding.source}
+          className={`receiver-finding ${finding.outcome === 'ok' ? '' : OUT[finding.outcome]}`}
+        >
           <VerdictGlyph verdict={MARKS[finding.outcome]} label={MARK_WORDS[finding.outcome]} />
           <span>{receiverSentence(finding)}</span>
         </li>

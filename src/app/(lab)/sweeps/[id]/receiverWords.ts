@@ -23,17 +23,24 @@ const OUT_OF_ORDER: Record<What, string> = {
   overload: 'input overloaded',
 };
 
+function bandsText(bands: readonly string[]): string {
+  return bands.length > 1 ? `bands ${bands.slice(0, -1).join(', ')} and ${bands.at(-1)}` : `band ${bands[0]}`;
+}
+
 /** `6 in order`, `6 in order, 3 not stated`, or what is not in order first. */
 export function receiverSummary({ counts, traces }: ReceiverCheckView): string {
-  const first = traces
+  const wrong = traces
     .flatMap(({ parts, whole }) => [
       ...parts.flatMap(({ band, findings }) => findings.map((finding) => ({ band, finding }))),
       ...whole.map((finding) => ({ band: null, finding })),
     ])
-    .find(({ finding }) => finding.outcome === 'fails');
+    .filter(({ finding }) => finding.outcome === 'fails');
+  const [first] = wrong;
   if (first) {
-    const more = counts.fails > 1 ? `, ${counts.fails - 1} more` : '';
-    return `${OUT_OF_ORDER[first.finding.what]}${first.band ? `, band ${first.band}` : ''}${more}`;
+    const { what } = first.finding;
+    const bands = [...new Set(wrong.filter(({ finding }) => finding.what === what).flatMap(({ band }) => band ?? []))];
+    const others = new Set(wrong.map(({ finding }) => finding.what)).size - 1;
+    return `${OUT_OF_ORDER[what]}${bands.length > 0 ? `, ${bandsText(bands)}` : ''}${others > 0 ? `, ${others} more` : ''}`;
   }
   return `${counts.ok} in order${counts.unknown > 0 ? `, ${counts.unknown} not stated` : ''}`;
 }
@@ -137,8 +144,7 @@ export function partGroups(parts: Trace['parts']): PartGroup[] {
   }
   return groups.map(({ bands, fromHz, toHz, findings }) => {
     const range = formatFrequencyRange(fromHz, toHz);
-    const name = bands.length > 1 ? `bands ${bands.slice(0, -1).join(', ')} and ${bands.at(-1)}` : `band ${bands[0]}`;
-    return { heading: bands.length === 0 ? range : `${name}, ${range}`, findings };
+    return { heading: bands.length === 0 ? range : `${bandsText(bands)}, ${range}`, findings };
   });
 }
 

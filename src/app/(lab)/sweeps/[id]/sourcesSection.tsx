@@ -1,6 +1,7 @@
 import Link from 'next/link';
 import type { MarginSection } from '@/components/shell/marginSection';
 import type { SourcesView } from '@/schemas/sources';
+import { capitalised, countInWords } from '@/format/words';
 import { SourceClock, type Drawing } from './SourceClock';
 import { SourceFamilies } from './SourceFamilies';
 import { emissionText, sidebandText, sourcesSummary } from './sourceWords';
@@ -67,8 +68,8 @@ export function LikelySources({ sources, drawing }: { sources: SourcesView; draw
           </ul>
           {single > 0 && (
             <p className="column-quiet">
-              {single === 1 ? 'One lies' : `${single} lie`} at such a distance on one side alone, which explains
-              nothing.
+              {capitalised(countInWords(single))} {single === 1 ? 'lies' : 'lie'} beside a stronger one on one side
+              alone, which explains nothing.
             </p>
           )}
         </div>
