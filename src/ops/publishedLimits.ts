@@ -40,7 +40,7 @@ export function publishedLines(): Map<string, NewLimitLine> {
     add(toMicrovoltLine(record), { ...record, port, source: `${record.source}, stated as ${figures} µV/m` });
     for (const line of toMicrovoltLinesAbove(record)) {
       const source = `${record.source} with 15.35(b), stated as ${record.rows.at(-1)!.limitUvPerM} µV/m average`;
-      add(line, { ...record, port, source, basis: `${record.basis}; its end at 40 GHz from memory` });
+      add(line, { ...record, port, source, basis: `${record.basis}, the end at 40 GHz from memory` });
     }
   }
   return lines;

@@ -2,7 +2,6 @@ import Link from 'next/link';
 import { Cell, HeadCell, KeyCell, Row, Table, TableHead } from '@/components/ui/Table';
 import { VerdictWord } from '@/components/ui/VerdictWord';
 import { formatFrequencyRange } from '@/format/frequencies';
-import { unitLabel } from '@/format/quantities';
 import type { LimitLineSummary } from '@/schemas/tables';
 import { basisVerdict, lineConditions, segmentValue } from './limitWords';
 
@@ -37,7 +36,7 @@ export function LineTable({ lines }: { lines: readonly LimitLineSummary[] }) {
               {line.segments.slice(0, 4).map((segment) => (
                 <span key={segment.startHz} className="block">
                   <span className="t-figure">{formatFrequencyRange(segment.startHz, segment.stopHz)}</span>:{' '}
-                  {segmentValue(segment)} {unitLabel(line.unit)}
+                  {segmentValue(segment, line.unit)}
                 </span>
               ))}
               {line.segments.length > 4 && <span className="t-detail block">{line.segments.length - 4} more</span>}

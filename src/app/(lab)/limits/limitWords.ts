@@ -9,10 +9,10 @@ export const basisVerdict = (basis: string) => (basis === 'verified' ? ('under' 
 type Segment = LimitLineSummary['segments'][number];
 const SLOPES = { 'log-frequency': 'log frequency', 'linear-frequency': 'frequency' } as const;
 
-/** `40.0`, or `66.0 to 56.0, straight in log frequency`. */
-export function segmentValue({ startLimit, stopLimit, over }: Segment): string {
-  if (startLimit === stopLimit) return formatDb(startLimit);
-  return `${formatDb(startLimit)} to ${formatDb(stopLimit)}, straight in ${SLOPES[over]}`;
+/** `40.0 dBµV/m`, or `66.0 to 56.0 dBµV, straight in log frequency`. */
+export function segmentValue({ startLimit, stopLimit, over }: Segment, unit: LimitLineSummary['unit']): string {
+  if (startLimit === stopLimit) return `${formatDb(startLimit)} ${unitLabel(unit)}`;
+  return `${formatDb(startLimit)} to ${formatDb(stopLimit)} ${unitLabel(unit)}, straight in ${SLOPES[over]}`;
 }
 
 /** `quasi-peak, RBW 120 kHz, dBµV/m at 3 m`. */
