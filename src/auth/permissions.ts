@@ -64,6 +64,8 @@ export const PERMISSIONS = {
   'booking.write': { roles: manager, token: null },
   'result-mail.list': { roles: lab, token: 'read' },
   'result-mail.send': { roles: manager, token: null },
+  'custody.list': { roles: everyone, token: 'read' },
+  'custody.move': { roles: lab, token: null },
   'note.list': { roles: everyone, token: 'read' },
   'note.write': { roles: everyone, token: null },
   'find.everywhere': { roles: everyone, token: 'read' },

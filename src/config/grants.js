@@ -82,6 +82,7 @@ const RIGHTS = {
   photo_parts: ['SELECT', 'INSERT'],
   evaluations: ['SELECT', 'INSERT'],
   retest_changes: ['SELECT', 'INSERT'],
+  custody_moves: ['SELECT', 'INSERT'],
   notes: ['SELECT', 'INSERT'],
   evaluation_candidates: ['SELECT', 'INSERT'],
   evaluation_layers: ['SELECT', 'INSERT'],

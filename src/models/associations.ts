@@ -10,6 +10,7 @@ import { Job } from './job';
 import { LimitLineRevision } from './limitLineRevision';
 import { LimitSet } from './limitSet';
 import { ModificationState } from './modificationState';
+import { CustodyMove } from './custodyMove';
 import { Note } from './note';
 import { OneTimeLink } from './oneTimeLink';
 import { Organisation } from './organisation';
@@ -48,6 +49,7 @@ export function associate(): void {
   Sample.hasMany(ModificationState, { as: 'states', foreignKey: 'sampleId' });
   ModificationState.belongsTo(Sample, { as: 'sample', foreignKey: 'sampleId' });
 
+  CustodyMove.belongsTo(User, { as: 'user', foreignKey: 'userId' });
   Note.belongsTo(User, { as: 'user', foreignKey: 'userId' });
 
   Equipment.hasMany(Calibration, { as: 'calibrations', foreignKey: 'equipmentId' });

@@ -20,6 +20,7 @@ import { defineJob } from './job';
 import { defineLimitLineRevision } from './limitLineRevision';
 import { defineLimitSet } from './limitSet';
 import { defineModificationState } from './modificationState';
+import { defineCustodyMove } from './custodyMove';
 import { defineNote } from './note';
 import { defineOneTimeLink } from './oneTimeLink';
 import { defineOrganisation } from './organisation';
@@ -77,6 +78,7 @@ export function defineModels(sequelize: Sequelize): void {
   defineSignalPathRevision(sequelize);
   defineLimitLineRevision(sequelize);
   defineLimitSet(sequelize);
+  defineCustodyMove(sequelize);
   defineNote(sequelize);
   defineUpload(sequelize);
   defineUploadPart(sequelize);

@@ -14,7 +14,7 @@ import { dayIn } from '@/services/lab';
 import { seedJobs, seedRuns } from './seedJobs';
 import { seedEquipment, seedPaths } from './seedBench';
 import { seedClocks } from './seedClocks';
-import { seedBookings, seedPositions, seedResultMails } from './seedBookings';
+import { seedBookings, seedCustody, seedPositions, seedResultMails } from './seedBookings';
 import { enterPublishedLimits } from './publishedLimits';
 import { seedPeople } from './seedPeople';
 import { seedSetups } from './seedSetups';
@@ -40,6 +40,7 @@ async function seed(): Promise<void> {
     await seedSetups(people, states, at);
     await seedRetests(people, states, (day) => dateOf(seedDay, day), at);
     const booked = await seedBookings(people, await seedPositions(people, at), states, at);
+    await seedCustody(people, states, at);
     await seedResultMails(people, states, at);
     process.stdout.write(`  ${booked} bookings\n`);
     process.stdout.write(`  ${items.size} items of equipment, ${sets.size} limit sets, ${runs} runs\n`);

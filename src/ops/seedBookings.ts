@@ -5,6 +5,7 @@ import { OutboxMessage } from '@/models/outboxMessage';
 import { ResultMail } from '@/models/resultMail';
 import type { Sample } from '@/models/sample';
 import { createBooking } from '@/services/bookings';
+import { moveSample } from '@/services/custody';
 import { enterPosition } from '@/services/positions';
 import { previewResultMail, sendResultMail } from '@/services/resultMails';
 import type { SeededPeople } from './seedPeople';
@@ -48,6 +49,20 @@ export async function seedBookings(
     );
   }
   return demoBookings.length;
+}
+
+/** Every sample that is booked lies on its shelf since it came. */
+export async function seedCustody(people: SeededPeople, states: Map<string, string>, at: At): Promise<void> {
+  const ids = [...new Set(demoBookings.map(({ state }) => states.get(state)!))];
+  const rows = await ModificationState.findAll({
+    where: { publicId: ids },
+    include: ['sample'],
+    order: [['id', 'ASC']],
+  });
+  const samples = new Set(rows.map((row) => (row as ModificationState & { sample: Sample }).sample.publicId));
+  for (const id of samples) {
+    await moveSample(people.actor('mira'), id, { place: 'shelf 2, sample store', note: '' }, at(-2));
+  }
 }
 
 /** The story's result e-mails, composed and stored as every other; no mail server ever saw them, so their end is told. */

@@ -12,6 +12,8 @@ export interface DayBooking extends BookingView {
   openRetests: number;
   /** What came up after it was booked and stands in its way, as sentences; of one that is over there is none. */
   clashes: string[];
+  /** Where its sample was last said to be, and since when; null while nobody has said. */
+  place: { place: string; at: string } | null;
 }
 
 /** One day of the lab: every position with what is booked there. */

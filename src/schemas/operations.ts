@@ -6,6 +6,7 @@ import * as job from './job';
 import * as finals from './finals';
 import type { Operation } from './operation';
 import * as find from './find';
+import * as custody from './custody';
 import * as note from './note';
 import * as paths from './paths';
 import * as people from './people';
@@ -42,6 +43,7 @@ export const OPERATIONS: readonly Operation[] = [
   setup,
   retest,
   finals,
+  custody,
   note,
   find,
   booking,

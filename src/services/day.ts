@@ -10,9 +10,11 @@ import { Sweep } from '@/models/sweep';
 import { TestPosition } from '@/models/testPosition';
 import { unitOfWork } from '@/models/unitOfWork';
 import { User } from '@/models/user';
+import type { CustodyView } from '@/schemas/custody';
 import type { BookingChoices, DayBooking, DayView } from '@/schemas/day';
 import { addDays, dayBounds } from '@/schemas/labTime';
 import { overlapping } from './bookingSlots';
+import { placesOf } from './custody';
 import { BOOKING_INCLUDE, bookingView, type WholeBooking } from './bookingViews';
 import { dayIn, labSettings } from './lab';
 import { positionView } from './positions';
@@ -67,6 +69,7 @@ async function withWhatCame(actor: Actor, rows: Booking[], at: Date): Promise<Da
   const stateId = states.map(({ id }) => id);
   const runs = await runsBetween(stateId, rows);
   const retests = await openRetests(stateId);
+  const places = await placesOf(rows.map((row) => row.sampleId));
   return rows.map((row) => {
     const own = states.filter((state) =>
       row.stateId === null ? state.sampleId === row.sampleId : state.id === row.stateId,
@@ -84,9 +87,12 @@ async function withWhatCame(actor: Actor, rows: Booking[], at: Date): Promise<Da
       runs: within.length,
       openRetests: own.reduce((sum, { id }) => sum + (retests.get(id) ?? 0), 0),
       clashes: row.endsAt > at ? clashesOf(row as WholeBooking) : [],
+      place: placeOf(places.get(row.sampleId)),
     };
   });
 }
+
+const placeOf = (move?: CustodyView) => (move ? { place: move.place, at: move.at } : null);
 
 /** What of a booking does not hold any more. */
 function clashesOf({ technician, position, sample }: WholeBooking): string[] {

@@ -195,6 +195,8 @@ const SAMPLES: Record<string, Sample> = {
   previewSweepFile: { params: (w) => w.file.id, body: (w) => w.choice },
   keepSweep: { body: (w) => ({ ...w.choice, ...w.about, fileId: w.file.id }) },
   findEverywhere: { query: '?q=LD-40' },
+  listCustody: { params: (w) => w.sample.id },
+  moveSample: { params: (w) => w.sample.id, body: () => ({ place: 'shelf 3' }) },
   listNotes: { query: (w) => `?sampleId=${w.sample.id}` },
   createNote: { body: (w) => ({ sampleId: w.sample.id, text: 'the lid rattles', audience: 'client' }) },
   listPositions: {},

@@ -4,6 +4,7 @@ import { laneScale, percentAt } from '@/app/(lab)/day/laneScale';
 import { instantOf, typedOf, withStart } from '@/app/(lab)/day/typedSpan';
 import { DAY_WRITES } from '@/app/(lab)/day/writes';
 import { mailWords } from '@/app/(lab)/samples/[id]/mailWords';
+import { CUSTODY_WRITES } from '@/app/(lab)/custody/writes';
 import { RESULT_MAIL_WRITES } from '@/app/(lab)/samples/[id]/SendResult';
 import { findingText } from '@/format/finding';
 import { CAPABILITIES } from '@/schemas/booking';
@@ -34,6 +35,7 @@ function booking(id: string, startsAt: string, endsAt: string, more: Partial<Day
     runs: 0,
     openRetests: 0,
     clashes: [],
+    place: null,
     ...more,
   };
 }
@@ -208,7 +210,7 @@ test('what became of an e-mail is said with its time, or in the mail server’s 
 });
 
 test('the forms of the day sheet and of the result e-mail send what the API declares', () => {
-  for (const [id, write] of Object.entries({ ...DAY_WRITES, ...RESULT_MAIL_WRITES })) {
+  for (const [id, write] of Object.entries({ ...DAY_WRITES, ...CUSTODY_WRITES, ...RESULT_MAIL_WRITES })) {
     expect(OPERATIONS.find((op) => op.id === id)).toMatchObject(write);
   }
 });

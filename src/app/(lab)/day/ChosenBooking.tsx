@@ -2,13 +2,15 @@
 
 import Link from 'next/link';
 import { CorrectForm } from '@/app/(lab)/jobs/CorrectForm';
-import { InPlace } from '@/app/(lab)/jobs/InPlace';
+import { MoveSample } from '@/app/(lab)/custody/MoveSample';
+import { InPlace, type InPlaceAct } from '@/app/(lab)/jobs/InPlace';
 import { ButtonLink } from '@/components/ui/Button';
 import { Figure } from '@/components/ui/Figure';
 import { Id, IdentityLine } from '@/components/ui/IdentityLine';
 import { SectionHeading } from '@/components/ui/SectionHeading';
 import { Message } from '@/components/ui/Message';
 import { StateTag } from '@/components/ui/StateTag';
+import { formatDayTime } from '@/format/dates';
 import { formatCount } from '@/format/quantities';
 import { capitalised } from '@/format/words';
 import type { BookingChoices, DayBooking, DayView } from '@/schemas/day';
@@ -24,6 +26,8 @@ interface Props {
   /** null for who may not change bookings. */
   choices: BookingChoices | null;
   upload: boolean;
+  /** Whether the reader may say where the sample goes. */
+  move: boolean;
 }
 
 const TITLES: Record<Standing, string> = {
@@ -34,10 +38,19 @@ const TITLES: Record<Standing, string> = {
 };
 
 /** The chosen booking with what is needed at the bench: sample, state, product, client, and the way to its upload. */
-export function ChosenBooking({ booking, standing, view, nowMs, choices, upload }: Props) {
-  const { product, state, sample, organisation, job, position, technician, own, work, openRetests, clashes } = booking;
+export function ChosenBooking({ booking, standing, view, nowMs, choices, upload, move }: Props) {
+  const { product, state, sample, organisation, job, position, technician, own, work, openRetests, clashes, place } =
+    booking;
   const lengthMs = Date.parse(booking.endsAt) - Date.parse(booking.startsAt);
   const fitted = state !== null && !state.planned;
+  const custody: InPlaceAct = {
+    id: 'custody',
+    word: `Move ${sample.code}`,
+    keyName: 'C',
+    form: (close) => (
+      <MoveSample sample={sample} places={[`position ${position.code}, ${position.name}`]} onClose={close} />
+    ),
+  };
   return (
     <section aria-label={`Booking of ${product.code}`}>
       <SectionHeading
@@ -83,7 +96,10 @@ export function ChosenBooking({ booking, standing, view, nowMs, choices, upload 
             {capitalised(work)} at position {position.code}, {position.name}, {own ? 'by you' : `by ${technician.name}`}
             . {state && `${state.label}: ${state.description}${state.planned ? ', planned and not fitted yet' : ''}. `}
             {openRetests > 0 &&
-              `${formatCount(openRetests)} ${openRetests === 1 ? 'retest is' : 'retests are'} open for it.`}
+              `${formatCount(openRetests)} ${openRetests === 1 ? 'retest is' : 'retests are'} open for it. `}
+            {place
+              ? `${sample.code} is at ${place.place} since ${formatDayTime(place.at, view.zone)}.`
+              : `Nobody has said where ${sample.code} is.`}
           </p>
         </div>
         {upload && (
@@ -103,39 +119,47 @@ export function ChosenBooking({ booking, standing, view, nowMs, choices, upload 
             : 'A manager moves or cancels it.'}
         </Message>
       )}
-      {choices && (
-        <div className="mt-3">
-          <InPlace
-            size="table"
-            acts={[
-              {
-                id: 'move',
-                word: 'Move or change',
-                form: (close) => <BookingForm view={view} choices={choices} booking={booking} onClose={close} />,
-              },
-              {
-                id: 'cancel',
-                word: 'Cancel with a reason',
-                form: (close) => (
-                  <CorrectForm
-                    what="booking"
-                    operation={DAY_WRITES.cancelBooking}
-                    id={booking.id}
-                    version={booking.version}
-                    fields={[
-                      { name: 'reason', label: 'The reason', value: '', hint: 'It stands in the record of the job.' },
-                    ]}
-                    fixed={{}}
-                    act={`Cancel the booking of ${product.code}`}
-                    done={`${product.code} at position ${position.code} is cancelled`}
-                    onClose={close}
-                  />
-                ),
-              },
-            ]}
-          />
-        </div>
-      )}
+      <div className="mt-3">
+        <InPlace
+          size="table"
+          acts={[
+            ...(move ? [custody] : []),
+            ...(choices
+              ? [
+                  {
+                    id: 'move',
+                    word: 'Move or change',
+                    form: (close) => <BookingForm view={view} choices={choices} booking={booking} onClose={close} />,
+                  },
+                  {
+                    id: 'cancel',
+                    word: 'Cancel with a reason',
+                    form: (close) => (
+                      <CorrectForm
+                        what="booking"
+                        operation={DAY_WRITES.cancelBooking}
+                        id={booking.id}
+                        version={booking.version}
+                        fields={[
+                          {
+                            name: 'reason',
+                            label: 'The reason',
+                            value: '',
+                            hint: 'It stands in the record of the job.',
+                          },
+                        ]}
+                        fixed={{}}
+                        act={`Cancel the booking of ${product.code}`}
+                        done={`${product.code} at position ${position.code} is cancelled`}
+                        onClose={close}
+                      />
+                    ),
+                  },
+                ]
+              : []),
+          ]}
+        />
+      </div>
     </section>
   );
 }

@@ -94,6 +94,7 @@ export function DaySheet({ view, choices, upload }: Props) {
           nowMs={nowMs}
           choices={choices}
           upload={upload}
+          move={upload}
         />
       )}
       <SectionHeading className="mt-6" remark={`${formatCount(count)} ${count === 1 ? 'booking' : 'bookings'}`}>

@@ -7,6 +7,8 @@ export interface InPlaceAct {
   id: string;
   word: string;
   kind?: ButtonKind;
+  /** A single key that opens it. */
+  keyName?: string;
   form: (close: () => void) => ReactNode;
 }
 
@@ -23,12 +25,13 @@ export function InPlace({ acts, size = 'page' }: { acts: readonly InPlaceAct[]; 
   return (
     <div>
       <div className="flex flex-wrap items-center gap-2">
-        {acts.map(({ id, word, kind = 'plain' }) => (
+        {acts.map(({ id, word, kind = 'plain', keyName }) => (
           <Button
             key={id}
             id={`${base}-${id}`}
             kind={kind}
             size={size}
+            keyName={keyName}
             aria-expanded={id === open}
             onClick={() => setOpen(id === open ? null : id)}
           >

@@ -5,6 +5,7 @@ import { requireActor } from '@/app/requireActor';
 import { mayRole } from '@/auth/permissions';
 import { LayOver } from '@/app/(lab)/compare/LayOver';
 import { historiesOf } from '@/app/(lab)/jobs/history';
+import { custodySection } from '@/app/(lab)/custody/custodySection';
 import { notesSection } from '@/app/(lab)/notes/notesSection';
 import { historySection } from '@/app/(lab)/jobs/HistoryLines';
 import { addressOf } from '@/app/(lab)/retests/retestQuery';
@@ -18,6 +19,7 @@ import { listLimitSets } from '@/services/limitSets';
 import { prescanUncertainty } from '@/services/pathUncertainty';
 import { labZone } from '@/services/lab';
 import { openByState } from '@/services/openRetests';
+import { listCustody } from '@/services/custody';
 import { listNotes } from '@/services/notes';
 import { readSample } from '@/services/samples';
 import { missingLine, missingSection } from '../missingSection';
@@ -51,6 +53,7 @@ export default async function SamplePage({ params }: Props) {
     ['sample', sample.id],
     ...sample.states.map(({ id }) => ['state', id] as const),
   ]);
+  const custody = await listCustody(actor, sample.id, { limit: 10 });
   const notes = await listNotes(actor, { limit: 10, sampleId: sample.id });
   const upload = mayRole(actor.role, 'sweep.keep');
   const change = mayRole(actor.role, 'state.change');
@@ -165,6 +168,7 @@ export default async function SamplePage({ params }: Props) {
   function margin() {
     const sections = [
       ...missingSection(latest),
+      custodySection(custody.items, zone),
       notesSection({ sampleId: sample.id }, notes, zone, actor.role !== 'designer'),
       ...(history.length > 0 ? [historySection(history, zone, true)] : []),
     ];
