@@ -31,7 +31,7 @@ async function limitSetNow(set: LimitSet): Promise<LimitSet> {
 
 /**
  * Revisions of the run's path that hold for when it was measured, newest first. A later revision holds when it names
- * the same items in the same order as the one in force then (other items were not in the path that day), and when none
+ * the same items, each over the same range, in the same order as the one in force then (other items were not in the path that day), and when none
  * of its tables comes from a calibration made after that day.
  */
 async function pathRevisionsNow(run: Run): Promise<SignalPathRevision[]> {
@@ -52,7 +52,9 @@ async function pathRevisionsNow(run: Run): Promise<SignalPathRevision[]> {
   );
 }
 
-const itemsOf = ({ items }: SignalPathRevision) => items.map(({ equipmentId }) => equipmentId).join(' ');
+/** Items with their ranges: where a path is split decides which of two antennas a frequency was measured with. */
+const itemsOf = ({ items }: SignalPathRevision) =>
+  items.map(({ equipmentId, fromHz, toHz }) => `${equipmentId} ${fromHz ?? ''} ${toHz ?? ''}`).join(' ');
 
 const tableIds = ({ items }: SignalPathRevision): string[] =>
   items.flatMap(({ tables }) => Object.values(tables)).filter((id): id is string => id !== null);

@@ -5,6 +5,7 @@ import { enterCalibration, enterEquipment } from '@/services/enterEquipment';
 import { enterFactorTables } from '@/services/enterFactorTables';
 import { enterLimitLine, enterLimitSet } from '@/services/enterLimits';
 import { enterSignalPath } from '@/services/enterSignalPath';
+import { evaluateSweep } from '@/services/evaluations';
 import { previewFactorTable } from '@/services/factorTableFile';
 import { downloadFactorTable, readFactorTable } from '@/services/factorTables';
 import { keepSweep } from '@/services/keepSweep';
@@ -103,6 +104,14 @@ test('one antenna to 300 MHz and another above: levels, coverage and Working fol
   expect(await level(400e6)).toEqual({ level: 50, added: [30, 20] });
   expect(await level(300e6)).toEqual({ level: 50, added: [30, 20] });
   expect((await level(950e6)).level).toBeNull();
+
+  // The antennas are changed over elsewhere from now on; what was measured before keeps its own ranges.
+  await enter('P-S', 'enclosure', [
+    { ...low, toHz: 500e6 },
+    { ...high, fromHz: 500e6, toHz: 900e6 },
+  ]);
+  await evaluateSweep(world.technician.actor, run.id, { reason: 'another edge' });
+  expect(await level(400e6)).toEqual({ level: 50, added: [30, 20] });
 });
 
 test('what could be no path is refused when it is entered, not when a run is kept', async () => {
