@@ -79,8 +79,8 @@ export function FinalsSetting({ sheet, setting, onChange }: Props) {
       </div>
       <p className="t-detail">
         Limit set {proposed.limitSet.name}
-        {proposed.distanceM !== null && `, ${formatDistance(proposed.distanceM)} m`}, from run{' '}
-        <Link prefetch={false} href={`/sweeps/${proposed.from.id}`} className="t-id text-pen">
+        {proposed.distanceM !== null && `, measured at ${formatDistance(proposed.distanceM)}`}, from run{' '}
+        <Link prefetch={false} href={`/sweeps/${proposed.from.id}`} className="t-id text-pen underline">
           {proposed.from.number}
         </Link>
         ; {bandwidths.map(formatBandwidth).join(' and ')} bandwidth, as the limit lines ask

@@ -28,15 +28,22 @@ export function FinalsSheet({ sheet, header }: { sheet: FinalsSheetView; header:
   const [typed, setTyped] = useState<Typed>({});
   const [setting, setSetting] = useState<Setting>(() => settingOf(sheet));
   const [kept, setKept] = useState<Kept[]>([]);
+  // What was kept is gone at once; the next answer of the server says whether it still waits.
+  const [gone, setGone] = useState<{ from: FinalsSheetView; keys: string[] }[]>([]);
   const { keep, busy, refused } = useKeepFinals((reply, keys) => {
     setKept((before) => [...before, reply]);
+    setGone((before) => [...before, { from: sheet, keys }]);
     setTyped((before) => Object.fromEntries(Object.entries(before).filter(([key]) => !keys.includes(key))));
     router.refresh();
   });
   useKey('ArrowDown', () => startTyping(rows.current), { says: 'the first reading', weak: true });
   useKey('Enter', () => startTyping(rows.current), { weak: true });
 
-  const { positions, proposed, port } = sheet;
+  const { proposed, port } = sheet;
+  const hidden = new Set(gone.filter(({ from }) => from === sheet).flatMap(({ keys }) => keys));
+  const positions = sheet.positions
+    .map(({ position, finals }) => ({ position, finals: finals.filter(({ key }) => !hidden.has(key)) }))
+    .filter(({ finals }) => finals.length > 0);
   const asked = positions.map((position): PositionToKeep | null => {
     const bodied = bodyOf(sheet, position, typed, setting);
     return bodied && { position: String(position.position), ...bodied };

@@ -47,7 +47,10 @@ export default async function FinalsPage({ searchParams }: { searchParams: Searc
               </span>
               {run && (
                 <span>
-                  asked for by run <Link href={`/sweeps/${run.id}`}>{run.number}</Link>
+                  asked for by run{' '}
+                  <Link href={`/sweeps/${run.id}`} className="underline">
+                    {run.number}
+                  </Link>
                 </span>
               )}
             </>
