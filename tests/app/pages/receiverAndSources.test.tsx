@@ -97,7 +97,7 @@ test('the product sheet lists what is declared, who declared it and how sure it 
   await addProductClock(world.designer.actor, world.product.id, { ...bus, name: 'audio clock' });
   const { default: Page } = await import('@/app/(lab)/products/[id]/page');
   const html = renderToStaticMarkup(await Page({ params: Promise.resolve({ id: world.product.id }) }));
-  expect(words(html)).toContain('24.576 MHz audio clock, clock, ±50 ppm, spread 0.5 % down');
+  expect(words(html)).toContain('24.576 MHz audio clock, ±50 ppm, spread 0.5 % down');
   expect(words(html)).toContain('audio board; declared by designer');
 });
 

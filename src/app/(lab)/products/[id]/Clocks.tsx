@@ -62,7 +62,9 @@ function Clock({ clock, productId, zone }: { clock: ClockView; productId: string
     <li className="clock">
       <span className="t-figure clock-frequency">{clockFrequency(frequencyHz)}</span>
       <span className="min-w-0">
-        <b>{name}</b>, {KIND_WORDS[kind]}, <span className="t-figure">{toleranceText(clock)}</span>
+        <b>{name}</b>
+        {!name.toLowerCase().includes(KIND_WORDS[kind]) && `, ${KIND_WORDS[kind]}`},{' '}
+        <span className="t-figure">{toleranceText(clock)}</span>
         <span className="t-detail block">
           {note && `${note}; `}declared by {by.name}, {formatDay(at, zone)}
         </span>

@@ -16,7 +16,7 @@ export function sourcesSection(sources: Sources, drawing: Drawing): MarginSectio
     title: 'Likely sources',
     summary: found ? sourcesSummary(found) : sources === 'looking' ? 'looking' : 'not known',
     children: (
-      <div aria-busy={sources === 'looking'} aria-live="polite">
+      <div aria-busy={sources === 'looking'}>
         {found ? (
           <LikelySources sources={found} drawing={drawing} />
         ) : sources === 'looking' || !('problem' in sources) ? (
@@ -41,14 +41,7 @@ export function LikelySources({ sources, drawing }: { sources: SourcesView; draw
   const single = sidebands.length - mirrored.length;
   return (
     <>
-      {clocks.length === 0 && (
-        <p>
-          Nothing is declared that this product runs at.{' '}
-          <Link href={`/products/${productId}#clocks`} className="text-pen">
-            Declare a clock
-          </Link>
-        </p>
-      )}
+      {clocks.length === 0 && <p>Nothing is declared that this product runs at.</p>}
       {clocks.map((clock) => (
         <SourceClock key={clock.id} clock={clock} names={names} drawing={drawing} />
       ))}
@@ -92,14 +85,11 @@ export function LikelySources({ sources, drawing }: { sources: SourcesView; draw
       <p className="column-quiet">
         {total > looked && `The worst ${looked} of ${total} emissions were looked at. `}
         By frequency alone: this is what can be. A probe at the board shows what is.
-        {clocks.length > 0 && (
-          <>
-            {' '}
-            <Link href={`/products/${productId}#clocks`} className="text-pen">
-              What it is declared to run at
-            </Link>
-          </>
-        )}
+      </p>
+      <p>
+        <Link href={`/products/${productId}#clocks`} className="text-pen">
+          {clocks.length === 0 ? 'Declare a clock' : 'What it is declared to run at'}
+        </Link>
       </p>
     </>
   );
