@@ -32,11 +32,11 @@ interface BesideUcispr {
   excessDb: number;
 }
 
-/** `U of 4.9 dB is at most Ucispr, 6.3 dB …`: what the rule of CISPR 16-4-2 makes of it. */
+/** `over 30–1000 MHz U of 4.90 dB is at most Ucispr, 6.3 dB …`: what the rule of CISPR 16-4-2 makes of it. */
 export function ucisprWords(expandedDb: number, beside: BesideUcispr): string {
   const { fromHz, toHz, measurement, edition, ucisprDb, excessDb } = beside;
   const of = `Ucispr, ${formatDb(ucisprDb)} dB for ${measurement} (${edition}, from memory)`;
-  const where = `Over ${formatFrequencyRange(fromHz, toHz)} U of ${formatFigure(expandedDb, 2)} dB is`;
+  const where = `over ${formatFrequencyRange(fromHz, toHz)} U of ${formatFigure(expandedDb, 2)} dB is`;
   if (Number(formatFigure(excessDb, 2)) === 0)
     return `${where} at most ${of}: the rule of CISPR 16-4-2 adds nothing to a level.`;
   const excess = `${formatFigure(excessDb, 2)} dB`;

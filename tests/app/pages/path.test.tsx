@@ -56,7 +56,7 @@ test('stated figures: the sheet says that they are, what is corrected, and that 
   expect(text).toContain('These figures are stated, not computed: made for tests.');
   expect(text).toContain('No uncertainty for a final over 20–30 MHz: levels there conclude nothing.');
   expect(text).toContain('U covers the instrumentation along this path.');
-  expect(text).toContain('Final: Over 30–1000 MHz U of 5.00 dB is at most Ucispr, 6.3 dB');
+  expect(text).toContain('Final: over 30–1000 MHz U of 5.00 dB is at most Ucispr, 6.3 dB');
   expect(text).toContain(world.run.number);
 });
 
@@ -77,6 +77,18 @@ test('with a budget every figure opens its working, the final’s first: root of
   expect(text).toContain('is 3.70 dB above Ucispr, 6.3 dB');
   expect(html).toContain('aria-label="site imperfections, standard uncertainty 4.000 dB, show working"');
   expect(text).toContain('certificates of June');
+});
+
+test('the form opens with the budget as it stands, what it comes to, and Ucispr beside it', async () => {
+  const { BudgetForm } = await import('@/app/(lab)/paths/[id]/BudgetForm');
+  const path = await readPath(world.manager.actor, world.choice.pathId!);
+  const html = renderToStaticMarkup(<BudgetForm path={path} onClose={() => {}} />);
+  const text = words(html);
+  expect(html.match(/value="site imperfections"/g)).toHaveLength(2);
+  expect(text).toContain('u 5.000 dB, k 2.00, U 10.00 dB');
+  expect(text).toContain('Over 30–1000 MHz U of 10.00 dB is 3.70 dB above Ucispr');
+  expect(text).toContain('Enter revision 3 of P-1');
+  expect(html.match(/\sstyle="[^"]*"/g) ?? []).toEqual([]);
 });
 
 test('an earlier revision stays readable, says so and offers no form', async () => {

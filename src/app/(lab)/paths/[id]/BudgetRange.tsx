@@ -5,6 +5,7 @@ import { Button } from '@/components/ui/Button';
 import { Field, SelectField } from '@/components/ui/Field';
 import { shareWords, ucisprWords } from '@/format/budgets';
 import { formatFigure } from '@/format/quantities';
+import { capitalised } from '@/format/words';
 import type { Port } from '@/schemas/common';
 
 interface Props {
@@ -85,7 +86,7 @@ export function BudgetRange({ name, purpose, port, range, live, wrong, onChange,
       {result &&
         ucispr.map((one) => (
           <p key={one.fromHz} className="t-detail mt-1">
-            {ucisprWords(result.expandedDb, one)}
+            {capitalised(ucisprWords(result.expandedDb, one))}
           </p>
         ))}
     </div>
