@@ -24,7 +24,7 @@ function Line({ term, rule, lined }: { term: Term; rule?: boolean; lined?: boole
   const written = quantity === null ? null : writeQuantity(quantity);
   return (
     <div className={`sum-row ${rule ? 'sum-single' : ''} ${lined ? 'calc-begin' : ''}`}>
-      <span className="sum-sign t-figure">{sign}</span>
+      <dt className="sum-sign t-figure">{sign}</dt>
       <dt className="sum-figure t-figure">{written?.figure ?? ABSENT}</dt>
       <dd>
         {written?.unit ? `${written.unit} ` : ''}
