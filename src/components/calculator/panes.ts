@@ -30,3 +30,13 @@ export const PANES: readonly Pane[] = [
 export function paneOf(id: string | null | undefined): Pane {
   return PANES.find((pane) => pane.id === id) ?? PANES[0]!;
 }
+
+/** Calculations whose titles carry every word, each from its beginning; all of them for `calculator`. */
+export function findPanes(words: string): Pane[] {
+  const asked = words.toLowerCase().split(/[\s,-]+/).filter(Boolean);
+  if (asked.length === 0) return [];
+  return PANES.filter(({ title }) => {
+    const named = `calculator ${title}`.toLowerCase().split(/[\s,-]+/);
+    return asked.every((word) => word.length >= 3 && named.some((name) => name.startsWith(word)));
+  });
+}

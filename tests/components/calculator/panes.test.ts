@@ -4,7 +4,7 @@ import receiver from '@fixtures/published/receiver.json';
 import uncertainties from '@fixtures/published/uncertainty.json';
 import { readPane, type Entries } from '@/components/calculator/givenOf';
 import type { Answer, Term } from '@/components/calculator/pane';
-import { PANES, paneOf } from '@/components/calculator/panes';
+import { findPanes, PANES, paneOf } from '@/components/calculator/panes';
 
 /** What a pane answers to what was typed into it. */
 function asked(id: string, entries: Record<string, string | number>) {
@@ -422,4 +422,17 @@ function madeOf({ working }: Answer): boolean {
 test('an unknown pane is the first', () => {
   expect(paneOf('nothing')).toBe(PANES[0]);
   expect(paneOf(null)).toBe(PANES[0]);
+});
+
+test.each([
+  ['calculator', PANES.map(({ id }) => id)],
+  ['Calc', PANES.map(({ id }) => id)],
+  ['mismatch', ['mismatch']],
+  ['field strength', ['field', 'eirp']],
+  ['common-mode', ['cable']],
+  ['LD-40', []],
+  ['un', []],
+  ['', []],
+])('Find by %j offers the calculations that carry it', (words, ids) => {
+  expect(findPanes(words).map(({ id }) => id)).toEqual(ids);
 });

@@ -2,6 +2,7 @@ import type { Metadata } from 'next';
 import Link from 'next/link';
 import { requireActor } from '@/app/requireActor';
 import { asked, listed, type Search } from '@/app/(lab)/jobs/listed';
+import { findPanes } from '@/components/calculator/panes';
 import { Sheet } from '@/components/shell/Sheet';
 import { SheetHeader } from '@/components/shell/SheetHeader';
 import { EmptyLine } from '@/components/ui/EmptyLine';
@@ -32,16 +33,17 @@ export default async function FindPage({ searchParams }: { searchParams: Search 
   const found: Found | null = q ? await listed(findEverywhere(actor, { q, kind, after, limit: 50 })) : null;
   const here = (more: Record<string, string>) => `/find?${new URLSearchParams({ q, ...more })}`;
   const filled = found?.kinds.filter(({ items }) => items.length > 0) ?? [];
+  const calculations = kind || after ? [] : findPanes(q);
   return (
     <Sheet header={<SheetHeader title="Find" />}>
       <FindField key={q} q={q} lab={actor.role !== 'designer'} />
       <p className="sr-only" role="status">
         {found &&
-          (filled.length === 0
+          (filled.length + calculations.length === 0
             ? `Nothing carries ${q}.`
-            : `Found in ${filled.map(({ kind }) => KINDS[kind].many).join(', ')}.`)}
+            : `Found in ${[...filled.map(({ kind }) => KINDS[kind].many), ...(calculations.length > 0 ? ['Calculator'] : [])].join(', ')}.`)}
       </p>
-      {found && filled.length === 0 && (
+      {found && filled.length + calculations.length === 0 && (
         <EmptyLine lead={`Nothing carries “${q}”.`} className="mt-4">
           Fewer words find more: part of a number, a serial or a product code is enough.
         </EmptyLine>
@@ -80,6 +82,21 @@ export default async function FindPage({ searchParams }: { searchParams: Search 
           )}
         </section>
       ))}
+      {calculations.length > 0 && (
+        <section className="mt-5">
+          <SectionHeading>Calculator</SectionHeading>
+          <ul>
+            {calculations.map(({ id, title, about }) => (
+              <li key={id} className="border-b border-rule">
+                <Link prefetch={false} href={`/calculator?pane=${id}`} className="find-row">
+                  <span className="find-name">{title}</span>
+                  <span className="find-says">{about}</span>
+                </Link>
+              </li>
+            ))}
+          </ul>
+        </section>
+      )}
     </Sheet>
   );
 }
