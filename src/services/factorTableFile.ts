@@ -90,7 +90,11 @@ export function factorRemarks(
   }
   if (column.turned) say('turned');
   if (settled?.negated) say('negated');
-  else if (isOneWay(settled?.quantity ?? 'loss') && db.some((one) => one < 0) && db.some((one) => one > 0))
+  else if (
+    isOneWay(settled?.quantity ?? column.said.among?.[0] ?? 'loss') &&
+    db.some((one) => one < 0) &&
+    db.some((one) => one > 0)
+  )
     say('mixed-signs');
   if (!column.unitStated) say('unit-not-stated');
   if (recognition.kind === 'sweep') say('not-said-to-be-factors');

@@ -199,7 +199,7 @@ test('tables of every quantity are uploaded; a loop asks which field, a contradi
       source: 'certificate C-9',
       reason: 'first calibration',
     });
-  const unclear = await hold('Frequency (MHz);Magnetic factor (dB/m)\n0.009;-33\n1;-67\n30;-68\n');
+  const unclear = await hold('Frequency (MHz);Magnetic factor (dB/m)\n0.009;18.1\n1;-15.8\n30;-16.6\n');
   const preview = await previewFactorTable(boss, {
     fileId: unclear.id,
     equipmentId: loop.equipmentId,
@@ -207,6 +207,7 @@ test('tables of every quantity are uploaded; a loop asks which field, a contradi
     tables: [table],
   });
   expect(preview.questions).toMatchObject([{ key: 'quantity', text: expect.stringMatching(/51\.5 dB more/) }]);
+  expect(preview.tables[0]!.remarks.map(({ kind }) => kind)).not.toContain('mixed-signs');
   await expect(enterFactorTables(boss, body(unclear.id, null))).rejects.toMatchObject({
     issues: [{ pointer: '/tables/0/quantity', message: expect.stringMatching(/what its figures are/) }],
   });
