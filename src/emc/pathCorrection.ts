@@ -1,10 +1,7 @@
 import { correctionAt } from './correction';
+import { signOf } from './factorQuantity';
 import { addFactor, factorAt, prepareFactorTable, type FactorAt } from './factorTable';
-import type { FactorQuantity } from './kinds';
 import type { PathTerm } from './types';
-
-/** A term that may be in its path only for a range of frequency; an end that is absent or null is open. */
-type RangedTerm = PathTerm & { fromHz?: number | null; toHz?: number | null };
 
 /** What one term adds at a frequency. */
 export interface PathShare {
@@ -28,14 +25,14 @@ export interface PathCorrection {
  * The correction of a path at a frequency, as `correctionAt` gives it, and what each term adds to it. On an edge of a
  * path split by frequency the shares are those of the side that governs. Throws as `correctionAt` does.
  */
-export function pathCorrectionAt(terms: readonly RangedTerm[], frequencyHz: number): PathCorrection {
+export function pathCorrectionAt(terms: readonly PathTerm[], frequencyHz: number): PathCorrection {
   const totalDb = correctionAt(terms, frequencyHz);
   const sides = [terms.filter(reachesUpTo(frequencyHz)), terms.filter(reachesDownTo(frequencyHz))];
   const holding = sides.find((side) => totalDb !== null && sumOf(side, frequencyHz) === totalDb) ?? sides[0]!;
   const shares = terms.map((term): PathShare => {
     const inPath = holding.includes(term);
     const factor = inPath ? factorAt(term.table, frequencyHz) : null;
-    return { termId: term.id, inPath, factor, shareDb: factor && signIn(term.table.quantity) * factor.valueDb };
+    return { termId: term.id, inPath, factor, shareDb: factor && signOf(term.table.quantity) * factor.valueDb };
   });
   return { frequencyHz, totalDb, shares };
 }
@@ -51,7 +48,7 @@ export interface CorrectionStretch {
  * From the lowest to the highest frequency that any term has, where the correction is known and where it is not, by the
  * terms without a value; ascending, neighbours differ. Empty without terms. Throws as `correctionAt` does.
  */
-export function correctionStretches(terms: readonly RangedTerm[]): CorrectionStretch[] {
+export function correctionStretches(terms: readonly PathTerm[]): CorrectionStretch[] {
   const stretches: CorrectionStretch[] = [];
   for (const [fromHz, toHz] of between(terms)) {
     const hz = Math.sqrt(fromHz * toHz);
@@ -64,7 +61,7 @@ export function correctionStretches(terms: readonly RangedTerm[]): CorrectionStr
 }
 
 /** Terms in the path at a frequency whose tables have no value; where there are none, those that stand in for another. */
-function missingAt(terms: readonly RangedTerm[], hz: number): string[] {
+function missingAt(terms: readonly PathTerm[], hz: number): string[] {
   const without = terms.filter((term) => isIn(term, hz) && factorAt(term.table, hz) === null);
   const away = terms.filter((term) => !isIn(term, hz));
   return (without.length > 0 ? without : away).map(({ id }) => id);
@@ -74,8 +71,8 @@ function missingAt(terms: readonly RangedTerm[], hz: number): string[] {
  * The correction as lines, straight over log f between their points: the rows of every table that holds, from piece to
  * piece of a path. Between two rows lies no other, so they are exact. Nothing is drawn where there is no correction.
  */
-export function correctionLines(terms: readonly RangedTerm[]): { frequencyHz: number; totalDb: number }[][] {
-  const pieces: { ids: string; fromHz: number; toHz: number; holding: RangedTerm[] }[] = [];
+export function correctionLines(terms: readonly PathTerm[]): { frequencyHz: number; totalDb: number }[][] {
+  const pieces: { ids: string; fromHz: number; toHz: number; holding: PathTerm[] }[] = [];
   for (const [fromHz, toHz] of between(terms)) {
     const hz = Math.sqrt(fromHz * toHz);
     if (correctionAt(terms, hz) === null) continue;
@@ -92,14 +89,14 @@ export function correctionLines(terms: readonly RangedTerm[]): { frequencyHz: nu
     const totalDb = new Float64Array(frequencyHz.length);
     const outside = new Uint8Array(frequencyHz.length);
     for (const { table } of holding) {
-      addFactor(prepareFactorTable(table), signIn(table.quantity), frequencyHz, logHz, totalDb, outside, 1);
+      addFactor(prepareFactorTable(table), signOf(table.quantity), frequencyHz, logHz, totalDb, outside, 1);
     }
     return Array.from(frequencyHz, (hz, i) => ({ frequencyHz: hz, totalDb: totalDb[i]! }));
   });
 }
 
 /** Between every two ends of tables and of ranges; a table counts only where its item is in the path. */
-function between(terms: readonly RangedTerm[]): [fromHz: number, toHz: number][] {
+function between(terms: readonly PathTerm[]): [fromHz: number, toHz: number][] {
   const ends = terms.flatMap(({ table, fromHz, toHz }) => {
     const low = Math.max(table.frequencyHz[0]!, fromHz ?? 0);
     const high = Math.min(table.frequencyHz.at(-1)!, toHz ?? Infinity);
@@ -109,24 +106,18 @@ function between(terms: readonly RangedTerm[]): [fromHz: number, toHz: number][]
   return edges.slice(1).map((toHz, i) => [edges[i]!, toHz]);
 }
 
-const isIn = ({ fromHz, toHz }: RangedTerm, hz: number) => hz >= (fromHz ?? 0) && hz <= (toHz ?? Infinity);
-const reachesUpTo = (hz: number) => (term: RangedTerm) => isIn(term, hz) && (term.fromHz ?? 0) < hz;
-const reachesDownTo = (hz: number) => (term: RangedTerm) => isIn(term, hz) && (term.toHz ?? Infinity) > hz;
+const isIn = ({ fromHz, toHz }: PathTerm, hz: number) => hz >= (fromHz ?? 0) && hz <= (toHz ?? Infinity);
+const reachesUpTo = (hz: number) => (term: PathTerm) => isIn(term, hz) && (term.fromHz ?? 0) < hz;
+const reachesDownTo = (hz: number) => (term: PathTerm) => isIn(term, hz) && (term.toHz ?? Infinity) > hz;
 
-function sumOf(terms: readonly RangedTerm[], frequencyHz: number): number | null {
+function sumOf(terms: readonly PathTerm[], frequencyHz: number): number | null {
   let sum = 0;
   for (const { table } of terms) {
     const factor = factorAt(table, frequencyHz);
     if (factor === null) return null;
-    sum += signIn(table.quantity) * factor.valueDb;
+    sum += signOf(table.quantity) * factor.valueDb;
   }
   return sum;
-}
-
-/** + for what is added to a reading, − for what is taken from it: as `correctionAt` applies it. */
-export function signIn(quantity: FactorQuantity): 1 | -1 {
-  const table = { id: '', name: quantity, quantity, frequencyHz: [1], valueDb: [1] };
-  return correctionAt([{ id: '', name: quantity, table, applied: true }], 1) === -1 ? -1 : 1;
 }
 
 /** Multiples of a decade that labs read a correction at. */

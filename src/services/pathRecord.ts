@@ -1,12 +1,12 @@
 import { authorise, type Actor } from '@/auth/actor';
+import { factorUnitOf, levelUnitAfter, signOf } from '@/emc/factorQuantity';
 import type { FactorAt } from '@/emc/factorTable';
 import { POLARISATIONS, type FactorQuantity, type Polarisation } from '@/emc/kinds';
-import { correctionLines, correctionStretches, pathCorrectionAt, roundFrequencies, signIn } from '@/emc/pathCorrection';
+import { correctionLines, correctionStretches, pathCorrectionAt, roundFrequencies } from '@/emc/pathCorrection';
 import type { UncertaintyStep } from '@/emc/types';
 import { NotFound } from '@/errors';
 import { SignalPath } from '@/models/signalPath';
 import { SignalPathRevision } from '@/models/signalPathRevision';
-import type { StoredPathItem } from '@/models/stored';
 import { unitOfWork } from '@/models/unitOfWork';
 import type { User } from '@/models/user';
 import type { CorrectionAt, CorrectionView, PathItemRecord, PathRecord } from '@/schemas/paths';
@@ -57,13 +57,13 @@ export async function readPath(
   });
 }
 
-const signMark = (quantity: FactorQuantity) => (signIn(quantity) < 0 ? ('−' as const) : ('+' as const));
-/** Its range in a path split by frequency, where it has one. */
-const rangeIn = (stored: StoredPathItem & { fromHz?: number | null; toHz?: number | null }) => stored;
+const signMark = (quantity: FactorQuantity) => (signOf(quantity) < 0 ? ('−' as const) : ('+' as const));
 
-/** An antenna factor makes the total dB/m; any other transducer states its own unit with its figure. */
+/** Of its transducer: dB/m with an antenna factor, dB without any. */
 function unitOf({ items }: LoadedPath): string {
-  return items.some(({ stored }) => stored.quantity === 'antenna-factor') ? 'dB/m' : 'dB';
+  const quantities = items.flatMap(({ stored }) => stored.quantity ?? []);
+  const transducer = quantities.find((quantity) => levelUnitAfter(quantity) !== null);
+  return transducer ? factorUnitOf(transducer) : 'dB';
 }
 
 function revisionView(row: SignalPathRevision, runs: number): PathRecord['revisions'][number] {
@@ -91,8 +91,8 @@ function itemRecord(item: LoadedItem, today: string): PathItemRecord {
     state: equipment.state,
     term: stored.term,
     sign: stored.term === null || stored.quantity === null ? null : signMark(stored.quantity),
-    fromHz: rangeIn(stored).fromHz ?? null,
-    toHz: rangeIn(stored).toHz ?? null,
+    fromHz: stored.fromHz ?? null,
+    toHz: stored.toHz ?? null,
     tables: tables.map((table) => ({
       id: table.publicId,
       name: table.name,

@@ -106,3 +106,38 @@ describe('round frequencies', () => {
     expect(roundFrequencies(low, high).map((hz) => hz / 1e6)).toEqual(mhz);
   });
 });
+
+describe('a path split by frequency', () => {
+  const low = { ...antenna, toHz: 200e6 };
+  const high = {
+    ...term('ANT-2', 'antenna-factor', [
+      [150, 30],
+      [1000, 40],
+    ]),
+    fromHz: 200e6,
+  };
+  const split = [low, high, cable];
+
+  test('each item gives its share where it is in the path; on the edge the side with the larger correction does', () => {
+    const inPath = (hz: number) => pathCorrectionAt(split, hz).shares.map((share) => share.inPath);
+    expect(inPath(100e6)).toEqual([true, false, true]);
+    expect(inPath(500e6)).toEqual([false, true, true]);
+    expect(inPath(200e6)).toEqual([false, true, true]);
+    for (const hz of [100e6, 200e6, 500e6]) {
+      const { totalDb, shares } = pathCorrectionAt(split, hz);
+      expect(shares.reduce((sum, { shareDb }) => sum + (shareDb ?? 0), 0)).toBeCloseTo(totalDb!, 12);
+      expect(totalDb).toBe(correctionAt(split, hz));
+    }
+  });
+
+  test('is known from the first antenna to the second without a hole, in a line for each', () => {
+    expect(correctionStretches(split).filter(({ missing }) => missing.length === 0)).toEqual([
+      { fromHz: 30e6, toHz: 1000e6, missing: [] },
+    ]);
+    const ends = correctionLines(split).map((line) => [line[0]!.frequencyHz, line.at(-1)!.frequencyHz]);
+    expect(ends).toEqual([
+      [30e6, 200e6],
+      [200e6, 1000e6],
+    ]);
+  });
+});

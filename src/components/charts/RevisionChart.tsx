@@ -123,6 +123,15 @@ function Key({ name, className, width, dash }: { name: string; className: string
 
 const NAME_PX = 14;
 
+/** From the lowest up, each at least a name's height over the one below it. */
+function apart<T extends { y: number }>(names: readonly T[]): T[] {
+  const placed: T[] = [];
+  for (const name of [...names].sort((a, b) => b.y - a.y)) {
+    placed.push({ ...name, y: Math.min(name.y, (placed.at(-1)?.y ?? Infinity) - NAME_PX) });
+  }
+  return placed;
+}
+
 /** Each part's name over its last point, apart from the one below it. */
 function PartNames({
   parts,
@@ -137,13 +146,9 @@ function PartNames({
     const end = stretches.at(-1)?.at(-1);
     return end ? [{ name, x: x(end.hz) - 4, y: y(end.value) - 5 }] : [];
   });
-  let above = Infinity;
-  const placed = ends
-    .sort((a, b) => b.y - a.y)
-    .map((end) => ({ ...end, y: (above = Math.min(end.y, above - NAME_PX)) }));
   return (
     <g fontSize="12" textAnchor="end" strokeWidth="4" className={`fill-ink2 ${HALO}`}>
-      {placed.map((end) => (
+      {apart(ends).map((end) => (
         <text key={end.name} x={end.x} y={end.y}>
           {end.name}
         </text>
