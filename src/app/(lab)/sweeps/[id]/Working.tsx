@@ -94,7 +94,7 @@ function Line({ sign = '', figure, rule, away, tone, source, warning, children }
   const toned = tone ? `verdict-${tone}` : '';
   return (
     <div className={`sum-row ${lined} ${away ? 'sum-away' : ''}`}>
-      <span className="sum-sign t-figure">{sign}</span>
+      <dt className="sum-sign t-figure">{sign}</dt>
       <dt className={`sum-figure t-figure ${toned}`}>{figure}</dt>
       <dd className={toned}>{children}</dd>
       {source || warning ? (
