@@ -75,14 +75,15 @@ export function settingsFindings(
     highestInputDbuv: null,
     greatestInputDbuv: null,
   };
-  const found = receiverFindings(segment, asked[0] ?? 'peak').flatMap((finding) => {
+  const found = receiverFindings(segment, asked[0] ?? 'peak').flatMap((finding): ReceiverFinding[] => {
     // The input is looked at once per trace, and nobody states a period of pulses.
     if (finding.what === 'overload' || finding.what === 'pulse-period' || finding.what === 'detector') return [];
     // Where no source asks for a time there is nothing to compare.
     if ((finding.what === 'dwell' || finding.what === 'scan-time') && finding.figures.leastS === null) return [];
     if (finding.what === 'bandwidth') return [bandwidthAsked(finding, part, here, filter)];
     if (finding.what === 'step' && stepHz === null) return [{ ...finding, because: SPOTS }];
-    if (finding.what === 'video-bandwidth' && noVideoFilter) return [{ ...finding, outcome: 'ok', because: null }];
+    if (finding.what === 'video-bandwidth' && noVideoFilter)
+      return [{ ...finding, outcome: 'ok' as const, because: null }];
     if (finding.outcome === 'unknown' && because && finding.what === 'scan-time') return [{ ...finding, because }];
     return [finding];
   });

@@ -1,6 +1,7 @@
 import { users } from '@fixtures/demo/people';
 import type { Browser, Page } from 'playwright-core';
 import { launchBrowser, testOrigin } from '../support/browser';
+import { violations } from './axe';
 import { type DESK, openAs, PHONE, type Window } from './people';
 
 /* E-mail end to end, read where the demo catches it. Needs the outbox and the catcher beside the server. */

@@ -33,7 +33,10 @@ export function paneOf(id: string | null | undefined): Pane {
 
 /** Calculations whose titles carry every word, each from its beginning; all of them for `calculator`. */
 export function findPanes(words: string): Pane[] {
-  const asked = words.toLowerCase().split(/[\s,-]+/).filter(Boolean);
+  const asked = words
+    .toLowerCase()
+    .split(/[\s,-]+/)
+    .filter(Boolean);
   if (asked.length === 0) return [];
   return PANES.filter(({ title }) => {
     const named = `calculator ${title}`.toLowerCase().split(/[\s,-]+/);

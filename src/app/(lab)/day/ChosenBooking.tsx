@@ -51,6 +51,30 @@ export function ChosenBooking({ booking, standing, view, nowMs, choices, upload,
       <MoveSample sample={sample} places={[`position ${position.code}, ${position.name}`]} onClose={close} />
     ),
   };
+  const changes = (offered: BookingChoices): InPlaceAct[] => [
+    {
+      id: 'move',
+      word: 'Move or change',
+      form: (close) => <BookingForm view={view} choices={offered} booking={booking} onClose={close} />,
+    },
+    {
+      id: 'cancel',
+      word: 'Cancel with a reason',
+      form: (close) => (
+        <CorrectForm
+          what="booking"
+          operation={DAY_WRITES.cancelBooking}
+          id={booking.id}
+          version={booking.version}
+          fields={[{ name: 'reason', label: 'The reason', value: '', hint: 'It stands in the record of the job.' }]}
+          fixed={{}}
+          act={`Cancel the booking of ${product.code}`}
+          done={`${product.code} at position ${position.code} is cancelled`}
+          onClose={close}
+        />
+      ),
+    },
+  ];
   return (
     <section aria-label={`Booking of ${product.code}`}>
       <SectionHeading
@@ -120,45 +144,7 @@ export function ChosenBooking({ booking, standing, view, nowMs, choices, upload,
         </Message>
       )}
       <div className="mt-3">
-        <InPlace
-          size="table"
-          acts={[
-            ...(move ? [custody] : []),
-            ...(choices
-              ? [
-                  {
-                    id: 'move',
-                    word: 'Move or change',
-                    form: (close) => <BookingForm view={view} choices={choices} booking={booking} onClose={close} />,
-                  },
-                  {
-                    id: 'cancel',
-                    word: 'Cancel with a reason',
-                    form: (close) => (
-                      <CorrectForm
-                        what="booking"
-                        operation={DAY_WRITES.cancelBooking}
-                        id={booking.id}
-                        version={booking.version}
-                        fields={[
-                          {
-                            name: 'reason',
-                            label: 'The reason',
-                            value: '',
-                            hint: 'It stands in the record of the job.',
-                          },
-                        ]}
-                        fixed={{}}
-                        act={`Cancel the booking of ${product.code}`}
-                        done={`${product.code} at position ${position.code} is cancelled`}
-                        onClose={close}
-                      />
-                    ),
-                  },
-                ]
-              : []),
-          ]}
-        />
+        <InPlace size="table" acts={[...(move ? [custody] : []), ...(choices ? changes(choices) : [])]} />
       </div>
     </section>
   );

@@ -13,7 +13,7 @@ interface Props {
 export function SumLine({ sign = '', figure, rule, source, children }: Props) {
   return (
     <div className={`sum-row ${rule ? `sum-${rule}` : ''}`}>
-      <span className="sum-sign t-figure">{sign}</span>
+      <dt className="sum-sign t-figure">{sign}</dt>
       <dt className="sum-figure t-figure">{figure}</dt>
       <dd>{children}</dd>
       {source && <dd className="sum-source">{source}</dd>}
