@@ -14,6 +14,8 @@ export const pathView = z.strictObject({
   revision: z.int(),
   lowHz: z.number().nullable(),
   highHz: z.number().nullable(),
+  /** What its tables were measured for; null where none of them names a distance. */
+  distanceM: z.number().nullable(),
   items: z.array(pathItemView),
   /** Terms a run through this path adds; an upload may say that a reading already holds some of them. */
   terms: z.array(

@@ -184,6 +184,7 @@ function pathViewOf(loaded: LoadedPath, day: string): PathView {
     revision: revision.revision,
     lowHz,
     highHz,
+    distanceM: adding.flatMap(({ tables }) => tables).find(({ distanceM }) => distanceM !== null)?.distanceM ?? null,
     items: items.map((item) => itemView(item, day)),
     terms: adding.map((item) => ({
       id: item.equipment.identifier,

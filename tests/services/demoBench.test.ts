@@ -1,3 +1,4 @@
+import { proposedLimitSet } from '@/app/(lab)/sweeps/new/proposed';
 import { instantOf, dateOf } from '@fixtures/demo/dates';
 import { equipment } from '@fixtures/demo/equipment';
 import { limitSets } from '@fixtures/demo/limitSets';
@@ -32,10 +33,16 @@ afterAll(async () => {
   await schema.close();
 });
 
-test('every published limit line and set is entered in its own unit; what the demo uses stands on top', async () => {
+test('every published limit line and set is entered in its own unit; what the demo uses is proposed', async () => {
   const sets = (await listLimitSets(manager, { limit: 200 })).items;
   expect(sets).toHaveLength(limitSets.length);
-  expect(sets[0]!.name).toBe('47 CFR 15.109(a), other than class A, 3 m');
+  const paths = (await listPaths(manager, { limit: 50 })).items;
+  const proposed = (port: 'enclosure' | 'ac-mains', span: [number, number], code: string) => {
+    const path = paths.find((one) => one.code === code);
+    return sets.find(({ id }) => id === proposedLimitSet(sets, port, span, path))!.name;
+  };
+  expect(proposed('enclosure', [30e6, 1e9], 'P-3')).toBe('CISPR 32 class B radiated, 3 m');
+  expect(proposed('ac-mains', [150e3, 30e6], 'P-1')).toBe('CISPR 32 class B, mains');
   const lines = (await listLimitLines(manager, { limit: 200 })).items;
   expect(new Set(lines.map(({ unit }) => unit))).toEqual(new Set(['dBuV', 'dBuV/m', 'dBuA', 'dBpW']));
   const clamp = sets.find(({ name }) => name.includes('clamp'))!;

@@ -23,6 +23,7 @@ const path = (id: string, port: 'enclosure' | 'ac-mains', terms: string[]) => ({
   port,
   lowHz: port === 'enclosure' ? 30e6 : 150e3,
   highHz: port === 'enclosure' ? 1e9 : 30e6,
+  distanceM: port === 'enclosure' ? 3 : null,
   items: [],
   terms: terms.map((term) => ({ id: term, identifier: term, name: 'cable loss' })),
 });
@@ -96,6 +97,23 @@ const before: NonNullable<SweepFileView['asBefore']> = {
   traces: [{ index: 0, unit: 'dBuV', detector: 'peak', rbwHz: 120e3 }],
 };
 const said = (draft: Draft): Draft => ({ ...draft, operatingMode: 'full brightness', polarisation: 'horizontal' });
+
+describe('the limit set that is proposed', () => {
+  const far = { ...lists.limitSets[0]!, id: 'at 10 m', distanceM: 10 };
+  const proposedOf = (limitSets: UploadLists['limitSets']) =>
+    draftFrom(stated('ld40_m2_h_100.csv'), { ...lists, limitSets }, null);
+
+  test('is for the distance of the path, whatever the lab entered first', () => {
+    // The list is newest first.
+    expect(proposedOf([...lists.limitSets, far])).toMatchObject({ limitSetId: 'stricter', distanceM: '3' });
+  });
+
+  test('is left to be said where the lab has none for that distance', () => {
+    const draft = proposedOf([far]);
+    expect(draft.limitSetId).toBe('');
+    expect(stillToSay(draft, stated('ld40_m2_h_100.csv'))).toContain('the limit set');
+  });
+});
 
 describe('the last file of a shape', () => {
   test('fills what the file leaves open, names it, and is not taken as said', () => {

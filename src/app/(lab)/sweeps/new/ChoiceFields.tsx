@@ -32,12 +32,10 @@ export function ChoiceFields({ file, draft, lists, errors, onDraft, onSweep }: P
   function choosePort(port: Port) {
     const { firstHz, lastHz } = rangeOf(draft, file);
     const pathId = proposedPath(lists.paths, port, firstHz, lastHz);
-    const limitSetId = proposedLimitSet(lists.limitSets, port, firstHz, lastHz);
+    const proposed = lists.paths.find(({ id }) => id === pathId);
+    const limitSetId = proposedLimitSet(lists.limitSets, port, [firstHz, lastHz], proposed);
     const distance = lists.limitSets.find(({ id }) => id === limitSetId)?.distanceM;
-    const alreadyCorrected = proposedCorrected(
-      file,
-      lists.paths.find(({ id }) => id === pathId),
-    );
+    const alreadyCorrected = proposedCorrected(file, proposed);
     set({ port, pathId, limitSetId, distanceM: String(distance ?? ''), alreadyCorrected });
   }
   function choosePath(pathId: string) {

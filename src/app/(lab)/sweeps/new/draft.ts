@@ -15,10 +15,11 @@ export function draftFrom(file: SweepFileView, lists: UploadLists, stateId: stri
   const { recognition, proposals } = file;
   const { frequency, traces } = recognition;
   const port: Port = frequency.lastHz <= 31e6 && !frequency.offset ? 'ac-mains' : 'enclosure';
-  const limitSetId = proposedLimitSet(limitSets, port, frequency.firstHz, frequency.lastHz);
-  const pathId = proposedPath(paths, port, frequency.firstHz, frequency.lastHz);
-  const field = traces.some((trace) => trace.unit === 'dBuV/m' || trace.unit === 'dBuA/m');
+  const { firstHz, lastHz } = frequency;
+  const pathId = proposedPath(paths, port, firstHz, lastHz);
   const path = paths.find(({ id }) => id === pathId);
+  const limitSetId = proposedLimitSet(limitSets, port, [firstHz, lastHz], path);
+  const field = traces.some((trace) => trace.unit === 'dBuV/m' || trace.unit === 'dBuA/m');
   const draft: Draft = {
     stateId: proposedState(file, samples, stateId),
     port,

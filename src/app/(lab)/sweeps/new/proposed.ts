@@ -10,11 +10,21 @@ function overlap(set: LimitSetView, firstHz: number, lastHz: number): number {
   return Math.log10(Math.min(high, lastHz) / Math.max(low, firstHz, 1));
 }
 
-/** The set of a port that covers most of a range; of equals the one the lab entered first (the list is newest first). */
-export function proposedLimitSet(sets: readonly LimitSetView[], port: Port, firstHz: number, lastHz: number): string {
+/**
+ * The set of a port that covers most of a range, at the distance of the path where either names one; of equals the one
+ * the lab entered first (the list is newest first).
+ */
+export function proposedLimitSet(
+  sets: readonly LimitSetView[],
+  port: Port,
+  [firstHz, lastHz]: readonly [number, number],
+  path: PathView | undefined,
+): string {
+  const serves = ({ distanceM }: LimitSetView) =>
+    distanceM === null || !path || path.distanceM === null || path.distanceM === distanceM;
   const fit = [...sets]
     .reverse()
-    .filter((set) => set.port === port)
+    .filter((set) => set.port === port && serves(set))
     .map((set) => ({ set, covers: overlap(set, firstHz, lastHz) }))
     .sort((a, b) => b.covers - a.covers);
   return fit[0]?.set.id ?? '';
