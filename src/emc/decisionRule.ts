@@ -1,6 +1,7 @@
-import { EQUAL_WITHIN_DB } from './guardBand';
+import { guardFrom } from './guard';
 import type { DecisionRule, Verdict } from './kinds';
 import { ucisprExcessDb } from './ucispr';
+import { decide as judge, type Reach } from './verdict';
 
 /** What a rule can say of one level. */
 export type Decided = Extract<Verdict, 'under' | 'inconclusive' | 'over'>;
@@ -56,16 +57,21 @@ export function verdictOfMargin(
       throw new RangeError(`Expanded uncertainty ${figure} dB is no figure.`);
     }
   }
+  const db = askedBy(rule, expandedUDb, ucisprDb);
+  return db === null ? null : (judge(DECISIVE, marginDb, guardFrom(rule, db)) as Decided);
+}
+
+/** A reading that can show either; what neither settles is inconclusive. */
+const DECISIVE: Reach = { under: true, over: true, otherwise: 'inconclusive' };
+
+function askedBy(rule: DecisionRule, expandedUDb: number | null, ucisprDb: number | null): number | null {
   switch (rule) {
     case 'guarded-by-u':
-      if (expandedUDb === null) return null;
-      if (marginDb > expandedUDb) return 'under';
-      return marginDb < -expandedUDb ? 'over' : 'inconclusive';
+      return expandedUDb;
     case 'cispr-16-4-2':
-      if (expandedUDb === null || ucisprDb === null) return null;
-      return marginDb - ucisprExcessDb(expandedUDb, ucisprDb) > -EQUAL_WITHIN_DB ? 'under' : 'over';
+      return expandedUDb === null || ucisprDb === null ? null : ucisprExcessDb(expandedUDb, ucisprDb);
     case 'simple-acceptance':
-      return marginDb > -EQUAL_WITHIN_DB ? 'under' : 'over';
+      return 0;
     default:
       throw new RangeError(`${String(rule)} is no decision rule.`);
   }

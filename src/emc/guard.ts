@@ -47,6 +47,11 @@ export function addedAt(
   return db !== null && leavesBetween(rule) ? 0 : db;
 }
 
+/** The guard of what a rule asks or adds, dB. A level on the limit, as near as a reading is kept, is not over it. */
+export function guardFrom(rule: DecisionRule, db: number): Guard {
+  return leavesBetween(rule) ? { db, between: true } : { db: db - EQUAL_WITHIN_DB, between: false };
+}
+
 /** The guard at one frequency; null where the rule has none. */
 export function guardAt(
   rule: DecisionRule,
@@ -55,6 +60,5 @@ export function guardAt(
   frequencyHz: number,
 ): Guard | null {
   const db = expandedAt(guardSteps(rule, uncertainty, ucispr), frequencyHz);
-  if (db === null) return null;
-  return leavesBetween(rule) ? { db, between: true } : { db: db - EQUAL_WITHIN_DB, between: false };
+  return db === null ? null : guardFrom(rule, db);
 }

@@ -4,7 +4,6 @@ import { LAYER_COLUMNS } from '@/emc/columns';
 import type { DecisionRule } from '@/emc/kinds';
 import type { TraceHead } from '@/emc/segment';
 import type { Evaluation } from '@/emc/types';
-import { ucisprSteps } from '@/emc/ucispr';
 import { isReceiverInput } from '@/emc/units';
 import { Conflict, Invalid, Unreadable, type Issue } from '@/errors';
 import type { Answers, Recognition } from '@/ingest/types';
@@ -19,8 +18,9 @@ import type { z } from 'zod';
 import type { LimitLineView, previewBody, PreviewView, SweepChoice } from '@/schemas/sweep';
 import { dueOnDay } from './calibrationState';
 import type { JudgedFile, Judging } from './importTasks';
+import { judgingOf } from './judging';
 import { dayIn, labSettings } from './lab';
-import { linesOf, toCoreLine } from './limitSets';
+import { linesOf } from './limitSets';
 import { loadPaths, termsOf, type LoadedPath, type LoadedTerm } from './signalPaths';
 import { findUpload, recognitionOf } from './sweepFiles';
 import { candidateOf, columnsView, traceViews } from './sweepViews';
@@ -179,16 +179,8 @@ export async function judge(
       return chosen ? { index, use: true, unit: chosen.unit, detector: chosen.detector } : { index, use: false };
     }),
   };
-  const judging: Judging = {
-    terms: terms.map(({ term }) => term),
-    lines: lines.map(toCoreLine),
-    uncertainty: path?.revision.uncertainty ?? { prescan: [], final: [] },
-    purpose: choice.purpose,
-    port: choice.port,
-    rule,
-    ucispr: ucisprSteps(choice.port),
-    partial: choice.keepPartial,
-  };
+  const { purpose, port, keepPartial: partial } = choice;
+  const judging = judgingOf({ revision: path?.revision ?? null, terms, lines, purpose, port, rule, partial });
   const { traces } = choice;
   const task = { kind: 'judge' as const, recognition, answers, traces, judging, store };
   const result = await onUpload(actor, upload, task);

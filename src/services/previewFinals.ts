@@ -1,7 +1,6 @@
 import { authorise, type Actor } from '@/auth/actor';
 import { limitAt } from '@/emc/limitLine';
 import type { EvaluationInput, LimitLine, Trace } from '@/emc/types';
-import { ucisprSteps } from '@/emc/ucispr';
 import { workingAt } from '@/emc/working';
 import { recognise } from '@/ingest/recognise';
 import { unitOfWork } from '@/models/unitOfWork';
@@ -9,7 +8,7 @@ import type { FinalsBody, FinalsPreview, JudgedReading } from '@/schemas/finals'
 import { composeFinals, type ComposedFinals } from './finals';
 import type { FinalsGroup } from './finalsFile';
 import { gather } from './judgeFile';
-import { toCoreLine } from './limitSets';
+import { judgingOf } from './judging';
 
 /** Typed finals judged as they would be kept now: the same file, path, lines and rule; nothing is stored. */
 export async function previewFinals(actor: Actor | null, body: FinalsBody, at = new Date()): Promise<FinalsPreview> {
@@ -20,16 +19,16 @@ export async function previewFinals(actor: Actor | null, body: FinalsBody, at = 
     for (const composed of files) {
       const { group, file, choice } = composed;
       const { path, terms, lines } = await gather(recognise(file.bytes, file.name), choice, at);
-      const input: EvaluationInput = {
-        traces: tracesOf(composed),
-        terms: terms.map(({ term }) => term),
-        lines: lines.map(toCoreLine),
-        uncertainty: path?.revision.uncertainty ?? { prescan: [], final: [] },
+      const { decisionRule: rule } = state.sample.job;
+      const judging = judgingOf({
+        revision: path?.revision ?? null,
+        terms,
+        lines,
         purpose: 'final',
         port: body.port,
-        rule: state.sample.job.decisionRule,
-        ucispr: ucisprSteps(body.port),
-      };
+        rule,
+      });
+      const input: EvaluationInput = { ...judging, traces: tracesOf(composed) };
       for (const [row, { final, index }] of group.finals.entries()) {
         finals[index]!.readings = final.readings.map(({ detector }) =>
           judged(input, group.detectors.indexOf(detector), row),

@@ -1,8 +1,6 @@
 import type { IncludeOptions } from 'sequelize';
 import { visibleOrganisation, type Actor } from '@/auth/actor';
 import type { DecisionRule } from '@/emc/kinds';
-import type { EvaluationInput } from '@/emc/types';
-import { ucisprSteps } from '@/emc/ucispr';
 import type { TraceHead } from '@/emc/segment';
 import { NotFound } from '@/errors';
 import type { Evaluation } from '@/models/evaluation';
@@ -18,8 +16,10 @@ import type { SweepFile } from '@/models/sweepFile';
 import type { User } from '@/models/user';
 import type { LimitLineView } from '@/schemas/sweep';
 import { notAppliedBecause } from './judgeFile';
+import type { Judging } from './importTasks';
+import { judgingOf } from './judging';
 import { dayIn, labSettings } from './lab';
-import { linesOf, toCoreLine } from './limitSets';
+import { linesOf } from './limitSets';
 import { loadPaths, termsOf, type LoadedPath, type LoadedTerm } from './signalPaths';
 
 export type WholeState = ModificationState & {
@@ -67,7 +67,7 @@ export interface RunContext {
   lines: LimitLineView[];
   heads: TraceHead[];
   /** All the core needs apart from the points. */
-  judged: Omit<EvaluationInput, 'traces'>;
+  judged: Judging;
 }
 
 /** What a run is judged with: the revisions and the rule its current evaluation used. */
@@ -96,15 +96,6 @@ export async function contextWith(
     terms,
     lines,
     heads: traces.map((trace) => ({ ...trace, vbwHz, rbwShape })),
-    judged: {
-      terms: terms.map(({ term }) => term),
-      lines: lines.map(toCoreLine),
-      uncertainty: revision?.uncertainty ?? { prescan: [], final: [] },
-      purpose,
-      port,
-      rule,
-      ucispr: ucisprSteps(port),
-      partial: run.partial !== null,
-    },
+    judged: judgingOf({ revision, terms, lines, purpose, port, rule, partial: run.partial !== null }),
   };
 }

@@ -5,7 +5,7 @@ import { ScannedFile } from '@/ingest/scannedFile';
 import { unitOfWork } from '@/models/unitOfWork';
 import { taskSteps, type JudgedFile, type JudgeTask } from '@/services/importTasks';
 import { gather } from '@/services/judgeFile';
-import { toCoreLine } from '@/services/limitSets';
+import { judgingOf } from '@/services/judging';
 import type { Lab } from './lab';
 import { rounded, say, timed } from './measure';
 
@@ -22,14 +22,7 @@ export async function benchCompute({ choice }: Lab, text: string, points: number
     recognition,
     answers: { frequencyUnit: 'Hz', sweepIndex: 0 },
     traces: choice.traces,
-    judging: {
-      terms: terms.map(({ term }) => term),
-      lines: lines.map(toCoreLine),
-      uncertainty: path!.revision.uncertainty,
-      purpose: choice.purpose,
-      port: choice.port,
-      rule: 'guarded-by-u',
-    },
+    judging: judgingOf({ ...choice, revision: path!.revision, terms, lines, rule: 'guarded-by-u' }),
     store: false,
   };
   const held = new ScannedFile(bytes);
